@@ -1,0 +1,29 @@
+import { resolve } from 'node:path';
+import { defineConfig } from 'vitest/config';
+
+const root = resolve(import.meta.dirname, '..');
+
+/** One config, one project a folder; `npm test` runs them all. Browser tests share one built program and one Chromium. */
+export default defineConfig({
+  root,
+  test: {
+    reporters: ['default', resolve(root, 'test/helpers/plain-line-reporter.ts')],
+    projects: [
+      { root, test: { name: 'core', include: ['test/core/**/*.test.ts', 'test/repro/**/*.test.ts'], testTimeout: 60_000 } },
+      { root, test: { name: 'app', include: ['test/app/**/*.test.ts'], testTimeout: 120_000, hookTimeout: 120_000 } },
+      { root, test: { name: 'renderer', include: ['test/renderer/**/*.test.ts', 'test/renderer/**/*.test.tsx'] } },
+      {
+        root,
+        test: {
+          name: 'browser',
+          include: ['test/browser/**/*.test.ts'],
+          globalSetup: ['test/helpers/chromium-setup.ts'],
+          testTimeout: 120_000,
+          hookTimeout: 240_000,
+          fileParallelism: false,
+        },
+      },
+      { root, test: { name: 'desktop', include: ['test/desktop/**/*.test.ts'], testTimeout: 120_000 } },
+    ],
+  },
+});
