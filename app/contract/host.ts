@@ -1,0 +1,46 @@
+import * as z from 'zod';
+
+/** An opaque name for a file that the user chose: the page never sees a path. */
+export const FileId = z.string().min(8).max(80).brand<'FileId'>();
+export type FileId = z.output<typeof FileId>;
+
+/** The largest file that a host reads or writes for the page. */
+export const MAX_BYTES = 64 * 1024 * 1024;
+
+const Bytes = z.instanceof(Uint8Array).refine((b) => b.byteLength <= MAX_BYTES, 'too large');
+const Opened = z.object({ id: FileId, name: z.string(), bytes: Bytes });
+const SafeName = z.string().min(1).max(120).regex(/^[^\\/\0]+$/);
+
+/**
+ * The only channels that exist between the screens and what is privileged. Electron's main and preload, the loopback host and
+ * their shared tests are all derived from this table.
+ */
+export const contract = {
+  /** What this host is, and the scheme it was started with (null: none). */
+  'host:hello': {
+    ask: z.null(),
+    reply: z.object({ kind: z.enum(['desktop', 'browser']), version: z.string(), opened: Opened.nullable(), demos: z.array(z.object({ key: z.string(), name: z.string() })) }),
+  },
+  /** A shipped example, as a fresh untitled scheme: it has no file to save over. */
+  'scheme:demo': { ask: z.object({ key: z.string().max(80) }), reply: z.object({ name: z.string(), bytes: Bytes }) },
+  /** The system's open dialog. Null: the user thought better of it. */
+  'scheme:open': { ask: z.null(), reply: Opened.nullable() },
+  'scheme:reopen': { ask: z.object({ id: FileId }), reply: Opened },
+  'scheme:save': { ask: z.object({ id: FileId, bytes: Bytes }), reply: z.null() },
+  'scheme:save-as': { ask: z.object({ name: SafeName, bytes: Bytes }), reply: z.object({ id: FileId, name: z.string() }).nullable() },
+  'scheme:recent': { ask: z.null(), reply: z.array(z.object({ id: FileId, name: z.string(), opened: z.string() })) },
+  /** Kept beside the settings, not beside the scheme; one slot a document key. */
+  'scheme:autosave': { ask: z.object({ key: z.string().min(1).max(80).regex(/^[\w-]+$/), name: SafeName, bytes: Bytes }), reply: z.null() },
+  'scheme:recover': { ask: z.null(), reply: z.array(z.object({ key: z.string(), name: z.string(), saved: z.string(), bytes: Bytes })) },
+  'scheme:discard': { ask: z.object({ key: z.string().min(1).max(80).regex(/^[\w-]+$/) }), reply: z.null() },
+  /** Write a finished export (PDF, SVG, CSV, JSON …) where the user says. Null: cancelled. */
+  'export:write': { ask: z.object({ name: SafeName, bytes: Bytes }), reply: z.object({ name: z.string() }).nullable() },
+  /** PDF pages from a drawing document (core/sheet): fonts and pdfkit live with the host. */
+  'sheet:pdf': { ask: z.object({ document: z.unknown() }), reply: z.object({ bytes: Bytes }) },
+} as const;
+
+export type Channel = keyof typeof contract;
+export type Ask<C extends Channel> = z.output<(typeof contract)[C]['ask']>;
+export type Answer<C extends Channel> = z.output<(typeof contract)[C]['reply']>;
+export type Reply<T> = { ok: true; value: T } | { ok: false; code: 'forbidden' | 'bad-request' | 'io'; message: string };
+export type Host = { [C in Channel]: (ask: Ask<C>) => Promise<Reply<Answer<C>>> };

@@ -1,0 +1,50 @@
+import type { RoomDay } from '../gain/series.ts';
+import type { Finding } from '../limits/finding.ts';
+import type { LimitSet } from '../limits/limit-set.ts';
+import type { Fault } from '../scheme/fault.ts';
+import type { DayGrid } from '../sky/day-grid.ts';
+
+/** Everything that a check of a scheme gives: findings, and the columns that they were read from. */
+export type CheckResult = {
+  /** Version of the engine, from package.json. */
+  readonly engine: string;
+  /** Content hash of the canonical scheme, hexadecimal. */
+  readonly schemeHash: string;
+  readonly title: string;
+  readonly zone: string;
+  /** Null when the scheme has chosen no set: metrics, and no verdict. */
+  readonly limitSet: LimitSet | null;
+  readonly days: readonly DayGrid[];
+  readonly rooms: readonly RoomResult[];
+  /** Worst first: by margin as a share of the limit, then room id. */
+  readonly findings: readonly Finding[];
+  /** Rooms by their worst verdict. */
+  readonly counts: { readonly over: number; readonly close: number; readonly within: number };
+  /** Warnings of the scheme and of the methods. */
+  readonly notes: readonly Fault[];
+  readonly cautions: readonly string[];
+};
+
+export type RoomResult = {
+  readonly room: string;
+  readonly name: string;
+  readonly use: string;
+  readonly block: string;
+  readonly floor_m2: number;
+  readonly glass_m2: number;
+  /** Opening area of its windows over floor area. */
+  readonly glazingToFloor: number;
+  readonly windows: readonly WindowResult[];
+  readonly days: readonly RoomDay[];
+};
+
+export type WindowResult = {
+  readonly window: string;
+  readonly bearing_deg: number;
+  readonly tilt_deg: number;
+  readonly opening_m2: number;
+  readonly glass_m2: number;
+  readonly g: number;
+  /** Share of the sky dome's light that reaches the glass (cosine-weighted), open vertical glass 0.5. */
+  readonly skyShare: number;
+};
