@@ -10,7 +10,16 @@ export default defineConfig({
     reporters: ['default', resolve(root, 'test/helpers/plain-line-reporter.ts')],
     projects: [
       { root, test: { name: 'core', include: ['test/core/**/*.test.ts', 'test/repro/**/*.test.ts'], testTimeout: 60_000 } },
-      { root, test: { name: 'app', include: ['test/app/**/*.test.ts'], testTimeout: 120_000, hookTimeout: 120_000 } },
+      {
+        root,
+        test: {
+          name: 'app',
+          include: ['test/app/**/*.test.ts'],
+          globalSetup: ['test/helpers/fresh-build.ts'],
+          testTimeout: 120_000,
+          hookTimeout: 120_000,
+        },
+      },
       { root, test: { name: 'renderer', include: ['test/renderer/**/*.test.ts', 'test/renderer/**/*.test.tsx'] } },
       {
         root,
@@ -23,7 +32,7 @@ export default defineConfig({
           fileParallelism: false,
         },
       },
-      { root, test: { name: 'desktop', include: ['test/desktop/**/*.test.ts'], testTimeout: 120_000 } },
+      { root, test: { name: 'desktop', include: ['test/desktop/**/*.test.ts'], globalSetup: ['test/helpers/fresh-build.ts'], testTimeout: 120_000 } },
     ],
   },
 });
