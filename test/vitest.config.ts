@@ -9,7 +9,10 @@ export default defineConfig({
   test: {
     reporters: ['default', resolve(root, 'test/helpers/plain-line-reporter.ts')],
     projects: [
-      { root, test: { name: 'core', include: ['test/core/**/*.test.ts', 'test/repro/**/*.test.ts'], testTimeout: 60_000 } },
+      {
+        root,
+        test: { name: 'core', include: ['test/core/**/*.test.ts', 'test/repro/**/*.test.ts'], testTimeout: 60_000 },
+      },
       {
         root,
         test: {
@@ -32,7 +35,15 @@ export default defineConfig({
           fileParallelism: false,
         },
       },
-      { root, test: { name: 'desktop', include: ['test/desktop/**/*.test.ts'], globalSetup: ['test/helpers/fresh-build.ts'], testTimeout: 120_000 } },
+      {
+        root,
+        test: {
+          name: 'desktop',
+          include: ['test/desktop/**/*.test.ts'],
+          globalSetup: ['test/helpers/fresh-build.ts'],
+          testTimeout: 120_000,
+        },
+      },
     ],
   },
 });

@@ -8,18 +8,34 @@ export type FileId = z.output<typeof FileId>;
 export const MAX_BYTES = 64 * 1024 * 1024;
 
 const Bytes = z.instanceof(Uint8Array).refine((b) => b.byteLength <= MAX_BYTES, 'too large');
-const Opened = z.object({ id: FileId, name: z.string(), bytes: Bytes });
-const SafeName = z.string().min(1).max(120).regex(/^[^\\/\0]+$/);
+export const Opened = z.object({ id: FileId, name: z.string(), bytes: Bytes });
+export type Opened = z.output<typeof Opened>;
+const SafeName = z
+  .string()
+  .min(1)
+  .max(120)
+  .regex(/^[^\\/\0]+$/);
 
 /**
  * The only channels that exist between the screens and what is privileged. Electron's main and preload, the loopback host and
  * their shared tests are all derived from this table.
+ *
+ * Dialogs belong to whoever can show one. On the desktop main shows the system's own. A browser lets only the page ask for a
+ * file, so there the page's bridge answers the channels of `PAGE_DIALOGS` itself (file input or picker; download or writable
+ * handle) under ids of its own that begin with `page-`, and keeps save and reopen of those ids to itself as well. The loopback
+ * host answers these channels with `forbidden`, `dialog:page`. Everything else goes to the host: a scheme named on the
+ * command line has a host id, and saving it writes the real file.
  */
 export const contract = {
   /** What this host is, and the scheme it was started with (null: none). */
   'host:hello': {
     ask: z.null(),
-    reply: z.object({ kind: z.enum(['desktop', 'browser']), version: z.string(), opened: Opened.nullable(), demos: z.array(z.object({ key: z.string(), name: z.string() })) }),
+    reply: z.object({
+      kind: z.enum(['desktop', 'browser']),
+      version: z.string(),
+      opened: Opened.nullable(),
+      demos: z.array(z.object({ key: z.string(), name: z.string() })),
+    }),
   },
   /** A shipped example, as a fresh untitled scheme: it has no file to save over. */
   'scheme:demo': { ask: z.object({ key: z.string().max(80) }), reply: z.object({ name: z.string(), bytes: Bytes }) },
@@ -27,12 +43,38 @@ export const contract = {
   'scheme:open': { ask: z.null(), reply: Opened.nullable() },
   'scheme:reopen': { ask: z.object({ id: FileId }), reply: Opened },
   'scheme:save': { ask: z.object({ id: FileId, bytes: Bytes }), reply: z.null() },
-  'scheme:save-as': { ask: z.object({ name: SafeName, bytes: Bytes }), reply: z.object({ id: FileId, name: z.string() }).nullable() },
+  'scheme:save-as': {
+    ask: z.object({ name: SafeName, bytes: Bytes }),
+    reply: z.object({ id: FileId, name: z.string() }).nullable(),
+  },
   'scheme:recent': { ask: z.null(), reply: z.array(z.object({ id: FileId, name: z.string(), opened: z.string() })) },
   /** Kept beside the settings, not beside the scheme; one slot a document key. */
-  'scheme:autosave': { ask: z.object({ key: z.string().min(1).max(80).regex(/^[\w-]+$/), name: SafeName, bytes: Bytes }), reply: z.null() },
-  'scheme:recover': { ask: z.null(), reply: z.array(z.object({ key: z.string(), name: z.string(), saved: z.string(), bytes: Bytes })) },
-  'scheme:discard': { ask: z.object({ key: z.string().min(1).max(80).regex(/^[\w-]+$/) }), reply: z.null() },
+  'scheme:autosave': {
+    ask: z.object({
+      key: z
+        .string()
+        .min(1)
+        .max(80)
+        .regex(/^[\w-]+$/),
+      name: SafeName,
+      bytes: Bytes,
+    }),
+    reply: z.null(),
+  },
+  'scheme:recover': {
+    ask: z.null(),
+    reply: z.array(z.object({ key: z.string(), name: z.string(), saved: z.string(), bytes: Bytes })),
+  },
+  'scheme:discard': {
+    ask: z.object({
+      key: z
+        .string()
+        .min(1)
+        .max(80)
+        .regex(/^[\w-]+$/),
+    }),
+    reply: z.null(),
+  },
   /** Write a finished export (PDF, SVG, CSV, JSON …) where the user says. Null: cancelled. */
   'export:write': { ask: z.object({ name: SafeName, bytes: Bytes }), reply: z.object({ name: z.string() }).nullable() },
   /** PDF pages from a drawing document (core/sheet): fonts and pdfkit live with the host. */
@@ -40,7 +82,45 @@ export const contract = {
 } as const;
 
 export type Channel = keyof typeof contract;
+
+/** Channels that need a dialog: the browser's page answers them itself. */
+export const PAGE_DIALOGS = ['scheme:open', 'scheme:save-as', 'export:write'] as const satisfies readonly Channel[];
+
 export type Ask<C extends Channel> = z.output<(typeof contract)[C]['ask']>;
 export type Answer<C extends Channel> = z.output<(typeof contract)[C]['reply']>;
-export type Reply<T> = { ok: true; value: T } | { ok: false; code: 'forbidden' | 'bad-request' | 'io'; message: string };
+export type Reply<T> =
+  | { ok: true; value: T }
+  | { ok: false; code: 'forbidden' | 'bad-request' | 'io'; message: string };
 export type Host = { [C in Channel]: (ask: Ask<C>) => Promise<Reply<Answer<C>>> };
+
+/** What a menu or a shortcut of the host may ask of the screens. */
+export const DESK_COMMANDS = [
+  'new',
+  'open',
+  'save',
+  'save-as',
+  'undo',
+  'redo',
+  'cut',
+  'copy',
+  'paste',
+  'select-all',
+  'help',
+] as const;
+export type DeskCommand = (typeof DESK_COMMANDS)[number];
+
+/** What reaches the screens unasked: a menu's command, or a scheme that the system handed over (double click, second start). */
+export type DeskEvent =
+  | { readonly kind: 'command'; readonly command: DeskCommand }
+  | { readonly kind: 'opened'; readonly opened: Opened };
+
+/** `window.shadewright` on the desktop, put there by the preload and frozen; absent in a browser. */
+export type Bridge = {
+  readonly host: Host;
+  /** Hears what the host says unasked; returns the way to stop. */
+  readonly listen: (hear: (event: DeskEvent) => void) => () => void;
+  /** A file that the user dropped on the window; a file that a script made has no path and is refused. */
+  readonly dropped: (file: unknown) => Promise<Reply<Opened>>;
+  /** Tells the host whether there is unsaved work, so that closing asks first. */
+  readonly setUnsaved: (isUnsaved: boolean) => void;
+};

@@ -1,3 +1,4 @@
+import type {} from 'vitest';
 import type { TestProject } from 'vitest/node';
 import { findChromium } from './find-chromium.ts';
 import freshBuild from './fresh-build.ts';

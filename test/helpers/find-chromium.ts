@@ -11,7 +11,8 @@ function installWithApt(): boolean {
   const isRoot = process.platform === 'linux' && process.getuid?.() === 0;
   if (!isRoot || spawnSync('apt-get', ['--version'], { stdio: 'ignore' }).status !== 0) return false;
   const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
-  const run = (...args: string[]) => spawnSync('apt-get', args, { env, stdio: ['ignore', 'ignore', 'inherit'], timeout: 400_000 }).status === 0;
+  const run = (...args: string[]) =>
+    spawnSync('apt-get', args, { env, stdio: ['ignore', 'ignore', 'inherit'], timeout: 400_000 }).status === 0;
   console.log('No Chromium-family browser here: installing chromium with apt-get.');
   return run('update', '-qq') && run('install', '-y', '-qq', '--no-install-recommends', 'chromium');
 }

@@ -38,7 +38,11 @@ export default async function freshBuild(): Promise<void> {
   }
   try {
     if (!isStale()) return;
-    const run = spawnSync('npm', ['run', '--silent', 'build'], { cwd: root, encoding: 'utf8', shell: process.platform === 'win32' });
+    const run = spawnSync('npm', ['run', '--silent', 'build'], {
+      cwd: root,
+      encoding: 'utf8',
+      shell: process.platform === 'win32',
+    });
     if (run.status !== 0) throw new Error(`the program does not build:\n${run.stdout}\n${run.stderr}`);
   } finally {
     rmSync(lock, { recursive: true, force: true });
