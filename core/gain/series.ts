@@ -2,12 +2,22 @@
 export type Part = 'beam' | 'circumsolar' | 'sky' | 'horizon' | 'ground';
 export const PARTS: readonly Part[] = ['beam', 'circumsolar', 'sky', 'horizon', 'ground'];
 
+/**
+ * How the light of the sky is spread over the dome. `isotropic`: evenly. `perez`: brighter round the sun and along the horizon,
+ * as measured (Perez and others 1990); each part is then shaded in its own way.
+ */
+export type SkyModel = 'isotropic' | 'perez';
+
 /** What one window takes in on one day: watts through the opening at each step, part by part, and what led there. */
 export type WindowDay = {
   readonly window: string;
   readonly day: string;
   readonly sunlit: Float64Array;
   readonly cosIncidence: Float64Array;
+  /** What the closed blinds leave of the glass's gain at each step, 1 where they are open. */
+  readonly blind: Float64Array;
+  /** Irradiance on the plane of the glass with nothing in front of it, part by part [W/m²]. */
+  readonly open_Wm2: { readonly [P in Part]: Float64Array };
   readonly parts: { readonly [P in Part]: Float64Array };
   readonly total_W: Float64Array;
 };

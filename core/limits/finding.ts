@@ -33,9 +33,11 @@ export type Finding = {
   readonly metricName: string;
   readonly unit: string;
   readonly value: number;
-  readonly limitValue: number;
+  /** Null, with the margin, when the scheme has chosen no limit set. */
+  readonly limitValue: number | null;
+  readonly comparison: 'at-most' | 'at-least';
   /** Value minus limit for an upper limit, limit minus value for a lower one: above 0 is over. */
-  readonly margin: number;
+  readonly margin: number | null;
   /** Null when the scheme has chosen no limit set: a metric without a verdict. */
   readonly verdict: Verdict | null;
   /** When it happens, where it is a moment: UTC ms and the civil text. */

@@ -1,4 +1,4 @@
-import type { RoomDay } from '../gain/series.ts';
+import type { RoomDay, SkyModel } from '../gain/series.ts';
 import type { Finding } from '../limits/finding.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
 import type { Fault } from '../scheme/fault.ts';
@@ -12,6 +12,8 @@ export type CheckResult = {
   readonly schemeHash: string;
   readonly title: string;
   readonly zone: string;
+  /** How the sky's light is spread over the dome. */
+  readonly skyModel: SkyModel;
   /** Null when the scheme has chosen no set: metrics, and no verdict. */
   readonly limitSet: LimitSet | null;
   readonly days: readonly DayGrid[];
@@ -47,4 +49,8 @@ export type WindowResult = {
   readonly g: number;
   /** Share of the sky dome's light that reaches the glass (cosine-weighted), open vertical glass 0.5. */
   readonly skyShare: number;
+  /** Visible share of the horizon band in front, 0..1. */
+  readonly horizonShare: number;
+  /** The ground's counterpart of `skyShare`: open vertical glass 0.5. */
+  readonly groundShare: number;
 };
