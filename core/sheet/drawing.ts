@@ -22,7 +22,13 @@ export type Mark =
       readonly hatch?: Hatch;
       readonly stroke?: Stroke;
     }
-  | { readonly kind: 'circle'; readonly at: readonly [Mm, Mm]; readonly radius: Mm; readonly fill?: Colour; readonly stroke?: Stroke }
+  | {
+      readonly kind: 'circle';
+      readonly at: readonly [Mm, Mm];
+      readonly radius: Mm;
+      readonly fill?: Colour;
+      readonly stroke?: Stroke;
+    }
   | {
       readonly kind: 'text';
       readonly text: string;
@@ -39,7 +45,12 @@ export type Mark =
       /** Right-to-left text. */
       readonly rtl?: boolean;
     }
-  | { readonly kind: 'group'; readonly clip?: readonly [Mm, Mm, Mm, Mm]; readonly label?: string; readonly marks: readonly Mark[] };
+  | {
+      readonly kind: 'group';
+      readonly clip?: readonly [Mm, Mm, Mm, Mm];
+      readonly label?: string;
+      readonly marks: readonly Mark[];
+    };
 
 /** One page. `title` becomes its bookmark. */
 export type Page = { readonly width: Mm; readonly height: Mm; readonly title: string; readonly marks: readonly Mark[] };
@@ -53,4 +64,9 @@ export type Document = {
 };
 
 /** ISO 216 sizes, portrait [mm]. */
-export const PAPER: { readonly [name: string]: readonly [Mm, Mm] } = { A4: [210, 297], A3: [297, 420], A2: [420, 594], A1: [594, 841] };
+export const PAPER: { readonly [name: string]: readonly [Mm, Mm] } = {
+  A4: [210, 297],
+  A3: [297, 420],
+  A2: [420, 594],
+  A1: [594, 841],
+};

@@ -1,0 +1,167 @@
+import PDFDocument from 'pdfkit';
+import type { Document, Mark, Page, Stroke } from '../../core/sheet/drawing.ts';
+import { hatchLines } from '../../core/sheet/hatch.ts';
+import { visualRuns } from '../../core/sheet/text-runs.ts';
+import { type FontName, fontBytes } from './fonts.ts';
+
+/** Points of a PDF in one millimetre. */
+const POINTS = 72 / 25.4;
+/** Stands where no font of ours has the letter. */
+const REPLACEMENT = '\ufffd';
+
+type Options = {
+  /** Written into the file as its date of creation: handed in, so that the same drawing gives the same bytes. */
+  readonly created: Date;
+  /** False leaves the page contents readable, for tests. */
+  readonly compress?: boolean;
+};
+
+/**
+ * A drawing document as a PDF: vectors true to scale, text as text in embedded subset fonts, one bookmark a page, title and
+ * language stated. Page contents are written in millimetres under one scale, so that they can be checked by eye.
+ */
+export function writePdf(document: Document, options: Options): Promise<Uint8Array> {
+  const pdf = new PDFDocument({
+    autoFirstPage: false,
+    font: null,
+    pdfVersion: '1.7',
+    lang: document.language,
+    displayTitle: true,
+    compress: options.compress ?? true,
+    info: {
+      Title: document.title,
+      ...(document.author === '' ? {} : { Author: document.author }),
+      Creator: 'Shadewright',
+      Producer: 'Shadewright',
+      CreationDate: options.created,
+    },
+  });
+  const chunks: Uint8Array[] = [];
+  const done = new Promise<Uint8Array>((resolve, reject) => {
+    pdf.on('data', (chunk) => chunks.push(chunk));
+    pdf.on('error', reject);
+    pdf.on('end', () => resolve(new Uint8Array(Buffer.concat(chunks))));
+  });
+  const pen = new Pen(pdf);
+  for (const page of document.pages) pen.page(page);
+  pdf.end();
+  return done;
+}
+
+/** Draws the marks of the display list, one kind a method. */
+class Pen {
+  readonly #pdf: PDFDocument;
+  readonly #known = new Set<FontName>();
+
+  constructor(pdf: PDFDocument) {
+    this.#pdf = pdf;
+  }
+
+  page(page: Page): void {
+    this.#pdf.addPage({ size: [page.width * POINTS, page.height * POINTS], margin: 0 });
+    this.#pdf.outline.addItem(page.title);
+    this.#pdf.save().scale(POINTS).lineJoin('miter').lineCap('butt');
+    for (const mark of page.marks) this.#mark(mark);
+    this.#pdf.restore();
+  }
+
+  #mark(mark: Mark): void {
+    switch (mark.kind) {
+      case 'path':
+        return this.#path(mark);
+      case 'circle':
+        return this.#circle(mark);
+      case 'text':
+        return this.#text(mark);
+      case 'group':
+        return this.#group(mark);
+    }
+  }
+
+  #path(mark: Extract<Mark, { kind: 'path' }>): void {
+    if (mark.fill) {
+      this.#trace(mark.runs, mark.closed);
+      this.#pdf.fillColor(mark.fill).fill('even-odd');
+    }
+    if (mark.hatch) {
+      const lines = hatchLines(mark.runs, mark.hatch);
+      if (lines.length > 0) {
+        for (const [x1, y1, x2, y2] of lines) this.#pdf.moveTo(x1, y1).lineTo(x2, y2);
+        this.#line(mark.hatch.stroke);
+      }
+    }
+    if (mark.stroke) {
+      this.#trace(mark.runs, mark.closed);
+      this.#line(mark.stroke);
+    }
+  }
+
+  #trace(runs: Extract<Mark, { kind: 'path' }>['runs'], closed: boolean): void {
+    for (const run of runs) {
+      run.forEach(([x, y], i) => {
+        if (i === 0) this.#pdf.moveTo(x, y);
+        else this.#pdf.lineTo(x, y);
+      });
+      if (closed && run.length > 0) this.#pdf.closePath();
+    }
+  }
+
+  /** Strokes the path that was just traced. */
+  #line(stroke: Stroke): void {
+    this.#pdf.strokeColor(stroke.colour).lineWidth(stroke.width);
+    if (stroke.dash) this.#pdf.dash(stroke.dash);
+    this.#pdf.stroke();
+    if (stroke.dash) this.#pdf.undash();
+  }
+
+  #circle(mark: Extract<Mark, { kind: 'circle' }>): void {
+    const [x, y] = mark.at;
+    if (mark.fill) this.#pdf.circle(x, y, mark.radius).fillColor(mark.fill).fill();
+    if (mark.stroke) {
+      this.#pdf.circle(x, y, mark.radius);
+      this.#line(mark.stroke);
+    }
+  }
+
+  #group(mark: Extract<Mark, { kind: 'group' }>): void {
+    if (!mark.clip) {
+      for (const inner of mark.marks) this.#mark(inner);
+      return;
+    }
+    const [x, y, width, height] = mark.clip;
+    this.#pdf.save().rect(x, y, width, height).clip();
+    for (const inner of mark.marks) this.#mark(inner);
+    this.#pdf.restore();
+  }
+
+  #text(mark: Extract<Mark, { kind: 'text' }>): void {
+    if (mark.text === '') return;
+    const pdf = this.#pdf;
+    const features = { tnum: mark.tabular === true };
+    const pieces = visualRuns(mark.text, mark.rtl === true).map((run) => {
+      const font: FontName = run.script === 'house' || run.script === 'missing' ? mark.face : run.script;
+      const text = run.script === 'missing' ? REPLACEMENT.repeat([...run.text].length) : run.text;
+      this.#font(font, mark.size);
+      return { font, text, width: pdf.widthOfString(text, { features }) };
+    });
+    const whole = pieces.reduce((sum, p) => sum + p.width, 0);
+    const [x, y] = mark.at;
+    let pen = mark.anchor === 'start' ? x : mark.anchor === 'middle' ? x - whole / 2 : x - whole;
+    if (mark.turn_deg) pdf.save().rotate(-mark.turn_deg, { origin: [x, y] });
+    pdf.fillColor(mark.colour);
+    for (const piece of pieces) {
+      this.#font(piece.font, mark.size);
+      pdf.text(piece.text, pen, y, { lineBreak: false, baseline: 'alphabetic', features });
+      pen += piece.width;
+    }
+    if (mark.turn_deg) pdf.restore();
+  }
+
+  #font(name: FontName, size: number): void {
+    if (!this.#known.has(name)) {
+      this.#pdf.registerFont(name, fontBytes(name));
+      this.#known.add(name);
+    }
+    this.#pdf.font(name).fontSize(size);
+  }
+}
