@@ -7,9 +7,18 @@ export type FileId = z.output<typeof FileId>;
 /** The largest file that a host reads or writes for the page. */
 export const MAX_BYTES = 64 * 1024 * 1024;
 
-const Bytes = z.instanceof(Uint8Array).refine((b) => b.byteLength <= MAX_BYTES, 'too large');
+const Bytes = z.custom<Uint8Array>(
+  (v) => v instanceof Uint8Array && v.byteLength <= MAX_BYTES,
+  'not bytes, or too many',
+);
 export const Opened = z.object({ id: FileId, name: z.string(), bytes: Bytes });
 export type Opened = z.output<typeof Opened>;
+/** Which document a slot of unsaved work belongs to. */
+export const SlotKey = z
+  .string()
+  .min(1)
+  .max(80)
+  .regex(/^[\w-]+$/);
 const SafeName = z
   .string()
   .min(1)
@@ -51,11 +60,7 @@ export const contract = {
   /** Kept beside the settings, not beside the scheme; one slot a document key. */
   'scheme:autosave': {
     ask: z.object({
-      key: z
-        .string()
-        .min(1)
-        .max(80)
-        .regex(/^[\w-]+$/),
+      key: SlotKey,
       name: SafeName,
       bytes: Bytes,
     }),
@@ -67,11 +72,7 @@ export const contract = {
   },
   'scheme:discard': {
     ask: z.object({
-      key: z
-        .string()
-        .min(1)
-        .max(80)
-        .regex(/^[\w-]+$/),
+      key: SlotKey,
     }),
     reply: z.null(),
   },
@@ -94,19 +95,7 @@ export type Reply<T> =
 export type Host = { [C in Channel]: (ask: Ask<C>) => Promise<Reply<Answer<C>>> };
 
 /** What a menu or a shortcut of the host may ask of the screens. */
-export const DESK_COMMANDS = [
-  'new',
-  'open',
-  'save',
-  'save-as',
-  'undo',
-  'redo',
-  'cut',
-  'copy',
-  'paste',
-  'select-all',
-  'help',
-] as const;
+export const DESK_COMMANDS = ['new', 'open', 'save', 'save-as', 'undo', 'redo', 'help'] as const;
 export type DeskCommand = (typeof DESK_COMMANDS)[number];
 
 /** What reaches the screens unasked: a menu's command, or a scheme that the system handed over (double click, second start). */
