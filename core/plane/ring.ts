@@ -81,7 +81,10 @@ export function crossingEdges(ring: Ring): readonly [number, number] | null {
   const n = ring.length;
   const side = (p: Point, q: Point, r: Point): number => (q[0] - p[0]) * (r[1] - p[1]) - (q[1] - p[1]) * (r[0] - p[0]);
   const onSegment = (p: Point, q: Point, r: Point): boolean =>
-    Math.min(p[0], q[0]) <= r[0] && r[0] <= Math.max(p[0], q[0]) && Math.min(p[1], q[1]) <= r[1] && r[1] <= Math.max(p[1], q[1]);
+    Math.min(p[0], q[0]) <= r[0] &&
+    r[0] <= Math.max(p[0], q[0]) &&
+    Math.min(p[1], q[1]) <= r[1] &&
+    r[1] <= Math.max(p[1], q[1]);
   for (let i = 0; i < n; i++) {
     const a = ring[i] as Point;
     const b = ring[(i + 1) % n] as Point;

@@ -2,7 +2,10 @@ import { anticlockwise } from '../plane/ring.ts';
 import type { Point, Ring } from '../plane/vec.ts';
 import { DEG } from '../units/angle.ts';
 
-type Shaped = { readonly box?: { at: readonly [number, number]; width: number; depth: number; turn: number } | undefined; readonly outline?: readonly (readonly [number, number])[] | undefined };
+type Shaped = {
+  readonly box?: { at: readonly [number, number]; width: number; depth: number; turn: number } | undefined;
+  readonly outline?: readonly (readonly [number, number])[] | undefined;
+};
 
 /**
  * The ground outline of a block or a room, anticlockwise [m]. A box starts at its corner `at`; its walls are numbered

@@ -22,7 +22,8 @@ const box = z.looseObject({
 });
 
 const shape = { box: box.optional(), outline: outline.optional() };
-const oneShape = <T extends { box?: unknown; outline?: unknown }>(v: T): boolean => (v.box === undefined) !== (v.outline === undefined);
+const oneShape = <T extends { box?: unknown; outline?: unknown }>(v: T): boolean =>
+  (v.box === undefined) !== (v.outline === undefined);
 const oneShapeMessage = { message: 'needs either a box or an outline, and not both', params: { code: 'one-shape' } };
 
 export const Standing = z.enum(['existing', 'proposed', 'removed', 'context']);
@@ -57,7 +58,10 @@ export const Window = z
     id,
     room: id,
     wall: z.int().min(0).max(1999).optional().describe('edge n of the room outline, from corner n to corner n + 1'),
-    roof: z.looseObject({ at: point, turn: finite.min(-360).max(360).default(0) }).optional().describe('in place of wall: a rooflight in the flat roof, `at` its corner'),
+    roof: z
+      .looseObject({ at: point, turn: finite.min(-360).max(360).default(0) })
+      .optional()
+      .describe('in place of wall: a rooflight in the flat roof, `at` its corner'),
     from: metres.default(0).describe('from corner n along the wall [m]'),
     sill: metres.default(0).describe('above the floor [m]'),
     width: positive,
@@ -125,9 +129,19 @@ const blind = z.looseObject({
   place: z.enum(['external', 'between', 'internal']),
   transmittance: share.describe('solar transmittance of the closed blind'),
   reflectance: share.describe('solar reflectance of the side that faces the sun'),
-  closedAbove: finite.min(0).max(2000).optional().describe('closed when the irradiance on the glass exceeds this [W/m²]'),
-  closedFrom: z.string().regex(/^\d\d:\d\d$/).optional(),
-  closedTo: z.string().regex(/^\d\d:\d\d$/).optional(),
+  closedAbove: finite
+    .min(0)
+    .max(2000)
+    .optional()
+    .describe('closed when the irradiance on the glass exceeds this [W/m²]'),
+  closedFrom: z
+    .string()
+    .regex(/^\d\d:\d\d$/)
+    .optional(),
+  closedTo: z
+    .string()
+    .regex(/^\d\d:\d\d$/)
+    .optional(),
 });
 
 export const Device = z.discriminatedUnion('kind', [overhang, fin, louvres, blind]);
@@ -144,7 +158,13 @@ export const Tree = z.looseObject({
 });
 
 export const Receptor = z.discriminatedUnion('kind', [
-  z.looseObject({ id, kind: z.literal('point'), name: text.default(''), at: z.tuple([metres, metres, metres]), normal: z.tuple([finite, finite, finite]).default([0, 0, 1]) }),
+  z.looseObject({
+    id,
+    kind: z.literal('point'),
+    name: text.default(''),
+    at: z.tuple([metres, metres, metres]),
+    normal: z.tuple([finite, finite, finite]).default([0, 0, 1]),
+  }),
   z.looseObject({ id, kind: z.literal('area'), name: text.default(''), outline, level: metres.default(0) }),
   z.looseObject({
     id,
@@ -193,7 +213,12 @@ export const Scheme = z.looseObject({
   author: text.default(''),
   address: text.default(''),
   revision: text.default(''),
-  year: z.int().min(1900).max(2100).optional().describe('the year of the design days; the checks take 2025 where none is given'),
+  year: z
+    .int()
+    .min(1900)
+    .max(2100)
+    .optional()
+    .describe('the year of the design days; the checks take 2025 where none is given'),
   site: Site,
   blocks: z.array(Block).max(20000).default([]),
   rooms: z.array(Room).max(5000).default([]),
@@ -202,7 +227,9 @@ export const Scheme = z.looseObject({
   devices: z.array(Device).max(20000).default([]),
   trees: z.array(Tree).max(5000).default([]),
   weather: z.unknown().optional(),
-  limits: z.union([z.string().max(200), z.looseObject({ format: z.literal('shadewright-limits') }), z.null()]).default(null),
+  limits: z
+    .union([z.string().max(200), z.looseObject({ format: z.literal('shadewright-limits') }), z.null()])
+    .default(null),
   receptors: z.array(Receptor).max(20000).default([]),
   sheets: z.array(SheetSet).max(200).default([]),
 });

@@ -1,0 +1,9 @@
+import { sha256 } from '@noble/hashes/sha2.js';
+import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils.js';
+
+/**
+ * Content hash of a text: SHA-256 in hexadecimal (64 digits). Sheets and reports print its first 12 digits, which is enough
+ * to tell two revisions of a scheme apart.
+ * @see FIPS 180-4, Secure Hash Standard
+ */
+export const contentHash = (text: string): string => bytesToHex(sha256(utf8ToBytes(text)));
