@@ -1,4 +1,5 @@
 const SPACE = /[ \t\r\n]*/y;
+// biome-ignore lint/suspicious/noControlCharactersInRegex: RFC 8259 forbids them unescaped, so they are what we look for
 const STRING = /"(?:[^"\\\u0000-\u001f]|\\(?:["\\/bfnrt]|u[0-9a-fA-F]{4}))*"/y;
 const NUMBER = /-?(?:0|[1-9]\d*)(?:\.\d+)?(?:[eE][+-]?\d+)?/y;
 const WORD = /true|false|null/y;
