@@ -25,9 +25,10 @@ export const INEICHEN_NOTE: ModelNote = {
  * @param linkeTurbidity  1 (pure air) to 15, referred to an air mass of 2
  * @returns beam facing the sun, diffuse and global on the level [W/m²]; zeros with the sun at or below the horizon. With a
  *          turbidity below about 1.3 the published fits give more beam than global; the lesser is taken, as in the paper.
- * @see P. Ineichen, R. Perez, Solar Energy 73, 151–157 (2002), eqs 7–9
+ * @param raiseLowSun  true: global raised by exp(0.01·m^1.8), the companion paper's correction for low sun; the design days go without
+ * @see P. Ineichen, R. Perez, Solar Energy 73, 151–157 (2002), eqs 7–9; R. Perez et al., Solar Energy 73, 307–317 (2002)
  */
-export function ineichenPerez(sun: ClearSun, linkeTurbidity: number): SplitSky {
+export function ineichenPerez(sun: ClearSun, linkeTurbidity: number, raiseLowSun = false): SplitSky {
   const up = Math.sin(sun.apparentAltitude_rad);
   if (!(up > 0)) return NO_SUN;
   const z = sun.elevation_m;
@@ -36,7 +37,8 @@ export function ineichenPerez(sun: ClearSun, linkeTurbidity: number): SplitSky {
   const f2 = Math.exp(-z / 1250);
   const c1 = 5.09e-5 * z + 0.868;
   const c2 = 3.92e-5 * z + 0.0387;
-  const global = c1 * sun.extraterrestrial_Wm2 * up * Math.exp(-c2 * m * (f1 + f2 * (linkeTurbidity - 1)));
+  const raise = raiseLowSun ? Math.exp(0.01 * m ** 1.8) : 1;
+  const global = raise * c1 * sun.extraterrestrial_Wm2 * up * Math.exp(-c2 * m * (f1 + f2 * (linkeTurbidity - 1)));
   const fromTurbidity = sun.extraterrestrial_Wm2 * (0.664 + 0.163 / f1) * Math.exp(-0.09 * m * (linkeTurbidity - 1));
   const fromGlobal = (global * Math.max(0, 1 - (0.1 - 0.2 * Math.exp(-linkeTurbidity)) / (0.1 + 0.882 / f1))) / up;
   const beam = Math.min(fromTurbidity, fromGlobal);
