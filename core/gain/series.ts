@@ -1,5 +1,6 @@
 /** The parts of the sun's heat that come in through a window, kept apart all the way to the report [W]. */
 export type Part = 'beam' | 'circumsolar' | 'sky' | 'horizon' | 'ground';
+/** Every part, in the order of reports. */
 export const PARTS: readonly Part[] = ['beam', 'circumsolar', 'sky', 'horizon', 'ground'];
 
 /**
@@ -16,8 +17,6 @@ export type WindowDay = {
   readonly cosIncidence: Float64Array;
   /** What the closed blinds leave of the glass's gain at each step, 1 where they are open. */
   readonly blind: Float64Array;
-  /** Irradiance on the plane of the glass with nothing in front of it, part by part [W/m²]. */
-  readonly open_Wm2: { readonly [P in Part]: Float64Array };
   readonly parts: { readonly [P in Part]: Float64Array };
   readonly total_W: Float64Array;
 };

@@ -1,4 +1,5 @@
 import type { Part } from '../gain/series.ts';
+import type { MetricId } from './metric-id.ts';
 
 export type Verdict = 'within' | 'close' | 'over';
 
@@ -29,7 +30,7 @@ export type Finding = {
   readonly roomName: string;
   /** Id of the limit in its set. */
   readonly limit: string;
-  readonly metric: string;
+  readonly metric: MetricId;
   readonly metricName: string;
   readonly unit: string;
   readonly value: number;
@@ -44,7 +45,11 @@ export type Finding = {
   readonly when: { readonly instant_ms: number; readonly text: string; readonly day: string } | null;
   /** The window that brings most, and its share 0..1. */
   readonly through: { readonly window: string; readonly share: number } | null;
-  /** Shares of the parts at that moment (or over that period), summing to 1. */
+  /** Key of the design day it was read on; null where it is of no single day. */
+  readonly day: string | null;
+  /** Clock hours that a mean was taken over. */
+  readonly clock: readonly [string, string] | null;
+  /** Shares of the parts at that moment (or over that period), summing to 1; all 0 where nothing comes in. */
   readonly parts: { readonly [P in Part]: number };
   /** One sentence: why. */
   readonly reason: string;

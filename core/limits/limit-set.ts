@@ -1,8 +1,4 @@
-import type { Working } from './finding.ts';
-export type { Working };
-
-/** What a limit may be set on. Add a metric here, its computation in core/limits/metrics.ts and its words in the catalogue. */
-export type MetricId = 'peak-gain' | 'mean-gain' | 'day-gain' | 'season-gain' | 'glazing-to-floor';
+import type { MetricId } from './metric-id.ts';
 
 /** One limit of a set: data, never code. */
 export type Limit = {

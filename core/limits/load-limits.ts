@@ -1,0 +1,125 @@
+import { clockMinutes } from '../gain/clock-window.ts';
+import { CHECK_DAYS } from '../gain/check-days.ts';
+import type { Checked, Fault } from '../scheme/fault.ts';
+import { LimitSetFile } from '../scheme/limit-schema.ts';
+import { sayIssue } from '../scheme/say-issue.ts';
+import { Room } from '../scheme/schema.ts';
+import type { LimitSet } from './limit-set.ts';
+import { isMetric, METRIC_IDS, METRICS } from './metric.ts';
+
+const USES: readonly string[] = Room.shape.use.options;
+const DAY_KEYS: readonly string[] = CHECK_DAYS.map((d) => d.key);
+const list = (words: readonly string[]): string => words.join(', ');
+
+/** The longest limit set that is read, in characters. */
+export const MAX_LIMITS_TEXT = 1024 * 1024;
+
+/**
+ * Read the text of a limit-set file. Nothing is repaired: either the whole set comes back, or every fault with its place in
+ * the file and what would cure it.
+ */
+export function parseLimitSet(text: string): Checked<LimitSet> {
+  if (text.length > MAX_LIMITS_TEXT)
+    return failed('too-large', 'the limit set is larger than 1 MB', 'a set is a short list; split it');
+  let parsed: unknown;
+  try {
+    parsed = JSON.parse(text.charCodeAt(0) === 0xfeff ? text.slice(1) : text);
+  } catch {
+    return failed('not-json', 'the limit set is not valid JSON', 'look for a missing comma, bracket or quote');
+  }
+  return checkLimitSet(parsed);
+}
+
+/**
+ * Check a limit set that has been read, such as one written into a scheme.
+ * @param place  where it stands, such as `limits` for the one in a scheme; empty for a file of its own
+ */
+export function checkLimitSet(parsed: unknown, place = ''): Checked<LimitSet> {
+  const at = (f: Fault): Fault => ({
+    ...f,
+    place: place === '' || f.place === '' ? place + f.place : `${place}.${f.place}`,
+  });
+  if (parsed === null || typeof parsed !== 'object' || Array.isArray(parsed))
+    return failed(
+      'not-a-limit-set',
+      'this is not a limit set',
+      'a set is an object with "format": "shadewright-limits"',
+    );
+  const read = LimitSetFile.safeParse(parsed);
+  if (!read.success) return { ok: false, faults: read.error.issues.flatMap((i) => sayIssue(i, parsed)).map(at) };
+  const faults = entryFaults(read.data).map(at);
+  const errors = faults.filter((f) => f.level === 'error');
+  return errors.length > 0
+    ? { ok: false, faults }
+    : { ok: true, value: read.data as LimitSet, notes: faults.filter((f) => f.level === 'warning') };
+}
+
+function failed(code: string, message: string, cure: string): Checked<never> {
+  return { ok: false, faults: [{ level: 'error', code, place: '', message, cure }] };
+}
+
+/** What the shape of the file cannot tell: metrics, days, uses and units that do not exist, ids used twice. */
+function entryFaults(set: LimitSetFile): Fault[] {
+  const faults: Fault[] = [];
+  const seen = new Map<string, number>();
+  const say = (place: string, code: string, message: string, cure: string): void => {
+    faults.push({ level: 'error', code, place, message, cure });
+  };
+  for (const [i, limit] of set.limits.entries()) {
+    const place = `limits[${i}]`;
+    const first = seen.get(limit.id);
+    if (first !== undefined)
+      say(
+        `${place}.id`,
+        'same-id',
+        `the id ${limit.id} is also that of limits[${first}]`,
+        'give each limit its own id',
+      );
+    else seen.set(limit.id, i);
+    if (!isMetric(limit.metric)) {
+      const cure = `the metrics are ${list(METRIC_IDS)}`;
+      say(`${place}.metric`, 'unknown-metric', `there is no metric ${JSON.stringify(limit.metric)}`, cure);
+      continue;
+    }
+    const metric = METRICS[limit.metric];
+    if (limit.unit !== metric.unit) {
+      const message = `${limit.metric} is in ${metric.unit}, got ${JSON.stringify(limit.unit)}`;
+      say(`${place}.unit`, 'wrong-unit', message, `write "unit": "${metric.unit}" and the value in it`);
+    }
+    if (limit.metric === 'mean-gain' && limit.clock === undefined)
+      say(
+        place,
+        'missing',
+        'a mean needs the clock hours it is taken over',
+        'add "clock": ["07:30", "17:30"] or your own hours',
+      );
+    if (limit.clock && clockMinutes(limit.clock[0]) === clockMinutes(limit.clock[1]))
+      say(`${place}.clock`, 'empty-stretch', 'the clock hours begin and end together', 'write two different times');
+    if (limit.days && !metric.byDay)
+      say(`${place}.days`, 'no-days', `${limit.metric} does not look at single days`, 'take days out');
+    for (const [k, day] of (limit.days ?? []).entries())
+      if (!DAY_KEYS.includes(day))
+        say(
+          `${place}.days[${k}]`,
+          'unknown-day',
+          `there is no design day ${JSON.stringify(day)}`,
+          `the days are ${list(DAY_KEYS)}`,
+        );
+    for (const [k, use] of (limit.uses ?? []).entries())
+      if (!USES.includes(use))
+        say(
+          `${place}.uses[${k}]`,
+          'unknown-use',
+          `there is no use ${JSON.stringify(use)}`,
+          `the uses are ${list(USES)}`,
+        );
+    if (limit.source.trim() === '')
+      say(
+        `${place}.source`,
+        'missing',
+        'the limit does not say where it comes from',
+        'name the code, page and edition, or "our own brief"',
+      );
+  }
+  return faults;
+}

@@ -1,0 +1,2 @@
+/** What a limit may be set on. Add a metric here, its words in metric.ts and its computation in reading.ts. */
+export type MetricId = 'peak-gain' | 'mean-gain' | 'day-gain' | 'season-gain' | 'glazing-to-floor';

@@ -1,0 +1,57 @@
+import type { MetricId } from './metric-id.ts';
+
+/** What may be measured and limited: its name as it stands in findings, its unit, and how it is reached. */
+export type Metric = {
+  readonly id: MetricId;
+  readonly name: string;
+  readonly unit: string;
+  readonly method: string;
+  /** Whether it looks at design days one by one. */
+  readonly byDay: boolean;
+};
+
+const GAIN =
+  'Solar heat through the glass, step by step: beam and circumsolar light times the sunlit share of the glass and g at the sun’s angle; light of dome, horizon and ground times what the window sees of each and the hemispherical g; less frame, less closed blinds';
+
+export const METRICS: { readonly [M in MetricId]: Metric } = {
+  'peak-gain': {
+    id: 'peak-gain',
+    name: 'peak solar gain per m² of floor',
+    unit: 'W/m²',
+    method: `${GAIN}. The highest step of the day, over the floor area.`,
+    byDay: true,
+  },
+  'mean-gain': {
+    id: 'mean-gain',
+    name: 'mean solar gain per m² of floor',
+    unit: 'W/m²',
+    method: `${GAIN}. The mean over the clock hours named, over the floor area.`,
+    byDay: true,
+  },
+  'day-gain': {
+    id: 'day-gain',
+    name: 'solar gain of the day per m² of floor',
+    unit: 'Wh/m²',
+    method: `${GAIN}. Summed over the day, over the floor area.`,
+    byDay: true,
+  },
+  'season-gain': {
+    id: 'season-gain',
+    name: 'solar gain of the warm half-year per m² of floor, every day clear',
+    unit: 'kWh/m²',
+    method: `${GAIN}. The clear 21st of each of the six warm months times the days of the month, over the floor area: what a season without cloud would bring.`,
+    byDay: false,
+  },
+  'glazing-to-floor': {
+    id: 'glazing-to-floor',
+    name: 'window openings as a share of the floor',
+    unit: '%',
+    method: 'The openings of the room’s windows, frames included, over its floor area.',
+    byDay: false,
+  },
+};
+
+export const METRIC_IDS = Object.keys(METRICS) as readonly MetricId[];
+
+/** Whether a text names a metric. */
+export const isMetric = (id: string): id is MetricId => Object.hasOwn(METRICS, id);
