@@ -1,7 +1,7 @@
-import type { Ring } from '../plane/vec.ts';
+import type { Region } from '../plane/region.ts';
 
 /** A region of the plane: an outer ring (anticlockwise) with its holes (clockwise), in metres of drawing axes (x, y). */
-export type Region = { readonly outer: Ring; readonly holes: readonly Ring[] };
+export type { Region };
 
 /** Shadow on level ground at one moment. Ground under a building that stands at that stage is not ground and never counts. */
 export type GroundShadow = {
