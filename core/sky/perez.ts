@@ -37,12 +37,17 @@ export type PerezSky = {
 };
 
 /**
- * Clearness and brightness of a sky. Without any diffuse light there is no sky to describe: class 1, brightness 0.
+ * Clearness and brightness of a sky. Without diffuse light the clearness has no bound (class 8, brightness 0); without any
+ * light at all it is called overcast (class 1).
  * @see R. Perez et al., Solar Energy 44, 271–289 (1990), eqs 1 and 2, with κ = 1.041 for the zenith angle in radians
  */
 export function perezSky(input: PerezInput): PerezSky {
   const { beamNormal_Wm2: beam, diffuse_Wm2: diffuse, zenith_rad: z } = input;
-  if (!(diffuse > 0)) return { clearness: 1, brightness: 0, bin: 1 };
+  if (!(diffuse > 0)) {
+    return beam > 0
+      ? { clearness: Number.POSITIVE_INFINITY, brightness: 0, bin: 8 }
+      : { clearness: 1, brightness: 0, bin: 1 };
+  }
   const k = 1.041 * z ** 3;
   const clearness = ((diffuse + beam) / diffuse + k) / (1 + k);
   let bin = 1;
