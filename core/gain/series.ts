@@ -3,12 +3,6 @@ export type Part = 'beam' | 'circumsolar' | 'sky' | 'horizon' | 'ground';
 /** Every part, in the order of reports. */
 export const PARTS: readonly Part[] = ['beam', 'circumsolar', 'sky', 'horizon', 'ground'];
 
-/**
- * How the light of the sky is spread over the dome. `isotropic`: evenly. `perez`: brighter round the sun and along the horizon,
- * as measured (Perez and others 1990); each part is then shaded in its own way.
- */
-export type SkyModel = 'isotropic' | 'perez';
-
 /** What one window takes in on one day: watts through the opening at each step, part by part, and what led there. */
 export type WindowDay = {
   readonly window: string;

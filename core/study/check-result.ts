@@ -1,8 +1,9 @@
-import type { RoomDay, SkyModel } from '../gain/series.ts';
+import type { RoomDay } from '../gain/series.ts';
 import type { Finding } from '../limits/finding.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
 import type { Fault } from '../scheme/fault.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
+import type { SkyModel } from '../sky/transpose.ts';
 
 /** Everything that a check of a scheme gives: findings, and the columns that they were read from. */
 export type CheckResult = {
