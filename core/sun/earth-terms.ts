@@ -1,3 +1,4 @@
+// biome-ignore-all lint/suspicious/noApproximativeNumericConstant: phases as the paper prints them, 3.142 among them
 /**
  * Where the Earth is in its orbit: the planetary series of the solar position algorithm.
  *
