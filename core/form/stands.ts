@@ -8,4 +8,5 @@ export function stands(standing: Standing, stage: Stage): boolean {
 }
 
 /** The solids that stand at a stage, in the order of the scheme. */
-export const solidsAt = (solids: readonly Solid[], stage: Stage): readonly Solid[] => solids.filter((s) => stands(s.standing, stage));
+export const solidsAt = (solids: readonly Solid[], stage: Stage): readonly Solid[] =>
+  solids.filter((s) => stands(s.standing, stage));
