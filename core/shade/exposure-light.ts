@@ -1,0 +1,138 @@
+import { columnOf } from './skyline-columns.ts';
+
+/**
+ * Where light comes from and how much of it: sun samples as unit vectors in drawing axes. One row a sample; only samples
+ * that count (above the horizon or the scheme's low sun) belong here.
+ */
+export type Light = {
+  readonly sx: Float64Array;
+  readonly sy: Float64Array;
+  readonly sz: Float64Array;
+  /** What a sample adds to the sun time [min]. */
+  readonly minutes: Float64Array;
+  /** What a sample adds on a plane square to it [Wh/m²]. */
+  readonly beam: Float64Array;
+};
+
+/** Light sorted into azimuth columns, within a column by altitude. */
+export type LightColumns = Light & {
+  readonly count: number;
+  /** Column c holds the samples `start[c]` to `start[c + 1]` (exclusive). */
+  readonly start: Uint32Array;
+  /** Tangent of the altitude, rising within a column. */
+  readonly tan: Float64Array;
+  /** Row of each sample in the light that it came from. */
+  readonly source: Uint32Array;
+};
+
+/** Light on one plane: the samples in front of it, with running sums so that a run of samples costs one subtraction. */
+export type PlaneLight = {
+  readonly count: number;
+  readonly start: Uint32Array;
+  readonly tan: Float64Array;
+  readonly sx: Float64Array;
+  readonly sy: Float64Array;
+  readonly sz: Float64Array;
+  readonly source: Uint32Array;
+  /** `minutesBefore[i]`: minutes of the samples before i; one entry more than samples. */
+  readonly minutesBefore: Float64Array;
+  /** The same for the beam on the plane, cosine of incidence included [Wh/m²]. */
+  readonly beamBefore: Float64Array;
+  /** First sample of column c whose altitude reaches level l: entry c · (LEVELS + 1) + l. @see levelOf */
+  readonly level: Uint32Array;
+  /** Tangent of the lowest altitude in each column; infinite where there is no sample. */
+  readonly lowest: Float64Array;
+};
+
+/** Steps of altitude that shorten the search in a column. */
+export const LEVELS = 64;
+
+/** The level of an altitude, from its tangent: t / (1 + t) grows steadily from 0 to 1. */
+export const levelOf = (tan: number): number => (tan < 1e9 ? Math.floor((tan / (1 + tan)) * LEVELS) : LEVELS);
+
+/** Number of columns that suits a number of samples: few samples want few columns. A multiple of 16. */
+export function columnsFor(samples: number): number {
+  return Math.min(720, Math.max(16, 16 * Math.round(samples / 480)));
+}
+
+/** Sorts light into columns. @param count number of columns, a multiple of 4 @throws {RangeError} for a sample at or below the horizon */
+export function sortLight(light: Light, count: number): LightColumns {
+  const n = light.sx.length;
+  const column = new Uint32Array(n);
+  const rise = new Float64Array(n);
+  for (let i = 0; i < n; i++) {
+    if (!(light.sz[i]! > 0)) throw new RangeError('only light from above the horizon can be sorted into columns');
+    const x = light.sx[i]!;
+    const y = light.sy[i]!;
+    column[i] = x === 0 && y === 0 ? 0 : columnOf(count, x, y);
+    rise[i] = light.sz[i]! / Math.hypot(x, y);
+  }
+  const order = Uint32Array.from({ length: n }, (_, i) => i).sort(
+    (a, b) => column[a]! - column[b]! || rise[a]! - rise[b]! || a - b,
+  );
+  const start = new Uint32Array(count + 1);
+  for (let i = 0; i < n; i++) start[column[i]! + 1]!++;
+  for (let c = 0; c < count; c++) start[c + 1]! += start[c]!;
+  const by = (column: Float64Array): Float64Array => Float64Array.from(order, (i) => column[i]!);
+  return {
+    count,
+    start,
+    source: order,
+    tan: by(rise),
+    sx: by(light.sx),
+    sy: by(light.sy),
+    sz: by(light.sz),
+    minutes: by(light.minutes),
+    beam: by(light.beam),
+  };
+}
+
+/**
+ * The part of the light that stands in front of a plane.
+ * @param normal unit normal of the plane in drawing axes
+ */
+export function lightOnPlane(light: LightColumns, normal: readonly [number, number, number]): PlaneLight {
+  const [nx, ny, nz] = normal;
+  const all = light.sx.length;
+  const cosine = new Float64Array(all);
+  let n = 0;
+  for (let i = 0; i < all; i++) {
+    const cos = nx * light.sx[i]! + ny * light.sy[i]! + nz * light.sz[i]!;
+    cosine[i] = cos;
+    if (cos > 0) n++;
+  }
+  const { count } = light;
+  const start = new Uint32Array(count + 1);
+  const tan = new Float64Array(n);
+  const sx = new Float64Array(n);
+  const sy = new Float64Array(n);
+  const sz = new Float64Array(n);
+  const source = new Uint32Array(n);
+  const minutesBefore = new Float64Array(n + 1);
+  const beamBefore = new Float64Array(n + 1);
+  const level = new Uint32Array(count * (LEVELS + 1));
+  const lowest = new Float64Array(count).fill(Infinity);
+  let k = 0;
+  for (let c = 0; c < count; c++) {
+    start[c] = k;
+    let filled = 0;
+    const row = c * (LEVELS + 1);
+    for (let i = light.start[c]!; i < light.start[c + 1]!; i++) {
+      if (!(cosine[i]! > 0)) continue;
+      tan[k] = light.tan[i]!;
+      sx[k] = light.sx[i]!;
+      sy[k] = light.sy[i]!;
+      sz[k] = light.sz[i]!;
+      source[k] = light.source[i]!;
+      minutesBefore[k + 1] = minutesBefore[k]! + light.minutes[i]!;
+      beamBefore[k + 1] = beamBefore[k]! + light.beam[i]! * cosine[i]!;
+      const l = levelOf(tan[k]!);
+      while (filled <= l) level[row + filled++] = k;
+      k++;
+    }
+    while (filled <= LEVELS) level[row + filled++] = k;
+    if (k > start[c]!) lowest[c] = tan[start[c]!]!;
+  }
+  start[count] = k;
+  return { count, start, tan, sx, sy, sz, source, minutesBefore, beamBefore, level, lowest };
+}

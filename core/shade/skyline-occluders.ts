@@ -1,0 +1,87 @@
+import type { Shader, Solid } from '../form/model.ts';
+import { signedArea } from '../plane/ring.ts';
+import type { Point, Ring } from '../plane/vec.ts';
+
+/** Numbers of one wall in `Occluders.walls`: x and y of its two corners, base, top. */
+export const WALL = 6;
+
+/**
+ * Everything that can hide the sun at one stage, as plain columns that go to a worker as they are. Walls are the outside
+ * faces of solids, each with level edges; seen from outside they run clockwise. Patches are flat convex polygons in space:
+ * undersides of solids, overhangs, fins, blades, and walls once more, for whoever stands below them.
+ */
+export type Occluders = {
+  readonly walls: Float64Array;
+  /** Number of the solid that a wall belongs to. */
+  readonly wallSolid: Uint32Array;
+  /** The same wall as a patch, for receptors below its base. */
+  readonly wallPatch: Uint32Array;
+  readonly solidCount: number;
+  readonly solidBase: Float64Array;
+  readonly solidTop: Float64Array;
+  /** Walls of solid s: `solidWall[s]` to `solidWall[s + 1]` (exclusive), in the order of its outline. */
+  readonly solidWall: Uint32Array;
+  /** Patches that are no wall: undersides first, then shaders. */
+  readonly loosePatch: Uint32Array;
+  /** Corners of patch p: `patchCorner[p]` to `patchCorner[p + 1]`, three numbers each in `corners`. */
+  readonly patchCorner: Uint32Array;
+  readonly corners: Float64Array;
+};
+
+/**
+ * The occluders of solids and flat shaders. The order of either changes nothing but the order of the columns.
+ * @throws {RangeError} for a corner that is not finite
+ */
+export function makeOccluders(solids: readonly Solid[], shaders: readonly Shader[]): Occluders {
+  const walls: number[] = [];
+  const wallSolid: number[] = [];
+  const wallPatch: number[] = [];
+  const loosePatch: number[] = [];
+  const solidWall = new Uint32Array(solids.length + 1);
+  const corners: number[] = [];
+  const patchCorner: number[] = [0];
+  const finish = (): number => patchCorner.push(corners.length / 3) - 2;
+  solids.forEach((solid, s) => {
+    const { outline, base_m, top_m } = solid;
+    outline.forEach((a, i) => {
+      const b = outline[(i + 1) % outline.length] as Point;
+      if (a[0] === b[0] && a[1] === b[1]) return;
+      walls.push(a[0], a[1], b[0], b[1], base_m, top_m);
+      wallSolid.push(s);
+      corners.push(a[0], a[1], base_m, b[0], b[1], base_m, b[0], b[1], top_m, a[0], a[1], top_m);
+      wallPatch.push(finish());
+    });
+    solidWall[s + 1] = wallSolid.length;
+    for (const piece of solid.pieces) {
+      if (signedArea(piece) <= 0) continue;
+      for (const p of piece) corners.push(p[0], p[1], base_m);
+      loosePatch.push(finish());
+    }
+  });
+  for (const shader of shaders) {
+    for (const p of shader.corners) corners.push(p[0], p[1], p[2]);
+    loosePatch.push(finish());
+  }
+  const result: Occluders = {
+    walls: Float64Array.from(walls),
+    wallSolid: Uint32Array.from(wallSolid),
+    wallPatch: Uint32Array.from(wallPatch),
+    loosePatch: Uint32Array.from(loosePatch),
+    solidCount: solids.length,
+    solidBase: Float64Array.from(solids, (s) => s.base_m),
+    solidTop: Float64Array.from(solids, (s) => s.top_m),
+    solidWall,
+    patchCorner: Uint32Array.from(patchCorner),
+    corners: Float64Array.from(corners),
+  };
+  if (![...result.walls, ...result.corners].every(Number.isFinite))
+    throw new RangeError('a corner is not a finite number');
+  return result;
+}
+
+/** The outline of solid s, as its walls run. */
+export function outlineOfSolid(o: Occluders, s: number): Ring {
+  const ring: Point[] = [];
+  for (let w = o.solidWall[s]!; w < o.solidWall[s + 1]!; w++) ring.push([o.walls[w * WALL]!, o.walls[w * WALL + 1]!]);
+  return ring;
+}

@@ -1,0 +1,301 @@
+import type { Occluders } from './skyline-occluders.ts';
+import { rankOf, SLACK, type Skyline } from './skyline.ts';
+
+/**
+ * What a flat convex patch in space hides: undersides and walls of floating solids, overhangs, fins, blades. Seen from a
+ * point its edges are great circles, so over azimuth their altitudes are cosines, and in one column of azimuth a patch hides
+ * one stretch of altitude. Where the patch spans a column, the samples that certainly lie inside or outside are found by
+ * altitude; the few between are tested one by one against the planes through the point and the patch's edges. Exact, as in
+ * `raiseWalls`.
+ */
+export type PatchScratch = {
+  /** Per edge of a column: lowest and highest altitude (tangent) of the patch there, and how many of its edges pass. */
+  readonly low: Float64Array;
+  readonly high: Float64Array;
+  readonly passes: Uint8Array;
+  /** Per column: lowest and highest corner in it. */
+  readonly cornerLow: Float64Array;
+  readonly cornerHigh: Float64Array;
+  readonly touched: Uint8Array;
+  readonly list: Uint32Array;
+  /** Corners relative to the receptor, and the normals of the planes through it and each edge; grown as needed. */
+  relative: Float64Array;
+  planes: Float64Array;
+};
+
+export function makePatchScratch(columns: number): PatchScratch {
+  return {
+    low: new Float64Array(columns + 1),
+    high: new Float64Array(columns + 1),
+    passes: new Uint8Array(columns + 1),
+    cornerLow: new Float64Array(columns),
+    cornerHigh: new Float64Array(columns),
+    touched: new Uint8Array(columns),
+    list: new Uint32Array(columns),
+    relative: new Float64Array(3 * 16),
+    planes: new Float64Array(3 * 16),
+  };
+}
+
+/** Nearer to the plane of a patch than this share of its size, a receptor sees it edge-on, and it hides nothing. */
+const EDGE_ON = 1e-9;
+
+/**
+ * Hides the samples behind one patch. To be called after `raiseWalls`.
+ * @param lift  added to the height of every corner; used where a wall is read as a patch
+ */
+export function hidePatch(
+  s: Skyline,
+  p: PatchScratch,
+  corners: Float64Array,
+  from: number,
+  to: number,
+  x: number,
+  y: number,
+  z: number,
+): void {
+  const n = to - from;
+  if (p.relative.length < 3 * n) {
+    p.relative = new Float64Array(6 * n);
+    p.planes = new Float64Array(6 * n);
+  }
+  const { relative } = p;
+  let above = false;
+  for (let i = 0; i < n; i++) {
+    const o = 3 * (from + i);
+    relative[3 * i] = corners[o]! - x;
+    relative[3 * i + 1] = corners[o + 1]! - y;
+    relative[3 * i + 2] = corners[o + 2]! - z;
+    if (relative[3 * i + 2]! > 0) above = true;
+  }
+  if (n < 3 || !above) return;
+  const facing = orient(p, n);
+  if (facing === 0) return;
+  let zenith = true;
+  let nadir = true;
+  for (let i = 0; i < n; i++) {
+    const mz = p.planes[3 * i + 2]!;
+    if (mz < 0) zenith = false;
+    if (mz > 0) nadir = false;
+  }
+  const touched = traceEdges(s, p, n);
+  for (let k = 0; k < touched; k++) hideInColumn(s, p, n, p.list[k]!, zenith, nadir);
+  clear(s, p, touched);
+}
+
+/** Planes through the receptor and each edge, turned so that directions inside the patch lie in front of all. @returns 0 when seen edge-on */
+function orient(p: PatchScratch, n: number): number {
+  const { relative, planes } = p;
+  let nx = 0;
+  let ny = 0;
+  let nz = 0;
+  let size = 0;
+  for (let i = 0; i < n; i++) {
+    const a = 3 * i;
+    const b = 3 * ((i + 1) % n);
+    const ax = relative[a]!;
+    const ay = relative[a + 1]!;
+    const az = relative[a + 2]!;
+    const bx = relative[b]!;
+    const by = relative[b + 1]!;
+    const bz = relative[b + 2]!;
+    planes[a] = ay * bz - az * by;
+    planes[a + 1] = az * bx - ax * bz;
+    planes[a + 2] = ax * by - ay * bx;
+    nx += planes[a]!;
+    ny += planes[a + 1]!;
+    nz += planes[a + 2]!;
+    size = Math.max(size, Math.abs(ax) + Math.abs(ay) + Math.abs(az));
+  }
+  // The sum of the edges' planes is twice the area times the normal: the receptor's own offset cancels round the outline.
+  const offset = nx * relative[0]! + ny * relative[1]! + nz * relative[2]!;
+  if (!(Math.abs(offset) > EDGE_ON * size * (Math.abs(nx) + Math.abs(ny) + Math.abs(nz)))) return 0;
+  const sign = offset > 0 ? 1 : -1;
+  if (sign < 0) for (let i = 0; i < 3 * n; i++) planes[i] = -planes[i]!;
+  return sign;
+}
+
+/** Writes where edges and corners of the patch pass the columns. @returns how many columns are touched */
+function traceEdges(s: Skyline, p: PatchScratch, n: number): number {
+  const { count, ux, uy } = s.columns;
+  const { relative, planes, low, high, passes, cornerLow, cornerHigh, touched, list } = p;
+  let kept = 0;
+  const touch = (c: number): void => {
+    if (touched[c] === 1) return;
+    touched[c] = 1;
+    cornerLow[c] = Infinity;
+    cornerHigh[c] = -Infinity;
+    list[kept++] = c;
+  };
+  const columnOf = (x: number, y: number): number => {
+    const f = x / (Math.abs(x) + Math.abs(y));
+    const c = ((y >= 0 ? 1 - f : 3 + f) * (count / 4)) | 0;
+    return c < count ? c : 0;
+  };
+  for (let i = 0; i < n; i++) {
+    const a = 3 * i;
+    const b = 3 * ((i + 1) % n);
+    const ax = relative[a]!;
+    const ay = relative[a + 1]!;
+    const bx = relative[b]!;
+    const by = relative[b + 1]!;
+    const reach = Math.sqrt(ax * ax + ay * ay);
+    if (reach > 0) {
+      const c = columnOf(ax, ay);
+      const t = relative[a + 2]! / reach;
+      touch(c);
+      if (t < cornerLow[c]!) cornerLow[c] = t;
+      if (t > cornerHigh[c]!) cornerHigh[c] = t;
+    }
+    const turn = ax * by - ay * bx;
+    if (turn === 0 || reach === 0 || (bx === 0 && by === 0)) continue;
+    // Anticlockwise from the first column to the last.
+    const first = turn > 0 ? columnOf(ax, ay) : columnOf(bx, by);
+    const last = turn > 0 ? columnOf(bx, by) : columnOf(ax, ay);
+    const steps = last >= first ? last - first : last - first + count;
+    if (steps > count / 2 + 1) continue;
+    const kx = -planes[a]! / planes[a + 2]!;
+    const ky = -planes[a + 1]! / planes[a + 2]!;
+    let c = first;
+    touch(c);
+    for (let j = 0; j < steps; j++) {
+      if (++c === count) c = 0;
+      touch(c);
+      const t = kx * ux[c]! + ky * uy[c]!;
+      if (passes[c] === 0) {
+        low[c] = t;
+        high[c] = t;
+      } else if (t < low[c]!) low[c] = t;
+      else if (t > high[c]!) high[c] = t;
+      passes[c]!++;
+    }
+  }
+  return kept;
+}
+
+function clear(s: Skyline, p: PatchScratch, touched: number): void {
+  const { count } = s.columns;
+  for (let k = 0; k < touched; k++) {
+    const c = p.list[k]!;
+    p.touched[c] = 0;
+    p.passes[c] = 0;
+    p.passes[c + 1 === count ? 0 : c + 1] = 0;
+  }
+}
+
+/** Hides what a patch hides in one column. */
+function hideInColumn(s: Skyline, p: PatchScratch, n: number, c: number, zenith: boolean, nadir: boolean): void {
+  const { light, floor, ceiling } = s;
+  const start = floor[c]!;
+  const end = ceiling[c]!;
+  if (start >= end) return;
+  const { count, bulge } = s.columns;
+  const e = c + 1 === count ? 0 : c + 1;
+  const round = zenith || nadir;
+  // What passes a column's edge: the bottom and the top of the patch; only one of them where it stands all round.
+  const want = round ? 1 : 2;
+  const whole = p.passes[c] === want && p.passes[e] === want;
+  const odd = (p.passes[c] !== 0 && p.passes[c] !== want) || (p.passes[e] !== 0 && p.passes[e] !== want);
+  let lowMost = p.cornerLow[c]!;
+  let highMost = p.cornerHigh[c]!;
+  if (p.passes[c]! > 0) {
+    if (p.low[c]! < lowMost) lowMost = p.low[c]!;
+    if (p.high[c]! > highMost) highMost = p.high[c]!;
+  }
+  if (p.passes[e]! > 0) {
+    if (p.low[e]! < lowMost) lowMost = p.low[e]!;
+    if (p.high[e]! > highMost) highMost = p.high[e]!;
+  }
+  if (odd || nadir || (round && !whole)) lowMost = -Infinity;
+  if (odd || zenith || (round && !whole)) highMost = Infinity;
+  if (!(highMost > 0)) return;
+  const mayFrom = clamp(rankOf(light, c, lowMost * (1 - SLACK)), start, end);
+  const mayTo = clamp(rankOf(light, c, highMost * bulge * (1 + 2 * SLACK)), start, end);
+  if (mayFrom >= mayTo) return;
+  let sureFrom = mayTo;
+  let sureTo = mayTo;
+  if (whole) {
+    const low = nadir ? 0 : Math.max(p.low[c]!, p.low[e]!) * bulge * (1 + SLACK);
+    const high = zenith ? Infinity : Math.min(p.high[c]!, p.high[e]!) * (1 - SLACK);
+    const a = clamp(rankOf(light, c, low), mayFrom, mayTo);
+    const b = high > 0 ? clamp(rankOf(light, c, high), mayFrom, mayTo) : mayFrom;
+    if (b > a) {
+      sureFrom = a;
+      sureTo = b;
+    }
+  }
+  hideRun(s, c, sureFrom, sureTo);
+  testRun(s, p, n, c, mayFrom, sureFrom);
+  testRun(s, p, n, c, sureTo, mayTo);
+}
+
+const clamp = (v: number, from: number, to: number): number => (v < from ? from : v > to ? to : v);
+
+/** Opens ranks of a column for marks. */
+function openRun(s: Skyline, c: number, from: number, to: number): void {
+  const { openFrom, openTo, mark } = s;
+  if (openTo[c]! <= openFrom[c]! || openTo[c] === 0) {
+    openFrom[c] = from;
+    openTo[c] = to;
+    for (let i = from; i < to; i++) mark[i] = 0;
+    return;
+  }
+  for (let i = from; i < openFrom[c]!; i++) mark[i] = 0;
+  for (let i = openTo[c]!; i < to; i++) mark[i] = 0;
+  if (from < openFrom[c]!) openFrom[c] = from;
+  if (to > openTo[c]!) openTo[c] = to;
+}
+
+/** Hides a run of ranks: from the bottom or the top of what is still seen by moving that end, else by marks. */
+function hideRun(s: Skyline, c: number, from: number, to: number): void {
+  if (from >= to) return;
+  const { floor, ceiling, mark } = s;
+  if (from <= floor[c]!) {
+    if (to > floor[c]!) floor[c] = to;
+  } else if (to >= ceiling[c]!) {
+    if (from < ceiling[c]!) ceiling[c] = from;
+  } else {
+    openRun(s, c, from, to);
+    for (let i = from; i < to; i++) mark[i] = 1;
+  }
+}
+
+/** Tests ranks one by one against the planes through the patch's edges. */
+function testRun(s: Skyline, p: PatchScratch, n: number, c: number, from: number, to: number): void {
+  const a = Math.max(from, s.floor[c]!);
+  const b = Math.min(to, s.ceiling[c]!);
+  if (a >= b) return;
+  const { sx, sy, sz } = s.light;
+  const { planes } = p;
+  let opened = false;
+  for (let i = a; i < b; i++) {
+    const x = sx[i]!;
+    const y = sy[i]!;
+    const z = sz[i]!;
+    let inside = true;
+    for (let k = 0; k < 3 * n && inside; k += 3) inside = planes[k]! * x + planes[k + 1]! * y + planes[k + 2]! * z >= 0;
+    if (!inside) continue;
+    if (!opened) {
+      openRun(s, c, a, b);
+      opened = true;
+    }
+    s.mark[i] = 1;
+  }
+}
+
+/** Hides the samples behind patches of the occluders, by number. */
+export function hidePatches(
+  s: Skyline,
+  p: PatchScratch,
+  o: Occluders,
+  list: Uint32Array,
+  n: number,
+  x: number,
+  y: number,
+  z: number,
+): void {
+  for (let k = 0; k < n; k++) {
+    const patch = list[k]!;
+    hidePatch(s, p, o.corners, o.patchCorner[patch]!, o.patchCorner[patch + 1]!, x, y, z);
+  }
+}
