@@ -1,0 +1,166 @@
+import type { Checked } from '../../scheme/fault.ts';
+import { cellText, cutCells } from './cells.ts';
+import { checkTimes } from './check-times.ts';
+import { checkValues } from './check-values.ts';
+import { FaultList } from './fault-list.ts';
+import { fillGaps } from './fill-gaps.ts';
+import type { RowPlan } from './plan.ts';
+import { stampInstant_ms } from './time-form.ts';
+import type { Quantity, WeatherYear } from './weather-year.ts';
+
+/** A year in steps of a minute; more is no year of weather. */
+const MOST_ROWS = 366 * 24 * 60;
+
+/** The rows as they stand in the file, before they are checked against each other. */
+type Raw = {
+  readonly label_ms: Float64Array;
+  readonly month: Uint8Array;
+  readonly day: Uint8Array;
+  readonly line: Int32Array;
+  readonly values: readonly Float64Array[];
+  readonly rows: number;
+};
+
+/** Reads the rows of a file by its plan and checks them: cells, times, whole year, units, gaps. */
+export function readRows(plan: RowPlan): Checked<WeatherYear> {
+  const faults = new FaultList();
+  const raw = scan(plan, faults);
+  if (faults.failed) return { ok: false, faults: faults.all() };
+  const step_min = checkTimes(raw, faults);
+  if (faults.failed || step_min === null) return { ok: false, faults: faults.all() };
+  const none = { global_Wm2: null, beamNormal_Wm2: null, diffuse_Wm2: null, tAir_C: null, dewPoint_C: null };
+  const columns: { [Q in Quantity]: Float64Array | null } = {
+    ...none,
+    relativeHumidity_pct: null,
+    pressure_hPa: null,
+    windSpeed_ms: null,
+    groundReflectance: null,
+  };
+  plan.columns.forEach(({ quantity, index, conversion }, k) => {
+    const column = raw.values[k] as Float64Array;
+    const factor = conversion.factor(step_min);
+    for (let i = 0; i < column.length; i++) column[i] = (column[i]! + conversion.shift) * factor;
+    const head = plan.heads[index] ?? quantity;
+    const usable =
+      checkValues(quantity, column, head, raw.line, faults) && fillGaps(quantity, column, head, raw.line, faults);
+    columns[quantity] = usable ? column : null;
+  });
+  if (faults.failed) return { ok: false, faults: faults.all() };
+  return { ok: true, value: { ...intervals(plan, raw, step_min), columns }, notes: faults.all() };
+}
+
+function scan(plan: RowPlan, faults: FaultList): Raw {
+  const { lines, firstRow, heads, time, columns } = plan;
+  const most = Math.min(MOST_ROWS, Math.max(0, lines.length - firstRow));
+  const raw = {
+    label_ms: new Float64Array(most),
+    month: new Uint8Array(most),
+    day: new Uint8Array(most),
+    line: new Int32Array(most),
+    values: columns.map(() => new Float64Array(most)),
+  };
+  const starts = new Int32Array(heads.length + 2);
+  const delimiter = plan.delimiter.charCodeAt(0);
+  const missing = new Set(['', ...plan.missing]);
+  let rows = 0;
+  for (let at = firstRow; at < lines.length && !faults.hopeless; at++) {
+    const line = lines[at] as string;
+    const blank = line.trim() === '';
+    if (blank && plan.endsAtBlank) break;
+    if (blank && isRestBlank(lines, at)) break;
+    if (rows >= most) {
+      faults.add(
+        'error',
+        'too-long',
+        `line ${at + 1}`,
+        `more than ${MOST_ROWS} rows`,
+        'give one year, in steps of a minute or longer',
+      );
+      break;
+    }
+    const place = `line ${at + 1}`;
+    const cells = cutCells(line, delimiter, starts);
+    if (cells !== heads.length) {
+      const cut = cells < heads.length && isRestBlank(lines, at + 1);
+      const message = `${cells} cells where the head has ${heads.length}`;
+      if (cut)
+        faults.add(
+          'error',
+          'cut-short',
+          place,
+          `the last row breaks off: ${message}`,
+          'the file is cut short; fetch it again',
+        );
+      else faults.add('error', 'cells', place, message, 'mend the row, or check the delimiter');
+      continue;
+    }
+    const text = time.columns.map((c) => cellText(line, starts, c)).join(' ');
+    const stamp = time.form.read(text, time.year);
+    if (!stamp) {
+      faults.add(
+        'error',
+        'time',
+        place,
+        `\`${text}\` is no time of the form that was given`,
+        'check the form and the columns of the time',
+      );
+      continue;
+    }
+    raw.label_ms[rows] = stampInstant_ms(stamp, time.ahead_min);
+    raw.month[rows] = stamp.month;
+    raw.day[rows] = stamp.day;
+    raw.line[rows] = at + 1;
+    for (let k = 0; k < columns.length; k++) {
+      const { index } = columns[k] as RowPlan['columns'][number];
+      const cell = cellText(line, starts, index);
+      const value = missing.has(cell) ? Number.NaN : Number(plan.decimal === ',' ? cell.replace(',', '.') : cell);
+      if (Number.isNaN(value) && !missing.has(cell)) {
+        faults.add(
+          'error',
+          'number',
+          `${place}, ${heads[index]}`,
+          `\`${cell}\` is not a number`,
+          'mend the cell, or name the mark for missing values',
+        );
+      }
+      raw.values[k]![rows] = value;
+    }
+    rows++;
+  }
+  if (rows === 0 && !faults.failed)
+    faults.add('error', 'empty', '', 'there are no rows', 'choose a file with a year of rows below its heads');
+  return {
+    label_ms: raw.label_ms.subarray(0, rows),
+    month: raw.month.subarray(0, rows),
+    day: raw.day.subarray(0, rows),
+    line: raw.line.subarray(0, rows),
+    values: raw.values.map((v) => v.subarray(0, rows)),
+    rows,
+  };
+}
+
+const isRestBlank = (lines: readonly string[], from: number): boolean => {
+  for (let i = from; i < lines.length; i++) if ((lines[i] as string).trim() !== '') return false;
+  return true;
+};
+
+/** From printed times to the intervals that they stand for. */
+function intervals(plan: RowPlan, raw: Raw, step_min: number): Omit<WeatherYear, 'columns'> {
+  const step_ms = step_min * 60_000;
+  // Minutes from the printed time to the start of the interval.
+  const before_min =
+    plan.shift_min - { start: 0, middle: step_min / 2, instant: step_min / 2, end: step_min }[plan.label];
+  const start_ms = raw.label_ms.map((t) => t + before_min * 60_000);
+  return {
+    kind: plan.kind,
+    place: plan.place,
+    rows: raw.rows,
+    step_min,
+    label: plan.label,
+    start_ms,
+    end_ms: start_ms.map((t) => t + step_ms),
+    airOffset_min: plan.air === 'mean' ? null : -before_min - step_min / 2,
+    month: raw.month.slice(),
+    day: raw.day.slice(),
+  };
+}
