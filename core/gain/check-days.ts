@@ -40,7 +40,8 @@ export const monthKey = (month: number): string => `month-${month}`;
 /** Days of a month in a year of the Gregorian calendar. @param month 1..12 */
 export const daysInMonth = (year: number, month: number): number => new Date(Date.UTC(year, month, 0)).getUTCDate();
 
-type DayOf = { readonly key: string; readonly name: string; readonly date: string };
+/** A day to be run: its key, its name and its civil date. */
+export type DayOf = { readonly key: string; readonly name: string; readonly date: string };
 
 /**
  * The days that a check looks at, with their dates in the scheme's year.

@@ -3,6 +3,9 @@ export type Part = 'beam' | 'circumsolar' | 'sky' | 'horizon' | 'ground';
 /** Every part, in the order of reports. */
 export const PARTS: readonly Part[] = ['beam', 'circumsolar', 'sky', 'horizon', 'ground'];
 
+/** Shares of dome and ground light that reach the glass (cosine-weighted, open vertical glass 0.5) and the visible share of the horizon. */
+export type WindowSeen = { readonly sky: number; readonly horizon: number; readonly ground: number };
+
 /** What one window takes in on one day: watts through the opening at each step, part by part, and what led there. */
 export type WindowDay = {
   readonly window: string;

@@ -47,14 +47,19 @@ function againstLimit({ reading, metric, judged }: ReasonInput): string {
   return `${shown(reading.value)} ${unit}, ${shown(Math.abs(gap))} ${side} the limit of ${shown(judged.value)}`;
 }
 
+/** A day's name as it stands in a sentence: a date as it is, anything else with its article. */
+const dayWords = (name: string): string => (/^\d/.test(name) ? name : `the ${name}`);
+
 function whenWords({ reading, days, metric, clock }: ReasonInput): string {
   const grid = days.grids.find((g) => g.key === reading.day);
   if (!grid) return metric === 'season-gain' ? ' over the warm half-year, every day clear' : '';
   if (reading.step !== null) {
-    if (reading.value === 0) return ` on ${grid.name}`;
-    return ` at ${civilOf(grid.instant_ms[reading.step]!, days.zone).time} on ${grid.name}`;
+    if (reading.value === 0) return ` on ${dayWords(grid.name)}`;
+    return ` at ${civilOf(grid.instant_ms[reading.step]!, days.zone).time} on ${dayWords(grid.name)}`;
   }
-  return clock ? ` as the mean from ${clock[0]} to ${clock[1]} on ${grid.name}` : ` over ${grid.name}`;
+  return clock
+    ? ` as the mean from ${clock[0]} to ${clock[1]} on ${dayWords(grid.name)}`
+    : ` over ${dayWords(grid.name)}`;
 }
 
 function throughWords({ facts, reading }: ReasonInput): string {
@@ -70,7 +75,7 @@ function throughWords({ facts, reading }: ReasonInput): string {
 function partWords({ facts, days, reading }: ReasonInput): string {
   const [first, second] = [...PARTS].sort((a, b) => reading.parts[b] - reading.parts[a]) as [Part, Part];
   if (!(reading.parts[first] > 0)) return '';
-  const also = reading.parts[second] >= 0.1 ? ` and ${percent(reading.parts[second])} ${PART_WORDS[second]}` : '';
+  const also = reading.parts[second] >= 0.1 ? ` and ${percent(reading.parts[second])} from ${PART_WORDS[second]}` : '';
   const at = days.grids.findIndex((g) => g.key === reading.day);
   const window = facts.days[at]?.windows.find((w) => w.window === reading.through?.window);
   const lit =

@@ -1,15 +1,9 @@
-import type { RoomForm, WindowForm } from '../form/model.ts';
-import type { RoomDay } from '../gain/series.ts';
+import type { WindowForm } from '../form/model.ts';
+import type { RoomGain } from '../gain/gain-run.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
 
 /** A room with everything that a limit may look at. */
-export type RoomFacts = {
-  readonly room: RoomForm;
-  /** Its windows, in the order of the scheme. */
-  readonly windows: readonly WindowForm[];
-  /** Its days, one for each grid that was run, in the same order. */
-  readonly days: readonly RoomDay[];
-};
+export type RoomFacts = RoomGain;
 
 /** The site's side of it: the days that were run and where they were. */
 export type DayFacts = {

@@ -1,0 +1,35 @@
+import type { Solid } from '../form/model.ts';
+import type { Tree } from '../scheme/schema.ts';
+import type { WindowShade } from '../shade/sunlit-fraction.ts';
+import type { DayGrid } from '../sky/day-grid.ts';
+import { ContentMemo } from './content-memo.ts';
+import type { FacingLight } from './open-light.ts';
+import type { WindowDay, WindowSeen } from './series.ts';
+
+/**
+ * What a check remembers between runs, so that an edit to one overhang works out that window again and nothing else. It is
+ * handed in by whoever runs the checks; core keeps no state of its own. Results share their columns with it: post copies to
+ * other threads, never transfer them.
+ */
+export type CheckMemo = {
+  readonly days: ContentMemo<DayGrid>;
+  readonly facings: ContentMemo<FacingLight>;
+  readonly shades: ContentMemo<WindowShade>;
+  readonly seen: ContentMemo<WindowSeen>;
+  /** Sunlit share of a window over a day: the costly part. */
+  readonly sunlit: ContentMemo<Float64Array>;
+  readonly gains: ContentMemo<WindowDay>;
+  /** Hashes of what stands around, by the list of solids. */
+  readonly surroundings: WeakMap<readonly Solid[], { readonly trees: readonly Tree[]; readonly key: string }>;
+};
+
+/** An empty memory. @param windows about how many windows it should hold the days of */
+export const createCheckMemo = (windows = 600): CheckMemo => ({
+  days: new ContentMemo(64),
+  facings: new ContentMemo(1000),
+  shades: new ContentMemo(windows),
+  seen: new ContentMemo(windows * 2),
+  sunlit: new ContentMemo(windows * 6),
+  gains: new ContentMemo(windows * 6),
+  surroundings: new WeakMap(),
+});

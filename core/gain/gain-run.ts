@@ -1,0 +1,145 @@
+import type { Model, RoomForm, Solid, WindowForm } from '../form/model.ts';
+import { solidsAt } from '../form/stands.ts';
+import type { Vec3 } from '../plane/vec.ts';
+import { contentHash } from '../scheme/hash.ts';
+import type { Scheme } from '../scheme/schema.ts';
+import { windowSky } from '../shade/sky-share.ts';
+import { sunVector } from '../shade/sun-vector.ts';
+import { sunlitFraction, type WindowShade, windowShade } from '../shade/sunlit-fraction.ts';
+import type { DayGrid } from '../sky/day-grid.ts';
+import { monthly, monthOf } from '../sky/monthly.ts';
+import type { SkyModel } from '../sky/transpose.ts';
+import { checkDay, type DayOf, dayInput } from './check-days.ts';
+import type { CheckMemo } from './gain-memo.ts';
+import { openLight, viewOf } from './open-light.ts';
+import { roomDay } from './room-day.ts';
+import type { RoomDay, WindowDay, WindowSeen } from './series.ts';
+import { windowDay } from './window-day.ts';
+
+/** A room with its windows and what it takes in on each day that was run. */
+export type RoomGain = {
+  readonly room: RoomForm;
+  /** Its windows, in the order of the scheme. */
+  readonly windows: readonly WindowForm[];
+  /** One for each grid, in the same order. */
+  readonly days: readonly RoomDay[];
+};
+
+/** The gain stage of one scheme, ready to be asked window by window. */
+export type GainRun = {
+  readonly grids: readonly DayGrid[];
+  readonly skyModel: SkyModel;
+  readonly windowDays: (window: WindowForm) => readonly WindowDay[];
+  readonly windowSeen: (window: WindowForm) => WindowSeen;
+  readonly roomGain: (room: RoomForm) => RoomGain;
+};
+
+/** A day with the sun's direction in drawing axes at every step above the horizon. */
+type SunnyDay = {
+  readonly grid: DayGrid;
+  readonly key: string;
+  readonly month: number;
+  readonly suns: readonly (Vec3 | null)[];
+};
+
+/** What a window's shade depends on: the opening, its devices, and all that stands around. */
+const shadeKey = (w: WindowForm, surroundings: string): string =>
+  JSON.stringify([
+    w.origin,
+    w.right,
+    w.up,
+    w.width_m,
+    w.height_m,
+    w.reveal_m,
+    w.shaders.map((s) => s.corners),
+    surroundings,
+  ]);
+
+/** What stands around, in one word. */
+function surroundingsKey(model: Model, solids: readonly Solid[], memo: CheckMemo): string {
+  const known = memo.surroundings.get(model.solids);
+  if (known?.trees === model.trees) return known.key;
+  const bare = solids.map((s) => [s.id, s.outline, s.base_m, s.top_m]);
+  const key = contentHash(JSON.stringify([bare, model.trees]));
+  memo.surroundings.set(model.solids, { trees: model.trees, key });
+  return key;
+}
+
+function sunnyDay(scheme: Scheme, day: DayOf, north_rad: number, memo: CheckMemo): SunnyDay {
+  const { key: _, name: __, ...content } = dayInput(scheme, day);
+  const key = JSON.stringify(content);
+  const found = memo.days.get(`${day.key} ${key}`, () => checkDay(scheme, day));
+  const grid = found.name === day.name ? found : { ...found, name: day.name };
+  const suns = Array.from(grid.altitude_rad, (altitude, i) =>
+    altitude > 0 ? sunVector(grid.azimuth_rad[i]!, altitude, north_rad) : null,
+  );
+  return { grid, key, month: monthOf(day.date), suns };
+}
+
+/** Share of a window's glass in direct sun at every step of a day; 0 with the sun down or behind it. */
+function sunlitOver(shade: WindowShade, day: SunnyDay, cosIncidence: Float64Array): Float64Array {
+  const sunlit = new Float64Array(cosIncidence.length);
+  for (let i = 0; i < sunlit.length; i++) {
+    const sun = day.suns[i];
+    if (sun && cosIncidence[i]! > 0) sunlit[i] = sunlitFraction(shade, sun, day.month);
+  }
+  return sunlit;
+}
+
+/**
+ * The gain stage over a scheme: what each window and room takes in on each of the days, as the scheme stands afterwards.
+ * @param model    of the scheme; its solids may be those of a larger one that it is part of
+ * @param dayList  from `checkDayList`
+ */
+export function gainRun(
+  scheme: Scheme,
+  model: Model,
+  dayList: readonly DayOf[],
+  memo: CheckMemo,
+  skyModel: SkyModel,
+): GainRun {
+  const solids = solidsAt(model.solids, 'after');
+  const surroundings = surroundingsKey(model, solids, memo);
+  const days = dayList.map((day) => sunnyDay(scheme, day, model.north_rad, memo));
+  const grids = days.map((d) => d.grid);
+  const byId = new Map(model.windows.map((w) => [w.id, w]));
+  const shadeOf = (w: WindowForm, key: string): WindowShade =>
+    memo.shades.get(key, () => windowShade(w, solids, model.trees));
+  const windowSeen = (w: WindowForm): WindowSeen => {
+    const key = shadeKey(w, surroundings);
+    return memo.seen.get(key, () => windowSky(shadeOf(w, key)));
+  };
+
+  const windowDays = (w: WindowForm): readonly WindowDay[] => {
+    const key = shadeKey(w, surroundings);
+    const facing = { bearing_deg: w.bearing_deg, tilt_deg: w.tilt_deg };
+    const glass = JSON.stringify([w.id, w.glass_m2, w.glass, w.blinds]);
+    return days.map((day) => {
+      const ground = monthly(scheme.site.groundReflectance, day.month);
+      const sky = `${day.key} ${skyModel} ${ground}`;
+      return memo.gains.get(`${day.grid.key} ${sky} ${glass} ${key}`, () => {
+        const facingKey = `${sky} ${facing.bearing_deg} ${facing.tilt_deg}`;
+        const { open, cosIncidence } = memo.facings.get(facingKey, () => openLight(day.grid, facing, skyModel, ground));
+        const sunlit = memo.sunlit.get(`${day.key} ${model.north_rad} ${key}`, () =>
+          sunlitOver(shadeOf(w, key), day, cosIncidence),
+        );
+        return windowDay(w, day.grid, open, { sunlit, cosIncidence }, viewOf(windowSeen(w), w.tilt_deg));
+      });
+    });
+  };
+
+  const roomGain = (room: RoomForm): RoomGain => {
+    const windows = room.windows.flatMap((id) => byId.get(id) ?? []);
+    const each = windows.map(windowDays);
+    const roomDays = grids.map((grid, d) =>
+      roomDay(
+        room.id,
+        grid.key,
+        each.map((w) => w[d] as WindowDay),
+        grid.instant_ms.length,
+      ),
+    );
+    return { room, windows, days: roomDays };
+  };
+  return { grids, skyModel, windowDays, windowSeen, roomGain };
+}

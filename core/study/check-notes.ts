@@ -1,0 +1,128 @@
+import type { Model } from '../form/model.ts';
+import { stands } from '../form/stands.ts';
+import type { LimitSet } from '../limits/limit-set.ts';
+import type { Fault } from '../scheme/fault.ts';
+import type { Scheme } from '../scheme/schema.ts';
+import { SLIVER_m2 } from '../units/tolerance.ts';
+
+const warning = (code: string, place: string, message: string, cure: string): Fault => ({
+  level: 'warning',
+  code,
+  place,
+  message,
+  cure,
+});
+
+/**
+ * What the reader of a check should know about it: rooms that no gain can be worked out for, limits that apply to nothing,
+ * glass outside the fit, a hottest day that was assumed. Faults of the scheme's own making are the loader's to find.
+ */
+export function checkNotes(scheme: Scheme, model: Model, limitSet: LimitSet | null): readonly Fault[] {
+  return [
+    ...model.rooms.flatMap((room) => roomNotes(room, scheme)),
+    ...scheme.glass.flatMap((glass, i) => glassNotes(glass, `glass[${i}]`)),
+    ...scheme.devices.flatMap((device, i) => deviceNotes(device, `devices[${i}]`)),
+    ...(limitSet ? limitNotes(limitSet, model) : []),
+    ...siteNotes(scheme),
+  ];
+}
+
+function roomNotes(room: Model['rooms'][number], scheme: Scheme): Fault[] {
+  const notes: Fault[] = [];
+  const name = `room ${room.id}`;
+  if (!(room.floor_m2 > SLIVER_m2)) {
+    const message = `${name} has no floor area, so nothing can be set against it`;
+    notes.push(warning('no-floor', room.place, message, 'give its box a width and depth, or its outline some area'));
+  }
+  const block = scheme.blocks.find((b) => b.id === room.block);
+  if (block && !stands(block.standing, 'after')) {
+    const message = `${name} is in a block that is removed; it is checked as if the block were there no more`;
+    notes.push(warning('room-removed', room.place, message, 'take the room out, or change the standing of its block'));
+  }
+  if (room.windows.length === 0) {
+    const outside = room.walls.some((w) => w.outside);
+    const message = outside
+      ? `${name} has no window, so no limit on gain applies to it`
+      : `${name} has no window and no outside wall, so no limit on gain applies to it`;
+    const cure = outside
+      ? 'add its windows, or leave it out'
+      : 'draw it up to the face of its block, or leave it out if it lies inside';
+    notes.push(warning(outside ? 'no-window' : 'no-outside-wall', room.place, message, cure));
+  }
+  return notes;
+}
+
+function glassNotes(glass: Scheme['glass'][number], place: string): Fault[] {
+  const notes: Fault[] = [];
+  if (glass.g > 0.9)
+    notes.push(
+      warning(
+        'unlikely',
+        `${place}.g`,
+        `a g of ${glass.g} is above that of a single clear pane, about 0.87`,
+        'check it: g is a share, at normal incidence, of the pane without its frame',
+      ),
+    );
+  if (glass.light > 0 && glass.light / glass.g > 2.3)
+    notes.push(
+      warning(
+        'unlikely',
+        `${place}.light`,
+        `light ${glass.light} to g ${glass.g} is more than the spectrum of daylight allows, about 2.2`,
+        'check both against the same data sheet',
+      ),
+    );
+  return notes;
+}
+
+function deviceNotes(device: Scheme['devices'][number], place: string): Fault[] {
+  const open =
+    device.kind === 'blind' &&
+    device.closedAbove === undefined &&
+    device.closedFrom === undefined &&
+    device.closedTo === undefined;
+  if (!open) return [];
+  const message = `blind ${device.id} never closes, since it says neither when nor above what`;
+  return [
+    warning('blind-open', place, message, 'add "closedAbove": 200 (W/m² on the glass), or closedFrom and closedTo'),
+  ];
+}
+
+function limitNotes(set: LimitSet, model: Model): Fault[] {
+  const notes: Fault[] = [];
+  for (const [i, limit] of set.limits.entries()) {
+    const uses = limit.uses;
+    if (!uses || model.rooms.length === 0 || model.rooms.some((r) => r.windows.length > 0 && uses.includes(r.use)))
+      continue;
+    const message = `no room with a window has a use that limit ${limit.id} of set ${set.id} is for (${uses.join(', ')})`;
+    notes.push(
+      warning('limit-unused', `limits[${i}].uses`, message, 'check the uses of the rooms, or choose another set'),
+    );
+  }
+  if (set.example) {
+    const message = `the limit set ${set.id} is an example`;
+    notes.push(
+      warning(
+        'example-limits',
+        'limits',
+        message,
+        'check your local code, and write its values into a set of your own',
+      ),
+    );
+  }
+  return notes;
+}
+
+function siteNotes(scheme: Scheme): Fault[] {
+  if (scheme.site.hottest) return [];
+  const message =
+    'the hottest design day has no temperatures of its own; 30 °C with a range of 10 K is taken (gain does not depend on it)';
+  return [
+    warning(
+      'assumed',
+      'site.hottest',
+      message,
+      'add "hottest": { "maximum": …, "range": … } from the local design data',
+    ),
+  ];
+}
