@@ -1,0 +1,235 @@
+import type { Point, Ring } from './vec.ts';
+
+/** Corners nearer to a cutting line than this lie on it [m]: far below anything drawn, far above rounding. */
+const ON_LINE_m = 1e-11;
+
+/** The most corners that an outline to cut with may have: twice what the scheme file lets an outline have. */
+export const MOST_CUT_CORNERS = 4096;
+
+/**
+ * Convex patches that do not overlap, each with a weight, from which convex outlines are cut one after another: what is
+ * left of a glass pane, a roof or a lawn once every shadow has been taken off it. Exact up to rounding, in any order.
+ *
+ * Built for loops that run hundreds of thousands of times a second: it keeps its store between runs (`clear`), takes the
+ * cutting outline from `cutX` and `cutY`, and allocates nothing but when the store has to grow.
+ */
+export class Patches {
+  /** Corners of the outline to cut with, for the caller to fill: convex, anticlockwise. */
+  readonly cutX = new Float64Array(MOST_CUT_CORNERS);
+  readonly cutY = new Float64Array(MOST_CUT_CORNERS);
+  /** How many patches there are. */
+  count = 0;
+
+  #x = new Float64Array(512);
+  #y = new Float64Array(512);
+  #used = 0;
+  #first = new Int32Array(64);
+  #size = new Int32Array(64);
+  #weight = new Float64Array(64);
+  /** Signed distances of the corners of one patch from one cutting line, times the line's length. */
+  #side = new Float64Array(256);
+
+  /** Nothing left, everything to be used again. */
+  clear(): void {
+    this.count = 0;
+    this.#used = 0;
+  }
+
+  /** One patch of weight 1: the rectangle from (x0, y0) to (x1, y1), x0 < x1, y0 < y1. */
+  addRectangle(x0: number, y0: number, x1: number, y1: number): void {
+    const k = this.#used;
+    this.#reserve(4);
+    const x = this.#x;
+    const y = this.#y;
+    x[k] = x0;
+    y[k] = y0;
+    x[k + 1] = x1;
+    y[k + 1] = y0;
+    x[k + 2] = x1;
+    y[k + 2] = y1;
+    x[k + 3] = x0;
+    y[k + 3] = y1;
+    this.#used = k + 4;
+    this.#add(k, 4, 1);
+  }
+
+  /** One patch of weight 1: a convex ring. */
+  addRing(ring: Ring): void {
+    const k = this.#used;
+    this.#reserve(ring.length);
+    ring.forEach((p, i) => {
+      this.#x[k + i] = p[0];
+      this.#y[k + i] = p[1];
+    });
+    this.#used = k + ring.length;
+    this.#add(k, ring.length, 1);
+  }
+
+  /**
+   * Cut with the first `corners` of `cutX`, `cutY`: what lies inside has its weight multiplied by `factor`. Factor 0 drops
+   * it, unless `keep` is set; kept patches of weight 0 are not cut again.
+   */
+  cut(corners: number, factor: number, keep = false): void {
+    for (let i = this.count - 1; i >= 0; i--) if (this.#weight[i]! > 0) this.#cutOne(i, corners, factor, keep);
+  }
+
+  /** Sum of area times weight [m²]. */
+  area(): number {
+    let sum = 0;
+    for (let i = 0; i < this.count; i++) {
+      const w = this.#weight[i]!;
+      if (w > 0) sum += w * this.areaOf(i);
+    }
+    return sum;
+  }
+
+  /** Area of patch i, whatever its weight [m²]. */
+  areaOf(i: number): number {
+    const x = this.#x;
+    const y = this.#y;
+    const first = this.#first[i]!;
+    const end = first + this.#size[i]!;
+    // From the first corner, so that patches far from the origin lose no digits.
+    const x0 = x[first]!;
+    const y0 = y[first]!;
+    let twice = 0;
+    for (let k = first + 2; k < end; k++) twice += (x[k - 1]! - x0) * (y[k]! - y0) - (x[k]! - x0) * (y[k - 1]! - y0);
+    return twice / 2;
+  }
+
+  /** Weight of patch i, 0..1. */
+  weightOf(i: number): number {
+    return this.#weight[i]!;
+  }
+
+  /** Corners of patch i, anticlockwise. Allocates. */
+  ringOf(i: number): Ring {
+    const first = this.#first[i]!;
+    return Array.from({ length: this.#size[i]! }, (_, k): Point => [this.#x[first + k]!, this.#y[first + k]!]);
+  }
+
+  /**
+   * Patch i against one outline. Each edge of the outline splits off what lies outside it as a patch of its own; what is
+   * left after the last edge lies inside. A patch that turns out to lie wholly outside one edge is put back as it was, so
+   * that an outline that misses it leaves it in one piece.
+   */
+  #cutOne(i: number, corners: number, factor: number, keep: boolean): void {
+    const cutX = this.cutX;
+    const cutY = this.cutY;
+    const count = this.count;
+    const used = this.#used;
+    const weight = this.#weight[i]!;
+    let first = this.#first[i]!;
+    let size = this.#size[i]!;
+    let ax = cutX[corners - 1]!;
+    let ay = cutY[corners - 1]!;
+    for (let e = 0; e < corners; e++) {
+      const bx = cutX[e]!;
+      const by = cutY[e]!;
+      const ex = bx - ax;
+      const ey = by - ay;
+      const near = ON_LINE_m * (Math.abs(ex) + Math.abs(ey));
+      const x = this.#x;
+      const y = this.#y;
+      const side = this.#side;
+      let inside = false;
+      let outside = false;
+      for (let k = 0; k < size; k++) {
+        const d = ex * (y[first + k]! - ay) - ey * (x[first + k]! - ax);
+        side[k] = d;
+        if (d > near) inside = true;
+        else if (d < -near) outside = true;
+      }
+      ax = bx;
+      ay = by;
+      if (!outside) continue;
+      if (!inside) {
+        this.count = count;
+        this.#used = used;
+        return;
+      }
+      this.#reserve(2 * size + 4);
+      const start = this.#used;
+      const middle = this.#split(first, size, near, -1);
+      this.#add(start, middle - start, weight);
+      size = this.#split(first, size, near, 1) - middle;
+      first = middle;
+    }
+    this.#settle(i, first, size, weight * factor, keep);
+  }
+
+  /**
+   * Write the part of a patch on one side of the line that `#side` was measured from, and return where it ends.
+   * @param sense  1 for the part inside (left of the line), −1 for the part outside; corners on the line go to both
+   */
+  #split(first: number, size: number, near: number, sense: 1 | -1): number {
+    const x = this.#x;
+    const y = this.#y;
+    const side = this.#side;
+    let end = this.#used;
+    let previous = size - 1;
+    let before = sense * side[previous]!;
+    for (let k = 0; k < size; k++) {
+      const here = sense * side[k]!;
+      if ((here > near && before < -near) || (here < -near && before > near)) {
+        // Always from the inner corner to the outer one, so that both parts get the very same crossing.
+        const inner = side[k]! > 0 ? k : previous;
+        const outer = inner === k ? previous : k;
+        const t = side[inner]! / (side[inner]! - side[outer]!);
+        x[end] = x[first + inner]! + t * (x[first + outer]! - x[first + inner]!);
+        y[end] = y[first + inner]! + t * (y[first + outer]! - y[first + inner]!);
+        end++;
+      }
+      if (here >= -near) {
+        x[end] = x[first + k]!;
+        y[end] = y[first + k]!;
+        end++;
+      }
+      previous = k;
+      before = here;
+    }
+    this.#used = end;
+    return end;
+  }
+
+  /** Patch i becomes what the cut left of it, or goes; the last patch then takes its place. */
+  #settle(i: number, first: number, size: number, weight: number, keep: boolean): void {
+    if (weight > 0 || keep) {
+      this.#first[i] = first;
+      this.#size[i] = size;
+      this.#weight[i] = weight;
+      return;
+    }
+    const last = --this.count;
+    this.#first[i] = this.#first[last]!;
+    this.#size[i] = this.#size[last]!;
+    this.#weight[i] = this.#weight[last]!;
+  }
+
+  #add(first: number, size: number, weight: number): void {
+    if (this.count === this.#first.length) {
+      this.#first = grown(this.#first, new Int32Array(2 * this.count));
+      this.#size = grown(this.#size, new Int32Array(2 * this.count));
+      this.#weight = grown(this.#weight, new Float64Array(2 * this.count));
+    }
+    this.#first[this.count] = first;
+    this.#size[this.count] = size;
+    this.#weight[this.count] = weight;
+    this.count++;
+  }
+
+  /** Room for so many more corners. */
+  #reserve(corners: number): void {
+    const needed = this.#used + corners;
+    if (needed > this.#x.length) {
+      this.#x = grown(this.#x, new Float64Array(2 * needed));
+      this.#y = grown(this.#y, new Float64Array(2 * needed));
+    }
+    if (corners > this.#side.length) this.#side = grown(this.#side, new Float64Array(2 * corners));
+  }
+}
+
+function grown<T extends Int32Array | Float64Array>(from: T, into: T): T {
+  into.set(from);
+  return into;
+}
