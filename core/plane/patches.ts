@@ -26,6 +26,10 @@ export class Patches {
   #first = new Int32Array(64);
   #size = new Int32Array(64);
   #weight = new Float64Array(64);
+  /** Four a patch: least x, least y, greatest x, greatest y. */
+  #box = new Float64Array(4 * 64);
+  /** Five an edge of the outline to cut with: start x, y, run x, y, and how near counts as on it. */
+  #edge = new Float64Array(5 * MOST_CUT_CORNERS);
   /** Signed distances of the corners of one patch from one cutting line, times the line's length. */
   #side = new Float64Array(256);
 
@@ -70,7 +74,64 @@ export class Patches {
    * it, unless `keep` is set; kept patches of weight 0 are not cut again.
    */
   cut(corners: number, factor: number, keep = false): void {
-    for (let i = this.count - 1; i >= 0; i--) if (this.#weight[i]! > 0) this.#cutOne(i, corners, factor, keep);
+    const cutX = this.cutX;
+    const cutY = this.cutY;
+    let x0 = Infinity;
+    let y0 = Infinity;
+    let x1 = -Infinity;
+    let y1 = -Infinity;
+    for (let k = 0; k < corners; k++) {
+      const x = cutX[k]!;
+      const y = cutY[k]!;
+      if (x < x0) x0 = x;
+      if (x > x1) x1 = x;
+      if (y < y0) y0 = y;
+      if (y > y1) y1 = y;
+    }
+    let edges = -1;
+    // Downwards, so that the patches that a cut adds at the end are not met again.
+    for (let i = this.count - 1; i >= 0; i--) {
+      const box = this.#box;
+      const k = 4 * i;
+      if (box[k]! >= x1 || box[k + 2]! <= x0 || box[k + 1]! >= y1 || box[k + 3]! <= y0) continue;
+      if (!(this.#weight[i]! > 0)) continue;
+      if (edges < 0) edges = this.#readEdges(corners, (x1 - x0 + y1 - y0) / 2);
+      if (edges < 3) return;
+      this.#cutOne(i, edges, factor, keep);
+    }
+  }
+
+  /**
+   * The edges of the outline to cut with, the long ones first: a row of blades then splits a pane into plain strips, and
+   * the splinters at their ends stay short.
+   * @returns how many
+   */
+  #readEdges(corners: number, long_m: number): number {
+    const { cutX, cutY } = this;
+    const edge = this.#edge;
+    let n = 0;
+    for (let round = 0; round < 2; round++) {
+      let ax = cutX[corners - 1]!;
+      let ay = cutY[corners - 1]!;
+      for (let k = 0; k < corners; k++) {
+        const bx = cutX[k]!;
+        const by = cutY[k]!;
+        const ex = bx - ax;
+        const ey = by - ay;
+        const run = Math.abs(ex) + Math.abs(ey);
+        if (run >= long_m === (round === 0) && run > 0) {
+          edge[n] = ax;
+          edge[n + 1] = ay;
+          edge[n + 2] = ex;
+          edge[n + 3] = ey;
+          edge[n + 4] = ON_LINE_m * run;
+          n += 5;
+        }
+        ax = bx;
+        ay = by;
+      }
+    }
+    return n / 5;
   }
 
   /** Sum of area times weight [m²]. */
@@ -113,22 +174,19 @@ export class Patches {
    * left after the last edge lies inside. A patch that turns out to lie wholly outside one edge is put back as it was, so
    * that an outline that misses it leaves it in one piece.
    */
-  #cutOne(i: number, corners: number, factor: number, keep: boolean): void {
-    const cutX = this.cutX;
-    const cutY = this.cutY;
+  #cutOne(i: number, edges: number, factor: number, keep: boolean): void {
+    const edge = this.#edge;
     const count = this.count;
     const used = this.#used;
     const weight = this.#weight[i]!;
     let first = this.#first[i]!;
     let size = this.#size[i]!;
-    let ax = cutX[corners - 1]!;
-    let ay = cutY[corners - 1]!;
-    for (let e = 0; e < corners; e++) {
-      const bx = cutX[e]!;
-      const by = cutY[e]!;
-      const ex = bx - ax;
-      const ey = by - ay;
-      const near = ON_LINE_m * (Math.abs(ex) + Math.abs(ey));
+    for (let e = 0; e < 5 * edges; e += 5) {
+      const ax = edge[e]!;
+      const ay = edge[e + 1]!;
+      const ex = edge[e + 2]!;
+      const ey = edge[e + 3]!;
+      const near = edge[e + 4]!;
       const x = this.#x;
       const y = this.#y;
       const side = this.#side;
@@ -140,8 +198,6 @@ export class Patches {
         if (d > near) inside = true;
         else if (d < -near) outside = true;
       }
-      ax = bx;
-      ay = by;
       if (!outside) continue;
       if (!inside) {
         this.count = count;
@@ -195,15 +251,14 @@ export class Patches {
   /** Patch i becomes what the cut left of it, or goes; the last patch then takes its place. */
   #settle(i: number, first: number, size: number, weight: number, keep: boolean): void {
     if (weight > 0 || keep) {
-      this.#first[i] = first;
-      this.#size[i] = size;
-      this.#weight[i] = weight;
+      this.#put(i, first, size, weight);
       return;
     }
     const last = --this.count;
     this.#first[i] = this.#first[last]!;
     this.#size[i] = this.#size[last]!;
     this.#weight[i] = this.#weight[last]!;
+    for (let k = 0; k < 4; k++) this.#box[4 * i + k] = this.#box[4 * last + k]!;
   }
 
   #add(first: number, size: number, weight: number): void {
@@ -211,11 +266,32 @@ export class Patches {
       this.#first = grown(this.#first, new Int32Array(2 * this.count));
       this.#size = grown(this.#size, new Int32Array(2 * this.count));
       this.#weight = grown(this.#weight, new Float64Array(2 * this.count));
+      this.#box = grown(this.#box, new Float64Array(8 * this.count));
     }
-    this.#first[this.count] = first;
-    this.#size[this.count] = size;
-    this.#weight[this.count] = weight;
-    this.count++;
+    this.#put(this.count++, first, size, weight);
+  }
+
+  #put(i: number, first: number, size: number, weight: number): void {
+    this.#first[i] = first;
+    this.#size[i] = size;
+    this.#weight[i] = weight;
+    const x = this.#x;
+    const y = this.#y;
+    let x0 = x[first]!;
+    let y0 = y[first]!;
+    let x1 = x0;
+    let y1 = y0;
+    for (let k = first + 1; k < first + size; k++) {
+      if (x[k]! < x0) x0 = x[k]!;
+      else if (x[k]! > x1) x1 = x[k]!;
+      if (y[k]! < y0) y0 = y[k]!;
+      else if (y[k]! > y1) y1 = y[k]!;
+    }
+    const box = this.#box;
+    box[4 * i] = x0;
+    box[4 * i + 1] = y0;
+    box[4 * i + 2] = x1;
+    box[4 * i + 3] = y1;
   }
 
   /** Room for so many more corners. */
