@@ -1,5 +1,4 @@
 import { IN_FRONT_m } from '../units/tolerance.ts';
-import type { PlaneLight } from './exposure-light.ts';
 import { LISTED } from './skyline.ts';
 import { type Columns, turnOf } from './skyline-columns.ts';
 import { type Occluders, WALL } from './skyline-occluders.ts';
@@ -78,7 +77,7 @@ export function fullShortlist(o: Occluders): Shortlist {
 
 export function makeCuller(
   o: Occluders,
-  light: PlaneLight,
+  lowest: Float64Array,
   columns: Columns,
   normal: readonly [number, number, number],
 ): Culler {
@@ -105,10 +104,10 @@ export function makeCuller(
   }
   const stride = columns.count >= 64 ? 4 : 1;
   const bands = columns.count / stride;
-  const lowest = new Float64Array(bands).fill(Infinity);
+  const lowestInBand = new Float64Array(bands).fill(Infinity);
   for (let c = 0; c < columns.count; c++) {
     const b = Math.floor(c / stride);
-    if (light.lowest[c]! < lowest[b]!) lowest[b] = light.lowest[c]!;
+    if (lowest[c]! < lowestInBand[b]!) lowestInBand[b] = lowest[c]!;
   }
   return {
     occluders: o,
@@ -119,7 +118,7 @@ export function makeCuller(
     patchTop,
     stride,
     bulge: 1 / Math.cos(stride * Math.acos(1 / columns.bulge)),
-    lowest,
+    lowest: lowestInBand,
     hidden: new Float64Array(bands),
     span: new Float64Array(Math.max(o.wallSolid.length, 1) * SPAN),
     key: new Float64Array(Math.max(o.wallSolid.length, 1)),

@@ -1,3 +1,4 @@
+import type { Columns } from './skyline-columns.ts';
 import type { Occluders } from './skyline-occluders.ts';
 import { rankOf, SLACK, type Skyline } from './skyline.ts';
 
@@ -21,6 +22,9 @@ export type PatchScratch = {
   /** Corners relative to the receptor, and the normals of the planes through it and each edge; grown as needed. */
   relative: Float64Array;
   planes: Float64Array;
+  /** Whether the point straight above, or straight below, lies behind the patch, so that it stands all round. */
+  zenith: boolean;
+  nadir: boolean;
 };
 
 export function makePatchScratch(columns: number): PatchScratch {
@@ -34,17 +38,16 @@ export function makePatchScratch(columns: number): PatchScratch {
     list: new Uint32Array(columns),
     relative: new Float64Array(3 * 16),
     planes: new Float64Array(3 * 16),
+    zenith: false,
+    nadir: false,
   };
 }
 
 /** Nearer to the plane of a patch than this share of its size, a receptor sees it edge-on, and it hides nothing. */
 const EDGE_ON = 1e-9;
 
-/**
- * Hides the samples behind one patch. To be called after `raiseWalls`.
- * @param lift  added to the height of every corner; used where a wall is read as a patch
- */
-export function hidePatch(
+/** Hides the samples behind one patch. To be called after `raiseWalls`. */
+function hidePatch(
   s: Skyline,
   p: PatchScratch,
   corners: Float64Array,
@@ -54,6 +57,26 @@ export function hidePatch(
   y: number,
   z: number,
 ): void {
+  const touched = tracePatch(s.columns, p, corners, from, to, x, y, z);
+  for (let k = 0; k < touched; k++) hideInColumn(s, p, to - from, p.list[k]!);
+  clearTrace(s.columns, p, touched);
+}
+
+/**
+ * Where a patch passes the columns' edges, seen from a point: fills `low`, `high`, `passes` for the edges and the corners'
+ * altitudes for the columns in between. To be followed by `clearTrace`.
+ * @returns how many columns of `list` are touched; 0 where nothing of the patch is above the point, or it is seen edge-on
+ */
+export function tracePatch(
+  columns: Columns,
+  p: PatchScratch,
+  corners: Float64Array,
+  from: number,
+  to: number,
+  x: number,
+  y: number,
+  z: number,
+): number {
   const n = to - from;
   if (p.relative.length < 3 * n) {
     p.relative = new Float64Array(6 * n);
@@ -68,19 +91,15 @@ export function hidePatch(
     relative[3 * i + 2] = corners[o + 2]! - z;
     if (relative[3 * i + 2]! > 0) above = true;
   }
-  if (n < 3 || !above) return;
-  const facing = orient(p, n);
-  if (facing === 0) return;
-  let zenith = true;
-  let nadir = true;
+  if (n < 3 || !above || orient(p, n) === 0) return 0;
+  p.zenith = true;
+  p.nadir = true;
   for (let i = 0; i < n; i++) {
     const mz = p.planes[3 * i + 2]!;
-    if (mz < 0) zenith = false;
-    if (mz > 0) nadir = false;
+    if (mz < 0) p.zenith = false;
+    if (mz > 0) p.nadir = false;
   }
-  const touched = traceEdges(s, p, n);
-  for (let k = 0; k < touched; k++) hideInColumn(s, p, n, p.list[k]!, zenith, nadir);
-  clear(s, p, touched);
+  return traceEdges(columns, p, n);
 }
 
 /** Planes through the receptor and each edge, turned so that directions inside the patch lie in front of all. @returns 0 when seen edge-on */
@@ -116,8 +135,8 @@ function orient(p: PatchScratch, n: number): number {
 }
 
 /** Writes where edges and corners of the patch pass the columns. @returns how many columns are touched */
-function traceEdges(s: Skyline, p: PatchScratch, n: number): number {
-  const { count, ux, uy } = s.columns;
+function traceEdges(columns: Columns, p: PatchScratch, n: number): number {
+  const { count, ux, uy } = columns;
   const { relative, planes, low, high, passes, cornerLow, cornerHigh, touched, list } = p;
   let kept = 0;
   const touch = (c: number): void => {
@@ -173,8 +192,9 @@ function traceEdges(s: Skyline, p: PatchScratch, n: number): number {
   return kept;
 }
 
-function clear(s: Skyline, p: PatchScratch, touched: number): void {
-  const { count } = s.columns;
+/** Leaves the trace clean for the next patch. */
+export function clearTrace(columns: Columns, p: PatchScratch, touched: number): void {
+  const { count } = columns;
   for (let k = 0; k < touched; k++) {
     const c = p.list[k]!;
     p.touched[c] = 0;
@@ -184,7 +204,8 @@ function clear(s: Skyline, p: PatchScratch, touched: number): void {
 }
 
 /** Hides what a patch hides in one column. */
-function hideInColumn(s: Skyline, p: PatchScratch, n: number, c: number, zenith: boolean, nadir: boolean): void {
+function hideInColumn(s: Skyline, p: PatchScratch, n: number, c: number): void {
+  const { zenith, nadir } = p;
   const { light, floor, ceiling } = s;
   const start = floor[c]!;
   const end = ceiling[c]!;

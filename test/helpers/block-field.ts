@@ -1,6 +1,6 @@
 import type { Shader, Solid } from '../../core/form/model.ts';
 import type { Point, Ring } from '../../core/plane/vec.ts';
-import type { Receptors } from '../../core/shade/exposure.ts';
+import type { Receptors } from '../../core/shade/skyline-groups.ts';
 import { seeded } from './seeded.ts';
 
 /** A town of boxes on plots of 30 m, each turned a little, none touching another: repeatable from its start number. */
