@@ -113,11 +113,11 @@ export function gainRun(
   const windowDays = (w: WindowForm): readonly WindowDay[] => {
     const key = shadeKey(w, surroundings);
     const facing = { bearing_deg: w.bearing_deg, tilt_deg: w.tilt_deg };
-    const glass = JSON.stringify([w.id, w.glass_m2, w.glass, w.blinds]);
+    const own = JSON.stringify([w.id, w.bearing_deg, w.glass_m2, w.glass, w.blinds]);
     return days.map((day) => {
       const ground = monthly(scheme.site.groundReflectance, day.month);
       const sky = `${day.key} ${skyModel} ${ground}`;
-      return memo.gains.get(`${day.grid.key} ${sky} ${glass} ${key}`, () => {
+      return memo.gains.get(`${day.grid.key} ${sky} ${model.north_rad} ${own} ${key}`, () => {
         const facingKey = `${sky} ${facing.bearing_deg} ${facing.tilt_deg}`;
         const { open, cosIncidence } = memo.facings.get(facingKey, () => openLight(day.grid, facing, skyModel, ground));
         const sunlit = memo.sunlit.get(`${day.key} ${model.north_rad} ${key}`, () =>

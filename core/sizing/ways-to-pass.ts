@@ -197,6 +197,7 @@ function whyNot(lever: Lever, left: Finding): string {
     direct < 0.5
       ? `${Math.round(100 * (1 - direct))} % of that is light of sky and ground, which comes from all sides`
       : `${Math.round(100 * direct)} % of that is direct sun that ${lever.kind === 'overhang' ? 'comes in under it' : lever.kind === 'fins' ? 'comes in between them' : `${NAMES[lever.kind]} alone does not keep out`}`;
-  const through = left.through ? `, most of it through window ${left.through.window}` : '';
+  const through =
+    left.through && left.through.share < 0.999 ? `, most of it through window ${left.through.window}` : '';
   return `${reach}, ${rest}; ${cause}${through}`;
 }

@@ -173,6 +173,11 @@ describe('memory', () => {
       edited(yard, 'devices', 'D2', 'depth', 0.8),
       edited(yard, 'windows', 'W4', 'width', 3),
       edited(yard, 'glass', 'G1', 'g', 0.4),
+      { ...yard, site: { ...yard.site, north: 40 } },
+      { ...yard, site: { ...yard.site, groundReflectance: 0.5 } },
+      { ...yard, site: { ...yard.site, linkeTurbidity: 5 } },
+      { ...yard, trees: [] },
+      { ...yard, year: 2024 },
     ])
       expect(JSON.stringify((await checked(now, limits, memo)).findings)).toBe(
         JSON.stringify((await checked(now, limits)).findings),
