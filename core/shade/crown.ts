@@ -14,7 +14,7 @@ export type Crown = {
   readonly centre: Vec3;
   /** Half axes along x, y and z of the panel [m]. */
   readonly half: Vec3;
-  /** Share of the beam that comes through, January to December. */
+  /** Share of the light that comes through: the mean of the year, then January to December. */
   readonly transmittance: readonly number[];
 };
 
@@ -33,10 +33,15 @@ export function crownsOf(panel: Panel, trees: readonly Tree[]): Crown[] {
     const centre = inPanel(panel, [tree.at[0], tree.at[1], tree.base + tree.trunk + rise]);
     const r = tree.spread / 2;
     const half: Vec3 = isUpright(panel) ? [r, rise, r] : [r, r, rise];
-    if (centre[2] + half[2] > IN_FRONT_m) out.push({ centre, half, transmittance: tree.transmittance });
+    if (centre[2] + half[2] > IN_FRONT_m) out.push({ centre, half, transmittance: withMean(tree.transmittance) });
   }
   return out;
 }
+
+const withMean = (months: readonly number[]): readonly number[] => [
+  months.reduce((sum, t) => sum + t, 0) / months.length,
+  ...months,
+];
 
 /**
  * The outline of a crown's shadow on the panel's plane along a ray with the slopes a and b: a polygon of 48 corners with

@@ -65,7 +65,7 @@ const box: [number, number, number, number] = [0, 0, 0, 0];
 /**
  * Share of the glass, 0..1, from which nothing hides the direction with the slopes a (along the panel's `right`) and b
  * (along its `up`), per unit along its normal.
- * @param month  1..12, or undefined to leave trees out
+ * @param month  1..12, 0 for the mean of the year, or undefined to leave trees out
  */
 export function openShare(shade: WindowShade, a: number, b: number, month?: number): number {
   const { panel, reveal_m, hiders, crowns } = shade;
@@ -89,7 +89,7 @@ export function openShare(shade: WindowShade, a: number, b: number, month?: numb
   if (month !== undefined)
     for (const crown of crowns) {
       const corners = crownOutline(crown, a, b, box, cutX, cutY);
-      if (corners > 0) patches.cut(corners, crown.transmittance[month - 1] ?? 1);
+      if (corners > 0) patches.cut(corners, crown.transmittance[month] ?? 1);
     }
   return Math.min(1, patches.area() / (width_m * height_m));
 }
