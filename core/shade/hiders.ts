@@ -1,7 +1,6 @@
 import type { Panel, Shader, Solid } from '../form/model.ts';
-import { keepSide } from '../plane/half-plane.ts';
 import { MOST_CUT_CORNERS } from '../plane/patches.ts';
-import { dot, minus, type Point, type Ring, type Vec3 } from '../plane/vec.ts';
+import { dot, minus, type Point, type Vec3 } from '../plane/vec.ts';
 import { IN_FRONT_m } from '../units/tolerance.ts';
 
 /**
@@ -27,7 +26,9 @@ export type Hiders = {
   readonly facing: Float64Array;
 };
 
-type Swept = { readonly corners: readonly Vec3[]; readonly sweep: Vec3 };
+/** A flat convex polygon in panel axes, three numbers a corner, and where it is swept to. */
+type Swept = { readonly corners: readonly number[]; readonly sweep: Vec3 };
+type Bounds = [number, number, number, number];
 
 /**
  * Everything that can hide the sky from a rectangle of a panel, up to its `width_m` and `height_m`.
@@ -36,10 +37,8 @@ type Swept = { readonly corners: readonly Vec3[]; readonly sweep: Vec3 };
  */
 export function hidersOf(panel: Panel, solids: readonly Solid[], shaders: readonly Shader[]): Hiders {
   const swept: Swept[] = [];
-  for (const shader of shaders) {
-    const corners = shader.corners.map((c) => inPanel(panel, c));
-    if (corners.some((c) => c[2] > IN_FRONT_m)) swept.push({ corners: keepInFront(corners), sweep: [0, 0, 0] });
-  }
+  for (const shader of shaders) addSheet(panel, shader, swept);
+  const addSolid = isUpright(panel) ? addToWall : addToRoof;
   for (const solid of solids) addSolid(panel, solid, swept);
   return packed(panel, swept);
 }
@@ -50,22 +49,6 @@ export const inPanel = (panel: Panel, p: Vec3): Vec3 => {
   return [dot(v, panel.right), dot(v, panel.up), dot(v, panel.normal)];
 };
 
-function addSolid(panel: Panel, solid: Solid, swept: Swept[]): void {
-  // Below the ground nothing is seen; a panel below it looks out of a pit of its own depth.
-  const base = Math.max(solid.base_m, Math.min(0, panel.origin[2]));
-  if (!(solid.top_m > base)) return;
-  if (isUpright(panel)) {
-    for (const piece of solid.pieces) {
-      const off = (p: Point): number =>
-        (p[0] - panel.origin[0]) * panel.normal[0] + (p[1] - panel.origin[1]) * panel.normal[1];
-      if (!piece.some((p) => off(p) > IN_FRONT_m)) continue;
-      swept.push(prism(panel, keepSide(piece, off), base, solid.top_m));
-    }
-  } else if (solid.top_m > panel.origin[2] + IN_FRONT_m) {
-    for (const piece of solid.pieces) swept.push(prism(panel, piece, Math.max(base, panel.origin[2]), solid.top_m));
-  }
-}
-
 /** Whether a panel stands upright (true) or lies level, looking up (false). @throws {RangeError} for any other tilt */
 export function isUpright(panel: Panel): boolean {
   if (Math.abs(panel.normal[2]) < 1e-9) return true;
@@ -73,75 +56,130 @@ export function isUpright(panel: Panel): boolean {
   throw new RangeError('shade is worked out on upright and on level planes only');
 }
 
-const prism = (panel: Panel, ring: Ring, base_m: number, top_m: number): Swept => ({
-  corners: ring.map((p) => inPanel(panel, [p[0], p[1], base_m])),
-  sweep: [0, (top_m - base_m) * panel.up[2], (top_m - base_m) * panel.normal[2]],
-});
+/** Below the ground nothing is seen; a panel below it looks out of a pit of its own depth. */
+const lowest = (panel: Panel, solid: Solid): number => Math.max(solid.base_m, Math.min(0, panel.origin[2]));
 
-/** The part of a flat polygon in front of the panel's plane. */
-function keepInFront(corners: readonly Vec3[]): readonly Vec3[] {
-  const out: Vec3[] = [];
-  corners.forEach((a, i) => {
-    const b = corners[(i + 1) % corners.length] as Vec3;
-    if (a[2] >= 0) out.push(a);
+/** The part of a solid's convex pieces in front of a wall: their bases, swept upwards. */
+function addToWall(panel: Panel, solid: Solid, swept: Swept[]): void {
+  const base = lowest(panel, solid);
+  if (!(solid.top_m > base)) return;
+  const [ox, oy, oz] = panel.origin;
+  const [rx, ry] = panel.right;
+  const [nx, ny] = panel.normal;
+  for (const piece of solid.pieces) {
+    const corners: number[] = [];
+    let reach = 0;
+    let last = piece[piece.length - 1] as Point;
+    let lastOff = (last[0] - ox) * nx + (last[1] - oy) * ny;
+    for (const p of piece) {
+      const off = (p[0] - ox) * nx + (p[1] - oy) * ny;
+      if (off * lastOff < 0) {
+        const t = lastOff / (lastOff - off);
+        const x = last[0] + t * (p[0] - last[0]) - ox;
+        const y = last[1] + t * (p[1] - last[1]) - oy;
+        corners.push(x * rx + y * ry, base - oz, 0);
+      }
+      if (off >= 0) corners.push((p[0] - ox) * rx + (p[1] - oy) * ry, base - oz, off);
+      if (off > reach) reach = off;
+      last = p;
+      lastOff = off;
+    }
+    if (reach > IN_FRONT_m) swept.push({ corners, sweep: [0, solid.top_m - base, 0] });
+  }
+}
+
+/** The part of a solid above a level plane. */
+function addToRoof(panel: Panel, solid: Solid, swept: Swept[]): void {
+  const base = Math.max(lowest(panel, solid), panel.origin[2]);
+  if (!(solid.top_m > base + IN_FRONT_m)) return;
+  for (const piece of solid.pieces)
+    swept.push({
+      corners: piece.flatMap((p) => inPanel(panel, [p[0], p[1], base])),
+      sweep: [0, 0, solid.top_m - base],
+    });
+}
+
+/** The part of a sheet in front of the panel's plane. */
+function addSheet(panel: Panel, shader: Shader, swept: Swept[]): void {
+  const all = shader.corners.map((c) => inPanel(panel, c));
+  if (!all.some((c) => c[2] > IN_FRONT_m)) return;
+  const corners: number[] = [];
+  all.forEach((a, i) => {
+    const b = all[(i + 1) % all.length] as Vec3;
+    if (a[2] >= 0) corners.push(...a);
     if (a[2] * b[2] < 0) {
       const t = a[2] / (a[2] - b[2]);
-      out.push([a[0] + t * (b[0] - a[0]), a[1] + t * (b[1] - a[1]), 0]);
+      corners.push(a[0] + t * (b[0] - a[0]), a[1] + t * (b[1] - a[1]), 0);
     }
   });
-  return out;
+  swept.push({ corners, sweep: [0, 0, 0] });
 }
 
 function packed(panel: Panel, all: readonly Swept[]): Hiders {
-  const rows = all
-    .filter((s) => s.corners.length >= 3)
-    .map((s, order) => ({ ...s, order, bounds: boundsOf(s, panel.width_m, panel.height_m) }))
-    .filter(({ bounds: [a0, a1, b0, b1] }) => a0 <= a1 && b0 <= b1)
-    .sort((p, q) => q.bounds[3] - p.bounds[3] || p.order - q.order);
-  const start = new Int32Array(rows.length + 1);
-  rows.forEach((r, i) => {
-    if (r.corners.length + 2 > MOST_CUT_CORNERS) throw new RangeError(`a piece of ${r.corners.length} corners`);
-    start[i + 1] = (start[i] as number) + r.corners.length;
+  const rows: { readonly swept: Swept; readonly order: number; readonly bounds: Bounds }[] = [];
+  let corners = 0;
+  all.forEach((swept, order) => {
+    const n = swept.corners.length / 3;
+    if (n < 3) return;
+    if (n + 2 > MOST_CUT_CORNERS) throw new RangeError(`a convex piece of ${n} corners`);
+    const bounds = boundsOf(swept, panel.width_m, panel.height_m);
+    if (bounds[0] > bounds[1] || bounds[2] > bounds[3]) return;
+    rows.push({ swept, order, bounds });
+    corners += n;
   });
-  return {
+  rows.sort((p, q) => q.bounds[3] - p.bounds[3] || p.order - q.order);
+  const out: Hiders = {
     count: rows.length,
-    bounds: Float64Array.from(rows.flatMap((r) => r.bounds)),
-    start,
-    corners: Float64Array.from(rows.flatMap((r) => r.corners.flat())),
-    sweep: Float64Array.from(rows.flatMap((r) => r.sweep)),
-    facing: Float64Array.from(rows.flatMap((r) => areaVector(r.corners))),
+    bounds: new Float64Array(4 * rows.length),
+    start: new Int32Array(rows.length + 1),
+    corners: new Float64Array(3 * corners),
+    sweep: new Float64Array(3 * rows.length),
+    facing: new Float64Array(3 * rows.length),
   };
+  let at = 0;
+  rows.forEach(({ swept, bounds }, i) => {
+    out.bounds.set(bounds, 4 * i);
+    out.corners.set(swept.corners, 3 * at);
+    at += swept.corners.length / 3;
+    out.start[i + 1] = at;
+    out.sweep.set(swept.sweep, 3 * i);
+    out.facing.set(areaVector(swept.corners), 3 * i);
+  });
+  return out;
 }
 
 /**
  * The slopes for which the image of a swept polygon can touch the rectangle from (0, 0) to (width, height). It reaches
  * x ≤ width where some corner has x − z·a ≤ width, that is from the least (x − width) / z on; and likewise the others.
  */
-function boundsOf(s: Swept, width: number, height: number): [number, number, number, number] {
-  const bounds: [number, number, number, number] = [Infinity, -Infinity, Infinity, -Infinity];
-  for (const c of s.corners)
-    for (const [x, y, z] of [c, [c[0] + s.sweep[0], c[1] + s.sweep[1], c[2] + s.sweep[2]] as const]) {
-      bounds[0] = Math.min(bounds[0], leastSlope(x - width, z));
-      bounds[1] = Math.max(bounds[1], -leastSlope(-x, z));
-      bounds[2] = Math.min(bounds[2], leastSlope(y - height, z));
-      bounds[3] = Math.max(bounds[3], -leastSlope(-y, z));
+function boundsOf({ corners, sweep }: Swept, width: number, height: number): Bounds {
+  let [a0, a1, b0, b1] = [Infinity, -Infinity, Infinity, -Infinity];
+  const ends = sweep[1] === 0 && sweep[2] === 0 ? 1 : 2;
+  for (let end = 0; end < ends; end++)
+    for (let k = 0; k < corners.length; k += 3) {
+      const x = corners[k]! + end * sweep[0];
+      const y = corners[k + 1]! + end * sweep[1];
+      const z = corners[k + 2]! + end * sweep[2];
+      a0 = Math.min(a0, leastSlope(x - width, z));
+      a1 = Math.max(a1, -leastSlope(-x, z));
+      b0 = Math.min(b0, leastSlope(y - height, z));
+      b1 = Math.max(b1, -leastSlope(-y, z));
     }
-  return bounds;
+  return [a0, a1, b0, b1];
 }
 
 /** The slope from which on x − z·slope ≤ 0; on the plane itself always or never. */
 const leastSlope = (x: number, z: number): number => (z > 0 ? x / z : x <= 0 ? -Infinity : Infinity);
 
 /** Half the sum of the cross products round a flat polygon: its normal times its area. @see M. E. Newell (1972) */
-function areaVector(corners: readonly Vec3[]): [number, number, number] {
-  const sum: [number, number, number] = [0, 0, 0];
-  const o = corners[0] as Vec3;
-  for (let i = 2; i < corners.length; i++) {
-    const a = minus(corners[i - 1] as Vec3, o);
-    const b = minus(corners[i] as Vec3, o);
-    sum[0] += (a[1] * b[2] - a[2] * b[1]) / 2;
-    sum[1] += (a[2] * b[0] - a[0] * b[2]) / 2;
-    sum[2] += (a[0] * b[1] - a[1] * b[0]) / 2;
+function areaVector(c: readonly number[]): Vec3 {
+  let [x, y, z] = [0, 0, 0];
+  for (let k = 6; k < c.length; k += 3) {
+    const [ax, ay, az] = [c[k - 3]! - c[0]!, c[k - 2]! - c[1]!, c[k - 1]! - c[2]!];
+    const [bx, by, bz] = [c[k]! - c[0]!, c[k + 1]! - c[1]!, c[k + 2]! - c[2]!];
+    x += (ay * bz - az * by) / 2;
+    y += (az * bx - ax * bz) / 2;
+    z += (ax * by - ay * bx) / 2;
   }
-  return sum;
+  return [x, y, z];
 }
