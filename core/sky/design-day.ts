@@ -1,5 +1,5 @@
 import type { Fault } from '../scheme/fault.ts';
-import { daySamples } from '../sun/civil.ts';
+import { addDays, daySamples, isDate, isZone } from '../sun/civil.ts';
 import type { Observer } from '../sun/position.ts';
 import { sunTable } from '../sun/sun-table.ts';
 import { relativeAirMass, standardPressure_hPa } from './air-mass.ts';
@@ -103,9 +103,8 @@ export function designDay(input: DesignDayInput): DayGrid {
 export function hotSpell(input: DesignDayInput, days: number): DayGrid[] {
   if (!Number.isInteger(days) || days < 1 || days > 60)
     throw new RangeError(`a hot spell lasts 1 to 60 days, got ${days}`);
-  const last_ms = Date.parse(`${input.date}T00:00:00Z`);
   return Array.from({ length: days }, (_, i) => {
-    const date = new Date(last_ms - (days - 1 - i) * 86_400_000).toISOString().slice(0, 10);
+    const date = addDays(input.date, i + 1 - days);
     return designDay({ ...input, key: `${input.key}-${i + 1}`, name: `${input.name}, day ${i + 1} of ${days}`, date });
   });
 }
@@ -130,6 +129,14 @@ export function checkDesignDay(input: DesignDayInput, place: string): readonly F
       message,
       cure: 'give one value for the year or one a month',
     });
+  }
+  if (!isDate(input.date)) {
+    const message = `\`${input.date}\` is no date of the calendar`;
+    faults.push({ level: 'error', code: 'date', place: `${at}date`, message, cure: 'write it as YYYY-MM-DD' });
+  }
+  if (!isZone(input.zone)) {
+    const message = `\`${input.zone}\` is no zone of the time zone database`;
+    faults.push({ level: 'error', code: 'zone', place: `${at}zone`, message, cure: 'name one, such as Europe/London' });
   }
   const pressure_hPa = observer.pressure_hPa ?? standardPressure_hPa(observer.elevation_m);
   faults.push(...checkClearSun({ pressure_hPa, elevation_m: observer.elevation_m }, `${at}observer`));

@@ -7,6 +7,7 @@ type Times = {
   /** Line of each row in the file. */
   readonly line: Int32Array;
   readonly rows: number;
+  readonly step_min: number;
 };
 
 const DAY_ms = 86_400_000;
@@ -15,22 +16,10 @@ const text = (ms: number): string => new Date(ms).toISOString().slice(0, 16).rep
 /**
  * Whether the rows follow each other as the steps of one whole year: 365 days, or 366 with a 29 February. Where a month ends the
  * calendar may jump, for the months of a typical year come from different years.
- * @returns the step [min], or null when it cannot be told
  */
-export function checkTimes(times: Times, faults: FaultList): number | null {
-  const { label_ms, month, day, line, rows } = times;
-  const step_ms = usualStep_ms(times);
-  if (step_ms === null) {
-    faults.add(
-      'error',
-      'step',
-      '',
-      'the rows do not follow each other in even steps of 1 to 60 minutes',
-      'give hourly or sub-hourly rows in order',
-    );
-    return null;
-  }
-  const step_min = step_ms / 60_000;
+export function checkTimes(times: Times, faults: FaultList): void {
+  const { label_ms, month, day, line, rows, step_min } = times;
+  const step_ms = step_min * 60_000;
   for (let i = 1; i < rows; i++) {
     const gone = label_ms[i]! - label_ms[i - 1]!;
     if (gone === step_ms) continue;
@@ -57,28 +46,27 @@ export function checkTimes(times: Times, faults: FaultList): number | null {
         'put the missing rows in, marked as missing where nothing was measured',
       );
   }
-  if (!faults.failed) checkWhole(times, step_min, faults);
-  return step_min;
+  if (!faults.failed) checkWhole(times, faults);
 }
 
-/** The step that most of the first hundred rows keep. */
-function usualStep_ms({ label_ms, rows }: Times): number | null {
+/** The step that most of the first hundred rows keep [min], or null when it is none that divides an hour. */
+export function usualStep_min(label_ms: Float64Array): number | null {
   const counts = new Map<number, number>();
-  for (let i = 1; i < Math.min(rows, 100); i++) {
+  for (let i = 1; i < Math.min(label_ms.length, 100); i++) {
     const gone = label_ms[i]! - label_ms[i - 1]!;
     counts.set(gone, (counts.get(gone) ?? 0) + 1);
   }
   const [best] = [...counts].sort((a, b) => b[1] - a[1]);
   if (!best) return null;
   const [step] = best;
-  return step >= 60_000 && step <= 3_600_000 && 3_600_000 % step === 0 ? step : null;
+  return step >= 60_000 && step <= 3_600_000 && 3_600_000 % step === 0 ? step / 60_000 : null;
 }
 
 /** 28 February counts as the last day of its month: files of typical years leave the 29th out. */
 const isLastDay = (month: number, day: number): boolean =>
   day >= ([31, 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31][month - 1] as number);
 
-function checkWhole({ label_ms, month, day, rows, line }: Times, step_min: number, faults: FaultList): void {
+function checkWhole({ label_ms, month, day, rows, line, step_min }: Times, faults: FaultList): void {
   let leap = 0;
   for (let i = 0; i < rows; i++) if (month[i] === 2 && day[i] === 29) leap++;
   const perDay = 1440 / step_min;

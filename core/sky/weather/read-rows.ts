@@ -1,6 +1,6 @@
 import type { Checked } from '../../scheme/fault.ts';
 import { cellText, cutCells } from './cells.ts';
-import { checkTimes } from './check-times.ts';
+import { checkTimes, usualStep_min } from './check-times.ts';
 import { checkValues } from './check-values.ts';
 import { FaultList } from './fault-list.ts';
 import { fillGaps } from './fill-gaps.ts';
@@ -14,8 +14,6 @@ const MOST_ROWS = 366 * 24 * 60;
 /** The rows as they stand in the file, before they are checked against each other. */
 type Raw = {
   readonly label_ms: Float64Array;
-  readonly month: Uint8Array;
-  readonly day: Uint8Array;
   readonly line: Int32Array;
   readonly values: readonly Float64Array[];
   readonly rows: number;
@@ -26,8 +24,15 @@ export function readRows(plan: RowPlan): Checked<WeatherYear> {
   const faults = new FaultList();
   const raw = scan(plan, faults);
   if (faults.failed) return { ok: false, faults: faults.all() };
-  const step_min = checkTimes(raw, faults);
-  if (faults.failed || step_min === null) return { ok: false, faults: faults.all() };
+  const step_min = usualStep_min(raw.label_ms);
+  if (step_min === null) {
+    const message = 'the rows do not follow each other in even steps of 1 to 60 minutes';
+    faults.add('error', 'step', '', message, 'give hourly or sub-hourly rows in order');
+    return { ok: false, faults: faults.all() };
+  }
+  const dates = datesOf(plan, raw.label_ms, step_min);
+  checkTimes({ ...raw, ...dates, step_min }, faults);
+  if (faults.failed) return { ok: false, faults: faults.all() };
   const none = { global_Wm2: null, beamNormal_Wm2: null, diffuse_Wm2: null, tAir_C: null, dewPoint_C: null };
   const columns: { [Q in Quantity]: Float64Array | null } = {
     ...none,
@@ -46,7 +51,7 @@ export function readRows(plan: RowPlan): Checked<WeatherYear> {
     columns[quantity] = usable ? column : null;
   });
   if (faults.failed) return { ok: false, faults: faults.all() };
-  return { ok: true, value: { ...intervals(plan, raw, step_min), columns }, notes: faults.all() };
+  return { ok: true, value: { ...intervals(plan, raw, step_min), ...dates, columns }, notes: faults.all() };
 }
 
 function scan(plan: RowPlan, faults: FaultList): Raw {
@@ -54,8 +59,6 @@ function scan(plan: RowPlan, faults: FaultList): Raw {
   const most = Math.min(MOST_ROWS, Math.max(0, lines.length - firstRow));
   const raw = {
     label_ms: new Float64Array(most),
-    month: new Uint8Array(most),
-    day: new Uint8Array(most),
     line: new Int32Array(most),
     values: columns.map(() => new Float64Array(most)),
   };
@@ -107,8 +110,6 @@ function scan(plan: RowPlan, faults: FaultList): Raw {
       continue;
     }
     raw.label_ms[rows] = stampInstant_ms(stamp, time.ahead_min);
-    raw.month[rows] = stamp.month;
-    raw.day[rows] = stamp.day;
     raw.line[rows] = at + 1;
     for (let k = 0; k < columns.length; k++) {
       const { index } = columns[k] as RowPlan['columns'][number];
@@ -131,8 +132,6 @@ function scan(plan: RowPlan, faults: FaultList): Raw {
     faults.add('error', 'empty', '', 'there are no rows', 'choose a file with a year of rows below its heads');
   return {
     label_ms: raw.label_ms.subarray(0, rows),
-    month: raw.month.subarray(0, rows),
-    day: raw.day.subarray(0, rows),
     line: raw.line.subarray(0, rows),
     values: raw.values.map((v) => v.subarray(0, rows)),
     rows,
@@ -144,8 +143,25 @@ const isRestBlank = (lines: readonly string[], from: number): boolean => {
   return true;
 };
 
+/**
+ * Month and day that a row belongs to, by the clock of the file: those of the start of its interval, so that the hour that ends
+ * at midnight belongs to the day before, whether it is printed as 24:00 or as 00:00. A value read at one instant belongs to the
+ * day of its label.
+ */
+function datesOf(plan: RowPlan, label_ms: Float64Array, step_min: number): { month: Uint8Array; day: Uint8Array } {
+  const moved_min = plan.label === 'instant' ? 0 : plan.shift_min - (plan.label === 'end' ? step_min : 0);
+  const month = new Uint8Array(label_ms.length);
+  const day = new Uint8Array(label_ms.length);
+  for (let i = 0; i < label_ms.length; i++) {
+    const date = new Date(label_ms[i]! + (moved_min + plan.time.ahead_min) * 60_000);
+    month[i] = date.getUTCMonth() + 1;
+    day[i] = date.getUTCDate();
+  }
+  return { month, day };
+}
+
 /** From printed times to the intervals that they stand for. */
-function intervals(plan: RowPlan, raw: Raw, step_min: number): Omit<WeatherYear, 'columns'> {
+function intervals(plan: RowPlan, raw: Raw, step_min: number): Omit<WeatherYear, 'columns' | 'month' | 'day'> {
   const step_ms = step_min * 60_000;
   // Minutes from the printed time to the start of the interval.
   const before_min =
@@ -160,7 +176,5 @@ function intervals(plan: RowPlan, raw: Raw, step_min: number): Omit<WeatherYear,
     start_ms,
     end_ms: start_ms.map((t) => t + step_ms),
     airOffset_min: plan.air === 'mean' ? null : -before_min - step_min / 2,
-    month: raw.month.slice(),
-    day: raw.day.slice(),
   };
 }

@@ -1,0 +1,52 @@
+import type { Fault } from '../../scheme/fault.ts';
+import type { Observer } from '../../sun/position.ts';
+import { sunTable } from '../../sun/sun-table.ts';
+import type { WeatherYear } from './weather-year.ts';
+
+/** How far the clock is tried to either side, and how finely [min]. */
+const WIDEST_min = 720;
+const STEP_min = 30;
+
+/**
+ * Whether sunlight and sun agree: the rows' sunlight must fall in their daytime, and global must be beam on the level and
+ * diffuse. A wrong time zone, a label taken for the wrong end of its hour or the wrong place shows here, and nowhere else so
+ * plainly. Shifts of half hours are tried; the best is named.
+ */
+export function checkClock(weather: WeatherYear, observer: Observer): readonly Fault[] {
+  const misfit = (shift_min: number): number => misfitOf(weather, observer, shift_min);
+  const now = misfit(0);
+  let best = { shift_min: 0, misfit: now };
+  for (let shift_min = -WIDEST_min; shift_min <= WIDEST_min; shift_min += STEP_min) {
+    const m = misfit(shift_min);
+    if (m < best.misfit * 0.999) best = { shift_min, misfit: m };
+  }
+  // Half an hour's error misfits several times as much as the truth does; noise moves the best by less than that.
+  if (best.shift_min === 0 || best.misfit > 0.7 * now) return [];
+  const hours = Math.abs(best.shift_min) / 60;
+  return [
+    {
+      level: 'warning',
+      code: 'clock',
+      place: '',
+      message: `sunlight and sun do not agree: they would with every row ${hours} h ${best.shift_min > 0 ? 'later' : 'earlier'}`,
+      cure: 'check which end of its interval a row is labelled by, the hours from UTC, and the place',
+    },
+  ];
+}
+
+/** Mean square of what closure leaves [W/m²]², or, without the three parts, sunlight that falls while the sun is down. */
+function misfitOf(weather: WeatherYear, observer: Observer, shift_min: number): number {
+  const { start_ms, end_ms, columns, rows } = weather;
+  const { global_Wm2: global, beamNormal_Wm2: beam, diffuse_Wm2: diffuse } = columns;
+  const { altitude_rad } = sunTable(
+    start_ms.map((s, i) => (s + end_ms[i]!) / 2 + shift_min * 60_000),
+    observer,
+  );
+  let sum = 0;
+  for (let i = 0; i < rows; i++) {
+    const up = Math.max(0, Math.sin(altitude_rad[i]!));
+    if (global && beam && diffuse) sum += (global[i]! - diffuse[i]! - beam[i]! * up) ** 2;
+    else if (up === 0) sum += (global ?? diffuse)?.[i] ?? 0;
+  }
+  return sum / rows;
+}
