@@ -1,0 +1,81 @@
+import { signal } from '@preact/signals';
+import { useLayoutEffect } from 'preact/hooks';
+import { Clock } from './moment/clock.tsx';
+import { Cautions } from './ui/cautions.tsx';
+import { Drawer } from './drawer.tsx';
+import { Findings } from './findings/findings.tsx';
+import { Massing } from './massing/massing.tsx';
+import { FaultsDialog } from './start/faults-dialog.tsx';
+import { Start } from './start/start.tsx';
+import { TopBar } from './start/top-bar.tsx';
+import { UnsavedDialog } from './start/unsaved-dialog.tsx';
+import { scheme } from './state/document.ts';
+import { openDropped } from './state/files.ts';
+import { dismissMessage, message } from './state/messages.ts';
+import { MessageLine } from './ui/message-line.tsx';
+import { words } from './ui/words.ts';
+import './ui/fonts.css';
+import './ui/tokens.css';
+import './ui/base.css';
+import './desk.css';
+
+const isOver = signal(false);
+
+/** A file may be dropped anywhere on the window. */
+function useDrop(): void {
+  useLayoutEffect(() => {
+    const hasFiles = (event: DragEvent): boolean => event.dataTransfer?.types.includes('Files') ?? false;
+    const over = (event: DragEvent): void => {
+      if (!hasFiles(event)) return;
+      event.preventDefault();
+      isOver.value = true;
+    };
+    const leave = (event: DragEvent): void => {
+      if (event.relatedTarget === null) isOver.value = false;
+    };
+    const drop = (event: DragEvent): void => {
+      if (!hasFiles(event)) return;
+      event.preventDefault();
+      isOver.value = false;
+      const file = event.dataTransfer?.files[0];
+      if (file !== undefined) void openDropped(file);
+    };
+    document.addEventListener('dragover', over);
+    document.addEventListener('dragleave', leave);
+    document.addEventListener('drop', drop);
+    return () => {
+      document.removeEventListener('dragover', over);
+      document.removeEventListener('dragleave', leave);
+      document.removeEventListener('drop', drop);
+    };
+  }, []);
+}
+
+/** The whole window. */
+export function Desk() {
+  useDrop();
+  return (
+    <>
+      <div class="desk">
+        <TopBar />
+        {scheme.value === null ? <Start /> : <OpenDesk />}
+        <Cautions />
+      </div>
+      <MessageLine shown={message.value} onDismiss={dismissMessage} />
+      <FaultsDialog />
+      <UnsavedDialog />
+      {isOver.value ? <div class="drop-cover">{words.drop}</div> : null}
+    </>
+  );
+}
+
+const OpenDesk = () => (
+  <main class="open-desk">
+    <Drawer />
+    <div class="picture">
+      <Massing />
+      <Clock />
+    </div>
+    <Findings />
+  </main>
+);

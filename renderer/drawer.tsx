@@ -1,0 +1,63 @@
+import { signal } from '@preact/signals';
+import { useLayoutEffect } from 'preact/hooks';
+import { countOf, KINDS, ScheduleOf } from './schedule/schedules.tsx';
+import { type Kind, selection } from './state/selection.ts';
+import { type Tab, Tabs } from './ui/tabs.tsx';
+import { words } from './ui/words.ts';
+import { YearStrip } from './year-strip/year-strip.tsx';
+
+type Page = Kind | 'year';
+
+const page = signal<Page>('year');
+
+/** From this width on, the schedules and the year strip have each a place of their own. */
+const WIDE = window.matchMedia('(min-width: 1680px)');
+const isWide = signal(WIDE.matches);
+WIDE.addEventListener('change', () => {
+  isWide.value = WIDE.matches;
+});
+
+/** Year strip and schedules: one behind the other in a small window, side by side in a wide one. */
+export function Drawer() {
+  // On a wide window a schedule is always there; picking something in the massing turns to its schedule.
+  const picked = selection.value?.kind;
+  useLayoutEffect(() => {
+    if (picked !== undefined && (isWide.value || page.value !== 'year')) page.value = picked;
+  }, [picked]);
+  const wide = isWide.value;
+  const shown: Page = wide && page.value === 'year' ? 'window' : page.value;
+  const schedules = KINDS.map(
+    (kind): Tab<Page> => ({ value: kind, text: words.schedule.tabs[kind], count: countOf(kind) }),
+  );
+  const tabs = wide ? schedules : [{ value: 'year' as const, text: words.year.tab }, ...schedules];
+  return (
+    <>
+      <section class="schedules" aria-label={words.schedule.label}>
+        <div class="schedules-head">
+          <Tabs
+            label={words.schedule.label}
+            tabs={tabs}
+            value={shown}
+            panelId="schedule-panel"
+            onChoose={(value) => {
+              page.value = value;
+            }}
+          />
+        </div>
+        <div
+          id="schedule-panel"
+          class="schedule-panel"
+          role="tabpanel"
+          aria-label={shown === 'year' ? words.year.label : words.schedule.tabs[shown]}
+        >
+          {shown === 'year' ? <YearStrip /> : <ScheduleOf kind={shown} />}
+        </div>
+      </section>
+      {wide ? (
+        <section class="year-place" aria-label={words.year.label}>
+          <YearStrip />
+        </section>
+      ) : null}
+    </>
+  );
+}

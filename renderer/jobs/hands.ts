@@ -1,0 +1,15 @@
+import { WorkerHand } from './worker-hand.ts';
+
+const make = (): Worker => new Worker(new URL('./study.worker.ts', import.meta.url), { type: 'module' });
+
+/**
+ * One hand a kind of work, so that a check never holds up the shadow of a moving clock. Workers start with their first job.
+ */
+export const hands = {
+  /** Reads and writes schemes, sets sheets. */
+  clerk: new WorkerHand(make),
+  /** The moment on the massing. */
+  moment: new WorkerHand(make),
+  check: new WorkerHand(make),
+  year: new WorkerHand(make),
+} as const;

@@ -1,0 +1,79 @@
+import { buildModel } from '../../core/form/build-model.ts';
+import type { Model } from '../../core/form/model.ts';
+import { loadScheme } from '../../core/scheme/load.ts';
+import type { Scheme } from '../../core/scheme/schema.ts';
+import { writeScheme } from '../../core/scheme/write.ts';
+import { checkScheme } from '../../core/study/check.ts';
+import type { Pulse } from '../../core/study/job.ts';
+import { momentStudy } from '../../core/study/moment.ts';
+import { sunYear } from '../../core/study/sun-year.ts';
+import { sunEvents } from '../../core/sun/events.ts';
+import { findingsReport } from '../../core/sheet/findings-report.ts';
+import { limitSetOf } from './limit-set.ts';
+import type { AnswerOf, AskOf, DayEnds, Task, Work } from './tasks.ts';
+
+/** Step of the year strip's clock [min]. */
+const YEAR_STEP_min = 10;
+
+/** The scheme that a worker was last sent, and its shapes once somebody needs them. */
+class Held {
+  readonly scheme: Scheme;
+  #model: Model | null = null;
+
+  constructor(scheme: Scheme) {
+    this.scheme = scheme;
+  }
+
+  get model(): Model {
+    this.#model ??= buildModel(this.scheme);
+    return this.#model;
+  }
+}
+
+function dayEnds(scheme: Scheme, date: string): DayEnds {
+  const { site } = scheme;
+  const observer = { latitude_deg: site.latitude, longitude_deg: site.longitude, elevation_m: site.elevation };
+  const { sunrise_ms, sunset_ms, transit_ms, state } = sunEvents(date, site.zone, observer);
+  return { date, sunrise_ms, sunset_ms, transit_ms, state };
+}
+
+type Performer<T extends Task> = (ask: AskOf<T>, held: () => Held, pulse: Pulse) => Promise<AnswerOf<T> | null>;
+
+const performers: { readonly [T in Task]: Performer<T> } = {
+  read: async ({ text }) => loadScheme(text),
+  write: async ({ scheme }) => writeScheme(scheme),
+  moment: async ({ instant_ms, date, wantModel }, held) => {
+    const { scheme, model } = held();
+    return {
+      model: wantModel ? model : null,
+      moment: momentStudy(scheme, model, instant_ms),
+      day: dayEnds(scheme, date),
+    };
+  },
+  check: ({ notes }, held, pulse) => {
+    const { scheme } = held();
+    return checkScheme(scheme, limitSetOf(scheme), notes, pulse);
+  },
+  year: ({ windows, year }, held, pulse) => {
+    const { scheme, model } = held();
+    return sunYear(scheme, model, windows, year, YEAR_STEP_min, pulse);
+  },
+  report: async ({ result }, held) => ({ ok: true, value: findingsReport(result, held().scheme), notes: [] }),
+  shadowSheet: async () => {
+    throw new Error('not here yet');
+  },
+};
+
+/** A worker's memory of the scheme, and its one way in. */
+export function taskPerformer(): (work: Work, pulse: Pulse) => Promise<unknown> {
+  let held: Held | null = null;
+  const given = (): Held => {
+    if (held === null) throw new Error('this task needs a scheme, and none was sent');
+    return held;
+  };
+  return (work, pulse) => {
+    if (work.scheme !== null) held = new Held(work.scheme);
+    const perform = performers[work.task] as Performer<Task>;
+    return perform(work.ask, given, pulse) as Promise<unknown>;
+  };
+}

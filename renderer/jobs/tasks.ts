@@ -1,0 +1,48 @@
+import type { Model } from '../../core/form/model.ts';
+import type { Checked, Fault } from '../../core/scheme/fault.ts';
+import type { Scheme } from '../../core/scheme/schema.ts';
+import type { Document } from '../../core/sheet/drawing.ts';
+import type { CheckResult } from '../../core/study/check-result.ts';
+import type { MomentResult } from '../../core/study/moment.ts';
+import type { SunYear } from '../../core/study/sun-year.ts';
+
+/** What a day brings: the ends of the day as clock times, for the slider. */
+export type DayEnds = {
+  readonly date: string;
+  readonly sunrise_ms: number | null;
+  readonly sunset_ms: number | null;
+  readonly transit_ms: number;
+  readonly state: 'rises' | 'never-rises' | 'never-sets';
+};
+
+/** Everything that workers do for the desk: what is asked, and what comes back. Tasks that need the scheme are sent it once. */
+export type Tasks = {
+  /** Read a scheme file. */
+  read: { ask: { text: string }; answer: Checked<Scheme> };
+  /** Write a scheme file. */
+  write: { ask: { scheme: Scheme }; answer: string };
+  /** The scheme as shapes, and the sun on them at a moment. The model comes only when asked for: it changes less often. */
+  moment: {
+    ask: { instant_ms: number; date: string; wantModel: boolean };
+    answer: { model: Model | null; moment: MomentResult; day: DayEnds };
+  };
+  check: { ask: { notes: readonly Fault[] }; answer: CheckResult };
+  /** Direct sun on some windows through a year. */
+  year: { ask: { windows: readonly string[]; year: number }; answer: SunYear };
+  /** The findings on paper. `drawn`: the date of the drawing, YYYY-MM-DD. */
+  report: { ask: { result: CheckResult; drawn: string }; answer: Checked<Document> };
+  /** The shadows of a date on paper, hour by hour while the sun is up. */
+  shadowSheet: { ask: { date: string; drawn: string }; answer: Checked<Document> };
+};
+
+export type Task = keyof Tasks;
+export type AskOf<T extends Task> = Tasks[T]['ask'];
+export type AnswerOf<T extends Task> = Tasks[T]['answer'];
+
+/** What is posted to a worker. `scheme` is null when the worker already holds that revision. */
+export type Work = {
+  readonly task: Task;
+  readonly ask: AskOf<Task>;
+  readonly revision: number;
+  readonly scheme: Scheme | null;
+};

@@ -1,0 +1,29 @@
+import { render } from 'preact';
+import { desktopBridge } from './bridge/host.ts';
+import { Desk } from './desk.tsx';
+import { greetHost } from './start/start.tsx';
+import { pressShortcut } from './start/top-bar.tsx';
+import { redoEdit, undoEdit } from './state/document.ts';
+import { openByDialog, reportUnsaved, save, saveAs, takeOpened } from './state/files.ts';
+import { followScheme } from './state/studies.ts';
+
+/** What the host's own menu may ask for. */
+const commands: { readonly [command: string]: () => unknown } = {
+  open: openByDialog,
+  save,
+  'save-as': saveAs,
+  undo: undoEdit,
+  redo: redoEdit,
+};
+
+followScheme();
+reportUnsaved();
+render(<Desk />, document.getElementById('desk') as HTMLElement);
+document.addEventListener('keydown', (event) => {
+  if (pressShortcut(event)) event.preventDefault();
+});
+desktopBridge?.listen((event) => {
+  if (event.kind === 'opened') takeOpened(event.opened);
+  else commands[event.command]?.();
+});
+void greetHost();

@@ -1,0 +1,153 @@
+import type { Model, Solid, Stage, WindowForm } from '../../core/form/model.ts';
+import { stands } from '../../core/form/stands.ts';
+import { along, type Point, type Vec3 } from '../../core/plane/vec.ts';
+import type { Selection } from '../state/selection.ts';
+import { crown } from './crown.ts';
+import { Faces } from './faces.ts';
+import { mix, type Palette, type Rgb } from './palette.ts';
+import { Strokes } from './strokes.ts';
+
+/** A window drawn this far in front of its wall does not flicker with it [m]. */
+const PROUD_m = 0.02;
+
+export type SolidsLayer = { readonly faces: Faces; readonly edges: Strokes; readonly dashes: Strokes };
+
+type Tints = { readonly roof: Rgb; readonly wall: Rgb; readonly edge: Rgb };
+
+export function tintsOf(standing: Solid['standing'], palette: Palette): Tints {
+  if (standing === 'proposed')
+    return { roof: palette['proposed-roof'], wall: palette['proposed-wall'], edge: palette.ink };
+  if (standing === 'context') {
+    return {
+      roof: palette['context-roof'],
+      wall: palette['context-wall'],
+      edge: mix(palette.ink, palette['context-wall'], 0.35),
+    };
+  }
+  return { roof: palette['standing-roof'], wall: palette['standing-wall'], edge: palette.ink };
+}
+
+/** A wall's tint by the way it faces, so that neighbouring walls differ: fixed to the drawing and nothing to do with the sun. */
+export function wallTint(tints: { roof: Rgb; wall: Rgb }, nx: number, ny: number): Rgb {
+  const towards = (nx * Math.cos(2.2) + ny * Math.sin(2.2) + 1) / 2;
+  return mix(tints.wall, tints.roof, 0.75 * towards);
+}
+
+const lifted = (ring: readonly Point[], z: number): Vec3[] => ring.map(([x, y]): Vec3 => [x, y, z]);
+
+function edgesOf(solid: Solid, strokes: Strokes, colour: Rgb): void {
+  const low = lifted(solid.outline, solid.base_m);
+  const high = lifted(solid.outline, solid.top_m);
+  strokes.loop(low, colour);
+  strokes.loop(high, colour);
+  for (let i = 0; i < low.length; i++) strokes.add(low[i] as Vec3, high[i] as Vec3, colour);
+}
+
+function drawSolid(solid: Solid, tints: Tints, layer: SolidsLayer): void {
+  const owner = { kind: 'block', id: solid.id } as const;
+  for (const piece of solid.pieces) layer.faces.convex(lifted(piece, solid.top_m), tints.roof, owner);
+  const n = solid.outline.length;
+  for (let i = 0; i < n; i++) {
+    const a = solid.outline[i] as Point;
+    const b = solid.outline[(i + 1) % n] as Point;
+    const span = Math.hypot(b[0] - a[0], b[1] - a[1]) || 1;
+    const tint = wallTint(tints, (b[1] - a[1]) / span, (a[0] - b[0]) / span);
+    const { base_m, top_m } = solid;
+    layer.faces.convex(
+      [
+        [...a, base_m],
+        [...b, base_m],
+        [...b, top_m],
+        [...a, top_m],
+      ],
+      tint,
+      owner,
+    );
+  }
+  edgesOf(solid, layer.edges, tints.edge);
+}
+
+/** The corners of a window, a little proud of its wall, from its lower left. */
+export function windowCorners(w: WindowForm, proud_m = PROUD_m): readonly Vec3[] {
+  const o = along(w.origin, w.normal, proud_m);
+  const r = along(o, w.right, w.width_m);
+  return [o, r, along(r, w.up, w.height_m), along(o, w.up, w.height_m)];
+}
+
+function drawWindow(w: WindowForm, sunlit: number, isSelected: boolean, palette: Palette, layer: SolidsLayer): void {
+  const owner = { kind: 'window', id: w.id } as const;
+  const glass = mix(palette['glass-shade'], palette['glass-lit'], sunlit);
+  layer.faces.convex(windowCorners(w), glass, owner);
+  layer.edges.loop(windowCorners(w, PROUD_m * 1.5), isSelected ? palette.accent : palette.ink);
+  for (const shader of w.shaders) {
+    layer.faces.convex(shader.corners, palette.device, owner);
+    layer.edges.loop(shader.corners, palette.ink);
+  }
+}
+
+export type SolidsAsk = {
+  readonly model: Model;
+  readonly stage: Stage;
+  readonly selection: Selection | null;
+  /** Share of each window's glass in direct sun, by id. */
+  readonly sunlit: ReadonlyMap<string, number>;
+  readonly palette: Palette;
+};
+
+/** Everything that stands, as one list of flat faces and one of ink edges; what does not stand at the stage is dashed. */
+export function solidsLayer({ model, stage, selection, sunlit, palette }: SolidsAsk): SolidsLayer {
+  const layer: SolidsLayer = { faces: new Faces(), edges: new Strokes(), dashes: new Strokes() };
+  const isSelected = (kind: Selection['kind'], id: string): boolean =>
+    selection?.kind === kind && selection.ids.includes(id);
+  const standing = new Set<string>();
+  for (const solid of model.solids) {
+    const tints = tintsOf(solid.standing, palette);
+    if (!stands(solid.standing, stage)) {
+      edgesOf(solid, layer.dashes, palette.soft);
+      continue;
+    }
+    standing.add(solid.id);
+    drawSolid(solid, isSelected('block', solid.id) ? chosen(tints, palette) : tints, layer);
+  }
+  for (const w of model.windows) {
+    if (!standing.has(w.block)) continue;
+    const picked =
+      isSelected('window', w.id) ||
+      isSelected('room', w.room) ||
+      isSelected('glass', w.glass.id) ||
+      w.shaders.some((s) => isSelected('device', s.device));
+    drawWindow(w, stage === 'after' ? (sunlit.get(w.id) ?? 0) : 0, picked, palette, layer);
+  }
+  for (const tree of model.trees) crown(tree, palette, layer.faces, layer.edges);
+  return layer;
+}
+
+const chosen = (tints: Tints, palette: Palette): Tints => ({
+  roof: mix(tints.roof, palette.accent, 0.3),
+  wall: mix(tints.wall, palette.accent, 0.3),
+  edge: palette.accent,
+});
+
+/** Outlines that are drawn over everything: the room or windows that are selected, so that they show through what hides them. */
+export function selectionStrokes(model: Model, selection: Selection | null, palette: Palette): Strokes {
+  const strokes = new Strokes();
+  if (selection === null) return strokes;
+  const ids = new Set(selection.ids);
+  if (selection.kind === 'room') {
+    for (const room of model.rooms) {
+      if (!ids.has(room.id)) continue;
+      const low = lifted(room.outline, room.floor_m);
+      const high = lifted(room.outline, room.floor_m + room.height_m);
+      strokes.loop(low, palette.accent);
+      strokes.loop(high, palette.accent);
+      for (let i = 0; i < low.length; i++) strokes.add(low[i] as Vec3, high[i] as Vec3, palette.accent);
+    }
+  }
+  if (selection.kind === 'window') {
+    for (const w of model.windows) if (ids.has(w.id)) strokes.loop(windowCorners(w), palette.accent);
+  }
+  if (selection.kind === 'block') {
+    for (const solid of model.solids) if (ids.has(solid.id)) edgesOf(solid, strokes, palette.accent);
+  }
+  return strokes;
+}

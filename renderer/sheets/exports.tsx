@@ -1,0 +1,81 @@
+import { signal } from '@preact/signals';
+import type { Checked } from '../../core/scheme/fault.ts';
+import { faultLine } from '../../core/scheme/fault.ts';
+import type { Document } from '../../core/sheet/drawing.ts';
+import { host } from '../bridge/host.ts';
+import { hands } from '../jobs/hands.ts';
+import type { Outcome } from '../jobs/worker-hand.ts';
+import { file, scheme } from '../state/document.ts';
+import { tell } from '../state/messages.ts';
+import { civil } from '../state/moment.ts';
+import { check, isCheckStale } from '../state/studies.ts';
+import { Menu } from '../ui/menu.tsx';
+import { words } from '../ui/words.ts';
+
+const isSetting = signal(false);
+
+/** The sheets that can be printed from what is on the desk. */
+export function Exports() {
+  const canReport = check.value !== null && !isCheckStale.value;
+  return (
+    <Menu
+      text={words.bar.print}
+      off={isSetting.value}
+      items={[
+        {
+          text: words.sheets.report,
+          off: !canReport,
+          tip: canReport ? undefined : words.sheets.needsCheck,
+          onPress: () => void printReport(),
+        },
+        { text: words.sheets.shadow, onPress: () => void printShadowSheet() },
+      ]}
+    />
+  );
+}
+
+/** Today on the reader's calendar: the date of the drawing. */
+const today = (): string => {
+  const now = new Date();
+  return new Date(now.getTime() - now.getTimezoneOffset() * 60_000).toISOString().slice(0, 10);
+};
+
+const stem = (): string => (file.peek()?.name ?? words.bar.untitled).replace(/(\.scheme)?\.json$/i, '');
+
+async function printReport(): Promise<void> {
+  const found = check.peek();
+  if (found === null) return;
+  const ask = { result: found.value, drawn: today() };
+  await print(words.sheets.report, `${stem()} findings.pdf`, hands.clerk.run('report', ask, found.scheme));
+}
+
+async function printShadowSheet(): Promise<void> {
+  const ask = { date: civil.peek().date, drawn: today() };
+  await print(
+    words.sheets.shadow,
+    `${stem()} shadows ${ask.date}.pdf`,
+    hands.clerk.run('shadowSheet', ask, scheme.peek()),
+  );
+}
+
+async function print(what: string, name: string, work: Promise<Outcome<Checked<Document>>>): Promise<void> {
+  isSetting.value = true;
+  tell('news', words.sheets.setting(what));
+  const failure = await setAndWrite(name, work);
+  isSetting.value = false;
+  if (failure !== null) tell('failure', words.sheets.failed(what, failure));
+}
+
+/** @returns why it did not come to be, or null */
+async function setAndWrite(name: string, work: Promise<Outcome<Checked<Document>>>): Promise<string | null> {
+  const outcome = await work;
+  if (outcome.kind === 'failed') return outcome.message;
+  if (outcome.kind === 'stopped') return words.status.stopped;
+  if (!outcome.result.ok) return outcome.result.faults.map(faultLine).join(' · ');
+  const pdf = await host['sheet:pdf']({ document: outcome.result.value });
+  if (!pdf.ok) return pdf.message;
+  const written = await host['export:write']({ name, bytes: pdf.value.bytes });
+  if (!written.ok) return written.message;
+  if (written.value !== null) tell('news', words.sheets.written(written.value.name));
+  return null;
+}

@@ -1,0 +1,153 @@
+import { effect, signal } from '@preact/signals';
+import type { FileId, Opened } from '../../app/contract/host.ts';
+import type { Fault } from '../../core/scheme/fault.ts';
+import { DEFAULT_YEAR, type Scheme } from '../../core/scheme/schema.ts';
+import { desktopBridge, host } from '../bridge/host.ts';
+import { canSaveOver } from '../bridge/page-files.ts';
+import { hands } from '../jobs/hands.ts';
+import { words } from '../ui/words.ts';
+import { committed, file, isUnsaved, markSaved, place } from './document.ts';
+import { tell } from './messages.ts';
+import { civil } from './moment.ts';
+import { selectNothing } from './selection.ts';
+import { runCheck } from './studies.ts';
+
+/** A file that could not be opened, and why: shown as a list until it is closed. */
+export type Refusal = { readonly name: string; readonly faults: readonly Fault[] };
+
+export const refusal = signal<Refusal | null>(null);
+export const isReading = signal(false);
+/** What waits for the user to say what becomes of unsaved changes. */
+export const pendingOpen = signal<(() => void) | null>(null);
+
+const text = new TextDecoder();
+const bytes = new TextEncoder();
+
+/** Goes on at once, or after the user has said what becomes of unsaved changes. */
+function afterLeaving(go: () => void): void {
+  if (isUnsaved.peek() && file.peek()?.id !== null) pendingOpen.value = go;
+  else go();
+}
+
+export async function answerPending(answer: 'save' | 'discard' | 'stay'): Promise<void> {
+  const go = pendingOpen.peek();
+  if (answer === 'save' && !(await save())) return;
+  pendingOpen.value = null;
+  if (answer !== 'stay') go?.();
+}
+
+/**
+ * Reads a file and puts it on the desk whole, or shows its faults and leaves the desk as it was.
+ * @param id  null when there is no file to save over: an example, or work brought back
+ */
+async function take(name: string, data: Uint8Array, id: FileId | null): Promise<void> {
+  isReading.value = true;
+  const outcome = await hands.clerk.run('read', { text: text.decode(data) });
+  isReading.value = false;
+  if (outcome.kind === 'failed') return tell('failure', words.status.notOpened(outcome.message));
+  if (outcome.kind === 'stopped') return;
+  const checked = outcome.result;
+  if (!checked.ok) {
+    refusal.value = { name, faults: checked.faults };
+    return;
+  }
+  show(checked.value, { id, name }, checked.notes);
+}
+
+function show(scheme: Scheme, where: { id: FileId | null; name: string }, warnings: readonly Fault[]): void {
+  selectNothing();
+  civil.value = { date: firstDate(scheme), time: civil.peek().time };
+  place(scheme, where, warnings, where.id !== null);
+  void runCheck();
+}
+
+/** The solstice of the site's summer, where gains and shadows are looked at first. */
+function firstDate(scheme: Scheme): string {
+  return `${scheme.year ?? DEFAULT_YEAR}-${scheme.site.latitude < 0 ? '12-21' : '06-21'}`;
+}
+
+export const takeOpened = (opened: Opened): void => afterLeaving(() => void take(opened.name, opened.bytes, opened.id));
+
+export async function openByDialog(): Promise<void> {
+  const reply = await host['scheme:open'](null);
+  if (!reply.ok) return tell('failure', words.status.notOpened(reply.message));
+  if (reply.value !== null) takeOpened(reply.value);
+}
+
+export async function openRecent(id: FileId): Promise<void> {
+  const reply = await host['scheme:reopen']({ id });
+  if (!reply.ok) return tell('failure', words.status.notOpened(reply.message));
+  takeOpened(reply.value);
+}
+
+export async function openDemo(key: string): Promise<void> {
+  const reply = await host['scheme:demo']({ key });
+  if (!reply.ok) return tell('failure', words.status.notOpened(reply.message));
+  const { name, bytes: data } = reply.value;
+  afterLeaving(() => void take(name, data, null));
+}
+
+/** A file that was dropped on the window. On the desktop it can be saved over; in a browser it comes as a copy. */
+export async function openDropped(dropped: File): Promise<void> {
+  if (desktopBridge !== null) {
+    const reply = await desktopBridge.dropped(dropped);
+    if (!reply.ok) return tell('failure', words.status.notOpened(reply.message));
+    return takeOpened(reply.value);
+  }
+  const data = new Uint8Array(await dropped.arrayBuffer());
+  afterLeaving(() => void take(dropped.name, data, null));
+}
+
+export function openRecovered(kept: { name: string; bytes: Uint8Array }): void {
+  afterLeaving(() => void take(kept.name, kept.bytes, null));
+}
+
+async function textOf(scheme: Scheme): Promise<string | null> {
+  const outcome = await hands.clerk.run('write', { scheme });
+  if (outcome.kind === 'done') return outcome.result;
+  if (outcome.kind === 'failed') tell('failure', words.status.notSaved(outcome.message));
+  return null;
+}
+
+/** @returns whether the scheme is on disk now */
+export async function save(): Promise<boolean> {
+  const scheme = committed.peek();
+  const where = file.peek();
+  if (scheme === null || where === null) return false;
+  if (where.id === null || !canSaveOver(where.id)) return saveAs();
+  const written = await textOf(scheme);
+  if (written === null) return false;
+  const reply = await host['scheme:save']({ id: where.id, bytes: bytes.encode(written) });
+  if (!reply.ok) {
+    tell('failure', words.status.notSaved(reply.message));
+    return false;
+  }
+  markSaved(scheme, where);
+  tell('news', words.status.saved(where.name));
+  return true;
+}
+
+export async function saveAs(): Promise<boolean> {
+  const scheme = committed.peek();
+  const where = file.peek();
+  if (scheme === null || where === null) return false;
+  const written = await textOf(scheme);
+  if (written === null) return false;
+  const name = where.name.endsWith('.json') ? where.name : `${where.name}.scheme.json`;
+  const reply = await host['scheme:save-as']({ name, bytes: bytes.encode(written) });
+  if (!reply.ok) {
+    tell('failure', words.status.notSaved(reply.message));
+    return false;
+  }
+  if (reply.value === null) return false;
+  markSaved(scheme, reply.value);
+  tell('news', words.status.saved(reply.value.name));
+  return true;
+}
+
+/** Tells the host, which asks before it closes a window with unsaved work. */
+export function reportUnsaved(): void {
+  effect(() => {
+    desktopBridge?.setUnsaved(isUnsaved.value);
+  });
+}
