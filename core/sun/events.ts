@@ -1,12 +1,9 @@
 import { DEG, toDegrees, wrap180 } from '../units/angle.ts';
 import { dayBounds } from './civil.ts';
-import { deltaT_s } from './delta-t.ts';
-import { geocentricSun, rightAscension_deg } from './geocentric.ts';
-import { daysFromJ2000 } from './julian.ts';
 import type { Observer } from './position.ts';
 import { lowestBetween, rootBetween } from './root.ts';
-import { meanSiderealTime_deg } from './sidereal.ts';
-import { type SunSight, sunTrack } from './sun-track.ts';
+import { SunKnots } from './sun-knots.ts';
+import { emptySun, greenwichSun, type SunSight, sunTrack } from './sun-track.ts';
 
 /** True altitude of the sun's centre when its upper edge stands on a sea horizon: 34′ of refraction, 16′ of radius [°]. */
 export const RISING_deg = -0.8333;
@@ -37,19 +34,21 @@ export type SunEvents = {
  */
 export const horizonDip_deg = (height_m: number): number => (1.76 * Math.sqrt(height_m)) / 60;
 
-/** How far the sun stands past the meridian [°], (−180, 180]. */
-function hourAngle_deg(instant_ms: number, observer: Observer): number {
-  const days = daysFromJ2000(instant_ms);
-  const sun = geocentricSun(days + (observer.deltaT_s ?? deltaT_s(instant_ms)) / 86400);
-  const sidereal = meanSiderealTime_deg(days) + sun.equationOfEquinoxes_deg;
-  return wrap180(sidereal + observer.longitude_deg - rightAscension_deg(sun));
-}
+/** Finds the instant nearest to another at which the sun stands at an hour angle [°]: 0 highest, 180 lowest. */
+type Passing = (hour_deg: number, near_ms: number) => number;
 
-/** The passing of an hour angle that is nearest to an instant. Each turn leaves a thousandth of the error before it. */
-function passing_ms(hour_deg: number, near_ms: number, observer: Observer): number {
-  let t = near_ms;
-  for (let turn = 0; turn < 5; turn++) t -= (wrap180(hourAngle_deg(t, observer) - hour_deg) / 360) * DAY_ms;
-  return t;
+function passings(observer: Observer, knots: SunKnots): Passing {
+  const greenwich = greenwichSun(observer.deltaT_s, knots);
+  const sun = emptySun();
+  return (hour_deg, near_ms) => {
+    let t = near_ms;
+    // Each turn leaves a thousandth of the error before it.
+    for (let turn = 0; turn < 4; turn++) {
+      const hourAngle = toDegrees(greenwich(t, sun) - Math.atan2(sun.y, sun.x)) + observer.longitude_deg;
+      t -= (wrap180(hourAngle - hour_deg) / 360) * DAY_ms;
+    }
+    return t;
+  };
 }
 
 /**
@@ -62,10 +61,18 @@ function passing_ms(hour_deg: number, near_ms: number, observer: Observer): numb
  * @param zone     of the time zone database
  * @param observer as for `sunPosition`. The height above the sea counts in the parallax only; see `dip_deg`
  * @param dip_deg  lowers the horizon: `horizonDip_deg` of the height over the land or sea around; 0, a level horizon
+ * @param knots    share one where many days are asked for
  * @throws {RangeError} on no such date or zone
  */
-export function sunEvents(date: string, zone: string, observer: Observer, dip_deg = 0): SunEvents {
-  const track = sunTrack(observer);
+export function sunEvents(
+  date: string,
+  zone: string,
+  observer: Observer,
+  dip_deg = 0,
+  knots: SunKnots = new SunKnots(),
+): SunEvents {
+  const track = sunTrack(observer, knots);
+  const passing = passings(observer, knots);
   const sight: SunSight = { azimuth_rad: 0, altitude_rad: 0, distance_au: 1 };
   const limit_rad = (RISING_deg - dip_deg) * DEG;
   const above = (t: number): number => {
@@ -74,9 +81,9 @@ export function sunEvents(date: string, zone: string, observer: Observer, dip_de
   };
   const below = (t: number): number => -above(t);
   const { start_ms, end_ms } = dayBounds(date, zone);
-  const transit_ms = passing_ms(0, (start_ms + end_ms) / 2, observer);
+  const transit_ms = passing(0, (start_ms + end_ms) / 2);
   const lowest = (near_ms: number): number => {
-    const midnight = passing_ms(180, near_ms, observer);
+    const midnight = passing(180, near_ms);
     return lowestBetween(above, midnight - QUARTER_ms, midnight + QUARTER_ms, NEAR_ms);
   };
   const before = lowest(transit_ms - DAY_ms / 2);
