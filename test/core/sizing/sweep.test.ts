@@ -1,0 +1,142 @@
+import * as Astronomy from 'astronomy-engine';
+import { describe, expect, it } from 'vitest';
+import { buildModel } from '../../../core/form/build-model.ts';
+import { createCheckMemo } from '../../../core/gain/gain-memo.ts';
+import { overhangDepth_m } from '../../../core/sizing/cut-off.ts';
+import { longestShaded, squareSuns } from '../../../core/sizing/shaded-dates.ts';
+import { sweep, usualAmounts } from '../../../core/sizing/sweep.ts';
+import { smallScheme, type SmallScheme } from '../../helpers/small-scheme.ts';
+
+const RAD = Math.PI / 180;
+const canopy = (depth: number, above = 0.3) => ({ id: 'D1', kind: 'overhang', depth, above, left: 50, right: 50 });
+
+describe('a sweep', () => {
+  it('never takes in more behind a deeper device, in summer or in winter', () => {
+    for (const swept of ['overhang', 'fins', 'both'] as const) {
+      const { points } = sweep(smallScheme(), 'W1', swept, createCheckMemo());
+      expect(points.map((p) => p.amount)).toEqual(usualAmounts(swept));
+      for (const [i, p] of points.entries()) {
+        const before = points[i - 1];
+        if (!before) continue;
+        expect(p.summer_Wh).toBeLessThanOrEqual(before.summer_Wh * (1 + 1e-9));
+        expect(p.winter_Wh).toBeLessThanOrEqual(before.winter_Wh * (1 + 1e-9));
+        expect(p.summerPeak_W).toBeLessThanOrEqual(before.summerPeak_W * (1 + 1e-9));
+      }
+    }
+  });
+  it('of both together takes in no more than of either alone, and no less than nothing at all', () => {
+    const memo = createCheckMemo();
+    const of = (swept: 'overhang' | 'fins' | 'both') => sweep(smallScheme(), 'W1', swept, memo).points;
+    const [overhang, fins, both] = [of('overhang'), of('fins'), of('both')];
+    for (const [i, p] of both.entries()) {
+      expect(p.summer_Wh).toBeLessThanOrEqual(Math.min(overhang[i]!.summer_Wh, fins[i]!.summer_Wh) * (1 + 1e-9));
+      expect(p.summer_Wh).toBeGreaterThan(0);
+    }
+    expect(both[0]).toEqual(overhang[0]);
+  });
+  it('of the glass is in proportion to g', () => {
+    const { points, now, unit } = sweep(smallScheme(), 'W1', 'glass', createCheckMemo());
+    expect([now, unit]).toEqual([0.6, '']);
+    const [first] = points;
+    for (const p of points) expect(p.summer_Wh / p.amount).toBeCloseTo(first!.summer_Wh / first!.amount, 6);
+  });
+  it('keeps winter sun behind a south overhang that takes most of the summer’s: the point of an overhang', () => {
+    const { points } = sweep(
+      smallScheme({ devices: [canopy(0.5)], windowDevices: ['D1'] }),
+      'W1',
+      'overhang',
+      createCheckMemo(),
+    );
+    const at = points.find((p) => p.amount === 1);
+    const open = points[0];
+    expect(at!.summer_Wh / open!.summer_Wh).toBeLessThan(0.55);
+    expect(at!.winter_Wh / open!.winter_Wh).toBeGreaterThan(0.85);
+  });
+  it('meets a target at a depth that the engine confirms, and a centimetre less does not', () => {
+    const memo = createCheckMemo();
+    const scheme = smallScheme();
+    const open = sweep(scheme, 'W1', 'overhang', memo, { amounts: [0] }).points[0]!.summer_Wh;
+    const found = sweep(scheme, 'W1', 'overhang', memo, { target_Wh: 0.7 * open });
+    const depth = found.meetsTarget as number;
+    const [less, enough] = sweep(scheme, 'W1', 'overhang', memo, { amounts: [depth - 0.01, depth] }).points;
+    expect(enough!.summer_Wh).toBeLessThanOrEqual(0.7 * open);
+    expect(less!.summer_Wh).toBeGreaterThan(0.7 * open);
+    expect(sweep(scheme, 'W1', 'overhang', memo, { target_Wh: 0 }).meetsTarget).toBeNull();
+  });
+  it('says beyond which depth nothing worth having is gained', () => {
+    const scheme = smallScheme({ devices: [canopy(0.5)], windowDevices: ['D1'] });
+    const found = sweep(scheme, 'W1', 'overhang', createCheckMemo());
+    expect(found.now).toBe(0.5);
+    const after = found.points.filter((p) => p.amount >= (found.enough as number));
+    const open = found.points[0]!.summer_Wh;
+    for (let i = 1; i < after.length; i++)
+      expect(after[i - 1]!.summer_Wh - after[i]!.summer_Wh).toBeLessThan(0.01 * open);
+    expect(found.enough).toBeGreaterThan(0.5);
+  });
+  it('turns summer and winter over between the hemispheres', () => {
+    const north = sweep(
+      smallScheme({ latitude: 35, devices: [canopy(0.5)], windowDevices: ['D1'] }),
+      'W1',
+      'overhang',
+      createCheckMemo(),
+    );
+    const south = sweep(
+      smallScheme({ latitude: -35, wall: 2, devices: [canopy(0.5)], windowDevices: ['D1'] }),
+      'W1',
+      'overhang',
+      createCheckMemo(),
+    );
+    for (const [i, p] of north.points.entries()) {
+      // The same geometry six months apart. At perihelion the sun is ((1 + e)/(1 − e))² = 6.9 % stronger than at aphelion, and on
+      // 21 January it stands half a degree lower than on 21 July, which upright glass likes: stronger summers, weaker winters.
+      const summer = south.points[i]!.summer_Wh / p.summer_Wh;
+      const winter = south.points[i]!.winter_Wh / p.winter_Wh;
+      expect(summer).toBeGreaterThan(1.03);
+      expect(summer).toBeLessThan(1.12);
+      expect(winter).toBeLessThan(0.97);
+      expect(winter).toBeGreaterThan(0.88);
+    }
+    expect(south.points[0]!.winter_Wh).toBeGreaterThan(south.points[0]!.summer_Wh);
+  });
+});
+
+describe('when the sun stands squarely in front of a window', () => {
+  const suns = (over: SmallScheme) => {
+    const scheme = smallScheme(over);
+    const model = buildModel(scheme);
+    return squareSuns(scheme, model, model.windows[0]!);
+  };
+  it('it stands at noon altitude before south glass: 61.94°, 38.5° and 15.06° (90° − |φ − δ|)', () => {
+    const days = suns({});
+    const at = (date: string): number => days.find((d) => d.date === date)?.altitude_deg ?? Number.NaN;
+    expect(at('2025-06-21')).toBeCloseTo(61.94, 1);
+    expect(at('2025-12-21')).toBeCloseTo(15.06, 1);
+    expect(Math.abs(at('2025-09-22') - 38.5)).toBeLessThan(0.4);
+    expect(days).toHaveLength(365);
+  });
+  it('a depth for full shade on 21 May shades from then on for as long as the sun stands as high (declinations from an ephemeris)', () => {
+    const may = suns({}).find((d) => d.date === '2025-05-21')?.altitude_deg as number;
+    const depth = overhangDepth_m(1.5, 0.3, may * RAD);
+    const stretch = longestShaded(suns({ devices: [canopy(depth + 1e-6)], windowDevices: ['D1'] }));
+    expect(stretch?.from).toBe('2025-05-21');
+    const observer = new Astronomy.Observer(51.5, 0, 0);
+    const declination = (day: Date): number => Astronomy.Equator(Astronomy.Body.Sun, day, observer, true, true).dec;
+    const noons = Array.from({ length: 100 }, (_, i) => new Date(Date.UTC(2025, 4, 21 + i, 12)));
+    const least = declination(noons[0] as Date);
+    const last = noons.filter((day) => declination(day) >= least).at(-1);
+    expect(stretch?.to).toBe(last?.toISOString().slice(0, 10));
+  });
+  it('runs over the new year in the south', () => {
+    const summer = suns({ latitude: -35, wall: 2 }).find((d) => d.date === '2025-11-20')?.altitude_deg as number;
+    const depth = overhangDepth_m(1.5, 0.3, summer * RAD);
+    const stretch = longestShaded(
+      suns({ latitude: -35, wall: 2, devices: [canopy(depth + 1e-6)], windowDevices: ['D1'] }),
+    );
+    expect(stretch?.from).toBe('2025-11-20');
+    expect(stretch?.to.slice(5, 7)).toBe('01');
+  });
+  it('has no such day before north glass at 51.5° north, and none shaded without a device', () => {
+    expect(suns({ wall: 2 }).every((d) => d.altitude_deg === null)).toBe(true);
+    expect(longestShaded(suns({}))).toBeNull();
+  });
+});
