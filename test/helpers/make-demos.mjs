@@ -193,7 +193,7 @@ function southern() {
 /** Two hundred blocks of a town round a slab of 50 rooms and 200 windows: for speed work. */
 function town() {
   const random = numbers(20_260_601);
-  const blocks = [{ id: 'S1', name: 'Slab', standing: 'proposed', box: box(-30, -7, 60, 14), base: 0, height: 16.2 }];
+  const blocks = [{ id: 'S1', name: 'Slab', standing: 'proposed', box: box(-16, -6, 32, 12), base: 0, height: 16.2 }];
   const step = 26;
   for (let j = -7; j <= 7 && blocks.length <= 200; j++) {
     for (let i = -7; i <= 7 && blocks.length <= 200; i++) {
@@ -220,12 +220,14 @@ function town() {
     for (let k = 0; k < 5; k++) {
       for (const side of ['S', 'N']) {
         const id = `${s + 1}${side}${k + 1}`;
-        const x = -30 + k * 12;
-        rooms.push({ id, name: `Flat ${id}`, use: k % 2 ? 'bedroom' : 'living', block: 'S1', box: box(x, side === 'S' ? -7 : 1, 12, 6), floor: r2(0.3 + s * 3.1), height: 2.7 });
+        const x = r2(-16 + k * 6.4);
+        rooms.push({ id, name: `Flat ${id}`, use: k % 2 ? 'bedroom' : 'living', block: 'S1', box: box(x, side === 'S' ? -6 : 1, 6.4, 5), floor: r2(0.3 + s * 3.1), height: 2.7 });
         for (let w = 0; w < 4; w++) {
+          // The end rooms turn their fourth window to the gable; upper floors have more glass.
           const end = (k === 0 && w === 3 && 3) || (k === 4 && w === 3 && 1);
           const wall = end || (side === 'S' ? 0 : 2);
-          windows.push({ id: `${id}-${w + 1}`, room: id, wall, from: end ? 1.5 : r2(0.6 + w * 2.8), sill: 0.8, width: 2.1, height: 1.6, reveal: 0.1, glass: w % 2 ? 'G2' : 'G1', devices: side === 'S' ? ['D1'] : [] });
+          const size = end ? { from: 0.8, sill: 0.3, width: 3.4, height: 2.2 } : { from: r2(0.3 + w * 1.5), sill: s < 3 ? 0.8 : 0.2, width: 1.3, height: s < 3 ? 1.6 : 2.3 };
+          windows.push({ id: `${id}-${w + 1}`, room: id, wall, ...size, reveal: 0.1, glass: w % 2 && !end ? 'G2' : 'G1', devices: side === 'S' && s < 4 && !end ? ['D1'] : [] });
         }
       }
     }
@@ -238,7 +240,7 @@ function town() {
     address: 'An invented town, for speed work',
     revision: '1',
     year: 2025,
-    site: { latitude: 48.2, longitude: 11.6, zone: 'Europe/Berlin', elevation: 510, north: 0, groundReflectance: 0.2, linkeTurbidity: 3.3, hottest: { maximum: 33, range: 12 }, boundary: [[-34, -20], [34, -20], [34, 20], [-34, 20]] },
+    site: { latitude: 48.2, longitude: 11.6, zone: 'Europe/Berlin', elevation: 510, north: 0, groundReflectance: 0.2, linkeTurbidity: 3.3, hottest: { maximum: 33, range: 12 }, boundary: [[-22, -14], [22, -14], [22, 18], [-22, 18]] },
     blocks,
     rooms,
     windows,
@@ -247,7 +249,7 @@ function town() {
     trees: [],
     weather: null,
     limits: 'example-gain',
-    receptors: [{ id: 'A1', kind: 'area', name: 'Green', outline: [[-30, 8], [30, 8], [30, 19], [-30, 19]], level: 0 }],
+    receptors: [{ id: 'A1', kind: 'area', name: 'Green', outline: [[-18, 7.5], [18, 7.5], [18, 16], [-18, 16]], level: 0 }],
     sheets: [{ id: 'S1', name: 'Shadow study', kind: 'shadow-study', dates: ['2025-03-21', '2025-06-21', '2025-12-21'], times: ['09:00', '12:00', '15:00'], scale: 2500, paper: 'A3', landscape: true }],
   });
 }
