@@ -7,7 +7,7 @@ export const SEA_LEVEL_hPa = 1013.25;
  * Relative optical air mass: how many times longer the sun's path through the air is than straight up, at sea level.
  * @param apparentAltitude_rad  altitude with refraction [rad]
  * @returns  1 at the zenith (0.9997 by this fit), 38 at the horizon; NaN below the horizon, where there is no such path
- * @see F. Kasten, A. T. Young, Applied Optics 28, 4735–4738 (1989), eq. 3
+ * @see F. Kasten, A. T. Young, Applied Optics 28, 4735–4738 (1989)
  */
 export function relativeAirMass(apparentAltitude_rad: number): number {
   const h_deg = apparentAltitude_rad / DEG;
@@ -35,7 +35,7 @@ export const absoluteAirMass = (relative: number, pressure_hPa: number): number 
  * Pressure of the standard atmosphere.
  * @param elevation_m  above the sea [m], −500 to 11 000 (the troposphere, where temperature falls evenly)
  * @returns  station pressure [hPa]
- * @see U.S. Standard Atmosphere (1976), hydrostatic equation with a lapse of 6.5 K/km, in the closed form
+ * @see ISO 2533:1975 and U.S. Standard Atmosphere (1976), hydrostatic equation with a lapse of 6.5 K/km, in the closed form
  *      p = 100·[(44331.514 − z)/11880.516]^(1/0.1902632) Pa
  */
 export function standardPressure_hPa(elevation_m: number): number {

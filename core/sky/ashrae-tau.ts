@@ -33,7 +33,7 @@ export function ashraeExponents({ edition, tauBeam: b, tauDiffuse: d }: AshraeAi
  * Cloudless sky from two optical depths of the month. The air mass is not corrected for pressure: the depths hold for the
  * height of their station.
  * @returns beam facing the sun, diffuse and global on the level [W/m²]; zeros with the sun at or below the horizon
- * @see ASHRAE Handbook of Fundamentals (2009), ch. 14, eqs 17–20; (2013), ch. 14, same with new exponents
+ * @see ASHRAE Handbook of Fundamentals (2009), ch. 14; (2013), ch. 14, the same with new exponents
  */
 export function ashraeTau(sun: ClearSun, air: AshraeAir): SplitSky {
   const up = Math.sin(sun.apparentAltitude_rad);

@@ -20,7 +20,7 @@ const DARKEST = 0.01;
 /** Luminous efficacy of daylight [lm/W]. */
 export type Efficacy = { readonly global: number; readonly diffuse: number; readonly beam: number };
 
-/** Water in the air from the dew point, as brought down to the ground [cm]. @see R. Perez et al. (1990), eq. 3 */
+/** Water in the air from the dew point, as brought down to the ground [cm]. @see R. Perez et al. (1990) */
 export const waterFromDewPoint_cm = (dewPoint_C: number): number => Math.exp(0.07 * dewPoint_C - 0.075);
 
 /**

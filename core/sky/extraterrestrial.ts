@@ -1,8 +1,9 @@
 import { DEG } from '../units/angle.ts';
 
 /**
- * The solar constants in use here, each with its method. They differ by half a percent, which is less than any clear-sky
- * model promises; what matters is that a model meets the constant it was fitted with.
+ * The solar constants in use here, each with its method. They differ by less than any clear-sky model promises; what matters is
+ * that a model meets the constant it was fitted with, which is why today's 1361 W/m² (G. Kopp, J. L. Lean, Geophysical Research
+ * Letters 38, L01706, 2011) serves none of them.
  */
 export const SOLAR_CONSTANT = {
   /** ASTM E490 (2000). Used for design days, transposition and Erbs: the fits of Ineichen–Perez and Perez 1990 are of that time. */
@@ -11,8 +12,6 @@ export const SOLAR_CONSTANT = {
   disc_Wm2: 1370,
   /** As the ASHRAE clear-sky model takes it (Handbook of Fundamentals 2009, ch. 14). */
   ashrae_Wm2: 1367,
-  /** G. Kopp, J. L. Lean, Geophys. Res. Lett. 38, L01706 (2011): the measured value of today, rounded. */
-  measured_Wm2: 1361,
 } as const;
 
 /**
@@ -38,7 +37,7 @@ export function extraterrestrialSpencer(dayOfYear: number, constant_Wm2: number 
 /**
  * The same by the one-term form of the ASHRAE model, whose τ values belong to it.
  * @param dayOfYear  1 = 1 January, to 366
- * @see ASHRAE Handbook of Fundamentals (2009), ch. 14, eq. 4
+ * @see ASHRAE Handbook of Fundamentals (2009), ch. 14
  */
 export function extraterrestrialAshrae(dayOfYear: number, constant_Wm2: number = SOLAR_CONSTANT.ashrae_Wm2): number {
   return constant_Wm2 * (1 + 0.033 * Math.cos(((360 * (dayOfYear - 3)) / 365) * DEG));

@@ -26,7 +26,7 @@ export const INEICHEN_NOTE: ModelNote = {
  * @returns beam facing the sun, diffuse and global on the level [W/m²]; zeros with the sun at or below the horizon. With a
  *          turbidity below about 1.3 the published fits give more beam than global; the lesser is taken, as in the paper.
  * @param raiseLowSun  true: global raised by exp(0.01·m^1.8), the companion paper's correction for low sun; the design days go without
- * @see P. Ineichen, R. Perez, Solar Energy 73, 151–157 (2002), eqs 7–9; R. Perez et al., Solar Energy 73, 307–317 (2002)
+ * @see P. Ineichen, R. Perez, Solar Energy 73, 151–157 (2002); R. Perez et al., Solar Energy 73, 307–317 (2002)
  */
 export function ineichenPerez(sun: ClearSun, linkeTurbidity: number, raiseLowSun = false): SplitSky {
   const up = Math.sin(sun.apparentAltitude_rad);

@@ -33,7 +33,7 @@ const sky = (a: number, b: number, c: number, d: number, e: number, name: string
   name,
 });
 
-/** The fifteen skies, type 1 first. ISO 15469:2004 (CIE S 011/E:2003), table 1. */
+/** The fifteen skies, type 1 first. ISO 15469:2004 (CIE S 011/E:2003). */
 export const GENERAL_SKIES: readonly GeneralSky[] = [
   sky(4, -0.7, 0, -1, 0, 'overcast, steep, the same all round'),
   sky(4, -0.7, 2, -1.5, 0.15, 'overcast, steep, slightly brighter towards the sun'),
@@ -58,7 +58,7 @@ export const GENERAL_SKIES: readonly GeneralSky[] = [
  * @param type            1 to 15
  * @param sunZenith_rad   zenith angle of the sun, 0 to π/2
  * @throws {RangeError}   when there is no such type
- * @see ISO 15469:2004 (CIE S 011/E:2003), eqs 1–5
+ * @see ISO 15469:2004 (CIE S 011/E:2003)
  */
 export function generalSky(type: number, sunZenith_rad: number): RelativeLuminance {
   const kind = GENERAL_SKIES[type - 1];

@@ -3,7 +3,7 @@ const CLEARNESS = [1.065, 1.23, 1.5, 1.95, 2.8, 4.5, 6.2] as const;
 
 /**
  * F11, F12, F13, F21, F22, F23 for the eight classes, overcast to clear: all-sites composite.
- * R. Perez et al., Solar Energy 44, 271–289 (1990), table 6.
+ * R. Perez et al., Solar Energy 44, 271–289 (1990).
  */
 const BRIGHTNESS: readonly (readonly [number, number, number, number, number, number])[] = [
   [-0.008, 0.588, -0.062, -0.06, 0.072, -0.022],
@@ -39,7 +39,7 @@ export type PerezSky = {
 /**
  * Clearness and brightness of a sky. Without diffuse light the clearness has no bound (class 8, brightness 0); without any
  * light at all it is called overcast (class 1).
- * @see R. Perez et al., Solar Energy 44, 271–289 (1990), eqs 1 and 2, with κ = 1.041 for the zenith angle in radians
+ * @see R. Perez et al., Solar Energy 44, 271–289 (1990), with κ = 1.041 for the zenith angle in radians
  */
 export function perezSky(input: PerezInput): PerezSky {
   const { beamNormal_Wm2: beam, diffuse_Wm2: diffuse, zenith_rad: z } = input;

@@ -24,7 +24,7 @@ export const SOLIS_NOTE: ModelNote = {
  * Cloudless sky from aerosol and water. Beam, diffuse and global are three fits of their own, so that global differs a little
  * from beam + diffuse on the level. Less than 0.2 cm of water counts as 0.2 cm, where the fit begins.
  * @returns beam facing the sun, diffuse and global on the level [W/m²]; zeros with the sun at or below the horizon
- * @see P. Ineichen, Solar Energy 82, 758–762 (2008), eqs 3–11
+ * @see P. Ineichen, Solar Energy 82, 758–762 (2008)
  */
 export function simplifiedSolis(sun: ClearSun, air: SolisAir): SplitSky {
   const up = Math.sin(sun.apparentAltitude_rad);

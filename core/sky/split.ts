@@ -63,7 +63,7 @@ const sunless = (reading: GlobalReading): boolean =>
 /**
  * Diffuse share from the clearness alone.
  * @returns beam and diffuse [W/m²]; with the sun below 3° all of it is diffuse
- * @see D. G. Erbs, S. A. Klein, J. A. Duffie, Solar Energy 28, 293–302 (1982), eq. 1
+ * @see D. G. Erbs, S. A. Klein, J. A. Duffie, Solar Energy 28, 293–302 (1982)
  */
 export function erbs(reading: GlobalReading): Split {
   if (sunless(reading)) return { beamNormal_Wm2: 0, diffuse_Wm2: Math.max(0, reading.global_Wm2) };
@@ -104,7 +104,7 @@ function discBeam(reading: GlobalReading, pressure_hPa: number): Disc {
 /**
  * Beam from clearness and air mass.
  * @param pressure_hPa  station pressure
- * @see E. L. Maxwell, SERI/TR-215-3087 (1987), eqs 3-1 to 3-7
+ * @see E. L. Maxwell, SERI/TR-215-3087 (1987)
  */
 export function disc(reading: GlobalReading, pressure_hPa: number): Split {
   const { beam } = discBeam(reading, pressure_hPa);
@@ -135,7 +135,7 @@ export type DirintSeries = {
 /**
  * Beam from a series: DISC, corrected for how clear, how steady and how humid the sky is. Steadiness of an hour is the mean
  * change of clearness to the hour before and the hour after; at the ends of a series the one neighbour counts alone.
- * @see R. Perez et al., ASHRAE Transactions 98 (1), 354–369 (1992), eqs 1–5
+ * @see R. Perez et al., ASHRAE Transactions 98 (1), 354–369 (1992)
  */
 export function dirint(series: DirintSeries): Split[] {
   const { readings, pressure_hPa, dewPoint_C, inOrder = true } = series;

@@ -1,5 +1,6 @@
 import type { Fault } from '../../scheme/fault.ts';
 import { standardPressure_hPa } from '../air-mass.ts';
+import { dewPoint_C } from '../dew-point.ts';
 import { dayOfYear, extraterrestrial } from '../extraterrestrial.ts';
 import { dirint } from '../split.ts';
 import type { RowSun } from './row-sun.ts';
@@ -63,7 +64,8 @@ export function completeRadiation(weather: WeatherYear, sun: RowSun, elevation_m
       notes: [note('the file has no diffuse irradiance; it was worked out from global and beam')],
     };
   }
-  const { pressure_hPa, dewPoint_C } = weather.columns;
+  const { pressure_hPa } = weather.columns;
+  const dewPoint = dewPoints(weather);
   const split = dirint({
     readings: Array.from(global, (g, i) => ({
       global_Wm2: g,
@@ -71,7 +73,7 @@ export function completeRadiation(weather: WeatherYear, sun: RowSun, elevation_m
       dayOfYear: dayOfYear(sun.instant_ms[i]!),
     })),
     pressure_hPa: pressure_hPa ?? standardPressure_hPa(elevation_m),
-    ...(dewPoint_C ? { dewPoint_C } : {}),
+    ...(dewPoint ? { dewPoint_C: dewPoint } : {}),
   });
   return {
     beamNormal_Wm2: Float64Array.from(split, (s) => s.beamNormal_Wm2),
@@ -83,4 +85,11 @@ export function completeRadiation(weather: WeatherYear, sun: RowSun, elevation_m
       ),
     ],
   };
+}
+
+/** Dew points of the file, or from its humidity; null where it has neither [°C]. */
+export function dewPoints(weather: WeatherYear): Float64Array | null {
+  const { dewPoint_C: own, relativeHumidity_pct: humidity, tAir_C: air } = weather.columns;
+  if (own) return own;
+  return humidity && air ? humidity.map((rh, i) => dewPoint_C(air[i]!, rh)) : null;
 }

@@ -23,7 +23,7 @@ export const isTmy3 = (lines: readonly string[]): boolean =>
 /**
  * A typical year in the TMY3 form: hours labelled by their end, 01:00 to 24:00, in standard time all year; sunlight is the mean
  * over the hour before the label, temperature and the rest hold at the label.
- * @see S. Wilcox, W. Marion, Users Manual for TMY3 Data Sets, NREL/TP-581-43156 (2008), section 3 and table 1-2
+ * @see S. Wilcox, W. Marion, Users Manual for TMY3 Data Sets, NREL/TP-581-43156 (2008)
  */
 export function readTmy3(lines: readonly string[]): Checked<WeatherYear> {
   const station = headCells(lines[0] ?? '', ',');

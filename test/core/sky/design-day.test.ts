@@ -3,6 +3,8 @@ import { describe, expect, it } from 'vitest';
 import { relativeAirMass, standardPressure_hPa } from '../../../core/sky/air-mass.ts';
 import { checkDesignDay, type DesignDayInput, designDay, hotSpell } from '../../../core/sky/design-day.ts';
 import { designTemperature_C } from '../../../core/sky/design-temperature.ts';
+import { dewPoint_C } from '../../../core/sky/dew-point.ts';
+import { lowSunNote } from '../../../core/sky/low-sun.ts';
 import { monthly, monthOf } from '../../../core/sky/monthly.ts';
 import { sunPosition } from '../../../core/sun/spa.ts';
 import { DEG } from '../../../core/units/angle.ts';
@@ -130,6 +132,24 @@ describe('a design day', () => {
       ),
       { numRuns: 60 },
     );
+  });
+});
+
+describe('validity', () => {
+  it('a day of low sun says so, a summer day does not', () => {
+    const tromso = {
+      ...LONDON,
+      zone: 'Europe/Oslo',
+      date: '2025-11-22',
+      observer: { latitude_deg: 68.5, longitude_deg: 17, elevation_m: 0 },
+    };
+    expect(lowSunNote(designDay(tromso))[0]?.message).toMatch(/^100 % of the beam of 2025-11-22/);
+    expect(lowSunNote(designDay(LONDON))).toEqual([]);
+    expect(lowSunNote(designDay({ ...tromso, date: '2025-12-21' }))).toEqual([]);
+  });
+  it('dew point: 9.3 °C at 20 °C and 50 % (psychrometric tables, value from memory), the air itself at 100 %', () => {
+    expect(dewPoint_C(20, 50)).toBeCloseTo(9.26, 1);
+    expect(dewPoint_C(17.3, 100)).toBeCloseTo(17.3, 9);
   });
 });
 
