@@ -55,6 +55,9 @@ export function columnsFor(samples: number): number {
   return Math.min(720, Math.max(16, 16 * Math.round(samples / 480)));
 }
 
+/** Stands for the tangent at the zenith: above every altitude that can be told from it, yet finite, so that it can be passed. */
+const ZENITH = 1e15;
+
 /** Sorts light into columns. @param count number of columns, a multiple of 4 @throws {RangeError} for a sample at or below the horizon */
 export function sortLight(light: Light, count: number): LightColumns {
   const n = light.sx.length;
@@ -65,7 +68,7 @@ export function sortLight(light: Light, count: number): LightColumns {
     const x = light.sx[i]!;
     const y = light.sy[i]!;
     column[i] = x === 0 && y === 0 ? 0 : columnOf(count, x, y);
-    rise[i] = light.sz[i]! / Math.hypot(x, y);
+    rise[i] = Math.min(light.sz[i]! / Math.hypot(x, y), ZENITH);
   }
   const order = Uint32Array.from({ length: n }, (_, i) => i).sort(
     (a, b) => column[a]! - column[b]! || rise[a]! - rise[b]! || a - b,
