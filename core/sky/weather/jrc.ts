@@ -1,18 +1,18 @@
 import type { Checked, Fault } from '../../scheme/fault.ts';
 import { headCells } from './cells.ts';
-import { UNITS, type Unit } from './mapping.ts';
+import { findColumns, headNumber, type KnownColumn } from './known-columns.ts';
 import { readRows } from './read-rows.ts';
 import { timeForm } from './time-form.ts';
-import type { Quantity, WeatherYear } from './weather-year.ts';
+import type { WeatherPlace, WeatherYear } from './weather-year.ts';
 
-const COLUMNS: readonly (readonly [Quantity, string, Unit])[] = [
-  ['global_Wm2', 'G(h)', 'W/m2'],
-  ['beamNormal_Wm2', 'Gb(n)', 'W/m2'],
-  ['diffuse_Wm2', 'Gd(h)', 'W/m2'],
-  ['tAir_C', 'T2m', 'C'],
-  ['relativeHumidity_pct', 'RH', '%'],
-  ['pressure_hPa', 'SP', 'Pa'],
-  ['windSpeed_ms', 'WS10m', 'm/s'],
+const COLUMNS: readonly KnownColumn[] = [
+  { quantity: 'global_Wm2', head: 'G(h)', unit: 'W/m2' },
+  { quantity: 'beamNormal_Wm2', head: 'Gb(n)', unit: 'W/m2' },
+  { quantity: 'diffuse_Wm2', head: 'Gd(h)', unit: 'W/m2' },
+  { quantity: 'tAir_C', head: 'T2m', unit: 'C' },
+  { quantity: 'relativeHumidity_pct', head: 'RH', unit: '%' },
+  { quantity: 'pressure_hPa', head: 'SP', unit: 'Pa' },
+  { quantity: 'windSpeed_ms', head: 'WS10m', unit: 'm/s', optional: true },
 ];
 
 /** Lines above the column heads: the place, the offset and the year of each month. */
@@ -36,57 +36,13 @@ export function readJrc(lines: readonly string[]): Checked<WeatherYear> {
   const heads = headCells(lines[at] ?? '', ',');
   const faults: Fault[] = [];
   const notes: Fault[] = [];
-  const said = (label: string): number => {
-    const line = lines.slice(0, at).find((l) => l.startsWith(label));
-    return line === undefined ? Number.NaN : Number.parseFloat(line.slice(line.indexOf(':') + 1));
-  };
-  const within = (label: string, min: number, max: number): number => {
-    const value = said(label);
-    if (value >= min && value <= max) return value;
-    const message = `\`${label}\` must give a number from ${min} to ${max}, got ${Number.isNaN(value) ? 'none' : value}`;
-    faults.push({ level: 'error', code: 'place', place: 'head', message, cure: 'fetch the file again' });
-    return 0;
-  };
-  const latitude_deg = within('Latitude (decimal degrees)', -90, 90);
-  const longitude_deg = within('Longitude (decimal degrees)', -180, 180);
-  const elevation_m = within('Elevation (m)', -500, 9000);
-  let offset_h = said('Irradiance Time Offset (h)');
-  if (Number.isNaN(offset_h)) {
-    offset_h = 0;
-    notes.push({
-      level: 'warning',
-      code: 'no-offset',
-      place: 'head',
-      message: 'the head gives no time offset of the irradiance; the label is taken for its instant',
-      cure: 'fetch the file again from the present service',
-    });
-  } else if (Math.abs(offset_h) > 1) {
-    faults.push({
-      level: 'error',
-      code: 'offset',
-      place: 'head',
-      message: `a time offset of ${offset_h} h is more than a row`,
-      cure: 'fetch the file again',
-    });
-  }
-  const columns = COLUMNS.flatMap(([quantity, head, unit]) => {
-    const index = heads.indexOf(head);
-    if (index < 0)
-      faults.push({
-        level: 'error',
-        code: 'column',
-        place: `line ${at + 1}`,
-        message: `there is no column \`${head}\``,
-        cure: 'fetch the file again, or read it with a mapping',
-      });
-    const conversion = UNITS[quantity][unit];
-    return index < 0 || !conversion ? [] : [{ quantity, index, conversion }];
-  });
+  const { offset_h, place } = readHead(lines.slice(0, at), faults, notes);
+  const columns = findColumns(COLUMNS, heads, `line ${at + 1}`, faults);
   const form = timeForm('YYYYMMDD:HHmm');
   if (faults.length > 0 || !form) return { ok: false, faults };
   const read = readRows({
     kind: 'JRC typical year',
-    place: { name: `${latitude_deg}° N, ${longitude_deg}° E`, latitude_deg, longitude_deg, elevation_m },
+    place,
     lines,
     firstRow: at + 1,
     heads,
@@ -101,4 +57,35 @@ export function readJrc(lines: readonly string[]): Checked<WeatherYear> {
     endsAtBlank: true,
   });
   return read.ok ? { ...read, notes: [...notes, ...read.notes] } : read;
+}
+
+/** Place and time offset of the irradiance, as the lines above the table give them. */
+function readHead(
+  lines: readonly string[],
+  faults: Fault[],
+  notes: Fault[],
+): { place: WeatherPlace; offset_h: number } {
+  const said = (label: string): number | undefined => {
+    const line = lines.find((l) => l.startsWith(`${label}:`));
+    return line === undefined ? undefined : Number.parseFloat(line.slice(label.length + 1));
+  };
+  const within = (name: string, min: number, max: number): number =>
+    headNumber(said(name), { min, max, name }, 'head', faults);
+  const offset = 'Irradiance Time Offset (h)';
+  const latitude_deg = within('Latitude (decimal degrees)', -90, 90);
+  const longitude_deg = within('Longitude (decimal degrees)', -180, 180);
+  const north = `${Math.abs(latitude_deg)}° ${latitude_deg < 0 ? 'S' : 'N'}`;
+  const east = `${Math.abs(longitude_deg)}° ${longitude_deg < 0 ? 'W' : 'E'}`;
+  const elevation_m = within('Elevation (m)', -500, 9000);
+  const place = { name: `${north} ${east}`, latitude_deg, longitude_deg, elevation_m };
+  if (said(offset) !== undefined) return { place, offset_h: within(offset, -1, 1) };
+  const message = 'the head gives no time offset of the irradiance; the label is taken for its instant';
+  notes.push({
+    level: 'warning',
+    code: 'no-offset',
+    place: 'head',
+    message,
+    cure: 'fetch the file again from the present service',
+  });
+  return { place, offset_h: 0 };
 }

@@ -92,55 +92,7 @@ const error = (code: string, place: string, message: string, cure: string): Faul
 
 /** Faults of a mapping as it stands, before any file is read. @param place path of the mapping in the scheme, such as `weather` */
 export function checkMapping(mapping: WeatherMapping, place: string): readonly Fault[] {
-  const faults: Fault[] = [];
-  const { time } = mapping;
-  const form = timeForm(time.form);
-  if (!form) {
-    faults.push(
-      error(
-        'time-form',
-        `${place}.time.form`,
-        `\`${time.form}\` does not say where month, day and hour stand`,
-        'write the form with YYYY, MM, DD, HH and mm, such as `YYYY-MM-DD HH:mm`',
-      ),
-    );
-  } else if (
-    !form.hasYear &&
-    !(Number.isInteger(time.year) && (time.year as number) >= 1900 && (time.year as number) <= 2100)
-  ) {
-    faults.push(
-      error(
-        'time-year',
-        `${place}.time.year`,
-        'the form has no year, and none from 1900 to 2100 is given',
-        'give the year of the file; 2001 where it is a typical year',
-      ),
-    );
-  }
-  if (time.columns.length === 0)
-    faults.push(
-      error('missing', `${place}.time.columns`, 'no column is named for the time', 'name one or more column heads'),
-    );
-  if (!(time.offset_h >= -12 && time.offset_h <= 14)) {
-    faults.push(
-      error(
-        'out-of-range',
-        `${place}.time.offset_h`,
-        `the clock must run from −12 to 14 h ahead of UTC, got ${time.offset_h}`,
-        'give the fixed offset of the file’s clock, such as 1 for central European standard time',
-      ),
-    );
-  }
-  if (!(Math.abs(time.shift_min) <= 120)) {
-    faults.push(
-      error(
-        'out-of-range',
-        `${place}.time.shift_min`,
-        `the shift must be within 120 minutes, got ${time.shift_min}`,
-        'give the minutes from the printed time to the instant or edge it stands for',
-      ),
-    );
-  }
+  const faults: Fault[] = checkTime(mapping.time, `${place}.time`);
   const seen = new Set<Quantity>();
   mapping.columns.forEach(({ quantity, unit }, i) => {
     const units = UNITS[quantity];
@@ -150,11 +102,45 @@ export function checkMapping(mapping: WeatherMapping, place: string): readonly F
         error('unit', `${place}.columns[${i}].unit`, `${quantity} does not come in ${unit}`, `choose one of ${known}`),
       );
     }
-    if (seen.has(quantity))
+    if (seen.has(quantity)) {
       faults.push(error('repeated', `${place}.columns[${i}]`, `${quantity} is named twice`, 'keep one of the two'));
+    }
     seen.add(quantity);
   });
   return [...faults, ...wantedQuantities(seen, `${place}.columns`)];
+}
+
+function checkTime(time: WeatherMapping['time'], place: string): Fault[] {
+  const faults: Fault[] = [];
+  const form = timeForm(time.form);
+  const { year = Number.NaN } = time;
+  if (!form) {
+    const message = `\`${time.form}\` does not say where month, day and hour stand`;
+    faults.push(
+      error('time-form', `${place}.form`, message, 'write YYYY, MM, DD, HH and mm, such as `YYYY-MM-DD HH:mm`'),
+    );
+  } else if (!form.hasYear && !(Number.isInteger(year) && year >= 1900 && year <= 2100)) {
+    const message = 'the form has no year, and none from 1900 to 2100 is given';
+    faults.push(
+      error('time-year', `${place}.year`, message, 'give the year of the file; 2001 where it is a typical year'),
+    );
+  }
+  if (time.columns.length === 0) {
+    faults.push(
+      error('missing', `${place}.columns`, 'no column is named for the time', 'name one or more column heads'),
+    );
+  }
+  if (!(time.offset_h >= -12 && time.offset_h <= 14)) {
+    const message = `the clock must run from −12 to 14 h ahead of UTC, got ${time.offset_h}`;
+    const cure = 'give the fixed offset of the file’s clock, such as 1 for central European standard time';
+    faults.push(error('out-of-range', `${place}.offset_h`, message, cure));
+  }
+  if (!(Math.abs(time.shift_min) <= 120)) {
+    const message = `the shift must be within 120 minutes, got ${time.shift_min}`;
+    const cure = 'give the minutes from the printed time to the instant or edge it stands for';
+    faults.push(error('out-of-range', `${place}.shift_min`, message, cure));
+  }
+  return faults;
 }
 
 /** What every year of weather must have: air temperature, and sunlight from which the rest can be worked out. */

@@ -64,7 +64,11 @@ export function completeRadiation(weather: WeatherYear, sun: RowSun, elevation_m
       notes: [note('the file has no diffuse irradiance; it was worked out from global and beam')],
     };
   }
-  const { pressure_hPa } = weather.columns;
+  return splitGlobal(weather, global, sun, elevation_m);
+}
+
+/** Beam and diffuse from global alone. */
+function splitGlobal(weather: WeatherYear, global: Float64Array, sun: RowSun, elevation_m: number): Radiation {
   const dewPoint = dewPoints(weather);
   const split = dirint({
     readings: Array.from(global, (g, i) => ({
@@ -72,18 +76,16 @@ export function completeRadiation(weather: WeatherYear, sun: RowSun, elevation_m
       zenith_rad: Math.PI / 2 - sun.altitude_rad[i]!,
       dayOfYear: dayOfYear(sun.instant_ms[i]!),
     })),
-    pressure_hPa: pressure_hPa ?? standardPressure_hPa(elevation_m),
+    pressure_hPa: weather.columns.pressure_hPa ?? standardPressure_hPa(elevation_m),
     ...(dewPoint ? { dewPoint_C: dewPoint } : {}),
   });
+  const message =
+    'the file has global irradiance alone; beam and diffuse were split from it by DIRINT (Perez and others 1992)';
   return {
     beamNormal_Wm2: Float64Array.from(split, (s) => s.beamNormal_Wm2),
     diffuse_Wm2: Float64Array.from(split, (s) => s.diffuse_Wm2),
     global_Wm2: global,
-    notes: [
-      note(
-        'the file has global irradiance alone; beam and diffuse were split from it by DIRINT (Perez and others 1992)',
-      ),
-    ],
+    notes: [note(message)],
   };
 }
 

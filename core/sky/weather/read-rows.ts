@@ -55,86 +55,83 @@ export function readRows(plan: RowPlan): Checked<WeatherYear> {
 }
 
 function scan(plan: RowPlan, faults: FaultList): Raw {
-  const { lines, firstRow, heads, time, columns } = plan;
+  const { lines, firstRow, columns } = plan;
   const most = Math.min(MOST_ROWS, Math.max(0, lines.length - firstRow));
-  const raw = {
-    label_ms: new Float64Array(most),
-    line: new Int32Array(most),
-    values: columns.map(() => new Float64Array(most)),
+  const label_ms = new Float64Array(most);
+  const line = new Int32Array(most);
+  const values = columns.map(() => new Float64Array(most));
+  const row = rowReader(plan, faults);
+  let rows = 0;
+  for (let at = firstRow; at < lines.length && !faults.hopeless; at++) {
+    if ((lines[at] as string).trim() === '' && (plan.endsAtBlank || isRestBlank(lines, at))) break;
+    if (rows >= most) {
+      const message = `more than ${MOST_ROWS} rows`;
+      faults.add('error', 'too-long', `line ${at + 1}`, message, 'give one year, in steps of a minute or longer');
+      break;
+    }
+    const label = row(at, values, rows);
+    if (label === null) continue;
+    label_ms[rows] = label;
+    line[rows] = at + 1;
+    rows++;
+  }
+  if (rows === 0 && !faults.failed) {
+    faults.add('error', 'empty', '', 'there are no rows', 'choose a file with a year of rows below its heads');
+  }
+  return {
+    label_ms: label_ms.subarray(0, rows),
+    line: line.subarray(0, rows),
+    values: values.map((v) => v.subarray(0, rows)),
+    rows,
   };
+}
+
+/**
+ * A reader of single rows: puts the numbers of a line into a row of the columns.
+ * @returns the instant printed in the line [UTC ms], or null when the line is no row (a fault was told)
+ */
+function rowReader(
+  plan: RowPlan,
+  faults: FaultList,
+): (at: number, values: readonly Float64Array[], row: number) => number | null {
+  const { lines, heads, time, columns } = plan;
   const starts = new Int32Array(heads.length + 2);
   const delimiter = plan.delimiter.charCodeAt(0);
   const missing = new Set(['', ...plan.missing]);
-  let rows = 0;
-  for (let at = firstRow; at < lines.length && !faults.hopeless; at++) {
+  return (at, values, row) => {
     const line = lines[at] as string;
-    const blank = line.trim() === '';
-    if (blank && plan.endsAtBlank) break;
-    if (blank && isRestBlank(lines, at)) break;
-    if (rows >= most) {
-      faults.add(
-        'error',
-        'too-long',
-        `line ${at + 1}`,
-        `more than ${MOST_ROWS} rows`,
-        'give one year, in steps of a minute or longer',
-      );
-      break;
-    }
     const place = `line ${at + 1}`;
     const cells = cutCells(line, delimiter, starts);
     if (cells !== heads.length) {
-      const cut = cells < heads.length && isRestBlank(lines, at + 1);
       const message = `${cells} cells where the head has ${heads.length}`;
-      if (cut)
-        faults.add(
-          'error',
-          'cut-short',
-          place,
-          `the last row breaks off: ${message}`,
-          'the file is cut short; fetch it again',
-        );
+      const cut = cells < heads.length && isRestBlank(lines, at + 1);
+      if (cut) faults.add('error', 'cut-short', place, `the last row breaks off: ${message}`, 'fetch the file again');
       else faults.add('error', 'cells', place, message, 'mend the row, or check the delimiter');
-      continue;
+      return null;
     }
     const text = time.columns.map((c) => cellText(line, starts, c)).join(' ');
     const stamp = time.form.read(text, time.year);
     if (!stamp) {
-      faults.add(
-        'error',
-        'time',
-        place,
-        `\`${text}\` is no time of the form that was given`,
-        'check the form and the columns of the time',
-      );
-      continue;
+      const message = `\`${text}\` is no time of the form that was given`;
+      faults.add('error', 'time', place, message, 'check the form and the columns of the time');
+      return null;
     }
-    raw.label_ms[rows] = stampInstant_ms(stamp, time.ahead_min);
-    raw.line[rows] = at + 1;
-    for (let k = 0; k < columns.length; k++) {
-      const { index } = columns[k] as RowPlan['columns'][number];
+    columns.forEach(({ index }, k) => {
       const cell = cellText(line, starts, index);
       const value = missing.has(cell) ? Number.NaN : Number(plan.decimal === ',' ? cell.replace(',', '.') : cell);
       if (Number.isNaN(value) && !missing.has(cell)) {
+        const message = `\`${cell}\` is not a number`;
         faults.add(
           'error',
           'number',
           `${place}, ${heads[index]}`,
-          `\`${cell}\` is not a number`,
+          message,
           'mend the cell, or name the mark for missing values',
         );
       }
-      raw.values[k]![rows] = value;
-    }
-    rows++;
-  }
-  if (rows === 0 && !faults.failed)
-    faults.add('error', 'empty', '', 'there are no rows', 'choose a file with a year of rows below its heads');
-  return {
-    label_ms: raw.label_ms.subarray(0, rows),
-    line: raw.line.subarray(0, rows),
-    values: raw.values.map((v) => v.subarray(0, rows)),
-    rows,
+      values[k]![row] = value;
+    });
+    return stampInstant_ms(stamp, time.ahead_min);
   };
 }
 

@@ -1,19 +1,19 @@
 import type { Checked, Fault } from '../../scheme/fault.ts';
 import { headCells } from './cells.ts';
-import { UNITS, type Unit } from './mapping.ts';
+import { findColumns, headNumber, type KnownColumn } from './known-columns.ts';
 import { readRows } from './read-rows.ts';
 import { timeForm } from './time-form.ts';
-import type { Quantity, WeatherYear } from './weather-year.ts';
+import type { WeatherYear } from './weather-year.ts';
 
-const COLUMNS: readonly (readonly [Quantity, string, Unit])[] = [
-  ['global_Wm2', 'GHI (W/m^2)', 'W/m2'],
-  ['beamNormal_Wm2', 'DNI (W/m^2)', 'W/m2'],
-  ['diffuse_Wm2', 'DHI (W/m^2)', 'W/m2'],
-  ['tAir_C', 'Dry-bulb (C)', 'C'],
-  ['dewPoint_C', 'Dew-point (C)', 'C'],
-  ['relativeHumidity_pct', 'RHum (%)', '%'],
-  ['pressure_hPa', 'Pressure (mbar)', 'hPa'],
-  ['windSpeed_ms', 'Wspd (m/s)', 'm/s'],
+const COLUMNS: readonly KnownColumn[] = [
+  { quantity: 'global_Wm2', head: 'GHI (W/m^2)', unit: 'W/m2' },
+  { quantity: 'beamNormal_Wm2', head: 'DNI (W/m^2)', unit: 'W/m2' },
+  { quantity: 'diffuse_Wm2', head: 'DHI (W/m^2)', unit: 'W/m2' },
+  { quantity: 'tAir_C', head: 'Dry-bulb (C)', unit: 'C' },
+  { quantity: 'dewPoint_C', head: 'Dew-point (C)', unit: 'C' },
+  { quantity: 'relativeHumidity_pct', head: 'RHum (%)', unit: '%', optional: true },
+  { quantity: 'pressure_hPa', head: 'Pressure (mbar)', unit: 'hPa' },
+  { quantity: 'windSpeed_ms', head: 'Wspd (m/s)', unit: 'm/s', optional: true },
 ];
 
 /** Whether a file's second line is that of a TMY3 table. */
@@ -33,39 +33,16 @@ export function readTmy3(lines: readonly string[]): Checked<WeatherYear> {
     cell === '' ? Number.NaN : Number(cell),
   );
   const faults: Fault[] = [];
-  const within = (value: number | undefined, min: number, max: number, what: string): number => {
-    if (value !== undefined && value >= min && value <= max) return value;
-    const message = `${what} must be from ${min} to ${max}, got ${value === undefined || Number.isNaN(value) ? 'none' : value}`;
-    faults.push({
-      level: 'error',
-      code: 'station',
-      place: 'line 1',
-      message,
-      cure: 'the first line holds code, name, region, hours from UTC, latitude, longitude, elevation; fetch the file again',
-    });
-    return 0;
-  };
-  const ahead = within(ahead_h, -12, 14, 'the clock, in hours ahead of UTC,');
+  const said = (value: number | undefined, min: number, max: number, of: string): number =>
+    headNumber(value, { min, max, name: of }, 'line 1', faults);
+  const ahead = said(ahead_h, -12, 14, 'the clock, in hours ahead of UTC,');
   const place = {
     name: [name, region].filter((s) => s !== '').join(', ') || id,
-    latitude_deg: within(latitude_deg, -90, 90, 'latitude'),
-    longitude_deg: within(longitude_deg, -180, 180, 'longitude'),
-    elevation_m: within(elevation_m, -500, 9000, 'elevation'),
+    latitude_deg: said(latitude_deg, -90, 90, 'latitude'),
+    longitude_deg: said(longitude_deg, -180, 180, 'longitude'),
+    elevation_m: said(elevation_m, -500, 9000, 'elevation'),
   };
-  const columns = COLUMNS.flatMap(([quantity, head, unit]) => {
-    const index = heads.indexOf(head);
-    if (index < 0 && quantity !== 'windSpeed_ms' && quantity !== 'relativeHumidity_pct') {
-      faults.push({
-        level: 'error',
-        code: 'column',
-        place: 'line 2',
-        message: `there is no column \`${head}\``,
-        cure: 'fetch the file again, or read it with a mapping',
-      });
-    }
-    const conversion = UNITS[quantity][unit];
-    return index < 0 || !conversion ? [] : [{ quantity, index, conversion }];
-  });
+  const columns = findColumns(COLUMNS, heads, 'line 2', faults);
   const form = timeForm('MM/DD/YYYY HH:mm');
   if (faults.length > 0 || !form) return { ok: false, faults };
   return readRows({

@@ -334,3 +334,26 @@ describe.skipIf(!existsSync(TMY3))('the TMY3 file read by a mapping', () => {
     expect(half.ok ? [] : half.faults.map((f) => f.code)).toEqual(['not-a-year']);
   });
 });
+
+describe('heads of the known forms', () => {
+  it('a TMY3 head with a latitude that is none, and a column gone', () => {
+    const read = readWeather('1,"A",B,-5,136.1,-79.95,273\nDate (MM/DD/YYYY),Time (HH:MM),GHI (W/m^2)\n');
+    const codes = read.ok ? [] : read.faults.map((f) => `${f.place} ${f.code}`);
+    expect(codes).toContain('line 1 head');
+    expect(codes).toContain('line 2 column');
+  });
+  it('a JRC head without its offset is read with a warning, and refused with one of a day', () => {
+    const rows = madeYear().map((r) => {
+      const at = new Date(Date.parse(`${r.when.replace(' ', 'T')}:00Z`) - 3_600_000).toISOString();
+      return `${at.slice(0, 10).replaceAll('-', '')}:${at.slice(11, 13)}00,${r.air},50,${r.global},${r.global},0,${r.pressure}`;
+    });
+    const table = `time(UTC),T2m,RH,G(h),Gb(n),Gd(h),SP\n${rows.join('\n')}\n`;
+    const place = 'Latitude (decimal degrees): 45.000\nLongitude (decimal degrees): 8.000\nElevation (m): 250.0\n';
+    const spoiltDiffuse = readWeather(place + table);
+    expect(spoiltDiffuse.ok ? [] : spoiltDiffuse.faults.map((f) => f.code)).toEqual(['units']);
+    const good = readWeather(place + table.replaceAll(',0,', ',90,'));
+    expect(good.ok ? good.notes.map((f) => f.code) : good.faults).toEqual(['no-offset']);
+    const bad = readWeather(`${place}Irradiance Time Offset (h): 24\n${table}`);
+    expect(bad.ok ? [] : bad.faults.map((f) => f.code)).toEqual(['head']);
+  });
+});
