@@ -26,6 +26,8 @@ declare module 'pdfkit' {
     fontSize(size: number): this;
     widthOfString(text: string, options?: { readonly features?: { readonly [tag: string]: boolean } }): number;
     text(text: string, x: number, y: number, options: TextOptions): this;
+    markContent(tag: 'Span', options: { readonly actual: string }): this;
+    endMarkedContent(): this;
     save(): this;
     restore(): this;
     scale(factor: number): this;

@@ -66,16 +66,10 @@ class Pen {
   }
 
   #mark(mark: Mark): void {
-    switch (mark.kind) {
-      case 'path':
-        return this.#path(mark);
-      case 'circle':
-        return this.#circle(mark);
-      case 'text':
-        return this.#text(mark);
-      case 'group':
-        return this.#group(mark);
-    }
+    if (mark.kind === 'path') this.#path(mark);
+    else if (mark.kind === 'circle') this.#circle(mark);
+    else if (mark.kind === 'text') this.#text(mark);
+    else this.#group(mark);
   }
 
   #path(mark: Extract<Mark, { kind: 'path' }>): void {
@@ -142,7 +136,9 @@ class Pen {
       const font: FontName = run.script === 'house' || run.script === 'missing' ? mark.face : run.script;
       const text = run.script === 'missing' ? REPLACEMENT.repeat([...run.text].length) : run.text;
       this.#font(font, mark.size);
-      return { font, text, width: pdf.widthOfString(text, { features }) };
+      // Shaped right-to-left text stands glyph by glyph, and a missing letter as a stand-in: what they say goes beside them.
+      const says = run.rtl || run.script === 'missing' ? run.text : null;
+      return { font, text, says, width: pdf.widthOfString(text, { features }) };
     });
     const whole = pieces.reduce((sum, p) => sum + p.width, 0);
     const [x, y] = mark.at;
@@ -151,7 +147,9 @@ class Pen {
     pdf.fillColor(mark.colour);
     for (const piece of pieces) {
       this.#font(piece.font, mark.size);
+      if (piece.says !== null) pdf.markContent('Span', { actual: piece.says });
       pdf.text(piece.text, pen, y, { lineBreak: false, baseline: 'alphabetic', features });
+      if (piece.says !== null) pdf.endMarkedContent();
       pen += piece.width;
     }
     if (mark.turn_deg) pdf.restore();

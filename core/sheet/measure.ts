@@ -57,7 +57,7 @@ export function measure(text: string, size_mm: Mm, face: Face = 'regular'): Mm {
 }
 
 /** The text, or as much of its start as fits with an ellipsis. */
-export function fit(text: string, width_mm: Mm, size_mm: Mm, face: Face = 'regular'): string {
+export function shorten(text: string, width_mm: Mm, size_mm: Mm, face: Face = 'regular'): string {
   if (measure(text, size_mm, face) <= width_mm) return text;
   const letters = [...text];
   const dots = measure('…', size_mm, face);
@@ -106,6 +106,6 @@ export function wrap(
   if (line !== '') lines.push(line);
   if (lines.length <= most) return lines;
   const kept = lines.slice(0, most);
-  kept[most - 1] = fit(lines.slice(most - 1).join(' '), width_mm, size_mm, face);
+  kept[most - 1] = shorten(lines.slice(most - 1).join(' '), width_mm, size_mm, face);
   return kept;
 }

@@ -15,18 +15,23 @@ const mm = (v: Mm): string => {
   return String(r === 0 ? 0 : r);
 };
 
-/** Characters that XML 1.0 does not allow are dropped; what has a meaning in it is written as an entity. */
+/** Whether XML 1.0 allows a code point (its production 2, `Char`). */
+const inXml = (point: number): boolean =>
+  point === 0x9 ||
+  point === 0xa ||
+  point === 0xd ||
+  (point >= 0x20 && point <= 0xd7ff) ||
+  (point >= 0xe000 && point <= 0xfffd) ||
+  point >= 0x10000;
+
+const ENTITY: { readonly [letter: string]: string } = { '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;' };
+
+/** Text for an XML file: what XML forbids is dropped, what has a meaning in it is written as an entity. */
 export const xmlText = (text: string): string =>
-  text
-    // biome-ignore lint/suspicious/noControlCharactersInRegex: these are the ones XML forbids
-    .replace(
-      /[\u0000-\u0008\u000b\u000c\u000e-\u001f\ufffe\uffff]|[\ud800-\udbff](?![\udc00-\udfff])|(?<![\ud800-\udbff])[\udc00-\udfff]/gu,
-      '',
-    )
-    .replace(/&/gu, '&amp;')
-    .replace(/</gu, '&lt;')
-    .replace(/>/gu, '&gt;')
-    .replace(/"/gu, '&quot;');
+  [...text]
+    .filter((letter) => inXml(letter.codePointAt(0) ?? 0))
+    .map((letter) => ENTITY[letter] ?? letter)
+    .join('');
 
 const lineStyle = (s: Stroke | undefined): string =>
   s === undefined

@@ -1,0 +1,50 @@
+import type { Fault } from '../scheme/fault.ts';
+import type { Mm } from './drawing.ts';
+
+/** Scales that a ruler knows: those of ISO 5455 that plans are drawn at, and 1:1250 and 1:2500 of British site plans. */
+export const SCALES: readonly number[] = [50, 100, 200, 250, 500, 1000, 1250, 2500, 5000, 10000];
+
+/** How large something is, or may be: metres on the ground or millimetres on paper. */
+type Size = readonly [width: number, height: number];
+
+/** Whether something fits into a frame on paper at a scale. */
+export const fits = (size_m: Size, frame: Size, scale: number): boolean =>
+  (size_m[0] * 1000) / scale <= frame[0] + 1e-9 && (size_m[1] * 1000) / scale <= frame[1] + 1e-9;
+
+/** The largest standard scale at which something fits into a frame; null when none does. */
+export const bestScale = (size_m: Size, frame: readonly [Mm, Mm]): number | null =>
+  SCALES.find((s) => fits(size_m, frame, s)) ?? null;
+
+/**
+ * The scale asked for, or the best that fits where none is asked for; a fault that says which would fit where it does not.
+ * @param wanted_m  what best fit tries to show as well, such as the shadows round the scheme; at least `size_m`
+ */
+export function chooseScale(
+  asked: number | null,
+  size_m: Size,
+  wanted_m: Size,
+  frame: readonly [Mm, Mm],
+  what: string,
+): number | Fault {
+  const fitting = bestScale(size_m, frame);
+  if (asked === null) {
+    // One step smaller than need be, at most: long shadows of low sun must not shrink the scheme to a stamp.
+    if (fitting !== null)
+      return fits(wanted_m, frame, fitting) ? fitting : (SCALES[SCALES.indexOf(fitting) + 1] ?? fitting);
+  } else if (fits(size_m, frame, asked)) return asked;
+  const large = `${size_m[0].toFixed(1)} m × ${size_m[1].toFixed(1)} m`;
+  const room = `${frame[0].toFixed(0)} mm × ${frame[1].toFixed(0)} mm`;
+  return {
+    level: 'error',
+    code: 'scale-too-large',
+    place: '',
+    message: `the scheme is ${large}, which at ${asked === null ? 'every standard scale' : scaleWords(asked)} is larger than the ${room} that ${what} leaves for each diagram`,
+    cure:
+      fitting === null
+        ? 'take larger paper or draw fewer diagrams on a page'
+        : `${scaleWords(fitting)} fits, or take larger paper or fewer diagrams on a page`,
+  };
+}
+
+/** A scale in words, such as `1:500`. */
+export const scaleWords = (scale: number): string => `1:${Number.isInteger(scale) ? scale : scale.toFixed(2)}`;
