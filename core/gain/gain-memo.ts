@@ -12,6 +12,8 @@ import type { WindowDay, WindowSeen } from './series.ts';
  * other threads, never transfer them.
  */
 export type CheckMemo = {
+  /** Short names for long contents, so that the keys of everything below stay short. */
+  readonly names: ContentMemo<number>;
   readonly days: ContentMemo<DayGrid>;
   readonly facings: ContentMemo<FacingLight>;
   readonly shades: ContentMemo<WindowShade>;
@@ -23,8 +25,12 @@ export type CheckMemo = {
   readonly surroundings: WeakMap<readonly Solid[], { readonly trees: readonly Tree[]; readonly key: string }>;
 };
 
+/** A short name for a content: the same as long as it is remembered, and never one that another content had. */
+export const nameOf = (memo: CheckMemo, content: string): number => memo.names.get(content, () => memo.names.made);
+
 /** An empty memory. @param windows about how many windows it should hold the days of */
 export const createCheckMemo = (windows = 600): CheckMemo => ({
+  names: new ContentMemo(windows * 4),
   days: new ContentMemo(64),
   facings: new ContentMemo(1000),
   shades: new ContentMemo(windows),

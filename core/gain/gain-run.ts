@@ -10,7 +10,7 @@ import type { DayGrid } from '../sky/day-grid.ts';
 import { monthly, monthOf } from '../sky/monthly.ts';
 import type { SkyModel } from '../sky/transpose.ts';
 import { checkDay, type DayOf, dayInput } from './check-days.ts';
-import type { CheckMemo } from './gain-memo.ts';
+import { type CheckMemo, nameOf } from './gain-memo.ts';
 import { openLight, viewOf } from './open-light.ts';
 import { roomDay } from './room-day.ts';
 import type { RoomDay, WindowDay, WindowSeen } from './series.ts';
@@ -37,7 +37,8 @@ export type GainRun = {
 /** A day with the sun's direction in drawing axes at every step above the horizon. */
 type SunnyDay = {
   readonly grid: DayGrid;
-  readonly key: string;
+  /** Short name of all that the day depends on. */
+  readonly name: number;
   readonly month: number;
   readonly suns: readonly (Vec3 | null)[];
 };
@@ -73,7 +74,7 @@ function sunnyDay(scheme: Scheme, day: DayOf, north_rad: number, memo: CheckMemo
   const suns = Array.from(grid.altitude_rad, (altitude, i) =>
     altitude > 0 ? sunVector(grid.azimuth_rad[i]!, altitude, north_rad) : null,
   );
-  return { grid, key, month: monthOf(day.date), suns };
+  return { grid, name: nameOf(memo, key), month: monthOf(day.date), suns };
 }
 
 /** Share of a window's glass in direct sun at every step of a day; 0 with the sun down or behind it. */
@@ -103,25 +104,29 @@ export function gainRun(
   const days = dayList.map((day) => sunnyDay(scheme, day, model.north_rad, memo));
   const grids = days.map((d) => d.grid);
   const byId = new Map(model.windows.map((w) => [w.id, w]));
-  const shadeOf = (w: WindowForm, key: string): WindowShade =>
-    memo.shades.get(key, () => windowShade(w, solids, model.trees));
-  const windowSeen = (w: WindowForm): WindowSeen => {
-    const key = shadeKey(w, surroundings);
-    return memo.seen.get(key, () => windowSky(shadeOf(w, key)));
+  const keys = new Map<string, string>();
+  const keyOf = (w: WindowForm): string => {
+    const known = keys.get(w.id);
+    if (known !== undefined) return known;
+    const key = String(nameOf(memo, shadeKey(w, surroundings)));
+    keys.set(w.id, key);
+    return key;
   };
+  const shadeOf = (w: WindowForm): WindowShade => memo.shades.get(keyOf(w), () => windowShade(w, solids, model.trees));
+  const windowSeen = (w: WindowForm): WindowSeen => memo.seen.get(keyOf(w), () => windowSky(shadeOf(w)));
 
   const windowDays = (w: WindowForm): readonly WindowDay[] => {
-    const key = shadeKey(w, surroundings);
+    const key = keyOf(w);
     const facing = { bearing_deg: w.bearing_deg, tilt_deg: w.tilt_deg };
-    const own = JSON.stringify([w.id, w.bearing_deg, w.glass_m2, w.glass, w.blinds]);
+    const own = nameOf(memo, JSON.stringify([w.id, w.bearing_deg, w.glass_m2, w.glass, w.blinds]));
     return days.map((day) => {
       const ground = monthly(scheme.site.groundReflectance, day.month);
-      const sky = `${day.key} ${skyModel} ${ground}`;
+      const sky = `${day.name} ${skyModel} ${ground}`;
       return memo.gains.get(`${day.grid.key} ${sky} ${model.north_rad} ${own} ${key}`, () => {
         const facingKey = `${sky} ${facing.bearing_deg} ${facing.tilt_deg}`;
         const { open, cosIncidence } = memo.facings.get(facingKey, () => openLight(day.grid, facing, skyModel, ground));
-        const sunlit = memo.sunlit.get(`${day.key} ${model.north_rad} ${key}`, () =>
-          sunlitOver(shadeOf(w, key), day, cosIncidence),
+        const sunlit = memo.sunlit.get(`${day.name} ${model.north_rad} ${key}`, () =>
+          sunlitOver(shadeOf(w), day, cosIncidence),
         );
         return windowDay(w, day.grid, open, { sunlit, cosIncidence }, viewOf(windowSeen(w), w.tilt_deg));
       });

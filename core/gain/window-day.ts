@@ -72,6 +72,12 @@ export function windowDay(
       parts[part][i] = watts;
       total += watts;
     }
+    // A horizon darker than the dome (Perez) takes from the dome's light, and cannot take more than the window sees of it.
+    const dark = parts.sky[i]! + parts.horizon[i]!;
+    if (dark < 0) {
+      parts.horizon[i] = -parts.sky[i]!;
+      total -= dark;
+    }
     total_W[i] = total;
   }
   return { window: window.id, day: grid.key, sunlit, cosIncidence, blind, parts, total_W };

@@ -49,13 +49,18 @@ export function peakStep(day: RoomDay): number {
   return best;
 }
 
+/** Watts of a column over some steps. */
+function columnSum(column: Float64Array, steps: readonly number[]): number {
+  let sum = 0;
+  for (let k = 0; k < steps.length; k++) sum += column[steps[k] as number]!;
+  return sum;
+}
+
 function sumsOver(day: RoomDay, steps: readonly number[], weight: number): Sums[] {
   return day.windows.map((w) => {
     const parts = noParts();
-    for (const part of PARTS) for (const i of steps) parts[part] += w.parts[part][i]! * weight;
-    let total = 0;
-    for (const i of steps) total += w.total_W[i]! * weight;
-    return { window: w.window, parts, total };
+    for (const part of PARTS) parts[part] = columnSum(w.parts[part], steps) * weight;
+    return { window: w.window, parts, total: columnSum(w.total_W, steps) * weight };
   });
 }
 

@@ -8,6 +8,7 @@ import { energy_Wh } from '../gain/room-day.ts';
 import type { WindowDay } from '../gain/series.ts';
 import type { Scheme, Window } from '../scheme/schema.ts';
 import type { SkyModel } from '../sky/transpose.ts';
+import { keptOff, type Stretch, squareSuns } from './shaded-dates.ts';
 import { darker, freeId, NEW_OVERHANG } from './lever.ts';
 
 /** What is swept: the depth of an overhang, of fins on both sides, of both together, or the g of the glass. */
@@ -23,6 +24,8 @@ export type SweepPoint = {
   readonly summerPeak_W: number;
   /** Clear day of the winter solstice [Wh]. */
   readonly winter_Wh: number;
+  /** Days between which no sun reaches the glass when it stands squarely in front; null: none, all of the year, or glass. */
+  readonly keptOff: Stretch | null;
 };
 
 export type Sweep = {
@@ -125,6 +128,8 @@ function amountNow(scheme: Scheme, window: Window, swept: Swept): number | null 
 function probeOf(scheme: Scheme, model: Model, window: Window, swept: Swept, memo: CheckMemo, skyModel: SkyModel) {
   const winterKey = solsticeKeys(scheme.site.latitude).winter;
   const days: readonly DayOf[] = checkDayList(scheme, false).filter((d) => d.key === 'hottest' || d.key === winterKey);
+  const bearing = model.windows.find((w) => w.id === window.id)?.bearing_deg ?? 0;
+  const suns = swept === 'glass' || window.wall === undefined ? null : squareSuns(scheme, bearing);
   return (amount: number): SweepPoint => {
     const now = withAmount(scheme, window, swept, amount);
     const built = { ...buildModel(now), solids: model.solids, trees: model.trees };
@@ -139,6 +144,7 @@ function probeOf(scheme: Scheme, model: Model, window: Window, swept: Swept, mem
       summer_Wh: energy_Wh(day('hottest').total_W, step_min),
       summerPeak_W: Math.max(...day('hottest').total_W),
       winter_Wh: energy_Wh(day(winterKey).total_W, step_min),
+      keptOff: suns ? keptOff(suns, built, form) : null,
     };
   };
 }

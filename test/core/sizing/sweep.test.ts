@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { buildModel } from '../../../core/form/build-model.ts';
 import { createCheckMemo } from '../../../core/gain/gain-memo.ts';
 import { overhangDepth_m } from '../../../core/sizing/cut-off.ts';
-import { longestShaded, squareSuns } from '../../../core/sizing/shaded-dates.ts';
+import { keptOff, squareSuns } from '../../../core/sizing/shaded-dates.ts';
 import { sweep, usualAmounts } from '../../../core/sizing/sweep.ts';
 import { smallScheme, type SmallScheme } from '../../helpers/small-scheme.ts';
 
@@ -73,6 +73,18 @@ describe('a sweep', () => {
       expect(after[i - 1]!.summer_Wh - after[i]!.summer_Wh).toBeLessThan(0.01 * open);
     expect(found.enough).toBeGreaterThan(0.5);
   });
+  it('gives the days between which each depth keeps the squarely standing sun off: the longer the deeper', () => {
+    const scheme = smallScheme({ devices: [canopy(0.5)], windowDevices: ['D1'] });
+    const { points } = sweep(scheme, 'W1', 'overhang', createCheckMemo(), { amounts: [0, 0.5, 1, 1.5, 2] });
+    expect(points.map((p) => p.keptOff === null)).toEqual([true, true, false, false, false]);
+    const days = points.slice(2).map((p) => (Date.parse(p.keptOff!.to) - Date.parse(p.keptOff!.from)) / 86_400_000);
+    expect(days[0]).toBeLessThan(days[1] as number);
+    expect(days[1]).toBeLessThan(days[2] as number);
+    for (const p of points.slice(2)) {
+      expect(Date.parse(p.keptOff!.from)).toBeLessThan(Date.parse('2025-06-21'));
+      expect(Date.parse(p.keptOff!.to)).toBeGreaterThan(Date.parse('2025-06-21'));
+    }
+  });
   it('turns summer and winter over between the hemispheres', () => {
     const north = sweep(
       smallScheme({ latitude: 35, devices: [canopy(0.5)], windowDevices: ['D1'] }),
@@ -103,8 +115,11 @@ describe('a sweep', () => {
 describe('when the sun stands squarely in front of a window', () => {
   const suns = (over: SmallScheme) => {
     const scheme = smallScheme(over);
-    const model = buildModel(scheme);
-    return squareSuns(scheme, model, model.windows[0]!);
+    return squareSuns(scheme, buildModel(scheme).windows[0]!.bearing_deg);
+  };
+  const stretchOf = (over: SmallScheme) => {
+    const model = buildModel(smallScheme(over));
+    return keptOff(suns(over), model, model.windows[0]!);
   };
   it('it stands at noon altitude before south glass: 61.94°, 38.5° and 15.06° (90° − |φ − δ|)', () => {
     const days = suns({});
@@ -117,7 +132,7 @@ describe('when the sun stands squarely in front of a window', () => {
   it('a depth for full shade on 21 May shades from then on for as long as the sun stands as high (declinations from an ephemeris)', () => {
     const may = suns({}).find((d) => d.date === '2025-05-21')?.altitude_deg as number;
     const depth = overhangDepth_m(1.5, 0.3, may * RAD);
-    const stretch = longestShaded(suns({ devices: [canopy(depth + 1e-6)], windowDevices: ['D1'] }));
+    const stretch = stretchOf({ devices: [canopy(depth + 1e-6)], windowDevices: ['D1'] });
     expect(stretch?.from).toBe('2025-05-21');
     const observer = new Astronomy.Observer(51.5, 0, 0);
     const declination = (day: Date): number => Astronomy.Equator(Astronomy.Body.Sun, day, observer, true, true).dec;
@@ -129,14 +144,12 @@ describe('when the sun stands squarely in front of a window', () => {
   it('runs over the new year in the south', () => {
     const summer = suns({ latitude: -35, wall: 2 }).find((d) => d.date === '2025-11-20')?.altitude_deg as number;
     const depth = overhangDepth_m(1.5, 0.3, summer * RAD);
-    const stretch = longestShaded(
-      suns({ latitude: -35, wall: 2, devices: [canopy(depth + 1e-6)], windowDevices: ['D1'] }),
-    );
+    const stretch = stretchOf({ latitude: -35, wall: 2, devices: [canopy(depth + 1e-6)], windowDevices: ['D1'] });
     expect(stretch?.from).toBe('2025-11-20');
     expect(stretch?.to.slice(5, 7)).toBe('01');
   });
   it('has no such day before north glass at 51.5° north, and none shaded without a device', () => {
     expect(suns({ wall: 2 }).every((d) => d.altitude_deg === null)).toBe(true);
-    expect(longestShaded(suns({}))).toBeNull();
+    expect(stretchOf({})).toBeNull();
   });
 });

@@ -1,0 +1,76 @@
+import { readFileSync } from 'node:fs';
+import { resolve } from 'node:path';
+import { createCheckMemo } from '../../core/gain/gain-memo.ts';
+import { parseLimitSet } from '../../core/limits/load-limits.ts';
+import { loadScheme } from '../../core/scheme/load.ts';
+import type { Scheme } from '../../core/scheme/schema.ts';
+import { waysToPass } from '../../core/sizing/ways-to-pass.ts';
+import { checkScheme } from '../../core/study/check.ts';
+import type { Row } from './row.ts';
+
+const read = (path: string): string => readFileSync(resolve(process.cwd(), path), 'utf8');
+const go = async (): Promise<'go'> => 'go';
+const sorted = (times: number[]): number[] => times.sort((a, b) => a - b);
+
+function schemeOf(name: string): Scheme {
+  const loaded = loadScheme(read(`assets/demo/${name}.scheme.json`));
+  if (!loaded.ok) throw new Error(`${name} does not read`);
+  return loaded.value;
+}
+
+/** The scheme with one overhang of its own over one window, this deep. */
+const withOverhang = (scheme: Scheme, depth: number): Scheme => ({
+  ...scheme,
+  devices: [...scheme.devices, { id: 'bench', kind: 'overhang', depth, above: 0, left: 0.3, right: 0.3, tilt: 0 }],
+  windows: scheme.windows.map((w, i) => (i === 20 ? { ...w, devices: ['bench'] } : w)),
+});
+
+/** Whole checks, a dragged overhang and ways to pass. No public library does this work; the bars are in seconds. */
+export async function benchCheck(): Promise<Row[]> {
+  const limits = parseLimitSet(read('assets/limits/example-gain.json'));
+  if (!limits.ok) throw new Error('the example limits do not read');
+  const set = limits.value;
+  const rows: Row[] = [];
+  const row = (what: string, times: number[], note: string): void => {
+    const [least, middle] = [times[0] as number, times[times.length >> 1] as number];
+    const text = `least ${least.toFixed(0)} ms, median ${middle.toFixed(0)} ms; ${note}`;
+    rows.push({ what, ours_perSecond: 1000 / middle, other: '', other_perSecond: null, ratio: null, note: text });
+  };
+  const blocks = schemeOf('two-hundred-blocks');
+  const yard = schemeOf('tannery-yard');
+  let findings = 0;
+  const cold: number[] = [];
+  for (let k = 0; k < 7; k++) {
+    const start = performance.now();
+    const result = await checkScheme(blocks, set, [], go);
+    cold.push(performance.now() - start);
+    findings = result?.findings.length ?? 0;
+  }
+  row(
+    'check 50 rooms, 200 windows, 200 blocks, five days at 5 min',
+    sorted(cold),
+    `bar 1000 ms on one core; ${findings} findings`,
+  );
+  const memo = createCheckMemo();
+  await checkScheme(blocks, set, [], go, { memo });
+  const drag: number[] = [];
+  for (let k = 0; k < 60; k++) {
+    const now = withOverhang(blocks, 0.3 + 0.02 * k);
+    const start = performance.now();
+    await checkScheme(now, set, [], go, { memo });
+    drag.push(performance.now() - start);
+  }
+  const p95 = sorted(drag)[57] as number;
+  row('the same checked again after one overhang is dragged', drag, `p95 ${p95.toFixed(0)} ms, bar 50 ms`);
+  const result = await checkScheme(yard, set, [], go, { memo });
+  const over = result?.findings.filter((f) => f.verdict === 'over') ?? [];
+  const ways: number[] = [];
+  let passing = 0;
+  for (const finding of over) {
+    const start = performance.now();
+    passing += waysToPass(yard, set, finding.room, finding, createCheckMemo()).ways.filter((w) => w.passes).length;
+    ways.push(performance.now() - start);
+  }
+  row('ways to pass of one room of the demo', sorted(ways), `${over.length} findings, ${passing} ways; bar 1000 ms`);
+  return rows;
+}
