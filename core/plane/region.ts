@@ -14,9 +14,6 @@ export function regionArea(regions: readonly Region[]): number {
   return sum;
 }
 
-/** The rings of regions, outer and holes alike, as even-odd or non-zero filling takes them. */
-export const ringsOf = (regions: readonly Region[]): Ring[] => regions.flatMap((r) => [r.outer, ...r.holes]);
-
 /** The ring turned so that it starts at its lowest leftmost corner: equal rings then have equal corners. */
 export function fromFirstCorner(ring: Ring): Ring {
   let first = 0;

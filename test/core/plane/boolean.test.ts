@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { differenceOf, intersectionOf, regionsLess, unionOf } from '../../../core/plane/boolean.ts';
+import { differenceOf, intersectionOf, unionOf } from '../../../core/plane/boolean.ts';
 import { regionArea } from '../../../core/plane/region.ts';
 import { signedArea } from '../../../core/plane/ring.ts';
 import type { Point, Ring } from '../../../core/plane/vec.ts';
@@ -68,7 +68,7 @@ describe('boolean operations', () => {
   it('keeps an island inside a hole apart, and its hole when it is cut again', () => {
     const rim = differenceOf([square(0, 0, 10)], [square(1, 1, 8)]);
     const both = [...rim, ...unionOf([square(4, 4, 2)])];
-    expect(regionArea(regionsLess(both, [square(0, 0, 1)]))).toBeCloseTo(100 - 64 + 4 - 1, 9);
+    expect(regionArea(differenceOf(both, [square(0, 0, 1)]))).toBeCloseTo(100 - 64 + 4 - 1, 9);
   });
   it('gives plain coordinates on the grid of a tenth of a millimetre, without stray fields', () => {
     const [region] = unionOf([square(1000.3, -2000.7, 0.1)]);
