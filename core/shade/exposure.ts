@@ -1,5 +1,5 @@
 import { type LightColumns, lightOnPlane } from './exposure-light.ts';
-import { listSeen, makeSkyline, raiseWalls, type Skyline, sumSeen } from './skyline.ts';
+import { hideSeen, listSeen, makeSkyline, raiseWalls, type Skyline, sumSeen } from './skyline.ts';
 import { makeColumns } from './skyline-columns.ts';
 import { byNormal, type Receptors, visitReceptors } from './skyline-groups.ts';
 import type { Occluders } from './skyline-occluders.ts';
@@ -15,10 +15,14 @@ export type SunOnReceptors = {
   readonly covered: Uint8Array;
 };
 
+/** Something else that may stand before a receptor: asked of each sample that the occluders leave. See `mesh/`. */
+export type Hider = (x: number, y: number, z: number, sx: number, sy: number, sz: number) => boolean;
+
 /**
  * Sun time and beam on receptors, each sample exactly hidden or seen (see `skyline.ts`). The result of a receptor does not
  * depend on which others are asked for, so any cut of a long list gives the same numbers.
  * @param from, to  rows to work out, `to` exclusive
+ * @param hider     what the occluders do not hold
  */
 export function sunOnReceptors(
   o: Occluders,
@@ -26,6 +30,7 @@ export function sunOnReceptors(
   r: Receptors,
   from = 0,
   to = r.x.length,
+  hider: Hider | null = null,
 ): SunOnReceptors {
   const out: SunOnReceptors = {
     minutes: new Float64Array(to - from),
@@ -34,7 +39,7 @@ export function sunOnReceptors(
   };
   const sums = new Float64Array(2);
   for (const rows of byNormal(r, from, to)) {
-    eachSkyline(o, light, r, rows, (row, s) => {
+    eachSkyline(o, light, r, rows, hider, (row, s) => {
       if (s === null) out.covered[row - from] = 1;
       else {
         sumSeen(s, sums, 0);
@@ -47,9 +52,15 @@ export function sunOnReceptors(
 }
 
 /** Which samples of the light one receptor sees: 1 or 0 for each row of the light before it was sorted. */
-export function seenSamples(o: Occluders, light: LightColumns, r: Receptors, row: number): Uint8Array {
+export function seenSamples(
+  o: Occluders,
+  light: LightColumns,
+  r: Receptors,
+  row: number,
+  hider: Hider | null = null,
+): Uint8Array {
   const seen = new Uint8Array(light.sx.length);
-  eachSkyline(o, light, r, Uint32Array.of(row), (_, s) => {
+  eachSkyline(o, light, r, Uint32Array.of(row), hider, (_, s) => {
     if (s !== null) listSeen(s, seen);
   });
   return seen;
@@ -61,6 +72,7 @@ function eachSkyline(
   light: LightColumns,
   r: Receptors,
   rows: Uint32Array,
+  hider: Hider | null,
   done: (row: number, s: Skyline | null) => void,
 ): void {
   const first = rows[0]!;
@@ -78,6 +90,7 @@ function eachSkyline(
     const z = r.z[row]!;
     raiseWalls(skyline, list.walls, list.wallCount, x, y, z);
     if (list.patchCount > 0) hidePatches(skyline, patches, o, list.patchId, list.patchCount, x, y, z);
+    if (hider !== null) hideSeen(skyline, (sx, sy, sz) => hider(x, y, z, sx, sy, sz));
     done(row, skyline);
   });
 }

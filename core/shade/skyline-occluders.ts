@@ -32,7 +32,7 @@ export type Occluders = {
  * The occluders of solids and flat shaders. The order of either changes nothing but the order of the columns.
  * @throws {RangeError} for a corner that is not finite
  */
-export function makeOccluders(solids: readonly Solid[], shaders: readonly Shader[]): Occluders {
+export function makeOccluders(solids: readonly Solid[], shaders: readonly Pick<Shader, 'corners'>[]): Occluders {
   const walls: number[] = [];
   const wallSolid: number[] = [];
   const wallPatch: number[] = [];

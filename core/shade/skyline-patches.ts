@@ -1,6 +1,6 @@
 import type { Columns } from './skyline-columns.ts';
 import type { Occluders } from './skyline-occluders.ts';
-import { rankOf, SLACK, type Skyline } from './skyline.ts';
+import { openRun, rankOf, SLACK, type Skyline } from './skyline.ts';
 
 /**
  * What a flat convex patch in space hides: undersides and walls of floating solids, overhangs, fins, blades. Seen from a
@@ -251,21 +251,6 @@ function hideInColumn(s: Skyline, p: PatchScratch, n: number, c: number): void {
 }
 
 const clamp = (v: number, from: number, to: number): number => (v < from ? from : v > to ? to : v);
-
-/** Opens ranks of a column for marks. */
-function openRun(s: Skyline, c: number, from: number, to: number): void {
-  const { openFrom, openTo, mark } = s;
-  if (openTo[c]! <= openFrom[c]! || openTo[c] === 0) {
-    openFrom[c] = from;
-    openTo[c] = to;
-    for (let i = from; i < to; i++) mark[i] = 0;
-    return;
-  }
-  for (let i = from; i < openFrom[c]!; i++) mark[i] = 0;
-  for (let i = openTo[c]!; i < to; i++) mark[i] = 0;
-  if (from < openFrom[c]!) openFrom[c] = from;
-  if (to > openTo[c]!) openTo[c] = to;
-}
 
 /** Hides a run of ranks: from the bottom or the top of what is still seen by moving that end, else by marks. */
 function hideRun(s: Skyline, c: number, from: number, to: number): void {

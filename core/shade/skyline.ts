@@ -188,6 +188,35 @@ function testRaised(s: Skyline, kept: number): void {
   }
 }
 
+/** Opens ranks of a column for marks, so that a mark there counts; what was open before keeps its marks. */
+export function openRun(s: Skyline, c: number, from: number, to: number): void {
+  const { openFrom, openTo, mark } = s;
+  if (openTo[c]! <= openFrom[c]! || openTo[c] === 0) {
+    openFrom[c] = from;
+    openTo[c] = to;
+    for (let i = from; i < to; i++) mark[i] = 0;
+    return;
+  }
+  for (let i = from; i < openFrom[c]!; i++) mark[i] = 0;
+  for (let i = openTo[c]!; i < to; i++) mark[i] = 0;
+  if (from < openFrom[c]!) openFrom[c] = from;
+  if (to > openTo[c]!) openTo[c] = to;
+}
+
+/** Asks of every sample still seen whether something else hides it, and hides those. */
+export function hideSeen(s: Skyline, hides: (sx: number, sy: number, sz: number) => boolean): void {
+  const { light, floor, ceiling, mark } = s;
+  for (let c = 0; c < light.count; c++) {
+    const from = floor[c]!;
+    const to = ceiling[c]!;
+    if (from >= to) continue;
+    openRun(s, c, from, to);
+    for (let i = from; i < to; i++) {
+      if (mark[i] === 0 && hides(light.sx[i]!, light.sy[i]!, light.sz[i]!)) mark[i] = 1;
+    }
+  }
+}
+
 /** Writes the seen samples' sums: minutes in `out[at]`, beam on the plane in `out[at + 1]`. */
 export function sumSeen(s: Skyline, out: Float64Array, at: number): void {
   const { light, floor, ceiling, openFrom, openTo, mark } = s;

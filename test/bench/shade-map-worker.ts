@@ -1,0 +1,29 @@
+import { parentPort } from 'node:worker_threads';
+import { type ExposureJob, exposureJob, exposureSlice, joinSlices, slicesOf } from '../../core/shade/exposure-slice.ts';
+import { blockField, fieldReceptors } from '../helpers/block-field.ts';
+import { yearLight } from '../helpers/year-light.ts';
+
+/**
+ * Run by the bench of maps in two ways: as a worker thread that works out slices of a job, and with `--memory` as a process
+ * of its own that works out one large map and prints how much memory that took at its peak.
+ */
+if (parentPort) {
+  const port = parentPort;
+  let job: ExposureJob | null = null;
+  port.on('message', (message: { job: ExposureJob } | { slice: number }) => {
+    if ('job' in message) {
+      job = message.job;
+      port.postMessage({ ready: true });
+    } else if (job) port.postMessage({ slice: message.slice, result: exposureSlice(job, message.slice) });
+  });
+} else if (process.argv.includes('--memory')) {
+  const field = blockField(7, 200);
+  const receptors = fieldReceptors(field, 100_000, 3);
+  const energy = { diffuse_Whm2: 1, reflected_Whm2: 1 };
+  const map = exposureJob(field.solids, field.shaders, yearLight(51.5, 5), receptors, energy);
+  const start = performance.now();
+  const all = joinSlices(Array.from({ length: slicesOf(map) }, (_, i) => exposureSlice(map, i)));
+  const seconds = (performance.now() - start) / 1000;
+  const check = all.minutes.reduce((sum, m) => sum + m, 0);
+  console.log(JSON.stringify({ seconds, check, peak_MB: process.resourceUsage().maxRSS / 1024 }));
+}

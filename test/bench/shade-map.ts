@@ -1,0 +1,229 @@
+import { execFileSync } from 'node:child_process';
+import { availableParallelism } from 'node:os';
+import { resolve } from 'node:path';
+import { Worker } from 'node:worker_threads';
+import { seenSamples, sunOnReceptors } from '../../core/shade/exposure.ts';
+import { columnsFor, type Light, sortLight } from '../../core/shade/exposure-light.ts';
+import { type ExposureJob, exposureJob, slicesOf } from '../../core/shade/exposure-slice.ts';
+import type { Receptors } from '../../core/shade/skyline-groups.ts';
+import { makeOccluders } from '../../core/shade/skyline-occluders.ts';
+import { type BlockField, blockField, fieldReceptors } from '../helpers/block-field.ts';
+import { isHidden, meshOf } from '../helpers/ray-casts.ts';
+import { yearLight } from '../helpers/year-light.ts';
+import type { Row } from './row.ts';
+
+const median = (values: number[]): number => [...values].sort((a, b) => a - b)[values.length >> 1] as number;
+const RUNS = 5;
+
+/** Sun hours and beam of a year at five-minute steps, against a ray cast for every sample in front of the receptor. */
+export async function benchMap(): Promise<Row[]> {
+  const rows: Row[] = [];
+  const light = yearLight(51.5, 5);
+  for (const detailed of [false, true]) rows.push(yearRow(light, detailed));
+  rows.push(...growthRows(light));
+  rows.push(...(await coreRows(light)));
+  return rows;
+}
+
+function yearRow(light: Light, detailed: boolean): Row {
+  const count = 10_000;
+  const field = blockField(7, 200, detailed);
+  const receptors = fieldReceptors(field, count, 3);
+  const asked = samplesAsked(light, receptors);
+  const cast = castSome(field, light, receptors, 389);
+  const times: number[] = [];
+  for (let i = 0; i < RUNS; i++) times.push(timeMap(field, light, receptors));
+  const ours = asked / median(times);
+  return {
+    what: `year of sun, 10000 receptors, 200 blocks${detailed ? ' in detail' : ''} [samples]`,
+    ours_perSecond: ours,
+    other: 'three-mesh-bvh 0.9.17',
+    other_perSecond: cast.perSecond,
+    ratio: ours / cast.perSecond,
+    note: `${detailed ? 'with overhangs, fins, floating blocks; ' : ''}step 5 min; ${(100 * cast.equal).toFixed(4)} % of ${cast.samples} samples equal; map in ${median(times).toFixed(3)} s (fastest ${Math.min(...times).toFixed(3)} s), everything prepared within; one ray a sample, timed on every 389th receptor`,
+  };
+}
+
+/** Samples in front of the receptors: those that a caster has to cast. */
+function samplesAsked(light: Light, r: Receptors): number {
+  const counts = new Map<string, number>();
+  let sum = 0;
+  for (let row = 0; row < r.x.length; row++) {
+    const key = `${r.nx[row]},${r.ny[row]},${r.nz[row]}`;
+    let n = counts.get(key);
+    if (n === undefined) {
+      n = 0;
+      for (let i = 0; i < light.sx.length; i++)
+        if (r.nx[row]! * light.sx[i]! + r.ny[row]! * light.sy[i]! + r.nz[row]! * light.sz[i]! > 0) n++;
+      counts.set(key, n);
+    }
+    sum += n;
+  }
+  return sum;
+}
+
+/** Seconds for a map, from the solids on: occluders, sorted light and all. */
+function timeMap(field: BlockField, light: Light, r: Receptors): number {
+  const start = performance.now();
+  const o = makeOccluders(field.solids, field.shaders);
+  const { minutes } = sunOnReceptors(o, sortLight(light, columnsFor(light.sx.length)), r);
+  const seconds = (performance.now() - start) / 1000;
+  if (!minutes.every(Number.isFinite)) throw new Error('the map holds what is no number');
+  return seconds;
+}
+
+/** Casts every sample of every n-th receptor, and compares. Only the casting is timed. */
+function castSome(field: BlockField, light: Light, r: Receptors, every: number) {
+  const mesh = meshOf(field.solids, field.shaders);
+  const o = makeOccluders(field.solids, field.shaders);
+  const sorted = sortLight(light, columnsFor(light.sx.length));
+  const { covered } = sunOnReceptors(o, sorted, r);
+  const hidden = new Uint8Array(light.sx.length);
+  let samples = 0;
+  let equal = 0;
+  let seconds = 0;
+  for (let row = 0; row < r.x.length; row += every) {
+    const p = [r.x[row]!, r.y[row]!, r.z[row]!];
+    const n = [r.nx[row]!, r.ny[row]!, r.nz[row]!];
+    const s = [0, 0, 0];
+    hidden.fill(2);
+    const start = performance.now();
+    for (let i = 0; i < light.sx.length; i++) {
+      s[0] = light.sx[i]!;
+      s[1] = light.sy[i]!;
+      s[2] = light.sz[i]!;
+      if (n[0]! * s[0] + n[1]! * s[1] + n[2]! * s[2] > 0) hidden[i] = isHidden(mesh, p, n, s) ? 1 : 0;
+    }
+    seconds += (performance.now() - start) / 1000;
+    const seen = seenSamples(o, sorted, r, row);
+    for (let i = 0; i < light.sx.length; i++) {
+      if (hidden[i] === 2) continue;
+      samples++;
+      const clear = hidden[i] === 0 && covered[row] === 0;
+      if (clear === (seen[i] === 1)) equal++;
+    }
+  }
+  return { perSecond: samples / seconds, samples, equal: equal / samples };
+}
+
+/** How the cost of a receptor grows with blocks, and that of a map with receptors. The first line of each is the measure. */
+function growthRows(light: Light): Row[] {
+  const rows: Row[] = [];
+  const row = (what: string, perSecond: number, first: number, note: string): void => {
+    rows.push({
+      what,
+      ours_perSecond: perSecond,
+      other: 'the first of the series',
+      other_perSecond: first,
+      ratio: perSecond / first,
+      note,
+    });
+  };
+  let first = 0;
+  for (const blocks of [50, 200, 1000, 5000]) {
+    const field = blockField(7, blocks);
+    const receptors = fieldReceptors(field, 4000, 3);
+    const seconds = median([0, 1, 2].map(() => timeMap(field, light, receptors)));
+    first ||= 4000 / seconds;
+    row(
+      `year, 4000 receptors, ${blocks} blocks [receptors]`,
+      4000 / seconds,
+      first,
+      `${((seconds / 4000) * 1e6).toFixed(1)} µs a receptor`,
+    );
+  }
+  first = 0;
+  const field = blockField(7, 200);
+  for (const count of [1000, 10_000, 100_000]) {
+    const receptors = fieldReceptors(field, count, 3);
+    const seconds = median([0, 1, 2].slice(0, count > 50_000 ? 1 : 3).map(() => timeMap(field, light, receptors)));
+    first ||= count / seconds;
+    row(
+      `year, 200 blocks, ${count} receptors [receptors]`,
+      count / seconds,
+      first,
+      `${((seconds / count) * 1e6).toFixed(1)} µs a receptor`,
+    );
+  }
+  return rows;
+}
+
+/** One worker thread against all cores, with sky and ground light; and the memory of a large map in a process of its own. */
+async function coreRows(light: Light): Promise<Row[]> {
+  const script = resolve(import.meta.dirname, 'shade-map-worker.js');
+  const field = blockField(7, 200);
+  const receptors = fieldReceptors(field, 40_000, 3);
+  const job = exposureJob(field.solids, field.shaders, light, receptors, { diffuse_Whm2: 1, reflected_Whm2: 1 });
+  const cores = availableParallelism();
+  const one = await runOnWorkers(script, job, 1);
+  const all = await runOnWorkers(script, job, cores);
+  if (one.bytes !== all.bytes) throw new Error('the number of workers changed the result');
+  const large = JSON.parse(execFileSync(process.execPath, [script, '--memory'], { encoding: 'utf8' })) as {
+    seconds: number;
+    peak_MB: number;
+  };
+  return [
+    {
+      what: `year, sky and ground too, 40000 receptors, ${cores} workers [receptors]`,
+      ours_perSecond: 40_000 / all.seconds,
+      other: 'one worker',
+      other_perSecond: 40_000 / one.seconds,
+      ratio: one.seconds / all.seconds,
+      note: 'same bytes from both',
+    },
+    {
+      what: 'year, sky and ground too, 100000 receptors [receptors]',
+      ours_perSecond: 100_000 / large.seconds,
+      other: '',
+      other_perSecond: null,
+      ratio: null,
+      note: `peak memory of the whole process ${large.peak_MB.toFixed(0)} MB (bar: 500 MB)`,
+    },
+  ];
+}
+
+/** Works a job out on so many worker threads, each taking the next slice when it is done. Starting them is not timed. */
+async function runOnWorkers(
+  script: string,
+  job: ExposureJob,
+  count: number,
+): Promise<{ seconds: number; bytes: string }> {
+  const workers = Array.from({ length: count }, () => new Worker(script));
+  const total = slicesOf(job);
+  const sums = new Float64Array(2 * total);
+  let next = 0;
+  try {
+    await Promise.all(
+      workers.map(
+        (w) =>
+          new Promise<void>((ready, failed) => {
+            w.once('error', failed);
+            w.once('message', () => ready());
+            w.postMessage({ job });
+          }),
+      ),
+    );
+    const start = performance.now();
+    await Promise.all(
+      workers.map(
+        (w) =>
+          new Promise<void>((done, failed) => {
+            w.once('error', failed);
+            const give = (): void => {
+              if (next < total) w.postMessage({ slice: next++ });
+              else done();
+            };
+            w.on('message', (m: { slice: number; result: { minutes: Float64Array; beam: Float64Array } }) => {
+              sums[2 * m.slice] = m.result.minutes.reduce((a, b) => a + b, 0);
+              sums[2 * m.slice + 1] = m.result.beam.reduce((a, b) => a + b, 0);
+              give();
+            });
+            give();
+          }),
+      ),
+    );
+    return { seconds: (performance.now() - start) / 1000, bytes: [...sums].join() };
+  } finally {
+    await Promise.all(workers.map((w) => w.terminate()));
+  }
+}
