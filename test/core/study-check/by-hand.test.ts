@@ -27,7 +27,7 @@ function clearSky(apparent_deg: number, distance: number, turbidity: number) {
   return { beam, diffuse: global - beam * up, global };
 }
 
-/** Karlsson and Roos (2000), two panes, category 4, and its hemispherical mean from the dossier’s table. */
+/** Karlsson and Roos (2000), two panes, category 4, and its hemispherical mean as integrated by hand. */
 function relativeG(cosine: number): number {
   const z = Math.acos(cosine) / (90 * RAD);
   const b = 0.25 / 4;
