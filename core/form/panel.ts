@@ -52,6 +52,25 @@ export function roofPanel(at: Point, turn_deg: number, level_m: number, width_m:
   };
 }
 
+/** The smallest box round an outline, as a level panel with the axes of the drawing. */
+export function levelPanel(outline: Ring, level_m: number): Panel {
+  let [x0, y0, x1, y1] = [Infinity, Infinity, -Infinity, -Infinity];
+  for (const [x, y] of outline) {
+    x0 = Math.min(x0, x);
+    x1 = Math.max(x1, x);
+    y0 = Math.min(y0, y);
+    y1 = Math.max(y1, y);
+  }
+  return {
+    origin: [x0, y0, level_m],
+    right: [1, 0, 0],
+    up: [0, 1, 0],
+    normal: [0, 0, 1],
+    width_m: x1 - x0,
+    height_m: y1 - y0,
+  };
+}
+
 /** The point of a panel's axes at x along `right`, y along `up`, z along `normal` [m], in drawing axes. */
 export const pointOn = (p: Panel, x: number, y: number, z: number): Vec3 => [
   p.origin[0] + x * p.right[0] + y * p.up[0] + z * p.normal[0],
