@@ -1,7 +1,7 @@
 import PDFDocument from 'pdfkit';
 import type { Document, Mark, Page, Stroke } from '../../core/sheet/drawing.ts';
 import { hatchLines } from '../../core/sheet/hatch.ts';
-import { visualRuns } from '../../core/sheet/text-runs.ts';
+import { type TextRun, visualRuns } from '../../core/sheet/text-runs.ts';
 import { type FontName, fontBytes } from './fonts.ts';
 
 /** Points of a PDF in one millimetre. */
@@ -47,6 +47,14 @@ export function writePdf(document: Document, options: Options): Promise<Uint8Arr
   pdf.end();
   return done;
 }
+
+/** A stretch of text in one font, ready to be written. */
+type TextPiece = {
+  readonly font: FontName;
+  readonly text: string;
+  readonly says: string | null;
+  readonly features: { readonly features?: { readonly [tag: string]: boolean } };
+};
 
 /** Draws the marks of the display list, one kind a method. */
 class Pen {
@@ -131,28 +139,38 @@ class Pen {
   #text(mark: Extract<Mark, { kind: 'text' }>): void {
     if (mark.text === '') return;
     const pdf = this.#pdf;
-    const features = { tnum: mark.tabular === true };
-    const pieces = visualRuns(mark.text, mark.rtl === true).map((run) => {
-      const font: FontName = run.script === 'house' || run.script === 'missing' ? mark.face : run.script;
-      const text = run.script === 'missing' ? REPLACEMENT.repeat([...run.text].length) : run.text;
-      this.#font(font, mark.size);
-      // Shaped right-to-left text stands glyph by glyph, and a missing letter as a stand-in: what they say goes beside them.
-      const says = run.rtl || run.script === 'missing' ? run.text : null;
-      return { font, text, says, width: pdf.widthOfString(text, { features }) };
-    });
-    const whole = pieces.reduce((sum, p) => sum + p.width, 0);
+    const pieces = visualRuns(mark.text, mark.rtl === true).map((run) => this.#piece(run, mark));
+    const whole = mark.anchor === 'start' ? 0 : pieces.reduce((sum, p) => sum + this.#width(p, mark.size), 0);
     const [x, y] = mark.at;
-    let pen = mark.anchor === 'start' ? x : mark.anchor === 'middle' ? x - whole / 2 : x - whole;
+    let pen = mark.anchor === 'middle' ? x - whole / 2 : x - whole;
     if (mark.turn_deg) pdf.save().rotate(-mark.turn_deg, { origin: [x, y] });
     pdf.fillColor(mark.colour);
-    for (const piece of pieces) {
+    pieces.forEach((piece, i) => {
       this.#font(piece.font, mark.size);
       if (piece.says !== null) pdf.markContent('Span', { actual: piece.says });
-      pdf.text(piece.text, pen, y, { lineBreak: false, baseline: 'alphabetic', features });
+      pdf.text(piece.text, pen, y, { lineBreak: false, baseline: 'alphabetic', ...piece.features });
       if (piece.says !== null) pdf.endMarkedContent();
-      pen += piece.width;
-    }
+      if (i < pieces.length - 1) pen += this.#width(piece, mark.size);
+    });
     if (mark.turn_deg) pdf.restore();
+  }
+
+  #piece(run: TextRun, mark: Extract<Mark, { kind: 'text' }>): TextPiece {
+    const missing = run.script === 'missing';
+    return {
+      font: run.script === 'house' || missing ? mark.face : run.script,
+      text: missing ? REPLACEMENT.repeat([...run.text].length) : run.text,
+      // Shaped right-to-left text stands glyph by glyph, and a missing letter as a stand-in: what they say goes beside them.
+      says: run.rtl || missing ? run.text : null,
+      // Naming features keeps the writer from laying words out one by one, which would put right-to-left words in the wrong order.
+      // The house face needs none: its figures are tabular as they are.
+      features: run.rtl ? { features: {} } : {},
+    };
+  }
+
+  #width(piece: TextPiece, size: number): number {
+    this.#font(piece.font, size);
+    return this.#pdf.widthOfString(piece.text, piece.features);
   }
 
   #font(name: FontName, size: number): void {

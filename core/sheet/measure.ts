@@ -83,9 +83,11 @@ export function wrap(
   most = Number.POSITIVE_INFINITY,
 ): readonly string[] {
   const lines: string[] = [];
+  // A number and its unit stay on one line.
+  const kept = text.replace(/(\d) (?=%|°|m²|W\/m²|Wh\/m²)/gu, '$1\u00a0');
   let line = '';
   const wide = (s: string): boolean => measure(s, size_mm, face) > width_mm;
-  for (const word of text.split(/\s+/u).filter((w) => w !== '')) {
+  for (const word of kept.split(/[ \t\r\n]+/u).filter((w) => w !== '')) {
     const longer = line === '' ? word : `${line} ${word}`;
     if (!wide(longer)) {
       line = longer;
@@ -105,7 +107,7 @@ export function wrap(
   }
   if (line !== '') lines.push(line);
   if (lines.length <= most) return lines;
-  const kept = lines.slice(0, most);
-  kept[most - 1] = shorten(lines.slice(most - 1).join(' '), width_mm, size_mm, face);
-  return kept;
+  const short = lines.slice(0, most);
+  short[most - 1] = shorten(lines.slice(most - 1).join(' '), width_mm, size_mm, face);
+  return short;
 }

@@ -4,11 +4,14 @@ export function fixed(value: number, places: number): string {
   return text.startsWith('-') ? (Number(text) === 0 ? text.slice(1) : `−${text.slice(1)}`) : text;
 }
 
-/** An area: whole square metres from a hundred up, tenths below. */
-export const area = (m2: number): string => `${fixed(m2, Math.abs(m2) >= 99.95 ? 0 : 1)} m²`;
+/** A number as it was given, with a true minus. */
+export const plain = (value: number): string => String(value).replace('-', '−');
+
+/** An area, its unit kept on its line: whole square metres from a hundred up, tenths below. */
+export const area = (m2: number): string => `${fixed(m2, Math.abs(m2) >= 99.95 ? 0 : 1)}\u00a0m²`;
 
 /** A share 0..1 in whole percent. */
-export const percent = (share: number): string => `${fixed(share * 100, 0)} %`;
+export const percent = (share: number): string => `${fixed(share * 100, 0)}\u00a0%`;
 
 /** A place on the globe, such as `51.4500° N, 2.5900° W`. */
 export const place = (latitude: number, longitude: number): string =>

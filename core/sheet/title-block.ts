@@ -8,15 +8,15 @@ import { READ, SMALL } from './measure.ts';
 export type TitleFacts = {
   /** What the drawing is, such as `Shadow study`. */
   readonly subject: string;
-  /** Drawing number. */
-  readonly number: string;
+  /** Drawing number; null where there is none to give. */
+  readonly number: string | null;
   /** Date of the drawing, YYYY-MM-DD, handed in: nothing here reads a clock. */
   readonly date: string;
   /** Version of the engine. */
   readonly engine: string;
   /** Content hash of the scheme; its first 12 digits are printed. */
   readonly hash: string;
-  /** Such as `1:500 on A3`. */
+  /** Such as `1:500 on A3`; empty for what is not to scale. */
   readonly scale: string;
 };
 
@@ -31,7 +31,14 @@ export function titleBlock(x: Mm, top: Mm, width: Mm, scheme: Scheme, facts: Tit
   const title = paragraph(or(scheme.title), x, top + 2.6, width, { size: 5, face: 'semibold' }, 2);
   let y = top + 2.6 + title.height;
   marks.push(...title.marks);
-  const subject = paragraph(`${facts.subject}, ${facts.scale}`, x, y, width, { size: 4.2 }, 1);
+  const subject = paragraph(
+    [facts.subject, facts.scale].filter((t) => t !== '').join(', '),
+    x,
+    y,
+    width,
+    { size: 4.2 },
+    1,
+  );
   marks.push(...subject.marks);
   y += subject.height;
   if (scheme.address.trim() !== '') {
@@ -42,7 +49,7 @@ export function titleBlock(x: Mm, top: Mm, width: Mm, scheme: Scheme, facts: Tit
   y += 1.6;
   const rows: readonly (readonly (readonly [string, string])[])[] = [
     [
-      ['drawing', or(facts.number)],
+      ...(facts.number === null ? [] : [['drawing', or(facts.number)] as const]),
       ['revision', or(scheme.revision)],
       ['date', facts.date],
     ],

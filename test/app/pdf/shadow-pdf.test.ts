@@ -125,7 +125,7 @@ describe('what every page says', () => {
       expect(text).toContain('Scale 1:1000 on A3');
       expect(text).toMatch(/\d+ (March|June|December) 2025, \d\d:\d\d \(UTC\+0[01]:00\)/u);
       expect(text).toMatch(/sun −?\d+\.\d° high, azimuth \d+\.\d°, Europe\/London/u);
-      expect(text).toMatch(/added [\d.]+ m²/u);
+      expect(text).toMatch(/added [\d.]+\sm²/u);
       expect(text).toContain('true altitude, without refraction');
       expect(page.texts.some((t) => t.text === 'N')).toBe(true);
     }

@@ -1,0 +1,141 @@
+import type { Device, Scheme } from '../scheme/schema.ts';
+import type { Flow } from './flow.ts';
+import { fixed, plain } from './numerals.ts';
+import type { Report } from './report-input.ts';
+import { type Column, table } from './table.ts';
+
+type Shaped = Pick<Scheme['blocks'][number], 'box' | 'outline'>;
+
+const shape = (s: Shaped): string =>
+  s.box
+    ? `box at ${s.box.at.map(plain).join(', ')}; ${s.box.width} × ${s.box.depth}${s.box.turn === 0 ? '' : `; turned ${plain(s.box.turn)}°`}`
+    : (s.outline ?? []).map((p) => p.map(plain).join(', ')).join('; ');
+
+/** A device in words, with its own dimensions. */
+export function deviceWords(d: Device): string {
+  switch (d.kind) {
+    case 'overhang':
+      return `overhang ${d.depth} deep, ${d.above} above the head, runs on ${d.left} left and ${d.right} right, droops ${plain(d.tilt)}°`;
+    case 'fin':
+      return `fin ${d.side}, ${d.depth} deep, gap ${d.gap}, ${d.above} above and ${d.below} below`;
+    case 'louvres':
+      return `${d.count} blades ${d.depth} wide every ${d.spacing}, droop ${plain(d.tilt)}°, gap ${d.gap}, runs on ${d.left} left and ${d.right} right`;
+    case 'blind':
+      return `${d.place} blind, transmits ${d.transmittance}, reflects ${d.reflectance}${d.closedAbove === undefined ? '' : `, closed above ${d.closedAbove} W/m²`}${d.closedFrom === undefined ? '' : `, closed ${d.closedFrom} to ${d.closedTo ?? 'night'}`}`;
+  }
+}
+
+/** The scheme in full: whoever has these pages can work everything out again. Lengths in metres, angles in degrees. */
+export function inputsPages(flow: Flow, report: Report): void {
+  const { scheme } = report;
+  flow.turn('Inputs');
+  flow.say('Lengths in metres, angles in degrees, axes of the drawing: x east, y to the top of the drawing, z up.');
+  const put = (title: string, columns: readonly Column[], rows: readonly (readonly string[])[]): void => {
+    if (rows.length === 0) return;
+    flow.heading(title, 30);
+    table(flow, columns, rows);
+    flow.gap(2);
+  };
+  put(
+    'Blocks',
+    [
+      { head: 'id', width: 18 },
+      { head: 'name', width: 34 },
+      { head: 'standing', width: 22 },
+      { head: 'base', width: 16, align: 'end' },
+      { head: 'height', width: 18, align: 'end' },
+      { head: 'outline', width: 72 },
+    ],
+    scheme.blocks.map((b) => [b.id, b.name, b.standing, fixed(b.base, 2), fixed(b.height, 2), shape(b)]),
+  );
+  put(
+    'Rooms',
+    [
+      { head: 'id', width: 18 },
+      { head: 'name', width: 34 },
+      { head: 'use', width: 22 },
+      { head: 'block', width: 18 },
+      { head: 'floor', width: 16, align: 'end' },
+      { head: 'height', width: 16, align: 'end' },
+      { head: 'outline', width: 56 },
+    ],
+    scheme.rooms.map((r) => [r.id, r.name, r.use, r.block, fixed(r.floor, 2), fixed(r.height, 2), shape(r)]),
+  );
+  put(
+    'Windows',
+    [
+      { head: 'id', width: 18 },
+      { head: 'room', width: 18 },
+      { head: 'wall', width: 20 },
+      { head: 'from', width: 15, align: 'end' },
+      { head: 'sill', width: 15, align: 'end' },
+      { head: 'width', width: 16, align: 'end' },
+      { head: 'height', width: 16, align: 'end' },
+      { head: 'reveal', width: 16, align: 'end' },
+      { head: 'glass', width: 16 },
+      { head: 'devices', width: 30 },
+    ],
+    scheme.windows.map((w) => [
+      w.id,
+      w.room,
+      w.roof ? `roof at ${w.roof.at.map(plain).join(', ')}` : String(w.wall ?? ''),
+      fixed(w.from, 2),
+      fixed(w.sill, 2),
+      fixed(w.width, 2),
+      fixed(w.height, 2),
+      fixed(w.reveal, 2),
+      w.glass,
+      w.devices.join(', '),
+    ]),
+  );
+  put(
+    'Glass',
+    [
+      { head: 'id', width: 18 },
+      { head: 'name', width: 58 },
+      { head: 'g', width: 15, align: 'end' },
+      { head: 'U', width: 15, align: 'end' },
+      { head: 'light', width: 15, align: 'end' },
+      { head: 'panes', width: 16, align: 'end' },
+      { head: 'coating', width: 18, align: 'end' },
+      { head: 'frame', width: 25, align: 'end' },
+    ],
+    scheme.glass.map((g) => [
+      g.id,
+      g.name,
+      fixed(g.g, 2),
+      fixed(g.u, 2),
+      fixed(g.light, 2),
+      String(g.panes),
+      String(g.coating),
+      fixed(g.frame, 2),
+    ]),
+  );
+  put(
+    'Devices',
+    [
+      { head: 'id', width: 18 },
+      { head: 'what it is', width: 162 },
+    ],
+    scheme.devices.map((d) => [d.id, deviceWords(d)]),
+  );
+  put(
+    'Trees',
+    [
+      { head: 'id', width: 18 },
+      { head: 'name', width: 36 },
+      { head: 'at', width: 30 },
+      { head: 'height', width: 18, align: 'end' },
+      { head: 'spread', width: 18, align: 'end' },
+      { head: 'lets through, January to December', width: 60 },
+    ],
+    scheme.trees.map((t) => [
+      t.id,
+      t.name,
+      t.at.map(plain).join(', '),
+      fixed(t.height, 1),
+      fixed(t.spread, 1),
+      t.transmittance.join(' '),
+    ]),
+  );
+}

@@ -1,0 +1,156 @@
+import type { Finding, Verdict } from '../limits/finding.ts';
+import type { Mark } from './drawing.ts';
+import { counted, limitWords, margin, quantity } from './finding-words.ts';
+import type { Flow } from './flow.ts';
+import { HAIR, INK, SOFT } from './ink.ts';
+import { field, leading, line, rect, words } from './marks.ts';
+import { measure, READ } from './measure.ts';
+import type { Report } from './report-input.ts';
+import { titleBlock } from './title-block.ts';
+import { verdictColour, verdictDisc } from './verdict-disc.ts';
+import { bestWay } from './way-words.ts';
+
+/** Rooms whose bars the first page shows. */
+const BARS = 12;
+
+/** The first page: how many rooms are over, which is worst, what to do about them. */
+export function summaryPage(flow: Flow, report: Report): void {
+  const { result, scheme } = report;
+  flow.turn('Summary');
+  flow.say(result.title.trim() === '' ? 'Scheme without a title' : result.title, { size: 7.5, face: 'semibold' });
+  flow.say('Sun and summer heat in its rooms', { size: 5 });
+  flow.gap(5);
+  if (result.limitSet) counts(flow, report);
+  else
+    flow.say('No limit set was chosen: the report states what each room takes in and gives no verdict.', {
+      face: 'semibold',
+    });
+  flow.gap(4);
+  flow.say(verdictSentence(report));
+  flow.gap(3);
+  const worst = (result.limitSet ? worstOfRooms(result.findings) : highest(result.findings)).slice(0, BARS);
+  if (worst.length > 0) {
+    flow.heading(result.limitSet ? 'Rooms, worst first' : 'Rooms, highest first');
+    bars(flow, worst);
+    const rooms = new Set(result.findings.map((f) => f.room)).size;
+    if (rooms > worst.length)
+      flow.say(`and ${counted(rooms - worst.length, 'more room', 'more rooms')} in the table`, { colour: SOFT });
+  }
+  whatToDo(flow, report);
+  const facts = {
+    subject: 'Findings',
+    number: null,
+    date: report.drawn,
+    engine: result.engine,
+    hash: result.schemeHash,
+    scale: '',
+  };
+  const width = 110;
+  const { height } = titleBlock(0, 0, width, scheme, facts);
+  flow.need(height + 4);
+  const x = flow.x + flow.width - width;
+  flow.put(titleBlock(x, flow.y + flow.left - height, width, scheme, facts).marks, height);
+}
+
+/** The worst finding of each room, in the order of the findings. */
+export function worstOfRooms(findings: readonly Finding[]): readonly Finding[] {
+  const seen = new Set<string>();
+  return findings.filter((f) => {
+    if (seen.has(f.room)) return false;
+    seen.add(f.room);
+    return true;
+  });
+}
+
+/** Where nothing is judged: the rooms by what they take in, under the first metric of the findings. */
+const highest = (findings: readonly Finding[]): readonly Finding[] =>
+  findings.filter((f) => f.metric === findings[0]?.metric).toSorted((a, b) => b.value - a.value);
+
+function counts(flow: Flow, report: Report): void {
+  const { counts: n } = report.result;
+  const marks: Mark[] = [];
+  const entries: readonly (readonly [Verdict, number, string])[] = [
+    ['over', n.over, n.over === 1 ? 'room over' : 'rooms over'],
+    ['close', n.close, 'close'],
+    ['within', n.within, 'within'],
+  ];
+  let x = flow.x;
+  for (const [verdict, count, text] of entries) {
+    const y = flow.y + 8;
+    marks.push(...verdictDisc(verdict, x + 3, y - 3, 2.6));
+    const figure = String(count);
+    marks.push(words(figure, x + 9, y, { size: 10, face: 'semibold', colour: verdictColour(verdict) }));
+    const after = x + 11 + measure(figure, 10, 'semibold');
+    marks.push(words(text, after, y, { size: 4.6 }));
+    x = after + measure(text, 4.6) + 12;
+  }
+  flow.put(marks, 12);
+}
+
+function verdictSentence(report: Report): string {
+  const { findings, limitSet } = report.result;
+  const [first] = limitSet ? findings : highest(findings);
+  if (!first) return 'No room has a window whose sun could be worked out.';
+  if (!limitSet) return `Highest: room ${first.room} ${first.roomName}. ${first.reason}`;
+  if (first.verdict === 'over') return `Worst is room ${first.room} ${first.roomName}: ${first.reason}`;
+  return `No room is over. Nearest to its limit is room ${first.room} ${first.roomName}: ${first.reason}`;
+}
+
+/** One bar a room: its value against its own limit, which stands at the same place for all. */
+function bars(flow: Flow, findings: readonly Finding[]): void {
+  const most = Math.max(1.1, ...findings.map((f) => (f.limitValue ? f.value / f.limitValue : 0)));
+  const top = Math.max(...findings.map((f) => f.value), 1e-9);
+  const name = 62;
+  const numbers = 56;
+  const width = flow.width - name - numbers - 6;
+  for (const f of findings) {
+    const row = leading(READ) + 2.4;
+    flow.need(row);
+    const y = flow.y + 3.9;
+    const share = f.limitValue ? f.value / f.limitValue / most : f.value / top;
+    const x = flow.x + name;
+    const colour = verdictColour(f.verdict);
+    const marks: Mark[] = [
+      ...verdictDisc(f.verdict, flow.x + 2, y - READ * 0.35),
+      field(`${f.room} ${f.roomName}`.trim(), flow.x + 6, y, name - 9),
+      rect(x, y - 2.4, width, 2.4, { fill: HAIR }),
+      rect(x, y - 2.4, width * Math.min(1, share), 2.4, { fill: colour }),
+      words(quantity(f.value, f.unit), x + width + 26, y, { anchor: 'end', colour }),
+      words(f.limitValue === null ? '' : margin(f), x + width + 42, y, { anchor: 'end', colour }),
+      words(
+        f.limitValue === null ? '' : (quantity(f.limitValue, f.unit).split('\u00a0')[0] ?? ''),
+        x + width + numbers + 6,
+        y,
+        { anchor: 'end', colour: SOFT },
+      ),
+    ];
+    if (f.limitValue)
+      marks.push(line(x + width / most, y - 3.3, x + width / most, y + 0.8, { colour: INK, width: 0.35 }));
+    flow.put(marks, row);
+  }
+  const said = 'Bar: value as a share of the room’s own limit, which is the tick. Columns: value, margin, limit.';
+  flow.say(findings.some((f) => f.limitValue !== null) ? said : 'Bar: value as a share of the highest.', {
+    colour: SOFT,
+  });
+}
+
+function whatToDo(flow: Flow, report: Report): void {
+  const over = worstOfRooms(report.result.findings).filter((f) => f.verdict === 'over');
+  if (over.length === 0) return;
+  flow.heading('What to do');
+  const offered = over.flatMap((f) => {
+    const way = bestWay(report.ways, f);
+    return way ? [{ f, way }] : [];
+  });
+  for (const { f, way } of offered.slice(0, BARS)) {
+    flow.say(`Room ${f.room} ${f.roomName}: ${way}`);
+  }
+  if (offered.length === 0) {
+    flow.say(
+      `Each room that is over has a page of its own here with its worst day, hour by hour, and the window that brings most. Bring down what that window takes in when the limit is passed: shade outside it first, then glass with a lower g, then less of it.`,
+    );
+  }
+  flow.say(`Limits: ${[...new Set(over.map((f) => `${f.metricName}, ${limitWords(f)}`))].join('; ')}.`, {
+    colour: SOFT,
+  });
+}
