@@ -42,7 +42,7 @@ export function DayCurve({ curve, label, limit, at_min }: Props) {
             </text>
           </g>
         ))}
-        <text class="axis" x={LEFT - 6} y={11}>
+        <text class="axis" x={0} y={11}>
           W/m²
         </text>
         {width > 0 ? <Areas curve={curve} x={x} y={y} /> : null}

@@ -14,14 +14,21 @@ import { byRoom, type Group, inGroup, type RoomFindings } from './by-room.ts';
 import { RoomDetail } from './room-detail.tsx';
 import './findings.css';
 
-/** Where the limit stands on every bar, so that the marks line up down the list [share of its width]. */
-const LIMIT_AT = 0.64;
+/** Where the limit stands on every bar: one place, so that the marks line up down the list [share of its width]. */
+const MOST_LIMIT_AT = 0.64;
+const LEAST_LIMIT_AT = 0.3;
 
 const group = signal<Group>('all');
 /** The room that is open; null: none. */
 const open = signal<string | null>(null);
 
 const rooms = computed(() => byRoom(check.value?.value.findings ?? []));
+
+/** As far right as the highest value allows. */
+const limitAt = computed(() => {
+  const ratios = rooms.value.map(({ worst }) => (worst.limitValue ? worst.value / worst.limitValue : 0));
+  return Math.max(LEAST_LIMIT_AT, Math.min(MOST_LIMIT_AT, 1 / Math.max(1, ...ratios)));
+});
 
 /** The rooms, worst first, each with its working behind it. */
 export function Findings() {
@@ -151,8 +158,8 @@ function RoomItem({ of, result, scheme }: { of: RoomFindings; result: CheckResul
 }
 
 function Value({ finding }: { finding: Finding }) {
-  const decimals = decimalsFor(finding.value);
   const { verdict, margin } = finding;
+  const decimals = decimalsFor(finding.limitValue ?? finding.value);
   return (
     <>
       <span class="value number">
@@ -169,12 +176,12 @@ function Value({ finding }: { finding: Finding }) {
 function Bar({ finding }: { finding: Finding }) {
   const { value, limitValue } = finding;
   if (limitValue === null || limitValue <= 0) return null;
-  const wide = Math.min(1, (value / limitValue) * LIMIT_AT);
+  const wide = Math.min(1, (value / limitValue) * limitAt.value);
   return (
     <svg class="bar" width="100%" height="8" aria-hidden="true">
       <rect class="track" y="2" width="100%" height="4" />
       <rect class="fill" y="2" width={`${wide * 100}%`} height="4" />
-      <rect class="mark" x={`${LIMIT_AT * 100}%`} width="1.5" height="8" />
+      <rect class="mark" x={`${limitAt.value * 100}%`} width="1.5" height="8" />
     </svg>
   );
 }

@@ -52,10 +52,10 @@ function Limits({ of, chosen, onChoose }: { of: RoomFindings; chosen: string; on
             <Disc verdict={finding.verdict} />
             <span class="limit-name">{finding.metricName}</span>
             <span class="number">
-              {fixed(finding.value, decimalsFor(finding.value))} {finding.unit}
+              {fixed(finding.value, decimalsFor(finding.limitValue ?? finding.value))} {finding.unit}
             </span>
             <span class="number margin">
-              {finding.margin === null ? '' : signed(finding.margin, decimalsFor(finding.value))}
+              {finding.margin === null ? '' : signed(finding.margin, decimalsFor(finding.limitValue ?? finding.value))}
             </span>
           </button>
         </li>
@@ -132,16 +132,9 @@ function WorkingOf({ finding, result, scheme }: { finding: Finding; result: Chec
   return (
     <details class="working">
       <summary>{words.findings.working_}</summary>
-      <dl class="working-head">
-        <dt>{words.findings.method}</dt>
-        <dd>{working.method}</dd>
-        <dt>{words.findings.source}</dt>
-        <dd>{working.source}</dd>
-      </dl>
       <table>
         <tbody>
           {working.steps.map((step, i) => (
-            // biome-ignore lint/suspicious/noArrayIndexKey: steps have no id and never move
             <tr key={i}>
               <th scope="row">
                 {step.label}
@@ -154,6 +147,12 @@ function WorkingOf({ finding, result, scheme }: { finding: Finding; result: Chec
           ))}
         </tbody>
       </table>
+      <dl class="working-head">
+        <dt>{words.findings.method}</dt>
+        <dd>{working.method}</dd>
+        <dt>{words.findings.source}</dt>
+        <dd>{working.source}</dd>
+      </dl>
       <Button onPress={() => void copy()}>{isCopied ? words.findings.copied : words.findings.copy}</Button>
     </details>
   );

@@ -1,4 +1,4 @@
-import type { Point, Vec3 } from '../../core/plane/vec.ts';
+import { dot, type Point, type Vec3 } from '../../core/plane/vec.ts';
 
 /**
  * The one camera of massing and plan: parallel projection, so that lengths can be read off the screen.
@@ -14,9 +14,6 @@ export type Camera = {
 };
 
 export type Size = { readonly width: number; readonly height: number };
-/** Smallest box round what is drawn [m]. */
-export type Box3 = { readonly min: Vec3; readonly max: Vec3 };
-
 export const PLAN_rad = Math.PI / 2;
 const LEAST_TILT_rad = 0.12;
 const LEAST_SCALE = 0.02;
@@ -65,16 +62,29 @@ export function zoomAt(camera: Camera, size: Size, factor: number, x: number, y:
   return { ...pan({ ...camera, scale }, dx - dx * k, dy - dy * k) };
 }
 
-/** The camera with the same direction that shows a box whole, with room round it [px]. */
-export function fit(camera: Camera, size: Size, box: Box3, margin: number): Camera {
-  const centre: Vec3 = [(box.min[0] + box.max[0]) / 2, (box.min[1] + box.max[1]) / 2, (box.min[2] + box.max[2]) / 2];
-  const { right, up } = axesOf(camera);
-  const half: Vec3 = [box.max[0] - centre[0], box.max[1] - centre[1], box.max[2] - centre[2]];
-  const reach = (axis: Vec3): number =>
-    Math.abs(axis[0]) * half[0] + Math.abs(axis[1]) * half[1] + Math.abs(axis[2]) * half[2];
-  const wide = Math.max(1, size.width - 2 * margin) / Math.max(2 * reach(right), 1);
-  const high = Math.max(1, size.height - 2 * margin) / Math.max(2 * reach(up), 1);
-  return { ...camera, centre, scale: Math.min(MOST_SCALE, Math.max(LEAST_SCALE, Math.min(wide, high))) };
+/** Room kept free round what is shown [px]: instruments stand there. */
+export type Margins = { readonly top: number; readonly right: number; readonly bottom: number; readonly left: number };
+
+/** The camera with the same direction that shows some points whole and in the middle, with room round them. */
+export function framed(camera: Camera, size: Size, points: readonly Vec3[], room: Margins): Camera {
+  const { right, up, into } = axesOf(camera);
+  let [minX, maxX, minY, maxY] = [Infinity, -Infinity, Infinity, -Infinity];
+  for (const p of points) {
+    const x = dot(p, right);
+    const y = dot(p, up);
+    [minX, maxX] = [Math.min(minX, x), Math.max(maxX, x)];
+    [minY, maxY] = [Math.min(minY, y), Math.max(maxY, y)];
+  }
+  if (!(maxX >= minX)) return camera;
+  const wide = Math.max(1, size.width - room.left - room.right) / Math.max(maxX - minX, 1);
+  const high = Math.max(1, size.height - room.top - room.bottom) / Math.max(maxY - minY, 1);
+  const scale = Math.min(MOST_SCALE, Math.max(LEAST_SCALE, Math.min(wide, high)));
+  const x = (minX + maxX) / 2 + (room.right - room.left) / 2 / scale;
+  const y = (minY + maxY) / 2 + (room.top - room.bottom) / 2 / scale;
+  // The centre lies on the ground, so that turning and zooming keep hold of the place looked at.
+  const away = -(up[2] * y) / into[2];
+  const at = (i: 0 | 1 | 2): number => right[i] * x + up[i] * y + into[i] * away;
+  return { ...camera, centre: [at(0), at(1), at(2)], scale };
 }
 
 /** The two directions that the desk offers: a view into the scheme and a plan with the drawing's north up. */

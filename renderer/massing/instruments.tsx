@@ -6,7 +6,7 @@ import { selection } from '../state/selection.ts';
 import { fixed, percent } from '../ui/format.ts';
 import { words } from '../ui/words.ts';
 import { axesOf, barLength, project } from './camera.ts';
-import { windowCorners } from './solids-layer.ts';
+import { selectionEdges, windowCorners } from './solids-layer.ts';
 import { camera, size, stage } from './view-state.ts';
 
 const BAR_MOST_px = 120;
@@ -78,6 +78,9 @@ export function Key() {
           ) : null}
         </>
       )}
+      {moment.value === null || moment.value.value.windows.length === 0 ? null : (
+        <Entry swatch="glass" text={key.glass} />
+      )}
       {standings.has('proposed') ? <Entry swatch={isAfter ? 'proposed' : 'removed'} text={key.proposed} /> : null}
       {standings.has('removed') ? <Entry swatch={isAfter ? 'removed' : 'existing'} text={key.removed} /> : null}
     </dl>
@@ -125,17 +128,42 @@ const tag = computed<Tag | null>(() => {
     if (w === undefined) return null;
     const lit = moment.value?.value.windows.find((other) => other.window === id)?.sunlit;
     const corners = windowCorners(w);
-    return { at: corners[3] as Vec3, title: w.id, line: lit === undefined ? '' : words.massing.inSun(percent(lit)) };
+    return {
+      at: between(corners[2] as Vec3, corners[3] as Vec3),
+      title: w.id,
+      line: lit === undefined ? '' : words.massing.inSun(percent(lit)),
+    };
   }
   return null;
 });
+
+/** Halfway along the head of a window. */
+const between = (a: Vec3, b: Vec3): Vec3 => [(a[0] + b[0]) / 2, (a[1] + b[1]) / 2, (a[2] + b[2]) / 2];
 
 const middle = (ring: readonly (readonly [number, number])[]): readonly [number, number] => {
   const sum = ring.reduce(([x, y], p): [number, number] => [x + p[0], y + p[1]], [0, 0] as [number, number]);
   return [sum[0] / ring.length, sum[1] / ring.length];
 };
 
-/** A small label at what is selected. */
+/** The edges of what is selected, over the drawing. */
+export function SelectionOutline() {
+  const shapes = model.value?.value;
+  if (shapes === undefined) return null;
+  const place = (p: Vec3): string => {
+    const [x, y] = project(camera.value, size.value, p);
+    return `${x.toFixed(1)} ${y.toFixed(1)}`;
+  };
+  const path = selectionEdges(shapes, selection.value)
+    .map(([a, b]) => `M${place(a)}L${place(b)}`)
+    .join('');
+  return path === '' ? null : (
+    <svg class="selection-outline" aria-hidden="true">
+      <path d={path} />
+    </svg>
+  );
+}
+
+/** A small label above what is selected. */
 export function SelectionTag() {
   const shown = tag.value;
   if (shown === null || scheme.value === null) return null;

@@ -12,9 +12,9 @@ import { listenToPointer, pressKey } from './gestures.ts';
 import { fillRegions, hatchRegions, hatchSpacing, outlineRegions } from './ground-layer.ts';
 import { readPalette } from './palette.ts';
 import { MassingScene } from './scene.ts';
-import { selectionStrokes, solidsLayer } from './solids-layer.ts';
+import { solidsLayer } from './solids-layer.ts';
 import { Strokes } from './strokes.ts';
-import { camera, showAll, size, stage } from './view-state.ts';
+import { camera, lookAs, size, stage } from './view-state.ts';
 
 /** The ground that shadows are drawn on [m]. */
 const GROUND_m = 0;
@@ -47,7 +47,6 @@ function drive(scene: MassingScene): () => void {
       scene.setFaces('solids', layer.faces);
       scene.setStrokes('edges', layer.edges);
       scene.setStrokes('dashes', layer.dashes);
-      scene.setStrokes('selection', selectionStrokes(shapes, selection.value, palette));
     }),
     effect(() => {
       theme.value;
@@ -117,7 +116,7 @@ export function MassingCanvas({ onUnavailable }: Props) {
       const title = model.value === null ? null : untracked(() => scheme.value?.title);
       if (title === null || title === wasFitted) return;
       wasFitted = title;
-      untracked(showAll);
+      untracked(() => lookAs('massing'));
     });
     const stopPointer = listenToPointer(canvas, (x, y, event) => {
       const owner = scene.pick(x, y);
@@ -139,15 +138,17 @@ export function MassingCanvas({ onUnavailable }: Props) {
     };
   }, [onUnavailable]);
   return (
-    <canvas
-      ref={ref}
+    <div
       class="massing-canvas"
+      // biome-ignore lint/a11y/noNoninteractiveTabindex: the drawing takes keys of its own, as its role says
       tabIndex={0}
-      role="img"
+      role="application"
       aria-label={words.massing.canvas}
       onKeyDown={(event) => {
         if (pressKey(event)) event.preventDefault();
       }}
-    />
+    >
+      <canvas ref={ref} class="massing-canvas" />
+    </div>
   );
 }

@@ -5,8 +5,9 @@ import { Button } from '../ui/button.tsx';
 import { Choice } from '../ui/choice.tsx';
 import { AllIcon, MinusIcon, PlusIcon } from '../ui/icons.tsx';
 import { words } from '../ui/words.ts';
+import { Caption } from './caption.tsx';
 import { zoomBy } from './gestures.ts';
-import { Key, NorthPoint, ScaleBar, SelectionTag } from './instruments.tsx';
+import { Key, NorthPoint, ScaleBar, SelectionOutline, SelectionTag } from './instruments.tsx';
 import { MassingCanvas } from './massing-canvas.tsx';
 import { PlanDrawing } from './plan-drawing.tsx';
 import { isPlan, lookAs, showAll, stage } from './view-state.ts';
@@ -38,10 +39,18 @@ export function Massing() {
         ) : null}
       </div>
       <Key />
-      {has3d ? <SelectionTag /> : null}
+      {has3d ? (
+        <>
+          <SelectionOutline />
+          <SelectionTag />
+        </>
+      ) : null}
       <div class="massing-foot">
         {has3d ? <ScaleBar /> : null}
-        <MassingNote graphics={graphics} />
+        <div class="captions">
+          <MassingNote graphics={graphics} />
+          <Caption />
+        </div>
         {has3d ? <NorthPoint /> : null}
       </div>
     </section>

@@ -22,7 +22,7 @@ export function PlanDrawing() {
   const change = moment.value?.value.shadows ?? null;
   const isAfter = stage.value === 'after';
   return (
-    <svg class="massing-canvas plan-drawing" viewBox={view} role="group" aria-label={words.massing.plan}>
+    <svg class="massing-canvas plan-drawing" viewBox={view} aria-label={words.massing.plan}>
       <defs>
         <pattern id="added-hatch" width="1" height="1" patternUnits="userSpaceOnUse" patternTransform="rotate(-45)">
           <path class="hatch-line" d="M0 0.5H1" />

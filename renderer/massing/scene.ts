@@ -21,18 +21,7 @@ import type { Rgb } from './palette.ts';
 import type { Strokes } from './strokes.ts';
 
 /** The layers of the drawing from the ground up. Ground layers are painted in this order; solids hide what lies behind them. */
-const ORDER = [
-  'plot',
-  'shadow',
-  'added',
-  'hatch',
-  'boundary',
-  'solids',
-  'faceShadow',
-  'edges',
-  'dashes',
-  'selection',
-] as const;
+const ORDER = ['plot', 'shadow', 'added', 'hatch', 'boundary', 'solids', 'faceShadow', 'edges', 'dashes'] as const;
 export type Layer = (typeof ORDER)[number];
 
 /** The camera stands this far back: outside any site [m]. */
@@ -59,7 +48,6 @@ const materials = (): { readonly [L in Layer]: Material } => ({
   }),
   edges: new LineBasicMaterial({ vertexColors: true }),
   dashes: new LineDashedMaterial({ vertexColors: true }),
-  selection: new LineBasicMaterial({ vertexColors: true, depthTest: false }),
 });
 
 /**

@@ -36,11 +36,7 @@ export function wallTint(tints: { roof: Rgb; wall: Rgb }, nx: number, ny: number
 const lifted = (ring: readonly Point[], z: number): Vec3[] => ring.map(([x, y]): Vec3 => [x, y, z]);
 
 function edgesOf(solid: Solid, strokes: Strokes, colour: Rgb): void {
-  const low = lifted(solid.outline, solid.base_m);
-  const high = lifted(solid.outline, solid.top_m);
-  strokes.loop(low, colour);
-  strokes.loop(high, colour);
-  for (let i = 0; i < low.length; i++) strokes.add(low[i] as Vec3, high[i] as Vec3, colour);
+  for (const [a, b] of prismEdges(solid.outline, solid.base_m, solid.top_m)) strokes.add(a, b, colour);
 }
 
 function drawSolid(solid: Solid, tints: Tints, layer: SolidsLayer): void {
@@ -74,14 +70,14 @@ export function windowCorners(w: WindowForm, proud_m = PROUD_m): readonly Vec3[]
   return [o, r, along(r, w.up, w.height_m), along(o, w.up, w.height_m)];
 }
 
-function drawWindow(w: WindowForm, sunlit: number, isSelected: boolean, palette: Palette, layer: SolidsLayer): void {
+function drawWindow(w: WindowForm, sunlit: number, palette: Palette, layer: SolidsLayer): void {
   const owner = { kind: 'window', id: w.id } as const;
   const glass = mix(palette['glass-shade'], palette['glass-lit'], sunlit);
   layer.faces.convex(windowCorners(w), glass, owner);
-  layer.edges.loop(windowCorners(w, PROUD_m * 1.5), isSelected ? palette.accent : palette.ink);
+  layer.edges.loop(windowCorners(w, PROUD_m * 1.5), mix(palette.ink, palette['proposed-wall'], 0.35));
   for (const shader of w.shaders) {
     layer.faces.convex(shader.corners, palette.device, owner);
-    layer.edges.loop(shader.corners, palette.ink);
+    layer.edges.loop(shader.corners, mix(palette.ink, palette['proposed-wall'], 0.25));
   }
 }
 
@@ -97,8 +93,7 @@ export type SolidsAsk = {
 /** Everything that stands, as one list of flat faces and one of ink edges; what does not stand at the stage is dashed. */
 export function solidsLayer({ model, stage, selection, sunlit, palette }: SolidsAsk): SolidsLayer {
   const layer: SolidsLayer = { faces: new Faces(), edges: new Strokes(), dashes: new Strokes() };
-  const isSelected = (kind: Selection['kind'], id: string): boolean =>
-    selection?.kind === kind && selection.ids.includes(id);
+  const isChosen = (id: string): boolean => selection?.kind === 'block' && selection.ids.includes(id);
   const standing = new Set<string>();
   for (const solid of model.solids) {
     const tints = tintsOf(solid.standing, palette);
@@ -107,16 +102,11 @@ export function solidsLayer({ model, stage, selection, sunlit, palette }: Solids
       continue;
     }
     standing.add(solid.id);
-    drawSolid(solid, isSelected('block', solid.id) ? chosen(tints, palette) : tints, layer);
+    drawSolid(solid, isChosen(solid.id) ? chosen(tints, palette) : tints, layer);
   }
   for (const w of model.windows) {
     if (!standing.has(w.block)) continue;
-    const picked =
-      isSelected('window', w.id) ||
-      isSelected('room', w.room) ||
-      isSelected('glass', w.glass.id) ||
-      w.shaders.some((s) => isSelected('device', s.device));
-    drawWindow(w, stage === 'after' ? (sunlit.get(w.id) ?? 0) : 0, picked, palette, layer);
+    drawWindow(w, stage === 'after' ? (sunlit.get(w.id) ?? 0) : 0, palette, layer);
   }
   for (const tree of model.trees) crown(tree, palette, layer.faces, layer.edges);
   return layer;
@@ -128,26 +118,31 @@ const chosen = (tints: Tints, palette: Palette): Tints => ({
   edge: palette.accent,
 });
 
-/** Outlines that are drawn over everything: the room or windows that are selected, so that they show through what hides them. */
-export function selectionStrokes(model: Model, selection: Selection | null, palette: Palette): Strokes {
-  const strokes = new Strokes();
-  if (selection === null) return strokes;
+/** Edges of what is selected, end to end: drawn over everything, so that they show through what hides them. */
+export function selectionEdges(model: Model, selection: Selection | null): readonly (readonly [Vec3, Vec3])[] {
+  if (selection === null) return [];
   const ids = new Set(selection.ids);
   if (selection.kind === 'room') {
-    for (const room of model.rooms) {
-      if (!ids.has(room.id)) continue;
-      const low = lifted(room.outline, room.floor_m);
-      const high = lifted(room.outline, room.floor_m + room.height_m);
-      strokes.loop(low, palette.accent);
-      strokes.loop(high, palette.accent);
-      for (let i = 0; i < low.length; i++) strokes.add(low[i] as Vec3, high[i] as Vec3, palette.accent);
-    }
-  }
-  if (selection.kind === 'window') {
-    for (const w of model.windows) if (ids.has(w.id)) strokes.loop(windowCorners(w), palette.accent);
+    return model.rooms
+      .filter((room) => ids.has(room.id))
+      .flatMap((room) => prismEdges(room.outline, room.floor_m, room.floor_m + room.height_m));
   }
   if (selection.kind === 'block') {
-    for (const solid of model.solids) if (ids.has(solid.id)) edgesOf(solid, strokes, palette.accent);
+    return model.solids.filter((s) => ids.has(s.id)).flatMap((s) => prismEdges(s.outline, s.base_m, s.top_m));
   }
-  return strokes;
+  const isChosen = (w: WindowForm): boolean =>
+    (selection.kind === 'window' && ids.has(w.id)) ||
+    (selection.kind === 'glass' && ids.has(w.glass.id)) ||
+    (selection.kind === 'device' && w.shaders.some((shader) => ids.has(shader.device)));
+  return model.windows.filter(isChosen).flatMap((w) => loopEdges(windowCorners(w)));
+}
+
+const loopEdges = (corners: readonly Vec3[]): readonly (readonly [Vec3, Vec3])[] =>
+  corners.map((corner, i) => [corner, corners[(i + 1) % corners.length] as Vec3]);
+
+function prismEdges(outline: readonly Point[], low_m: number, high_m: number): readonly (readonly [Vec3, Vec3])[] {
+  const low = lifted(outline, low_m);
+  const high = lifted(outline, high_m);
+  const upright = low.map((corner, i): readonly [Vec3, Vec3] => [corner, high[i] as Vec3]);
+  return [...loopEdges(low), ...loopEdges(high), ...upright];
 }

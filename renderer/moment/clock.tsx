@@ -4,10 +4,10 @@ import { civilOf } from '../../core/sun/civil.ts';
 import { seasons } from '../../core/sun/seasons.ts';
 import { scheme } from '../state/document.ts';
 import { civil, instant, minutesOf, moveDays, setDate, setTime, timeOf } from '../state/moment.ts';
-import { day, moment } from '../state/studies.ts';
+import { day } from '../state/studies.ts';
 import { Button } from '../ui/button.tsx';
 import { Choice } from '../ui/choice.tsx';
-import { dayAndMonth, degrees } from '../ui/format.ts';
+import { dayAndMonth } from '../ui/format.ts';
 import { BackIcon, ForwardIcon } from '../ui/icons.tsx';
 import { words } from '../ui/words.ts';
 import './clock.css';
@@ -58,7 +58,7 @@ export function Clock() {
       <Choice label={words.moment.presets} options={presets.value} value={civil.value.date} onChoose={setDate} />
       <DaySlider />
       <TimeField />
-      <SunLine />
+      <ClockNote />
     </section>
   );
 }
@@ -135,28 +135,12 @@ function TimeField() {
   );
 }
 
-/** Where the sun stands, and how the clock was read where it was put forward or back. */
-function SunLine() {
-  const at = instant.value;
-  const zone = scheme.value?.site.zone;
-  const sun = moment.value?.value.sun;
-  if (at === null || zone === undefined) return null;
-  const { offset } = civilOf(at.instant_ms, zone);
-  return (
-    <p class="sun-line">
-      <span class="soft">UTC{offset}</span>
-      {sun === undefined ? null : (
-        <span>
-          {sun.altitude_deg > 0
-            ? words.moment.sunUp(degrees(sun.altitude_deg, 1), degrees(sun.azimuth_deg, 1))
-            : words.moment.sunDown(degrees(sun.azimuth_deg, 1), degrees(sun.altitude_deg, 1))}
-        </span>
-      )}
-      {at.note === null ? null : (
-        <span class="clock-note" role="status">
-          {at.note}
-        </span>
-      )}
+/** How the clock was read where it was put forward or back. */
+function ClockNote() {
+  const note = instant.value?.note ?? null;
+  return note === null ? null : (
+    <p class="clock-note" role="status">
+      {note}
     </p>
   );
 }

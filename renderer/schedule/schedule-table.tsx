@@ -44,9 +44,9 @@ export function ScheduleTable<R extends Row>({ schedule, label }: { schedule: Sc
 
   const [from, to] = [Math.min(range[0], rows.length), Math.min(range[1], rows.length)];
   return (
-    // biome-ignore lint/a11y/noStaticElementInteractions: only scrolling is watched here
     <div class="schedule-scroller" ref={scroller} onScroll={look}>
       <table
+        // biome-ignore lint/a11y/noNoninteractiveElementToInteractiveRole: a grid of data is a table
         role="grid"
         aria-label={label}
         aria-rowcount={rows.length + 1}
@@ -85,7 +85,7 @@ export function ScheduleTable<R extends Row>({ schedule, label }: { schedule: Sc
 }
 
 const Gap = ({ rows, columns }: { rows: number; columns: number }) => (
-  <tr aria-hidden="true" style={{ height: `${rows * ROW_px}px` }}>
+  <tr style={{ height: `${rows * ROW_px}px` }}>
     <td colSpan={columns} />
   </tr>
 );

@@ -2,6 +2,8 @@ import { effect, signal } from '@preact/signals';
 import type { FileId, Opened } from '../../app/contract/host.ts';
 import type { Fault } from '../../core/scheme/fault.ts';
 import { DEFAULT_YEAR, type Scheme } from '../../core/scheme/schema.ts';
+import { civilOf } from '../../core/sun/civil.ts';
+import { seasons } from '../../core/sun/seasons.ts';
 import { desktopBridge, host } from '../bridge/host.ts';
 import { canSaveOver } from '../bridge/page-files.ts';
 import { hands } from '../jobs/hands.ts';
@@ -63,7 +65,8 @@ function show(scheme: Scheme, where: { id: FileId | null; name: string }, warnin
 
 /** The solstice of the site's summer, where gains and shadows are looked at first. */
 function firstDate(scheme: Scheme): string {
-  return `${scheme.year ?? DEFAULT_YEAR}-${scheme.site.latitude < 0 ? '12-21' : '06-21'}`;
+  const { juneSolstice_ms, decemberSolstice_ms } = seasons(scheme.year ?? DEFAULT_YEAR);
+  return civilOf(scheme.site.latitude < 0 ? decemberSolstice_ms : juneSolstice_ms, scheme.site.zone).date;
 }
 
 export const takeOpened = (opened: Opened): void => afterLeaving(() => void take(opened.name, opened.bytes, opened.id));

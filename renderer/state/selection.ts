@@ -20,7 +20,10 @@ export function select(kind: Kind, id: string): void {
 /** Adds to the selection or takes away from it; another kind starts a new one. */
 export function toggle(kind: Kind, id: string): void {
   const now = selection.value;
-  if (now === null || now.kind !== kind) return select(kind, id);
+  if (now === null || now.kind !== kind) {
+    select(kind, id);
+    return;
+  }
   const ids = now.ids.includes(id) ? now.ids.filter((other) => other !== id) : [...now.ids, id];
   selection.value = ids.length === 0 ? null : { kind, ids };
 }

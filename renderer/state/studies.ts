@@ -78,14 +78,21 @@ export type YearSubject = {
   readonly windows: readonly string[];
 };
 
-/** Whose year the strip shows: the selected window, the windows of the selected room, block, glass or device, or all. */
+/**
+ * Whose year the strip shows: the selected window or the windows of the selected room; else the window that brings most into the
+ * worst room; before the first check, all of them.
+ */
 export const yearSubject = computed<YearSubject | null>(() => {
   const shapes = model.value?.value;
   const source = scheme.value;
   if (shapes === undefined || source === null || shapes.windows.length === 0) return null;
   const id = selection.value?.ids.at(-1);
   const kind = selection.value?.kind;
-  const all: YearSubject = { kind: 'all', id: '', windows: shapes.windows.map((w) => w.id) };
+  const worst = check.value?.value.findings[0]?.through?.window;
+  const all: YearSubject =
+    worst !== undefined && shapes.windows.some((w) => w.id === worst)
+      ? { kind: 'window', id: worst, windows: [worst] }
+      : { kind: 'all', id: '', windows: shapes.windows.map((w) => w.id) };
   if (id === undefined) return all;
   const of = (windows: readonly string[], as: 'window' | 'room'): YearSubject =>
     windows.length === 0 ? all : { kind: as, id, windows };

@@ -1,4 +1,4 @@
-import { moveFocus } from './move-focus.ts';
+import { useId } from 'preact/hooks';
 
 export type Option<T extends string> = { readonly value: T; readonly text: string; readonly tip?: string };
 
@@ -9,26 +9,26 @@ type Props<T extends string> = {
   readonly onChoose: (value: T) => void;
 };
 
-/** One of a few, side by side: arrow keys move between them, as in any set of radio buttons. */
+/** One of a few, side by side: radio buttons in the shape of buttons. */
 export function Choice<T extends string>({ label, options, value, onChoose }: Props<T>) {
-  const current = options.some((o) => o.value === value) ? value : options[0]?.value;
+  const name = useId();
   return (
-    <div class="group" role="radiogroup" aria-label={label} onKeyDown={(event) => moveFocus(event, '[role="radio"]')}>
+    <fieldset class="group choice">
+      <legend class="unseen">{label}</legend>
       {options.map((option) => (
-        <button
-          key={option.value}
-          type="button"
-          role="radio"
-          class={option.value === value ? 'button chosen' : 'button'}
-          aria-checked={option.value === value}
-          tabIndex={option.value === current ? 0 : -1}
-          title={option.tip}
-          aria-label={option.tip}
-          onClick={() => onChoose(option.value)}
-        >
+        <label key={option.value} class="button" title={option.tip}>
+          <input
+            type="radio"
+            class="unseen"
+            name={name}
+            value={option.value}
+            checked={option.value === value}
+            aria-label={option.tip}
+            onChange={() => onChoose(option.value)}
+          />
           {option.text}
-        </button>
+        </label>
       ))}
-    </div>
+    </fieldset>
   );
 }

@@ -38,7 +38,7 @@ export function Menu({ text, items, off = false }: Props) {
     all[(at + step + all.length) % all.length]?.focus();
   };
   return (
-    <div class="menu" ref={root} onKeyDown={onKeyDown}>
+    <div class="menu" ref={root} role="none" onKeyDown={onKeyDown}>
       <button
         type="button"
         class="button"

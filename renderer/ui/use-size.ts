@@ -3,7 +3,7 @@ import { useLayoutEffect, useRef, useState } from 'preact/hooks';
 
 /** The size of an element as it is laid out [px], for drawings whose text must not scale with them. */
 export function useSize<E extends Element>(): {
-  readonly ref: RefObject<E>;
+  readonly ref: RefObject<E | null>;
   readonly width: number;
   readonly height: number;
 } {

@@ -1,4 +1,4 @@
-import { useLayoutEffect, useRef, useState } from 'preact/hooks';
+import { useLayoutEffect, useRef } from 'preact/hooks';
 import { NO_SUCH_TIME, SUN_DOWN, type SunYear } from '../../core/study/sun-year.ts';
 import { civilOf } from '../../core/sun/civil.ts';
 import { seasons } from '../../core/sun/seasons.ts';
@@ -16,7 +16,7 @@ import './year-strip.css';
 
 const LEFT = 46;
 const RIGHT = 14;
-const TOP = 20;
+const TOP = 22;
 const FOOT = 22;
 
 /** A picture of the whole year of direct sun on what is selected; it is also the clock. */
@@ -136,14 +136,29 @@ function Strip({ year, isStale }: { year: SunYear; isStale: boolean }) {
           <MonthTicks year={year} x={x} foot={TOP + inner.height} />
           <YearMarks year={year} x={x} top={TOP} foot={TOP + inner.height} />
           {at < 0 ? null : (
-            <g class="now">
-              <path d={`M${x(at)} ${TOP}V${TOP + inner.height}`} />
-              <circle cx={x(at)} cy={y(Math.min(to_min, Math.max(from_min, minutesOf(civil.value.time))))} r="5.5" />
-            </g>
+            <Now
+              x={x(at)}
+              y={y(Math.min(to_min, Math.max(from_min, minutesOf(civil.value.time))))}
+              foot={TOP + inner.height}
+            />
           )}
         </svg>
       )}
     </div>
+  );
+}
+
+/** The moment, drawn twice so that it stands out on any colour. */
+function Now({ x, y, foot }: { x: number; y: number; foot: number }) {
+  return (
+    <>
+      {['halo', 'now'].map((layer) => (
+        <g key={layer} class={layer}>
+          <path d={`M${x} ${TOP}V${y - 6}M${x} ${y + 6}V${foot}`} />
+          <circle cx={x} cy={y} r="6" />
+        </g>
+      ))}
+    </>
   );
 }
 
@@ -208,33 +223,36 @@ function MonthTicks({ year, x, foot }: { year: SunYear; x: (index: number) => nu
   );
 }
 
+/** Nearer marks than this turn their labels away from one another [px]. */
+const CROWDED_px = 84;
+
 /** Solstices, equinoxes and the dates on which the clock is moved. */
 function YearMarks({ year, x, top, foot }: { year: SunYear; x: (index: number) => number; top: number; foot: number }) {
   const s = seasons(year.year);
   const indexOf = (ms: number): number => year.dates.indexOf(civilOf(ms, year.zone).date);
+  const moves = clockMoves(year).map(({ index, by_min }) => {
+    const text = words.year.clocks(`${signed(by_min / 60, by_min % 60 === 0 ? 0 : 1)} h`);
+    return { at: x(index - 0.5), text, isMove: true };
+  });
+  const season = (ms: number, text: string) => ({ at: x(indexOf(ms)), text, isMove: false });
   const marks = [
-    { index: indexOf(s.marchEquinox_ms), text: words.year.equinox, above: true },
-    { index: indexOf(s.juneSolstice_ms), text: words.year.solstice, above: true },
-    { index: indexOf(s.septemberEquinox_ms), text: words.year.equinox, above: true },
-    { index: indexOf(s.decemberSolstice_ms), text: words.year.solstice, above: true },
-    ...clockMoves(year).map(({ index, by_min }) => ({
-      index,
-      text: words.year.clocks(`${signed(by_min / 60, by_min % 60 === 0 ? 0 : 1)} h`),
-      above: false,
-    })),
-  ];
+    season(s.marchEquinox_ms, words.year.equinox),
+    season(s.juneSolstice_ms, words.year.solstice),
+    season(s.septemberEquinox_ms, words.year.equinox),
+    season(s.decemberSolstice_ms, words.year.solstice),
+    ...moves,
+  ].sort((a, b) => a.at - b.at);
+  const end = x(year.dates.length);
   return (
     <>
-      {marks.map(({ index, text, above }) => {
-        const atEnd = index > year.dates.length * 0.9;
+      {marks.map(({ at, text, isMove }, i) => {
+        const isBefore = (marks[i + 1]?.at ?? end) - at < CROWDED_px;
+        const isAfter = at - (marks[i - 1]?.at ?? -end) < CROWDED_px;
+        const anchor = isBefore ? 'end' : isAfter ? 'start' : 'middle';
         return (
-          <g key={`${index}${text}`} class={above ? 'mark' : 'mark clock-move'}>
-            <path d={`M${x(above ? index : index - 0.5)} ${top}V${foot}`} />
-            <text
-              x={x(index) + (above ? 0 : 5)}
-              y={above ? top - 6 : top + 15}
-              text-anchor={atEnd && above ? 'end' : above ? 'middle' : 'start'}
-            >
+          <g key={`${at}${text}`} class={isMove ? 'mark clock-move' : 'mark'}>
+            <path d={`M${at} ${top - 4}V${foot}`} />
+            <text x={at + (anchor === 'end' ? 2 : anchor === 'start' ? -2 : 0)} y={top - 7} text-anchor={anchor}>
               {text}
             </text>
           </g>
