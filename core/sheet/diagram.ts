@@ -7,6 +7,7 @@ import { measure, READ } from './measure.ts';
 import { area, fixed, percent } from './numerals.ts';
 import { plan } from './plan.ts';
 import { inFrame, onPage, type PlanView } from './plan-view.ts';
+import { treeShadows } from './tree-shadow.ts';
 import type { ShadowMoment } from './shadow-moment.ts';
 
 /** Whether a shadow runs on past the frame. */
@@ -43,20 +44,20 @@ export function caption(moment: ShadowMoment, zone: string, star: boolean, x: Mm
   });
   if (moment.change) {
     for (const a of moment.areas.slice(0, 3)) {
-      put(`${a.name || a.id}: ${percent(a.sunlitAfter)} in sun, ${percent(a.sunlitBefore)} before`);
+      put(`${a.name || a.id}: ${percent(a.after.share)} in sun, ${percent(a.before.share)} before`);
     }
     if (moment.areas.length > 3) put(`and ${moment.areas.length - 3} more areas`, { colour: SOFT });
   }
-  if (moment.note) put(moment.note, { colour: SOFT, face: 'italic' });
+  for (const note of moment.notes) put(note, { colour: SOFT, face: 'italic' });
   return { marks, height: y - top };
 }
 
 /** One moment: its plan in a frame and its caption under it. */
 export function diagram(view: PlanView, model: Model, zone: string, moment: ShadowMoment): readonly Mark[] {
   const { x, y, width, height } = view.frame;
-  const marks: Mark[] = [...plan(view, model, moment.change)];
-  const low = moment.altitude_deg > 0 ? 'low sun, left out by the scheme' : 'sun below the horizon';
-  if (!moment.change) marks.push(...tag(low, x, y + height));
+  const crowns = moment.change ? treeShadows(model, moment.azimuth_deg, moment.altitude_deg) : [];
+  const marks: Mark[] = [...plan(view, model, moment.change, crowns)];
+  if (!moment.change) marks.push(...tag('sun below the horizon', x, y + height));
   marks.push(rect(x, y, width, height, { stroke: FRAME }));
   const star = moment.change !== null && runsOn(view, moment.change.added);
   marks.push(...caption(moment, zone, star, x, y + height + 2, width).marks);

@@ -170,11 +170,18 @@ function labelPlace(ring: readonly (readonly [Mm, Mm])[]): readonly [Mm, Mm] {
 
 /**
  * The plan of one moment inside its frame: shadows, boundary, amenity areas, trees and blocks, cut at the frame.
+ * @param crowns  outlines of the shadows of tree crowns
  * @param change  null draws the scheme without shadows
  */
-export function plan(view: PlanView, model: Model, change: ShadowChange | null): readonly Mark[] {
+export function plan(
+  view: PlanView,
+  model: Model,
+  change: ShadowChange | null,
+  crowns: readonly Ring[] = [],
+): readonly Mark[] {
   const { x, y, width, height } = view.frame;
   const marks: Mark[] = [...(change ? shadows(view, change) : [])];
+  for (const crown of crowns) marks.push(outline(view, crown, { stroke: TREE_LINE }));
   if (model.boundary) marks.push(outline(view, model.boundary, { stroke: BOUNDARY_LINE }));
   for (const r of model.receptors) if (r.kind === 'area') marks.push(outline(view, r.outline, { stroke: AREA_LINE }));
   marks.push(...blocks(view, model.solids));

@@ -57,7 +57,7 @@ export function shadowKey(
     entries.push({ text: 'amenity area', draw: box({ stroke: AREA_LINE }) });
   if (model.trees.length > 0) {
     entries.push({
-      text: 'tree crown, shadow not drawn',
+      text: 'tree crown and outline of its shadow',
       draw: (y) => [{ kind: 'circle', at: [x + SWATCH / 2, y + 2], radius: 2, stroke: TREE_LINE }],
     });
   }

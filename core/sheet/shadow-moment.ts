@@ -1,15 +1,12 @@
+import type { AreaSun } from '../shade/area-sunlit.ts';
 import type { ShadowChange } from '../shade/shadow.ts';
 
 /** How much of an amenity area lies in sun at a moment, before and after; ground under buildings is not part of it. */
-export type AreaSun = {
+export type AreaBeforeAfter = {
   readonly id: string;
   readonly name: string;
-  /** Open ground of the area, before and after [m²]. */
-  readonly openBefore_m2: number;
-  readonly openAfter_m2: number;
-  /** Share of the open ground of its own stage that lies in sun, 0..1. */
-  readonly sunlitBefore: number;
-  readonly sunlitAfter: number;
+  readonly before: AreaSun;
+  readonly after: AreaSun;
 };
 
 /** One diagram of a shadow study: worked out elsewhere, drawn here. */
@@ -23,9 +20,9 @@ export type ShadowMoment = {
   readonly azimuth_deg: number;
   /** True altitude, without refraction. */
   readonly altitude_deg: number;
-  /** Null when the sun is at or below the horizon, or below the altitude under which the scheme leaves it out. */
+  /** Null when the sun is at or below the horizon. */
   readonly change: ShadowChange | null;
-  readonly areas: readonly AreaSun[];
-  /** How an ambiguous or skipped wall time was read, where it was. */
-  readonly note?: string;
+  readonly areas: readonly AreaBeforeAfter[];
+  /** How an ambiguous or skipped wall time was read; that the sun stands lower than the scheme counts. */
+  readonly notes: readonly string[];
 };

@@ -179,7 +179,7 @@ function methodText(input: ShadowSheetInput): Text {
       `Site ${place(site.latitude, site.longitude)}. Civil time, with its offset from UTC.`,
       'Azimuth clockwise from true north.',
       `Shadow of the blocks on level ground at ${(input.level_m ?? 0).toFixed(2)} m under a clear sky. Slopes, and shadow on roofs and walls, are not drawn.`,
-      'Added: in shadow after and in sun before. Areas leave out ground under buildings.',
+      'Added: in shadow after and in sun before. Areas leave out ground under buildings. Their shares in sun count tree crowns, which let through what the scheme says for the month; added shadow does not.',
       STAR_NOTE,
     ],
   };

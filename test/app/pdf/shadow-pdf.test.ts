@@ -4,7 +4,8 @@ import { SHORT_CAUTION } from '../../../core/limits/cautions.ts';
 import { Scheme } from '../../../core/scheme/schema.ts';
 import { ACCENT, SHADOW } from '../../../core/sheet/ink.ts';
 import { shadowSheet } from '../../../core/sheet/shadow-sheet.ts';
-import { demoScheme, modelOf, shadowMoments } from '../../helpers/shadow-moments.ts';
+import { shadowMoments } from '../../../core/study/shadow-moments.ts';
+import { demoScheme, modelOf } from '../../helpers/demo-scheme.ts';
 import { type ReadPage, type ReadPdf, readPdf } from '../../helpers/read-pdf.ts';
 
 const FACTS = { drawn: '2026-03-02', engine: '0.1.0', hash: '0123456789abcdef', number: 'SH-01' } as const;

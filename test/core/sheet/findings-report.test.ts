@@ -8,7 +8,7 @@ import type { Document, Mark, Page } from '../../../core/sheet/drawing.ts';
 import { findingsReport } from '../../../core/sheet/findings-report.ts';
 import type { ReportResult } from '../../../core/sheet/report-input.ts';
 import { checkScheme } from '../../../core/study/check.ts';
-import { demoScheme } from '../../helpers/shadow-moments.ts';
+import { demoScheme } from '../../helpers/demo-scheme.ts';
 
 const EXAMPLE = JSON.parse(
   readFileSync(join(import.meta.dirname, '../../../assets/limits/example-gain.json'), 'utf8'),

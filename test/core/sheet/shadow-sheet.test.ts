@@ -3,7 +3,8 @@ import { bestScale, chooseScale } from '../../../core/sheet/scale.ts';
 import { shadowSheet } from '../../../core/sheet/shadow-sheet.ts';
 import { pageToSvg } from '../../../core/sheet/svg.ts';
 import { displayList } from '../../helpers/display-list.ts';
-import { demoScheme, modelOf, shadowMoments } from '../../helpers/shadow-moments.ts';
+import { shadowMoments } from '../../../core/study/shadow-moments.ts';
+import { demoScheme, modelOf } from '../../helpers/demo-scheme.ts';
 
 const DATES = ['2025-03-21', '2025-06-21', '2025-12-21'];
 const TIMES = ['09:00', '12:00', '15:00'];
