@@ -1,6 +1,6 @@
 import type { Solid } from '../form/model.ts';
 import { stands } from '../form/stands.ts';
-import { differenceOf, type Shape } from '../plane/boolean.ts';
+import { differenceOf } from '../plane/boolean.ts';
 import { convexHull } from '../plane/convex-hull.ts';
 import { fromFirstCorner, type Region, regionArea } from '../plane/region.ts';
 import type { Point, Ring, Vec3 } from '../plane/vec.ts';
@@ -35,16 +35,15 @@ export function shadowChange(solids: readonly Solid[], sun: Vec3, level_m: numbe
   const kept = cast((before, after) => before && after);
   const gone = cast((before, after) => before && !after);
   const come = cast((before, after) => !before && after);
-  const feet = [...kept.feet, ...gone.feet, ...come.feet];
-  // What stays is worked out once. Each stage then adds what is its own, and redoes only the regions that this touches.
-  const common = differenceOf(kept.shadows, kept.feet);
-  const before = joined(common, gone, kept);
-  const after = joined(common, come, kept);
+  const before = both(kept, gone);
+  const after = both(kept, come);
+  const shadowBefore = shadowOf(differenceOf(before.shadows, before.feet), frame);
+  const isSame = gone.shadows.length === 0 && come.shadows.length === 0;
   return {
-    before: shadowOf(before, frame),
-    after: shadowOf(after, frame),
-    added: shadowOf(newIn(come, before, feet), frame),
-    gained: shadowOf(newIn(gone, after, feet), frame),
+    before: shadowBefore,
+    after: isSame ? shadowBefore : shadowOf(differenceOf(after.shadows, after.feet), frame),
+    added: shadowOf(newIn(come, before, after.feet), frame),
+    gained: shadowOf(newIn(gone, after, before.feet), frame),
   };
 }
 
@@ -101,39 +100,35 @@ function castsOf(solids: readonly Solid[], frame: Frame, level_m: number): Casts
   return { shadows, feet };
 }
 
-/** The common shadow with that of `extra` added, less the ground under what stands: regions out of its reach stay as they are. */
-function joined(common: readonly Region[], extra: Casts, kept: Casts): readonly Region[] {
-  if (extra.shadows.length === 0) return common;
-  const reach = boxOf([...extra.shadows, ...extra.feet]);
-  const far = common.filter((r) => !meets(boxOf([r.outer]), reach));
-  const near = common.filter((r) => meets(boxOf([r.outer]), reach));
-  const feet = kept.feet.filter((f) => meets(boxOf([f]), reach));
-  const redone = differenceOf([...near, ...extra.shadows], [...feet, ...extra.feet]);
-  return [...far, ...redone];
-}
+const both = (p: Casts, q: Casts): Casts => ({
+  shadows: [...p.shadows, ...q.shadows],
+  feet: [...p.feet, ...q.feet],
+});
 
-/** Shadow that `casts` throw where there was none at the other stage, and no building at either. */
-function newIn(casts: Casts, other: readonly Region[], feet: readonly Ring[]): readonly Region[] {
+/**
+ * Shadow that `casts` throw where there was none at the other stage, and no building at either. Only what comes near them
+ * is taken off; that is less work than to take off the other stage's finished shadow.
+ */
+function newIn(casts: Casts, other: Casts, feet: readonly Ring[]): readonly Region[] {
   if (casts.shadows.length === 0) return [];
-  const reach = boxOf(casts.shadows);
-  const less: Shape[] = [
-    ...other.filter((r) => meets(boxOf([r.outer]), reach)),
-    ...feet.filter((f) => meets(boxOf([f]), reach)),
-  ];
-  return differenceOf(casts.shadows, less);
+  const boxes = casts.shadows.map(boxOf);
+  const near = (ring: Ring): boolean => {
+    const box = boxOf(ring);
+    return boxes.some((b) => meets(b, box));
+  };
+  return differenceOf(casts.shadows, [...other.shadows, ...other.feet, ...feet].filter(near));
 }
 
 type Box = readonly [number, number, number, number];
 
-function boxOf(rings: readonly Ring[]): Box {
+function boxOf(ring: Ring): Box {
   let [x0, y0, x1, y1] = [Infinity, Infinity, -Infinity, -Infinity];
-  for (const ring of rings)
-    for (const p of ring) {
-      if (p[0] < x0) x0 = p[0];
-      if (p[0] > x1) x1 = p[0];
-      if (p[1] < y0) y0 = p[1];
-      if (p[1] > y1) y1 = p[1];
-    }
+  for (const p of ring) {
+    if (p[0] < x0) x0 = p[0];
+    if (p[0] > x1) x1 = p[0];
+    if (p[1] < y0) y0 = p[1];
+    if (p[1] > y1) y1 = p[1];
+  }
   return [x0, y0, x1, y1];
 }
 
