@@ -63,20 +63,27 @@ export function sortLight(light: Light, count: number): LightColumns {
   const n = light.sx.length;
   const column = new Uint32Array(n);
   const rise = new Float64Array(n);
+  const start = new Uint32Array(count + 1);
   for (let i = 0; i < n; i++) {
     if (!(light.sz[i]! > 0)) throw new RangeError('only light from above the horizon can be sorted into columns');
     const x = light.sx[i]!;
     const y = light.sy[i]!;
-    column[i] = x === 0 && y === 0 ? 0 : columnOf(count, x, y);
-    rise[i] = Math.min(light.sz[i]! / Math.hypot(x, y), ZENITH);
+    const c = x === 0 && y === 0 ? 0 : columnOf(count, x, y);
+    column[i] = c;
+    rise[i] = Math.min(light.sz[i]! / Math.sqrt(x * x + y * y), ZENITH);
+    start[c + 1]!++;
   }
-  const order = Uint32Array.from({ length: n }, (_, i) => i).sort(
-    (a, b) => column[a]! - column[b]! || rise[a]! - rise[b]! || a - b,
-  );
-  const start = new Uint32Array(count + 1);
-  for (let i = 0; i < n; i++) start[column[i]! + 1]!++;
   for (let c = 0; c < count; c++) start[c + 1]! += start[c]!;
-  const by = (column: Float64Array): Float64Array => Float64Array.from(order, (i) => column[i]!);
+  // Into the columns in the order given, then by altitude within each; equal altitudes keep their order.
+  const order = new Uint32Array(n);
+  const next = start.slice();
+  for (let i = 0; i < n; i++) order[next[column[i]!]!++] = i;
+  for (let c = 0; c < count; c++) sortByRise(order, rise, start[c]!, start[c + 1]!);
+  const by = (values: Float64Array): Float64Array => {
+    const sorted = new Float64Array(n);
+    for (let i = 0; i < n; i++) sorted[i] = values[order[i]!]!;
+    return sorted;
+  };
   return {
     count,
     start,
@@ -88,6 +95,24 @@ export function sortLight(light: Light, count: number): LightColumns {
     minutes: by(light.minutes),
     beam: by(light.beam),
   };
+}
+
+/** Sorts a stretch of rows by rising altitude, then by row (shell sort: columns hold tens to hundreds). */
+function sortByRise(order: Uint32Array, rise: Float64Array, from: number, to: number): void {
+  for (let gap = (to - from) >> 1; gap > 0; gap = gap === 2 ? 1 : Math.floor(gap / 2.2)) {
+    for (let i = from + gap; i < to; i++) {
+      const row = order[i]!;
+      const r = rise[row]!;
+      let j = i;
+      while (j >= from + gap) {
+        const other = order[j - gap]!;
+        if (rise[other]! < r || (rise[other] === r && other < row)) break;
+        order[j] = other;
+        j -= gap;
+      }
+      order[j] = row;
+    }
+  }
 }
 
 /**

@@ -1,8 +1,13 @@
+import type { Vec3 } from '../plane/vec.ts';
 import type { Site } from '../scheme/schema.ts';
+import { relativeAirMass, standardPressure_hPa } from '../sky/air-mass.ts';
 import { designDay } from '../sky/design-day.ts';
+import { extraterrestrial } from '../sky/extraterrestrial.ts';
+import { ineichenPerez } from '../sky/ineichen.ts';
 import { monthly, monthOf } from '../sky/monthly.ts';
-import { dayBounds } from '../sun/civil.ts';
+import { civilOf, dayBounds } from '../sun/civil.ts';
 import type { Observer } from '../sun/position.ts';
+import { sunTable } from '../sun/sun-table.ts';
 import { DEG } from '../units/angle.ts';
 import type { Light } from './exposure-light.ts';
 import { sunVector } from './sun-vector.ts';
@@ -28,6 +33,48 @@ export const observerOf = (site: Site): Observer => ({
   elevation_m: site.elevation,
 });
 
+/** Columns of a period while they are being filled. */
+class Samples {
+  readonly sx: number[] = [];
+  readonly sy: number[] = [];
+  readonly sz: number[] = [];
+  readonly minutes: number[] = [];
+  readonly beam: number[] = [];
+  readonly day: number[] = [];
+  readonly instant: number[] = [];
+  diffuse_Whm2 = 0;
+  reflected_Whm2 = 0;
+
+  add(day: number, instant_ms: number, span_min: number, s: Vec3, beam_Wm2: number): void {
+    this.sx.push(s[0]);
+    this.sy.push(s[1]);
+    this.sz.push(s[2]);
+    this.minutes.push(span_min);
+    this.beam.push((beam_Wm2 * span_min) / 60);
+    this.day.push(day);
+    this.instant.push(instant_ms);
+  }
+
+  done(): PeriodSky {
+    return {
+      light: {
+        sx: Float64Array.from(this.sx),
+        sy: Float64Array.from(this.sy),
+        sz: Float64Array.from(this.sz),
+        minutes: Float64Array.from(this.minutes),
+        beam: Float64Array.from(this.beam),
+      },
+      day: Uint16Array.from(this.day),
+      instant_ms: Float64Array.from(this.instant),
+      diffuse_Whm2: this.diffuse_Whm2,
+      reflected_Whm2: this.reflected_Whm2,
+    };
+  }
+}
+
+/** Altitude at or below which the sun does not count [rad]. */
+const least_rad = (site: Site): number => Math.max(0, (site.lowSun ?? 0) * DEG);
+
 /**
  * Samples the sun of a site. It counts when its true altitude is above 0 and above the scheme's `lowSun` (not at it); sky and
  * ground light do not leave low sun out. Clear sky: see `designDay`.
@@ -36,16 +83,8 @@ export const observerOf = (site: Site): Observer => ({
  */
 export function periodSky(site: Site, north_rad: number, dates: readonly string[], step_min: number): PeriodSky {
   const observer = observerOf(site);
-  const least_rad = Math.max(0, (site.lowSun ?? 0) * DEG);
-  const sx: number[] = [];
-  const sy: number[] = [];
-  const sz: number[] = [];
-  const minutes: number[] = [];
-  const beam: number[] = [];
-  const day: number[] = [];
-  const instant: number[] = [];
-  let diffuse_Whm2 = 0;
-  let reflected_Whm2 = 0;
+  const least = least_rad(site);
+  const samples = new Samples();
   dates.forEach((date, d) => {
     const sky = designDay({
       key: 'exposure',
@@ -65,31 +104,46 @@ export function periodSky(site: Site, north_rad: number, dates: readonly string[
       // A day that is no whole number of steps ends in a shorter one, sampled at its own middle.
       const span_min = i < n - 1 ? step_min : (2 * (end_ms - sky.instant_ms[i]!)) / 60_000;
       const hours = span_min / 60;
-      diffuse_Whm2 += sky.diffuse_Wm2[i]! * hours;
-      reflected_Whm2 += sky.global_Wm2[i]! * reflectance * hours;
+      samples.diffuse_Whm2 += sky.diffuse_Wm2[i]! * hours;
+      samples.reflected_Whm2 += sky.global_Wm2[i]! * reflectance * hours;
       const altitude = sky.altitude_rad[i]!;
-      if (!(altitude > least_rad)) continue;
+      if (!(altitude > least)) continue;
       const s = sunVector(sky.azimuth_rad[i]!, altitude, north_rad);
-      sx.push(s[0]);
-      sy.push(s[1]);
-      sz.push(s[2]);
-      minutes.push(span_min);
-      beam.push(sky.beamNormal_Wm2[i]! * hours);
-      day.push(d);
-      instant.push(sky.instant_ms[i]!);
+      samples.add(d, sky.instant_ms[i]!, span_min, s, sky.beamNormal_Wm2[i]!);
     }
   });
-  return {
-    light: {
-      sx: Float64Array.from(sx),
-      sy: Float64Array.from(sy),
-      sz: Float64Array.from(sz),
-      minutes: Float64Array.from(minutes),
-      beam: Float64Array.from(beam),
-    },
-    day: Uint16Array.from(day),
-    instant_ms: Float64Array.from(instant),
-    diffuse_Whm2,
-    reflected_Whm2,
-  };
+  return samples.done();
+}
+
+/**
+ * The sun and clear sky at single moments, each standing for so many minutes. `day` numbers the moments.
+ * @param instants_ms  UTC
+ */
+export function momentSky(site: Site, north_rad: number, instants_ms: readonly number[], span_min: number): PeriodSky {
+  const observer = observerOf(site);
+  const least = least_rad(site);
+  const pressure_hPa = standardPressure_hPa(observer.elevation_m);
+  const sun = sunTable(Float64Array.from(instants_ms), observer);
+  const samples = new Samples();
+  instants_ms.forEach((instant_ms, i) => {
+    const altitude = sun.altitude_rad[i]!;
+    const apparentAltitude_rad = sun.apparentAltitude_rad[i]!;
+    if (!(altitude > 0)) return;
+    const month = monthOf(civilOf(instant_ms, site.zone).date);
+    const sky = ineichenPerez(
+      {
+        apparentAltitude_rad,
+        extraterrestrial_Wm2: extraterrestrial(sun.distance_au[i]!),
+        airMass: relativeAirMass(apparentAltitude_rad),
+        pressure_hPa,
+        elevation_m: observer.elevation_m,
+      },
+      monthly(site.linkeTurbidity, month),
+    );
+    samples.diffuse_Whm2 += (sky.diffuse_Wm2 * span_min) / 60;
+    samples.reflected_Whm2 += (sky.global_Wm2 * monthly(site.groundReflectance, month) * span_min) / 60;
+    if (altitude > least)
+      samples.add(i, instant_ms, span_min, sunVector(sun.azimuth_rad[i]!, altitude, north_rad), sky.beamNormal_Wm2);
+  });
+  return samples.done();
 }

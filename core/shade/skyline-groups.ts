@@ -23,8 +23,8 @@ export type Receptors = {
 };
 
 /** Receptors that share a shortlist at the end; and by how much a group must shrink before its list is shortened again. */
-const LEAF = 32;
-const SHRINK = 6;
+const LEAF = 16;
+const SHRINK = 4;
 
 /** What is done with each receptor of one plane. `list` holds what may hide its sky; null for a receptor inside a solid. */
 export type Visit = (row: number, list: Shortlist | null) => void;

@@ -1,42 +1,57 @@
 import { sunOnReceptors } from './exposure.ts';
-import { columnsFor, type Light, sortLight } from './exposure-light.ts';
+import { columnsFor, type Light, type LightColumns, sortLight } from './exposure-light.ts';
 import type { Receptors } from './skyline-groups.ts';
 import type { Occluders } from './skyline-occluders.ts';
 
 /** Probable sunlight of places over a year, as shares of what an open place has in the whole year. */
 export type ProbableSunlight = {
   readonly annual: Float64Array;
-  /** Of the winter half, 21 September to 21 March; also over the open place's whole year. */
+  /** Of the winter half (see `inWinterHalf`); also over the open place's whole year. */
   readonly winter: Float64Array;
   /** Hours of the open place over the year, weighted as the light is [h]. */
   readonly openHours: number;
 };
 
-/** Whether a civil date lies in the winter half, 21 September to 21 March, both included. @param date YYYY-MM-DD */
-export function inWinterHalf(date: string): boolean {
+/**
+ * Whether a civil date lies in the winter half: 21 September to 21 March north of the equator, 21 March to 21 September
+ * south of it, both ends included.
+ * @param date YYYY-MM-DD
+ */
+export function inWinterHalf(date: string, southern = false): boolean {
   const monthDay = date.slice(5);
-  return monthDay <= '03-21' || monthDay >= '09-21';
+  return southern ? monthDay >= '03-21' && monthDay <= '09-21' : monthDay <= '03-21' || monthDay >= '09-21';
+}
+
+/** A year of light in its two halves, sorted once for any number of receptors. */
+export type HalfYears = {
+  readonly winter: LightColumns;
+  readonly summer: LightColumns;
+  /** Minutes of an open place over the year, as weighted. */
+  readonly open_min: number;
+};
+
+/** @param year a year of light, in rows @param winter 1 for each row of the winter half */
+export function halfYears(year: Light, winter: Uint8Array): HalfYears {
+  const half = (which: number): LightColumns => {
+    const light = rowsWhere(year, (row) => winter[row] === which);
+    return sortLight(light, columnsFor(light.sx.length));
+  };
+  return { winter: half(1), summer: half(0), open_min: year.minutes.reduce((sum, m) => sum + m, 0) };
 }
 
 /**
  * Annual and winter probable sunlight hours. Sunshine is as probable as the light's minutes say: weighted with long-run
  * sunshine records, these are the hours of the guidance; unweighted, every hour of sun above the horizon counts alike.
- * @param year    a year of light, in rows
- * @param winter  1 for each row of the winter half
  * @see P. Littlefair, S. King, G. Howlett, C. Ticleanu, A. Longfield, Site layout planning for daylight and sunlight (BR 209, 2022)
  */
-export function probableSunlight(o: Occluders, year: Light, winter: Uint8Array, r: Receptors): ProbableSunlight {
-  const halves = [0, 1].map((half) => {
-    const light = rowsWhere(year, (i) => winter[i] === half);
-    return sunOnReceptors(o, sortLight(light, columnsFor(light.sx.length)), r).minutes;
-  });
-  const [summer, cold] = halves as [Float64Array, Float64Array];
-  const open = year.minutes.reduce((sum, m) => sum + m, 0);
-  const share = (minutes: number): number => (open > 0 ? minutes / open : 0);
+export function probableSunlight(o: Occluders, year: HalfYears, r: Receptors): ProbableSunlight {
+  const summer = sunOnReceptors(o, year.summer, r).minutes;
+  const winter = sunOnReceptors(o, year.winter, r).minutes;
+  const share = (minutes: number): number => (year.open_min > 0 ? minutes / year.open_min : 0);
   return {
-    annual: summer.map((m, i) => share(m + cold[i]!)),
-    winter: cold.map(share),
-    openHours: open / 60,
+    annual: summer.map((m, i) => share(m + winter[i]!)),
+    winter: winter.map(share),
+    openHours: year.open_min / 60,
   };
 }
 

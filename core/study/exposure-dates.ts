@@ -1,8 +1,9 @@
 import type { Checked, Fault } from '../scheme/fault.ts';
 import { addDays, isDate } from '../sun/civil.ts';
 
-/** For when an exposure is asked: some civil dates, a span of them with both ends, or a whole civil year. */
+/** For when an exposure is asked: some civil dates, a span of them with both ends, a whole civil year, or single moments. */
 export type ExposureDates =
+  | { readonly moments_ms: readonly number[] }
   | { readonly dates: readonly string[] }
   | { readonly between: readonly [string, string] }
   | { readonly year: number };
@@ -10,8 +11,22 @@ export type ExposureDates =
 /** The longest span that one exposure may cover [days]: ten years. */
 export const MOST_DAYS = 3660;
 
-/** The civil dates asked for, in order and each once. Years 1900 to 2100, as the sun is good for. */
+/** The first and the last moment that the sun is good for here. */
+const FIRST_ms = Date.UTC(1900, 0, 1);
+const LAST_ms = Date.UTC(2101, 0, 1);
+
+/**
+ * The civil dates asked for, in order and each once; none for moments, which are only looked over. Years 1900 to 2100, as the
+ * sun is good for.
+ */
 export function exposureDates(ask: ExposureDates): Checked<readonly string[]> {
+  if ('moments_ms' in ask) {
+    if (ask.moments_ms.length === 0) return refuse('moments', 'no moment is asked for', 'name at least one');
+    const bad = ask.moments_ms.findIndex((t) => !(t >= FIRST_ms && t < LAST_ms));
+    if (bad >= 0)
+      return refuse(`moments[${bad}]`, 'the moment lies outside the years 1900 to 2100', 'choose one in that span');
+    return { ok: true, value: [], notes: [] };
+  }
   if ('year' in ask) {
     if (!(Number.isInteger(ask.year) && ask.year >= 1900 && ask.year <= 2100))
       return refuse(

@@ -12,7 +12,7 @@ import {
   levelGrid,
   panelGrid,
 } from '../shade/exposure-grid.ts';
-import { periodSky } from '../shade/exposure-period.ts';
+import { momentSky, type PeriodSky, periodSky } from '../shade/exposure-period.ts';
 import {
   type Exposure,
   type ExposureJob,
@@ -26,7 +26,7 @@ import type { Pulse } from './job.ts';
 
 /** What is asked of an exposure study. */
 export type ExposureAsk = ExposureDates & {
-  /** Minutes a step, a whole number from 1 to 60; absent: 5. */
+  /** Minutes a step, or that a moment stands for: a whole number from 1 to 60; absent: 5. */
   readonly step_min?: number;
   /** Between grid points on areas [m]; absent: 1. */
   readonly spacing_m?: number;
@@ -87,7 +87,7 @@ export async function exposureStudy(
   const faults = [...checkAsk(step_min, spacing_m, dates.value.length), ...checkPoints(model, spacing_m, ask.windows)];
   if (faults.length > 0) return { ok: false, faults };
   const grids = model.receptors.map((r) => gridOf(r, spacing_m, ask.windows ?? 'centre'));
-  const sky = periodSky(scheme.site, model.north_rad, dates.value, step_min);
+  const sky = skyOf(scheme, model, ask, dates.value, step_min);
   const job = exposureJob(
     solidsAt(model.solids, stage),
     shadersAt(model, stage),
@@ -100,13 +100,25 @@ export async function exposureStudy(
   let at = 0;
   const receptors = model.receptors.map((receptor, i) => {
     const layout = grids[i] as ExposureGrid;
-    const own = part(values, at, at + layout.cell.length);
+    const own = partOf(values, at, at + layout.cell.length);
     at += layout.cell.length;
     return summary(receptor, layout, own);
   });
   const value = { stage, dates: dates.value, step_min, spacing_m, sunSamples: sky.light.sx.length, receptors };
   return { ok: true, value, notes: notesOf(scheme, model) };
 }
+
+/** The sun and sky of what is asked. @param dates from `exposureDates` */
+export const skyOf = (
+  scheme: Scheme,
+  model: Model,
+  ask: ExposureDates,
+  dates: readonly string[],
+  step_min: number,
+): PeriodSky =>
+  'moments_ms' in ask
+    ? momentSky(scheme.site, model.north_rad, ask.moments_ms, step_min)
+    : periodSky(scheme.site, model.north_rad, dates, step_min);
 
 /** Devices of the windows whose blocks stand at a stage. */
 export function shadersAt(model: Model, stage: Stage): readonly Shader[] {
@@ -140,7 +152,8 @@ const single = (receptors: ExposureGrid['receptors']): ExposureGrid => ({
   cell: Uint32Array.of(0),
 });
 
-function part(e: Exposure, from: number, to: number): Exposure {
+/** Rows of an exposure. */
+export function partOf(e: Exposure, from: number, to: number): Exposure {
   return {
     minutes: e.minutes.slice(from, to),
     beam: e.beam.slice(from, to),
@@ -172,7 +185,8 @@ function summary(r: ReceptorForm, layout: ExposureGrid, values: Exposure): Recep
   };
 }
 
-function checkAsk(step_min: number, spacing_m: number, days: number): Fault[] {
+/** Faults of step, spacing and length. */
+export function checkAsk(step_min: number, spacing_m: number, days: number): Fault[] {
   const faults: Fault[] = [];
   if (!(Number.isInteger(step_min) && step_min >= 1 && step_min <= 60))
     faults.push(
@@ -208,27 +222,37 @@ function checkPoints(model: Model, spacing_m: number, windows: ExposureAsk['wind
         ),
       );
   }
-  if (points > MOST_POINTS)
-    faults.push(
-      fault(
-        'spacing',
-        `${points} points are asked for, more than ${MOST_POINTS}`,
-        'ask for a wider spacing, or for smaller areas',
-      ),
-    );
-  return faults;
+  return [...faults, ...tooManyPoints(points)];
 }
 
-function notesOf(scheme: Scheme, model: Model): Fault[] {
-  const notes: Fault[] = [];
-  if (scheme.trees.length > 0)
-    notes.push({
+/** The refusal of more points than one study takes on. */
+export const tooManyPoints = (points: number): Fault[] =>
+  points > MOST_POINTS
+    ? [
+        fault(
+          'spacing',
+          `${points} points are asked for, more than ${MOST_POINTS}`,
+          'ask for a wider spacing, or for smaller areas',
+        ),
+      ]
+    : [];
+
+/** What must be said of every exposure of a scheme. */
+export function exposureNotes(scheme: Scheme): Fault[] {
+  if (scheme.trees.length === 0) return [];
+  return [
+    {
       level: 'warning',
       code: 'trees-left-out',
       place: 'trees',
       message: 'exposure is worked out without the trees',
       cure: 'draw a tree that should count as a block that floats on its trunk',
-    });
+    },
+  ];
+}
+
+function notesOf(scheme: Scheme, model: Model): Fault[] {
+  const notes = exposureNotes(scheme);
   if (model.receptors.length === 0)
     notes.push({
       level: 'warning',
@@ -240,7 +264,7 @@ function notesOf(scheme: Scheme, model: Model): Fault[] {
   return notes;
 }
 
-const fault = (place: string, message: string, cure: string): Fault => ({
+export const fault = (place: string, message: string, cure: string): Fault => ({
   level: 'error',
   code: 'exposure-ask',
   place,

@@ -3,6 +3,7 @@ import { facing } from '../../../core/shade/exposure-grid.ts';
 import type { Light } from '../../../core/shade/exposure-light.ts';
 import { makeOccluders } from '../../../core/shade/skyline-occluders.ts';
 import {
+  halfYears,
   inWinterHalf,
   keptShare,
   probableSunlight,
@@ -31,9 +32,10 @@ function dated(latitude: number): { light: Light; winter: Uint8Array; month: Uin
 
 describe('probable sunlight hours', () => {
   const { light, winter, month } = dated(51.5);
+  const year = halfYears(light, winter);
 
   it('an open level place has all of the year, its winter half somewhat under half', () => {
-    const p = probableSunlight(makeOccluders([], []), light, winter, facing([[0, 0, 0]], [0, 0, 1]));
+    const p = probableSunlight(makeOccluders([], []), year, facing([[0, 0, 0]], [0, 0, 1]));
     expect(p.annual[0]).toBe(1);
     // Half a year of day and night holds 4380 h of sun at any place (methods dossier 10); the winter half's share follows the day length.
     expect(Math.abs(p.openHours - 4380)).toBeLessThan(20);
@@ -43,7 +45,7 @@ describe('probable sunlight hours', () => {
 
   it('walls that face opposite ways share the year between them, the south one having nearly all of winter', () => {
     const at = (n: readonly [number, number, number]) =>
-      probableSunlight(makeOccluders([], []), light, winter, facing([[0, 0, 0]], n));
+      probableSunlight(makeOccluders([], []), year, facing([[0, 0, 0]], n));
     const south = at([0, -1, 0]);
     const north = at([0, 1, 0]);
     expect(south.annual[0]! + north.annual[0]!).toBeCloseTo(1, 9);
@@ -53,15 +55,15 @@ describe('probable sunlight hours', () => {
 
   it('a block to the south takes from winter first', () => {
     const o = makeOccluders([box('B', 0, -15, 100, 10, 0, 8)], []);
-    const free = probableSunlight(makeOccluders([], []), light, winter, facing([[0, 0, 2]], [0, -1, 0]));
-    const held = probableSunlight(o, light, winter, facing([[0, 0, 2]], [0, -1, 0]));
+    const free = probableSunlight(makeOccluders([], []), year, facing([[0, 0, 2]], [0, -1, 0]));
+    const held = probableSunlight(o, year, facing([[0, 0, 2]], [0, -1, 0]));
     expect(keptShare(free.winter[0]!, held.winter[0]!)).toBeLessThan(keptShare(free.annual[0]!, held.annual[0]!));
     expect(held.winter[0]!).toBeLessThanOrEqual(held.annual[0]!);
   });
 
   it('counts hours by how probable sunshine is', () => {
     const june = weighted(light, (row) => (month[row] === 6 ? 1 : 0));
-    const p = probableSunlight(makeOccluders([], []), june, winter, facing([[0, 0, 0]], [0, 0, 1]));
+    const p = probableSunlight(makeOccluders([], []), halfYears(june, winter), facing([[0, 0, 0]], [0, 0, 1]));
     expect([p.annual[0], p.winter[0]]).toEqual([1, 0]);
     expect(p.openHours).toBeGreaterThan(470);
     expect(p.openHours).toBeLessThan(500);
@@ -82,7 +84,8 @@ describe('levels and shares', () => {
 
   it('21 March and 21 September belong to the winter half', () => {
     const dates = ['2025-03-21', '2025-03-22', '2025-09-20', '2025-09-21', '2025-12-31', '2025-01-01', '2025-07-01'];
-    expect(dates.map(inWinterHalf)).toEqual([true, false, false, true, true, true, false]);
+    expect(dates.map((d) => inWinterHalf(d))).toEqual([true, false, false, true, true, true, false]);
+    expect(dates.map((d) => inWinterHalf(d, true))).toEqual([true, true, true, true, false, false, true]);
   });
 
   it('a garden’s share leaves out what is built over', () => {
