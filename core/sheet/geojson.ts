@@ -1,0 +1,102 @@
+import type { Model } from '../form/model.ts';
+import type { Region } from '../plane/region.ts';
+import type { Point, Ring } from '../plane/vec.ts';
+import type { Scheme } from '../scheme/schema.ts';
+import type { GroundShadow } from '../shade/shadow.ts';
+import { DEG } from '../units/angle.ts';
+import { utc } from './data-tables.ts';
+import type { ShadowMoment } from './shadow-moment.ts';
+
+/** World Geodetic System 1984: half the equator's diameter [m] and the flattening. NGA.STND.0036, 2014, table 3.1. */
+const A = 6378137;
+const F = 1 / 298.257223563;
+const E2 = F * (2 - F);
+
+type Lonlat = readonly [longitude: number, latitude: number];
+
+/**
+ * From the drawing to longitude and latitude: the plane that touches the WGS84 ellipsoid at the site, where the drawing's
+ * origin lies, at the site's height. True north runs `north` degrees clockwise from +y.
+ * @see NIMA TR8350.2 (2000) for the frames; B. R. Bowring, Survey Review 23, 323–327 (1976), for the way back to latitude
+ */
+export function toLonlat(site: Scheme['site']): (p: Point) => Lonlat {
+  const phi = site.latitude * DEG;
+  const lambda = site.longitude * DEG;
+  const turn = site.north * DEG;
+  const [sp, cp, sl, cl] = [Math.sin(phi), Math.cos(phi), Math.sin(lambda), Math.cos(lambda)];
+  const n = A / Math.sqrt(1 - E2 * sp * sp);
+  const origin = [
+    (n + site.elevation) * cp * cl,
+    (n + site.elevation) * cp * sl,
+    (n * (1 - E2) + site.elevation) * sp,
+  ] as const;
+  return (p) => {
+    const east = p[0] * Math.cos(turn) - p[1] * Math.sin(turn);
+    const north = p[0] * Math.sin(turn) + p[1] * Math.cos(turn);
+    const x = origin[0] - sl * east - sp * cl * north;
+    const y = origin[1] + cl * east - sp * sl * north;
+    const z = origin[2] + cp * north;
+    const b = A * (1 - F);
+    const r = Math.hypot(x, y);
+    const beta = Math.atan2(z * A, r * b);
+    const latitude = Math.atan2(z + (E2 / (1 - E2)) * b * Math.sin(beta) ** 3, r - E2 * A * Math.cos(beta) ** 3);
+    // Longitude runs on past 180° rather than jump, so that a shape by the date line stays whole.
+    const dLambda = Math.atan2(y * cl - x * sl, x * cl + y * sl);
+    return [round(site.longitude + dLambda / DEG), round(latitude / DEG)];
+  };
+}
+
+/** Nine decimals of a degree are a tenth of a millimetre: the grid on which shadows are computed. */
+const round = (deg: number): number => Math.round(deg * 1e9) / 1e9;
+
+type Geometry = { readonly type: 'MultiPolygon'; readonly coordinates: readonly (readonly (readonly Lonlat[])[])[] };
+type Feature = {
+  readonly type: 'Feature';
+  readonly properties: { readonly [key: string]: string | number };
+  readonly geometry: Geometry;
+};
+export type FeatureCollection = { readonly type: 'FeatureCollection'; readonly features: readonly Feature[] };
+
+/** A ring closed by its first corner. Outer rings run anticlockwise and holes clockwise, as RFC 7946 wants them, already in the drawing. */
+const closed = (ring: Ring, lonlat: (p: Point) => Lonlat): readonly Lonlat[] => {
+  const out = ring.map(lonlat);
+  const [first] = out;
+  return first ? [...out, first] : out;
+};
+
+const multi = (regions: readonly Region[], lonlat: (p: Point) => Lonlat): Geometry => ({
+  type: 'MultiPolygon',
+  coordinates: regions.map((r) => [closed(r.outer, lonlat), ...r.holes.map((h) => closed(h, lonlat))]),
+});
+
+/**
+ * Shadows on the ground at each moment, before, after, added and gained, and the footprints of the blocks, as GeoJSON
+ * (RFC 7946: longitude and latitude on WGS84).
+ */
+export function shadowGeoJson(scheme: Scheme, model: Model, moments: readonly ShadowMoment[]): FeatureCollection {
+  const lonlat = toLonlat(scheme.site);
+  const features: Feature[] = model.solids.map((s) => ({
+    type: 'Feature',
+    properties: { kind: 'block', id: s.id, name: s.name, standing: s.standing, base_m: s.base_m, top_m: s.top_m },
+    geometry: multi([{ outer: s.outline, holes: [] }], lonlat),
+  }));
+  for (const m of moments) {
+    if (!m.change) continue;
+    for (const kind of ['before', 'after', 'added', 'gained'] as const) {
+      const shadow: GroundShadow = m.change[kind];
+      features.push({
+        type: 'Feature',
+        properties: {
+          kind: kind === 'gained' ? 'sun gained' : kind === 'added' ? 'shadow added' : `shadow ${kind}`,
+          instant: utc(m.instant_ms),
+          civil: m.text,
+          sunAzimuth_deg: Number(m.azimuth_deg.toFixed(4)),
+          sunAltitude_deg: Number(m.altitude_deg.toFixed(4)),
+          area_m2: Number(shadow.area_m2.toFixed(3)),
+        },
+        geometry: multi(shadow.regions, lonlat),
+      });
+    }
+  }
+  return { type: 'FeatureCollection', features };
+}

@@ -1,0 +1,88 @@
+import { describe, expect, test } from 'vitest';
+import { Site } from '../../../core/scheme/schema.ts';
+import { shadowGeoJson, toLonlat } from '../../../core/sheet/geojson.ts';
+import { shadowMoments } from '../../../core/study/shadow-moments.ts';
+import { demoScheme, modelOf } from '../../helpers/demo-scheme.ts';
+
+const DEG = Math.PI / 180;
+/** WGS84: a = 6 378 137 m, 1/f = 298.257223563 (NIMA TR8350.2). */
+const A = 6378137;
+const E2 = 0.00669437999014;
+/** Radii of curvature in the meridian and in the prime vertical, e.g. J. P. Snyder, USGS Professional Paper 1395 (1987), 4-18, 4-20. */
+const meridian = (phi: number): number => (A * (1 - E2)) / (1 - E2 * Math.sin(phi) ** 2) ** 1.5;
+const vertical = (phi: number): number => A / Math.sqrt(1 - E2 * Math.sin(phi) ** 2);
+
+/** Signed area of a small ring on the ellipsoid [m²]: shoelace in metres of arc about its own middle latitude. */
+function areaOnEllipsoid(ring: readonly (readonly [number, number])[]): number {
+  const phi = (ring.reduce((s, p) => s + p[1], 0) / ring.length) * DEG;
+  const [lon0, lat0] = ring[0] as readonly [number, number];
+  const xy = ring.map(
+    ([lon, lat]) => [(lon - lon0) * DEG * vertical(phi) * Math.cos(phi), (lat - lat0) * DEG * meridian(phi)] as const,
+  );
+  let twice = 0;
+  for (let i = 0; i + 1 < xy.length; i++) {
+    const [a, b] = [xy[i], xy[i + 1]] as [readonly [number, number], readonly [number, number]];
+    twice += a[0] * b[1] - b[0] * a[1];
+  }
+  return twice / 2;
+}
+
+describe('longitude and latitude', () => {
+  const site = (more: object) => Site.parse({ latitude: 51.45, longitude: -2.59, zone: 'Europe/London', ...more });
+
+  test('the origin of the drawing is the site', () => {
+    expect(toLonlat(site({ elevation: 300 }))([0, 0])).toEqual([-2.59, 51.45]);
+  });
+
+  test('100 m north and 100 m east are arcs of the radii of curvature', () => {
+    const to = toLonlat(site({}));
+    const phi = 51.45 * DEG;
+    expect(to([0, 100])[1] - 51.45).toBeCloseTo(100 / meridian(phi) / DEG, 8);
+    expect(to([100, 0])[0] + 2.59).toBeCloseTo(100 / (vertical(phi) * Math.cos(phi)) / DEG, 8);
+  });
+
+  test('with true north 90° clockwise from the top, the top of the drawing faces west', () => {
+    const [lon, lat] = toLonlat(site({ north: 90 }))([0, 100]);
+    expect(lon).toBeLessThan(-2.59);
+    expect(lat).toBeCloseTo(51.45, 6);
+  });
+
+  test('by the date line a shape stays whole', () => {
+    const to = toLonlat(site({ longitude: 179.9999, latitude: -17 }));
+    expect(to([100, 0])[0]).toBeGreaterThan(180);
+  });
+});
+
+describe('shadows as GeoJSON', () => {
+  const scheme = demoScheme('tannery-yard');
+  const moments = shadowMoments(scheme, modelOf(scheme), ['2025-03-21', '2025-12-21'], ['10:00', '12:00', '20:00']);
+  const json = shadowGeoJson(scheme, modelOf(scheme), moments);
+
+  test('areas on the ellipsoid are those that were stated, to 0.1 %', () => {
+    const shadows = json.features.filter((f) => 'area_m2' in f.properties && (f.properties['area_m2'] as number) > 1);
+    expect(shadows.length).toBeGreaterThan(8);
+    for (const f of shadows) {
+      const rings = f.geometry.coordinates.flat();
+      const area = rings.reduce((s, r) => s + areaOnEllipsoid(r), 0);
+      expect(Math.abs(area / (f.properties['area_m2'] as number) - 1)).toBeLessThan(0.001);
+    }
+  });
+
+  test('rings are closed; outer ones run anticlockwise and holes clockwise (RFC 7946, 3.1.6)', () => {
+    for (const f of json.features) {
+      for (const polygon of f.geometry.coordinates) {
+        polygon.forEach((ring, i) => {
+          expect(ring.length).toBeGreaterThanOrEqual(4);
+          expect(ring.at(-1)).toEqual(ring[0]);
+          expect(Math.sign(areaOnEllipsoid(ring))).toBe(i === 0 ? 1 : -1);
+        });
+      }
+    }
+  });
+
+  test('every block is there, and four shadows for every moment with sun', () => {
+    const kinds = json.features.map((f) => f.properties['kind']);
+    expect(kinds.filter((k) => k === 'block').length).toBe(scheme.blocks.length);
+    expect(kinds.filter((k) => k === 'shadow added').length).toBe(4);
+  });
+});
