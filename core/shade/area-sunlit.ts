@@ -5,8 +5,8 @@ import { Patches } from '../plane/patches.ts';
 import type { Point, Ring, Vec3 } from '../plane/vec.ts';
 import type { Tree } from '../scheme/schema.ts';
 import { IN_FRONT_m } from '../units/tolerance.ts';
-import { castOutline } from './cast-outline.ts';
 import { type Crown, crownOutline, crownsOf } from './crown.ts';
+import { cutShadows } from './cut-shadows.ts';
 import { type Hiders, hidersOf } from './hiders.ts';
 
 /** A level area with everything that can shade it, prepared once and asked for many moments. */
@@ -75,14 +75,8 @@ export function areaSunlit(shade: AreaShade, sun: Vec3, month?: number): AreaSun
   const b = sun[1] / sun[2];
   patches.clear();
   for (const ring of pieces) patches.addRing(ring);
-  const { bounds, count } = hiders;
+  cutShadows(patches, hiders, a, b);
   const { cutX, cutY } = patches;
-  for (let i = 0; i < count && patches.count > 0; i++) {
-    const k = 4 * i;
-    if (bounds[k + 3]! <= b) break;
-    if (bounds[k + 2]! >= b || bounds[k]! >= a || bounds[k + 1]! <= a) continue;
-    patches.cut(castOutline(hiders, i, a, b, cutX, cutY), 0);
-  }
   if (month !== undefined)
     for (const crown of crowns) {
       const corners = crownOutline(crown, a, b, [0, 0, panel.width_m, panel.height_m], cutX, cutY);

@@ -3,7 +3,7 @@ import { edgeOf, levelPanel, pointOn, wallPanel } from '../form/panel.ts';
 import { Patches } from '../plane/patches.ts';
 import { signedArea } from '../plane/ring.ts';
 import { dot, type Point, type Ring, type Vec3 } from '../plane/vec.ts';
-import { castOutline } from './cast-outline.ts';
+import { cutShadows } from './cut-shadows.ts';
 import { hidersOf } from './hiders.ts';
 import { sunwardOf } from './sunward.ts';
 
@@ -69,19 +69,12 @@ function shadowOn(
 ): { polygons: readonly (readonly Vec3[])[]; shaded_m2: number } {
   const out = dot(sun, panel.normal);
   if (!(out > GRAZING)) return { polygons: [], shaded_m2: area_m2 };
-  const hiders = hidersOf(panel, near, []);
   const a = dot(sun, panel.right) / out;
   const b = dot(sun, panel.up) / out;
   patches.clear();
   if (pieces === null) patches.addRectangle(0, 0, panel.width_m, panel.height_m);
   else for (const ring of pieces) patches.addRing(ring.map((p) => [p[0] - panel.origin[0], p[1] - panel.origin[1]]));
-  const { bounds, count } = hiders;
-  for (let i = 0; i < count; i++) {
-    const k = 4 * i;
-    if (bounds[k + 3]! <= b) break;
-    if (bounds[k + 2]! >= b || bounds[k]! >= a || bounds[k + 1]! <= a) continue;
-    patches.cut(castOutline(hiders, i, a, b, patches.cutX, patches.cutY), 0, true);
-  }
+  cutShadows(patches, hidersOf(panel, near, []), a, b, true);
   const polygons: Vec3[][] = [];
   let shaded_m2 = 0;
   for (let i = 0; i < patches.count; i++) {

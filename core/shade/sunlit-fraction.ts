@@ -2,8 +2,8 @@ import type { Panel, Shader, Solid, WindowForm } from '../form/model.ts';
 import { Patches } from '../plane/patches.ts';
 import type { Vec3 } from '../plane/vec.ts';
 import type { Tree } from '../scheme/schema.ts';
-import { castOutline } from './cast-outline.ts';
 import { type Crown, crownOutline, crownsOf } from './crown.ts';
+import { cutShadows } from './cut-shadows.ts';
 import { type Hiders, hidersOf } from './hiders.ts';
 
 /** A pane with everything that can shade it, prepared once and asked for many directions. */
@@ -77,18 +77,11 @@ export function openShare(shade: WindowShade, a: number, b: number, month?: numb
   if (!(box[2] > box[0] && box[3] > box[1])) return 0;
   patches.clear();
   patches.addRectangle(box[0], box[1], box[2], box[3]);
-  const { cutX, cutY } = patches;
-  const { bounds, count } = hiders;
-  for (let i = 0; i < count; i++) {
-    const k = 4 * i;
-    if (bounds[k + 3]! <= b) break;
-    if (bounds[k + 2]! >= b || bounds[k]! >= a || bounds[k + 1]! <= a) continue;
-    patches.cut(castOutline(hiders, i, a, b, cutX, cutY), 0);
-    if (patches.count === 0) return 0;
-  }
+  cutShadows(patches, hiders, a, b);
+  if (patches.count === 0) return 0;
   if (month !== undefined)
     for (const crown of crowns) {
-      const corners = crownOutline(crown, a, b, box, cutX, cutY);
+      const corners = crownOutline(crown, a, b, box, patches.cutX, patches.cutY);
       if (corners > 0) patches.cut(corners, crown.transmittance[month] ?? 1);
     }
   return Math.min(1, patches.area() / (width_m * height_m));
