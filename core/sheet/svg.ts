@@ -72,10 +72,9 @@ function markSvg(mark: Mark, clips: string[]): string {
       const [x, y] = mark.at;
       const turn = mark.turn_deg ? ` transform="rotate(${mm(-mark.turn_deg)} ${mm(x)} ${mm(y)})"` : '';
       const figures = mark.tabular ? ' font-feature-settings="&quot;tnum&quot;"' : '';
-      // In a right-to-left line `start` is its right edge; the anchors of the display list are left and right on the page.
-      const anchor = mark.rtl && mark.anchor !== 'middle' ? (mark.anchor === 'start' ? 'end' : 'start') : mark.anchor;
-      const rtl = mark.rtl ? ' direction="rtl"' : '';
-      return `<text x="${mm(x)}" y="${mm(y)}" font-size="${mm(mark.size)}"${FACE[mark.face]} fill="${mark.colour}" text-anchor="${anchor}"${figures}${rtl}${turn}>${xmlText(mark.text)}</text>`;
+      // An isolate and not `direction`: with it, renderers disagree on which end an anchor is. Anchors here are left and right.
+      const text = mark.rtl ? `\u2067${mark.text}\u2069` : mark.text;
+      return `<text x="${mm(x)}" y="${mm(y)}" font-size="${mm(mark.size)}"${FACE[mark.face]} fill="${mark.colour}" text-anchor="${mark.anchor}"${figures}${turn}>${xmlText(text)}</text>`;
     }
     case 'group': {
       const inner = mark.marks.map((m) => markSvg(m, clips)).join('\n');

@@ -59,6 +59,27 @@ describe('PNG', () => {
     expect(dark(png, dpi, [64, 34, 12, 8])).toBeGreaterThan(side);
   });
 
+  test('right-to-left text ends where its right anchor is', async () => {
+    const line = {
+      ...page,
+      marks: [
+        {
+          kind: 'text',
+          text: 'ساحة 12',
+          at: [60, 30],
+          size: 6,
+          face: 'regular',
+          colour: '#000000',
+          anchor: 'end',
+          rtl: true,
+        },
+      ],
+    } as const;
+    const png = readPng(await writePng(line, 150));
+    expect(dark(png, 150, [40, 20, 20.5, 15])).toBeGreaterThan(100);
+    expect(dark(png, 150, [60.5, 20, 30, 15])).toBe(0);
+  });
+
   test('the same page gives the same bytes', async () => {
     expect(Buffer.compare(await writePng(page, 96), await writePng(page, 96))).toBe(0);
   });
