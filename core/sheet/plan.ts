@@ -125,6 +125,7 @@ export function blockLabels(
     const wide = Math.max(measure(s.name, READ), measure(height, READ)) / 2 + 0.4;
     if (s.name !== '' && holds(ring, x, y, wide, cap + 1, cap + 1)) {
       marks.push(
+        ...mask(wide, cap + 0.7, cap + 1.1),
         words(s.name, x, y - 0.5, { anchor: 'middle' }),
         words(height, x, y + cap + 0.9, { anchor: 'middle' }),
       );

@@ -4,6 +4,7 @@ import { shadowSheet } from '../../../core/sheet/shadow-sheet.ts';
 import { pageToSvg } from '../../../core/sheet/svg.ts';
 import { displayList } from '../../helpers/display-list.ts';
 import { shadowMoments } from '../../../core/study/shadow-moments.ts';
+import { drawnMoments, smallYard } from '../../helpers/drawn-moments.ts';
 import { demoScheme, modelOf } from '../../helpers/demo-scheme.ts';
 
 const DATES = ['2025-03-21', '2025-06-21', '2025-12-21'];
@@ -26,10 +27,27 @@ const sheet = (key: string, more: Partial<Parameters<typeof shadowSheet>[0]> = {
   });
 };
 
-test('nine diagrams of the demo on one A3 sheet at 1:1000, as they were drawn and looked at', async () => {
+test('nine diagrams of the demo stand on one A3 sheet at 1:1000', () => {
   const made = sheet('tannery-yard');
   if (!made.ok) throw new Error(JSON.stringify(made.faults));
   expect(made.value.pages.length).toBe(1);
+});
+
+test('a sheet with every kind of mark, as it was drawn and looked at', async () => {
+  const scheme = smallYard();
+  const made = shadowSheet({
+    scheme,
+    model: modelOf(scheme),
+    moments: drawnMoments(),
+    scale: 1000,
+    paper: 'A3',
+    landscape: true,
+    number: 'SH-01',
+    drawn: '2026-03-02',
+    engine: '0.1.0',
+    hash: '0123456789abcdef',
+  });
+  if (!made.ok) throw new Error(JSON.stringify(made.faults));
   await expect(displayList(made.value)).toMatchFileSnapshot('../../golden/shadow-sheet-a3.txt');
 });
 
