@@ -1,8 +1,8 @@
 import type { Fault } from '../scheme/fault.ts';
 import type { Mm } from './drawing.ts';
 
-/** Scales that a ruler knows: those of ISO 5455 that plans are drawn at, and 1:1250 and 1:2500 of British site plans. */
-export const SCALES: readonly number[] = [50, 100, 200, 250, 500, 1000, 1250, 2500, 5000, 10000];
+/** Scales that a ruler knows: those of ISO 5455, with 1:25, 1:250, 1:1250 and 1:2500 of everyday use. */
+export const SCALES: readonly number[] = [10, 20, 25, 50, 100, 200, 250, 500, 1000, 1250, 2500, 5000, 10000];
 
 /** How large something is, or may be: metres on the ground or millimetres on paper. */
 type Size = readonly [width: number, height: number];

@@ -69,4 +69,5 @@ export function table(flow: Flow, columns: readonly Column[], rows: readonly (re
     const drawn = drawRow(columns, cells, flow.x, flow.y, false);
     flow.put(drawn.marks, drawn.height);
   }
+  flow.gap(1.4);
 }

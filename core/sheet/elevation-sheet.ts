@@ -1,0 +1,199 @@
+import type { Model } from '../form/model.ts';
+import { CAUTIONS } from '../limits/cautions.ts';
+import type { Checked } from '../scheme/fault.ts';
+import type { Scheme } from '../scheme/schema.ts';
+import { cividis } from './cividis.ts';
+import { niceStep } from './day-curve.ts';
+import type { Document, Mark, Mm } from './drawing.ts';
+import { type ElevationMap, elevation, NEVER } from './elevation.ts';
+import { FINE, SOFT } from './ink.ts';
+import { leading, line, type Piece, paragraph, rect, words } from './marks.ts';
+import { READ } from './measure.ts';
+import { fixed } from './numerals.ts';
+import { finishPages, type PaperName, type Rect } from './paper.ts';
+import { SCALES, scaleWords } from './scale.ts';
+import { scaleBar } from './scale-marks.ts';
+import { DRAWING_CAUTIONS, pageAreas, placeNotes } from './side-panel.ts';
+import { shortHash, titleBlock } from './title-block.ts';
+
+export type ElevationSheetInput = {
+  readonly scheme: Scheme;
+  readonly model: Model;
+  readonly maps: readonly ElevationMap[];
+  /** What the values are, such as `sun hours` in `h`. */
+  readonly quantity: { readonly name: string; readonly unit: string };
+  /** Such as `21 March, 21 June and 21 December 2025`. */
+  readonly period: string;
+  /** How the values were worked out, in sentences. */
+  readonly method: readonly string[];
+  readonly scale: number | null;
+  readonly paper: PaperName;
+  readonly number?: string;
+  readonly drawn: string;
+  readonly engine: string;
+  readonly hash: string;
+  readonly language?: string;
+};
+
+const GAP: Mm = 10;
+const CAPTION: Mm = 13;
+/** Parts of the colour scale, at most. */
+const TICKS = 6;
+
+type Placed = { readonly map: ElevationMap; readonly page: number; readonly x: Mm; readonly bottom: Mm };
+
+/** Maps over facades as elevations to scale, with the numbers of their colours beside them. */
+export function elevationSheet(input: ElevationSheetInput): Checked<Document> {
+  const { maps, paper, scheme } = input;
+  const areas = pageAreas(paper, true);
+  if (maps.length === 0) {
+    return {
+      ok: false,
+      faults: [
+        {
+          level: 'error',
+          code: 'nothing-to-draw',
+          place: '',
+          message: 'no wall to draw',
+          cure: 'name a wall of a block',
+        },
+      ],
+    };
+  }
+  const wanted = input.scale === null ? SCALES : [input.scale];
+  const packed = wanted.map((scale) => ({ scale, placed: pack(maps, areas.drawing, scale) }));
+  const one = packed.find((p) => p.placed?.every((q) => q.page === 0)) ?? packed.find((p) => p.placed !== null);
+  if (!one?.placed) {
+    const fitting = SCALES.find((s) => pack(maps, areas.drawing, s) !== null);
+    const message = `the widest or highest wall does not fit on ${paper} at ${wanted.map(scaleWords).join(', ')}`;
+    const cure = fitting ? `${scaleWords(fitting)} fits, or take larger paper` : 'take larger paper';
+    return { ok: false, faults: [{ level: 'error', code: 'scale-too-large', place: '', message, cure }] };
+  }
+  const { scale, placed } = one;
+  const most = scaleEnd(maps);
+  const count = 1 + Math.max(...placed.map((p) => p.page));
+  const title = `Facades, ${input.quantity.name}`;
+  const contents = Array.from({ length: count }, (_, page) => ({
+    title,
+    marks: [
+      ...placed.filter((p) => p.page === page).flatMap((p) => drawn(p, input, scale, most)),
+      ...panel(input, areas.panel[0] as Rect, scale, most),
+    ],
+  }));
+  return {
+    ok: true,
+    notes: [],
+    value: {
+      title: [scheme.title, title].filter((t) => t !== '').join(' – '),
+      author: scheme.author,
+      language: input.language ?? 'en-GB',
+      pages: finishPages(contents, paper, true, `scheme ${shortHash(input.hash)}, drawn ${input.drawn}`),
+    },
+  };
+}
+
+/** Where the elevations stand, row by row; null when one is larger than the page. */
+function pack(maps: readonly ElevationMap[], area: Rect, scale: number): readonly Placed[] | null {
+  const k = 1000 / scale;
+  const placed: Placed[] = [];
+  let [page, x, top, deepest] = [0, area.x + 4, area.y, 0];
+  for (const map of maps) {
+    const [width, height] = [map.panel.width_m * k, map.panel.height_m * k];
+    if (width + 8 > area.width || height + CAPTION > area.height) return null;
+    if (x + width + 4 > area.x + area.width) {
+      x = area.x + 4;
+      top += deepest + GAP;
+      deepest = 0;
+    }
+    if (top + height + CAPTION > area.y + area.height) {
+      page++;
+      [x, top, deepest] = [area.x + 4, area.y, 0];
+    }
+    placed.push({ map, page, x, bottom: top + height });
+    deepest = Math.max(deepest, height + CAPTION);
+    x += Math.max(width, 62) + GAP;
+  }
+  return levelled(placed, k);
+}
+
+/** Elevations of one row stand on one line, as they stand on the ground. */
+function levelled(placed: readonly Placed[], k: number): readonly Placed[] {
+  const top = (p: Placed): string => `${p.page} ${(p.bottom - p.map.panel.height_m * k).toFixed(3)}`;
+  const bottoms = new Map<string, number>();
+  for (const p of placed) bottoms.set(top(p), Math.max(bottoms.get(top(p)) ?? 0, p.bottom));
+  return placed.map((p) => ({ ...p, bottom: bottoms.get(top(p)) ?? p.bottom }));
+}
+
+/** The end of the colour scale: the first tick at or above the highest value. */
+function scaleEnd(maps: readonly ElevationMap[]): number {
+  const highest = Math.max(1e-6, ...maps.map((m) => m.value.reduce((a, b) => Math.max(a, b), 0)));
+  const step = niceStep(highest, TICKS);
+  return Math.ceil(highest / step - 1e-9) * step;
+}
+
+function drawn(p: Placed, input: ElevationSheetInput, scale: number, most: number): readonly Mark[] {
+  const width = Math.max(62, (p.map.panel.width_m * 1000) / scale);
+  const title = paragraph(p.map.title, p.x, p.bottom + 2, width, { face: 'semibold' }, 1);
+  const values = [...p.map.value].filter((_, i) => p.map.covered?.[i] !== 1);
+  const mean = values.reduce((a, b) => a + b, 0) / Math.max(1, values.length);
+  const { unit } = input.quantity;
+  const places = most >= 20 ? 0 : 1;
+  const said = `mean ${fixed(mean, places)}, least ${fixed(Math.min(...values), places)}, most ${fixed(Math.max(...values), places)} ${unit}`;
+  return [
+    ...elevation(p.map, input.model, p.x, p.bottom, scale, most),
+    ...title.marks,
+    ...paragraph(said, p.x, p.bottom + 2 + title.height, width, { colour: SOFT }, 1).marks,
+  ];
+}
+
+/** The colours with their numbers. */
+function colourKey(x: Mm, top: Mm, width: Mm, most: number, quantity: ElevationSheetInput['quantity']): Piece {
+  const marks: Mark[] = [words(`${quantity.name} [${quantity.unit}]`, x, top + READ * 0.75, { face: 'semibold' })];
+  const y = top + leading(READ) + 0.6;
+  const n = 50;
+  for (let i = 0; i < n; i++)
+    marks.push(rect(x + (width * i) / n, y, width / n + (i < n - 1 ? 0.06 : 0), 5, { fill: cividis((i + 0.5) / n) }));
+  marks.push(rect(x, y, width, 5, { stroke: FINE }));
+  const step = niceStep(most, TICKS);
+  for (let v = 0; v <= most + 1e-9; v += step) {
+    const at = x + (width * v) / most;
+    marks.push(line(at, y + 5, at, y + 6.2, FINE));
+    const anchor = v === 0 ? 'start' : v > most - step / 2 ? 'end' : 'middle';
+    marks.push(words(fixed(v, step >= 1 ? 0 : step >= 0.1 ? 1 : 2), at, y + 10, { anchor }));
+  }
+  marks.push(rect(x, y + 13, 11, 4, { fill: NEVER, stroke: FINE }), words('none in the period', x + 14, y + 16.3));
+  return { marks, height: leading(READ) + 20 };
+}
+
+function panel(input: ElevationSheetInput, area: Rect, scale: number, most: number): readonly Mark[] {
+  const bar = scaleBar(area.x, area.y, area.width - 4, scale, input.paper);
+  const key = colourKey(area.x, area.y + bar.height + 3, area.width, most, input.quantity);
+  const facts = {
+    subject: `Facades, ${input.quantity.name}`,
+    number: input.number ?? '',
+    date: input.drawn,
+    engine: input.engine,
+    hash: input.hash,
+    scale: `${scaleWords(scale)} on ${input.paper}`,
+  };
+  const height = titleBlock(area.x, 0, area.width, input.scheme, facts).height;
+  const foot = area.y + area.height - height;
+  const notes = [
+    { heading: 'Period', lines: [input.period] },
+    {
+      heading: 'How it was worked out',
+      lines: [
+        ...input.method,
+        'Walls are seen from outside. Figures stand in the middle of the cells that they are of.',
+      ],
+    },
+    { heading: DRAWING_CAUTIONS.heading, lines: [CAUTIONS[0] as string] },
+  ];
+  const placed = placeNotes(notes, [{ x: area.x, y: area.y + bar.height + key.height + 6, end: foot - 2 }], area.width);
+  return [
+    ...bar.marks,
+    ...key.marks,
+    ...placed.marks,
+    ...titleBlock(area.x, foot, area.width, input.scheme, facts).marks,
+  ];
+}
