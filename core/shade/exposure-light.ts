@@ -58,7 +58,7 @@ export function columnsFor(samples: number): number {
 /** Stands for the tangent at the zenith: above every altitude that can be told from it, yet finite, so that it can be passed. */
 const ZENITH = 1e15;
 
-/** Sorts light into columns. @param count number of columns, a multiple of 4 @throws {RangeError} for a sample at or below the horizon */
+/** Sorts light into columns. @param count number of columns, a multiple of 8 @throws {RangeError} for a sample at or below the horizon */
 export function sortLight(light: Light, count: number): LightColumns {
   const n = light.sx.length;
   const column = new Uint32Array(n);

@@ -43,7 +43,7 @@ export function pointSky(o: Occluders, at: Vec3, normal: Vec3): PointSky {
 /**
  * The shading mask of a point: everything round it, whichever way it faces. Inside a solid everything is hidden.
  * @param north_rad  `Model.north_rad`
- * @param count      azimuths, a multiple of 4 from 8; they stand a little closer together near the axes of the drawing
+ * @param count      azimuths, a multiple of 8; they stand a little closer together near the axes of the drawing
  */
 export function shadingMask(o: Occluders, at: Vec3, north_rad: number, count = 720): ShadingMask {
   const rays = makeSkyRays(count);

@@ -1,8 +1,15 @@
 import { LISTED } from './skyline.ts';
 import { type Columns, makeColumns } from './skyline-columns.ts';
 import type { Shortlist } from './skyline-cull.ts';
-import type { Occluders } from './skyline-occluders.ts';
-import { clearTrace, makePatchScratch, type PatchScratch, tracePatch } from './skyline-patches.ts';
+import { DISC, type Occluders } from './skyline-occluders.ts';
+import {
+  clearTrace,
+  isSheltered,
+  makePatchScratch,
+  type PatchScratch,
+  shelterOf,
+  tracePatch,
+} from './skyline-patches.ts';
 
 /**
  * The dome cut by upright half-planes through a point, one an azimuth ray. On each ray the stretches of altitude that stand
@@ -69,8 +76,10 @@ export function traceSky(t: SkyTrace, o: Occluders, list: Shortlist, x: number, 
   t.head.fill(-1);
   t.used = 0;
   traceWalls(t, list, x, y, z);
+  if (list.patchCount > 0) shelterOf(t.patches, t.horizon);
   for (let k = 0; k < list.patchCount; k++) {
     const patch = list.patchId[k]!;
+    if (isSheltered(t.patches, o.patchDisc, patch * DISC, x, y, z)) continue;
     tracePatchOnRays(t, o.corners, o.patchCorner[patch]!, o.patchCorner[patch + 1]!, x, y, z);
   }
 }

@@ -28,9 +28,9 @@ export function columnOf(count: number, x: number, y: number): number {
   return c < count ? c : 0;
 }
 
-/** @param count number of columns, a multiple of 4 and at least 8 */
+/** @param count number of columns, a multiple of 8 */
 export function makeColumns(count: number): Columns {
-  if (!(count >= 8 && count % 4 === 0)) throw new RangeError(`columns come in fours, from 8: got ${count}`);
+  if (!(count >= 8 && count % 8 === 0)) throw new RangeError(`columns come in eights: got ${count}`);
   const ux = new Float64Array(count + 1);
   const uy = new Float64Array(count + 1);
   for (let j = 0; j <= count; j++) {

@@ -6,7 +6,7 @@ import { type Occluders, WALL } from './skyline-occluders.ts';
 /**
  * Which occluders can matter to a group of receptors that lie in one box and share a plane's direction. Dropped is what
  * stands behind their plane or below them, what turns its back to all of them, and what cannot rise, seen from any of them,
- * above what others hide from all of them. The last is judged in bands of azimuth, from both sides: the least that a wall
+ * above what others hide from all of them. The last is judged column by column of azimuth, from both sides: the least that a wall
  * hides from any receptor of the box, and the most. Dropping changes no result; it only saves work.
  */
 export type Shortlist = {
@@ -32,20 +32,22 @@ export type Culler = {
   readonly solidReach: Float64Array;
   readonly patchReach: Float64Array;
   readonly patchTop: Float64Array;
-  /** Bands: every `stride` columns one. */
-  readonly stride: number;
-  readonly bulge: number;
-  /** Per band: the lowest sample (tangent); and the least that is hidden from all receptors of the box. */
+  /** Per patch: least and most x, least and most y. */
+  readonly patchExtent: Float64Array;
+  /** Per column: the lowest altitude that is asked (tangent); and the least that is hidden from all receptors of the box. */
   readonly lowest: Float64Array;
   readonly hidden: Float64Array;
   /** Per wall of the list at hand: first and last turn, slopes of the upper bound along x and y, its peak. */
   readonly span: Float64Array;
   readonly key: Float64Array;
+  /** What `turnRange` answers. */
+  readonly range: Float64Array;
   /** 1 for a solid that a receptor of the box may touch: it may have to be moved a hair's breadth, so no bound holds for it. */
   readonly near: Uint8Array;
 };
 
 const SPAN = 5;
+const EXTENT = 4;
 /** Walls nearer to the box than this are never judged by bounds. */
 const TOUCHING_m = 4 * IN_FRONT_m;
 
@@ -94,20 +96,22 @@ export function makeCuller(
   const patches = o.patchCorner.length - 1;
   const patchReach = new Float64Array(patches).fill(-Infinity);
   const patchTop = new Float64Array(patches).fill(-Infinity);
+  const patchExtent = new Float64Array(patches * EXTENT);
   for (let p = 0; p < patches; p++) {
+    const e = p * EXTENT;
+    patchExtent.set([Infinity, -Infinity, Infinity, -Infinity], e);
     for (let i = o.patchCorner[p]!; i < o.patchCorner[p + 1]!; i++) {
       const z = o.corners[3 * i + 2]!;
-      const r = nx * o.corners[3 * i]! + ny * o.corners[3 * i + 1]! + nz * z;
+      const x = o.corners[3 * i]!;
+      const y = o.corners[3 * i + 1]!;
+      const r = nx * x + ny * y + nz * z;
+      patchExtent[e] = Math.min(patchExtent[e]!, x);
+      patchExtent[e + 1] = Math.max(patchExtent[e + 1]!, x);
+      patchExtent[e + 2] = Math.min(patchExtent[e + 2]!, y);
+      patchExtent[e + 3] = Math.max(patchExtent[e + 3]!, y);
       if (r > patchReach[p]!) patchReach[p] = r;
       if (z > patchTop[p]!) patchTop[p] = z;
     }
-  }
-  const stride = columns.count >= 64 ? 4 : 1;
-  const bands = columns.count / stride;
-  const lowestInBand = new Float64Array(bands).fill(Infinity);
-  for (let c = 0; c < columns.count; c++) {
-    const b = Math.floor(c / stride);
-    if (lowest[c]! < lowestInBand[b]!) lowestInBand[b] = lowest[c]!;
   }
   return {
     occluders: o,
@@ -116,19 +120,15 @@ export function makeCuller(
     solidReach,
     patchReach,
     patchTop,
-    stride,
-    bulge: 1 / Math.cos(stride * Math.acos(1 / columns.bulge)),
-    lowest: lowestInBand,
-    hidden: new Float64Array(bands),
+    patchExtent,
+    lowest,
+    hidden: new Float64Array(columns.count),
     span: new Float64Array(Math.max(o.wallSolid.length, 1) * SPAN),
     key: new Float64Array(Math.max(o.wallSolid.length, 1)),
+    range: new Float64Array(2),
     near: new Uint8Array(o.solidCount),
   };
 }
-
-/** The turn of `turn`, brought to within half a circle of `near`. */
-const unwrap = (turn: number, near: number): number =>
-  turn - near > 2 ? turn - 4 : turn - near < -2 ? turn + 4 : turn;
 
 /** Shortens a list for the receptors of a box. `from` and `to` must be different lists. */
 export function cull(k: Culler, from: Shortlist, box: ReceptorBox, to: Shortlist): void {
@@ -162,7 +162,7 @@ function boundWalls(k: Culler, from: Shortlist, box: ReceptorBox, to: Shortlist)
     const base = o.walls[at + 4]!;
     const ra = nx * ax + ny * ay;
     const rb = nx * bx + ny * by;
-    if ((ra > rb ? ra : rb) + nz * (nz > 0 ? top : base) < box.plane - TOUCHING_m) continue;
+    if (Math.max(ra, rb) + nz * (nz > 0 ? top : base) < box.plane - TOUCHING_m) continue;
     const ex = bx - ax;
     const ey = by - ay;
     const run = Math.sqrt(ex * ex + ey * ey);
@@ -178,57 +178,77 @@ function boundWalls(k: Culler, from: Shortlist, box: ReceptorBox, to: Shortlist)
     k.span[s + 4] = Infinity;
     if (near < TOUCHING_m || k.near[o.wallSolid[w]!] === 1) continue;
     // Turns between which any receptor sees it, and those between which all do: anticlockwise from corner b to corner a.
-    const b0 = turnOf(bx - x0, by - y0);
-    const b1 = unwrap(turnOf(bx - x1, by - y0), b0);
-    const b2 = unwrap(turnOf(bx - x0, by - y1), b0);
-    const b3 = unwrap(turnOf(bx - x1, by - y1), b0);
-    const a0 = turnOf(ax - x0, ay - y0);
-    const a1 = unwrap(turnOf(ax - x1, ay - y0), a0);
-    const a2 = unwrap(turnOf(ax - x0, ay - y1), a0);
-    const a3 = unwrap(turnOf(ax - x1, ay - y1), a0);
-    const wrap = a0 < b0 ? 4 : 0;
-    k.span[s] = Math.min(b0, b1, b2, b3);
-    k.span[s + 1] = Math.max(a0, a1, a2, a3) + wrap;
+    turnRange(k.range, bx - x1, bx - x0, by - y1, by - y0);
+    const bLeast = k.range[0]!;
+    const bMost = k.range[1]!;
+    turnRange(k.range, ax - x1, ax - x0, ay - y1, ay - y0);
+    const wrap = k.range[0]! < bLeast - 1e-9 ? 4 : 0;
+    const aLeast = k.range[0]! + wrap;
+    const aMost = k.range[1]! + wrap;
+    k.span[s] = bLeast;
+    k.span[s + 1] = aMost;
     const lift = (top - z0) / near;
     k.span[s + 2] = -px * lift;
     k.span[s + 3] = -py * lift;
     k.span[s + 4] = lift;
     if (base <= z0 && top > z1) {
       const least = (top - z1) / far;
-      raiseHidden(k, Math.max(b0, b1, b2, b3), Math.min(a0, a1, a2, a3) + wrap, -px * least, -py * least);
+      raiseHidden(k, bMost, aLeast, -px * least, -py * least);
     }
   }
   return kept;
 }
 
-/** Bands between two turns that a wall covers from end to end hide at least what it hides at their edges. */
+/**
+ * The least and the most turn of the directions in a box that does not hold the origin; the most may pass 4. In one quarter
+ * two corners decide, else all four are asked.
+ */
+function turnRange(range: Float64Array, dx0: number, dx1: number, dy0: number, dy1: number): void {
+  if ((dx0 > 0 || dx1 < 0) && (dy0 > 0 || dy1 < 0)) {
+    // Anticlockwise is towards −x above the x axis and towards +x below it, towards +y right of the y axis and −y left of it.
+    const least = turnOf(dy0 > 0 ? dx1 : dx0, dx0 > 0 ? dy0 : dy1);
+    range[0] = least;
+    range[1] = turnOf(dy0 > 0 ? dx0 : dx1, dx0 > 0 ? dy1 : dy0);
+    return;
+  }
+  const t0 = turnOf(dx0, dy0);
+  const t1 = unwrap(turnOf(dx1, dy0), t0);
+  const t2 = unwrap(turnOf(dx0, dy1), t0);
+  const t3 = unwrap(turnOf(dx1, dy1), t0);
+  const least = Math.min(t0, t1, t2, t3);
+  const up = least < 0 ? 4 : 0;
+  range[0] = least + up;
+  range[1] = Math.max(t0, t1, t2, t3) + up;
+}
+
+/** The turn of `turn`, brought to within half a circle of `near`. */
+const unwrap = (turn: number, near: number): number =>
+  turn - near > 2 ? turn - 4 : turn - near < -2 ? turn + 4 : turn;
+
+/** Columns between two turns that a wall covers from end to end hide at least what it hides at their edges. */
 function raiseHidden(k: Culler, from: number, to: number, kx: number, ky: number): void {
-  const { hidden, stride } = k;
-  const { ux, uy } = k.columns;
-  const bands = hidden.length;
-  const first = Math.ceil((from * bands) / 4);
-  const last = Math.floor((to * bands) / 4);
-  for (let b = first; b < last; b++) {
-    const c = ((b % bands) + bands) % bands;
-    const t0 = kx * ux[c * stride]! + ky * uy[c * stride]!;
-    const t1 = kx * ux[(c + 1) * stride]! + ky * uy[(c + 1) * stride]!;
-    const low = t0 < t1 ? t0 : t1;
+  const { hidden } = k;
+  const { count, ux, uy } = k.columns;
+  const first = Math.ceil((from * count) / 4);
+  const n = Math.floor((to * count) / 4) - first;
+  let c = first - count * Math.floor(first / count);
+  for (let i = 0; i < n; i++) {
+    const low = Math.min(kx * ux[c]! + ky * uy[c]!, kx * ux[c + 1]! + ky * uy[c + 1]!);
     if (low > hidden[c]!) hidden[c] = low;
+    if (++c === count) c = 0;
   }
 }
 
 /** Whether anything between two turns that rises to a cosine over azimuth may stand above what is hidden anyway. */
 function mayRise(k: Culler, from: number, to: number, kx: number, ky: number): boolean {
-  const { hidden, stride, bulge } = k;
-  const { ux, uy } = k.columns;
-  const bands = hidden.length;
-  const first = Math.floor((from * bands) / 4);
-  const last = Math.floor((to * bands) / 4);
-  for (let b = first; b <= last; b++) {
-    const c = ((b % bands) + bands) % bands;
-    const t0 = kx * ux[c * stride]! + ky * uy[c * stride]!;
-    const t1 = kx * ux[(c + 1) * stride]! + ky * uy[(c + 1) * stride]!;
-    if ((t0 > t1 ? t0 : t1) * bulge > hidden[c]!) return true;
+  const { hidden } = k;
+  const { count, ux, uy, bulge } = k.columns;
+  const first = Math.floor((from * count) / 4);
+  const n = Math.min(count, Math.floor((to * count) / 4) - first + 1);
+  let c = first - count * Math.floor(first / count);
+  for (let i = 0; i < n; i++) {
+    if (Math.max(kx * ux[c]! + ky * uy[c]!, kx * ux[c + 1]! + ky * uy[c + 1]!) * bulge > hidden[c]!) return true;
+    if (++c === count) c = 0;
   }
   return false;
 }
@@ -285,41 +305,29 @@ function sortByKey(id: Uint32Array, key: Float64Array, n: number): void {
 function patchMatters(k: Culler, p: number, box: ReceptorBox): boolean {
   const top = k.patchTop[p]!;
   if (top <= box.z0 || k.patchReach[p]! <= box.plane + IN_FRONT_m) return false;
-  const { corners, patchCorner } = k.occluders;
-  let x0 = Infinity;
-  let x1 = -Infinity;
-  let y0 = Infinity;
-  let y1 = -Infinity;
-  for (let i = patchCorner[p]!; i < patchCorner[p + 1]!; i++) {
-    const x = corners[3 * i]!;
-    const y = corners[3 * i + 1]!;
-    if (x < x0) x0 = x;
-    if (x > x1) x1 = x;
-    if (y < y0) y0 = y;
-    if (y > y1) y1 = y;
-  }
   // From the box to the patch: the differences lie in one box again, and where that holds the origin the patch may be overhead.
-  const dx0 = x0 - box.x1;
-  const dx1 = x1 - box.x0;
-  const dy0 = y0 - box.y1;
-  const dy1 = y1 - box.y0;
+  const at = p * EXTENT;
+  const dx0 = k.patchExtent[at]! - box.x1;
+  const dx1 = k.patchExtent[at + 1]! - box.x0;
+  const dy0 = k.patchExtent[at + 2]! - box.y1;
+  const dy1 = k.patchExtent[at + 3]! - box.y0;
   if (dx0 <= TOUCHING_m && dx1 >= -TOUCHING_m && dy0 <= TOUCHING_m && dy1 >= -TOUCHING_m) return true;
   const gapX = dx0 > 0 ? dx0 : dx1 < 0 ? -dx1 : 0;
   const gapY = dy0 > 0 ? dy0 : dy1 < 0 ? -dy1 : 0;
-  const t0 = turnOf(dx0, dy0);
-  const t1 = unwrap(turnOf(dx1, dy0), t0);
-  const t2 = unwrap(turnOf(dx0, dy1), t0);
-  const t3 = unwrap(turnOf(dx1, dy1), t0);
-  const lift = (top - box.z0) / Math.sqrt(gapX * gapX + gapY * gapY);
-  return mayStand(k, Math.min(t0, t1, t2, t3), Math.max(t0, t1, t2, t3), lift);
+  turnRange(k.range, dx0, dx1, dy0, dy1);
+  return mayStand(k, k.range[0]!, k.range[1]!, (top - box.z0) / Math.sqrt(gapX * gapX + gapY * gapY));
 }
 
 /** Whether anything between two turns that rises to one altitude may stand above what is hidden anyway. */
 function mayStand(k: Culler, from: number, to: number, tan: number): boolean {
-  const bands = k.hidden.length;
-  const first = Math.floor((from * bands) / 4);
-  const last = Math.floor((to * bands) / 4);
-  for (let b = first; b <= last; b++) if (tan > k.hidden[((b % bands) + bands) % bands]!) return true;
+  const { count } = k.columns;
+  const first = Math.floor((from * count) / 4);
+  const n = Math.min(count, Math.floor((to * count) / 4) - first + 1);
+  let c = first - count * Math.floor(first / count);
+  for (let i = 0; i < n; i++) {
+    if (tan > k.hidden[c]!) return true;
+    if (++c === count) c = 0;
+  }
   return false;
 }
 

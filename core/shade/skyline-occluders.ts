@@ -26,7 +26,11 @@ export type Occluders = {
   /** Corners of patch p: `patchCorner[p]` to `patchCorner[p + 1]`, three numbers each in `corners`. */
   readonly patchCorner: Uint32Array;
   readonly corners: Float64Array;
+  /** An upright cylinder round each patch, `DISC` numbers: x and y of its axis, radius, top. */
+  readonly patchDisc: Float64Array;
 };
+
+export const DISC = 4;
 
 /**
  * The occluders of solids and flat shaders. The order of either changes nothing but the order of the columns.
@@ -73,10 +77,38 @@ export function makeOccluders(solids: readonly Solid[], shaders: readonly Pick<S
     solidWall,
     patchCorner: Uint32Array.from(patchCorner),
     corners: Float64Array.from(corners),
+    patchDisc: discsOf(corners, patchCorner),
   };
   if (![...result.walls, ...result.corners].every(Number.isFinite))
     throw new RangeError('a corner is not a finite number');
   return result;
+}
+
+/** Upright cylinders round patches, about the middle of their boxes. */
+function discsOf(corners: readonly number[], patchCorner: readonly number[]): Float64Array {
+  const discs = new Float64Array((patchCorner.length - 1) * DISC);
+  for (let p = 0; p + 1 < patchCorner.length; p++) {
+    const from = 3 * patchCorner[p]!;
+    const to = 3 * patchCorner[p + 1]!;
+    const [low, high] = [
+      [Infinity, Infinity],
+      [-Infinity, -Infinity],
+    ] as [[number, number], [number, number]];
+    let top = -Infinity;
+    for (let i = from; i < to; i += 3) {
+      for (const axis of [0, 1] as const) {
+        low[axis] = Math.min(low[axis], corners[i + axis]!);
+        high[axis] = Math.max(high[axis], corners[i + axis]!);
+      }
+      top = Math.max(top, corners[i + 2]!);
+    }
+    const x = (low[0] + high[0]) / 2;
+    const y = (low[1] + high[1]) / 2;
+    let radius = 0;
+    for (let i = from; i < to; i += 3) radius = Math.max(radius, Math.hypot(corners[i]! - x, corners[i + 1]! - y));
+    discs.set([x, y, radius, top], p * DISC);
+  }
+  return discs;
 }
 
 /** The outline of solid s, as its walls run. */

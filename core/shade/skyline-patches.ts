@@ -1,5 +1,5 @@
-import type { Columns } from './skyline-columns.ts';
-import type { Occluders } from './skyline-occluders.ts';
+import { type Columns, turnOf } from './skyline-columns.ts';
+import { DISC, type Occluders } from './skyline-occluders.ts';
 import { openRun, rankOf, SLACK, type Skyline } from './skyline.ts';
 
 /**
@@ -19,6 +19,8 @@ export type PatchScratch = {
   readonly cornerHigh: Float64Array;
   readonly touched: Uint8Array;
   readonly list: Uint32Array;
+  /** Per band of columns, what walls hide for certain (tangent). */
+  readonly shelter: Float64Array;
   /** Corners relative to the receptor, and the normals of the planes through it and each edge; grown as needed. */
   relative: Float64Array;
   planes: Float64Array;
@@ -36,6 +38,7 @@ export function makePatchScratch(columns: number): PatchScratch {
     cornerHigh: new Float64Array(columns),
     touched: new Uint8Array(columns),
     list: new Uint32Array(columns),
+    shelter: new Float64Array(columns / BAND),
     relative: new Float64Array(3 * 16),
     planes: new Float64Array(3 * 16),
     zenith: false,
@@ -229,20 +232,26 @@ function hideInColumn(s: Skyline, p: PatchScratch, n: number, c: number): void {
   }
   if (odd || nadir || (round && !whole)) lowMost = -Infinity;
   if (odd || zenith || (round && !whole)) highMost = Infinity;
-  if (!(highMost > 0)) return;
-  const mayFrom = clamp(rankOf(light, c, lowMost * (1 - SLACK)), start, end);
-  const mayTo = clamp(rankOf(light, c, highMost * bulge * (1 + 2 * SLACK)), start, end);
+  const reach = highMost * bulge * (1 + 2 * SLACK);
+  const hiddenTo = s.sure[c]! * (1 - SLACK);
+  if (!(reach > hiddenTo)) return;
+  const { tan } = light;
+  const mayFrom = lowMost <= hiddenTo ? start : clamp(rankOf(light, c, lowMost * (1 - SLACK)), start, end);
+  const mayTo = reach === Infinity ? end : clamp(rankOf(light, c, reach), start, end);
   if (mayFrom >= mayTo) return;
   let sureFrom = mayTo;
   let sureTo = mayTo;
   if (whole) {
+    // Both bounds lie a few samples inside the others: a step or two finds them.
     const low = nadir ? 0 : Math.max(p.low[c]!, p.low[e]!) * bulge * (1 + SLACK);
     const high = zenith ? Infinity : Math.min(p.high[c]!, p.high[e]!) * (1 - SLACK);
-    const a = clamp(rankOf(light, c, low), mayFrom, mayTo);
-    const b = high > 0 ? clamp(rankOf(light, c, high), mayFrom, mayTo) : mayFrom;
-    if (b > a) {
-      sureFrom = a;
-      sureTo = b;
+    let from = mayFrom;
+    while (from < mayTo && tan[from]! < low) from++;
+    let to = mayTo;
+    while (to > from && tan[to - 1]! >= high) to--;
+    if (to > from) {
+      sureFrom = from;
+      sureTo = to;
     }
   }
   hideRun(s, c, sureFrom, sureTo);
@@ -250,7 +259,7 @@ function hideInColumn(s: Skyline, p: PatchScratch, n: number, c: number): void {
   testRun(s, p, n, c, sureTo, mayTo);
 }
 
-const clamp = (v: number, from: number, to: number): number => (v < from ? from : v > to ? to : v);
+const clamp = (v: number, from: number, to: number): number => (v < from ? from : Math.min(v, to));
 
 /** Hides a run of ranks: from the bottom or the top of what is still seen by moving that end, else by marks. */
 function hideRun(s: Skyline, c: number, from: number, to: number): void {
@@ -289,7 +298,12 @@ function testRun(s: Skyline, p: PatchScratch, n: number, c: number, from: number
   }
 }
 
-/** Hides the samples behind patches of the occluders, by number. */
+/** Columns in a band of the shelter. */
+const BAND = 8;
+/** Columns that an angle of one radian spans at the most, as a share of a quarter: turns run fastest along the axes. */
+const TURN_PER_RADIAN = 1;
+
+/** Hides the samples behind patches of the occluders, by number. Those that lie below what walls hide anyway are passed over. */
 export function hidePatches(
   s: Skyline,
   p: PatchScratch,
@@ -300,8 +314,53 @@ export function hidePatches(
   y: number,
   z: number,
 ): void {
+  shelterOf(p, s.sure);
   for (let k = 0; k < n; k++) {
     const patch = list[k]!;
+    if (isSheltered(p, o.patchDisc, patch * DISC, x, y, z)) continue;
     hidePatch(s, p, o.corners, o.patchCorner[patch]!, o.patchCorner[patch + 1]!, x, y, z);
   }
+}
+
+/**
+ * What is hidden for certain, band by band: the least of a band's values and of the first after it, so that it holds for
+ * values at the columns' edges as for those of whole columns.
+ */
+export function shelterOf(p: PatchScratch, hidden: Float64Array): void {
+  const { shelter } = p;
+  const count = hidden.length;
+  for (let b = 0; b < shelter.length; b++) {
+    const after = (b + 1) * BAND;
+    let least = hidden[after === count ? 0 : after]!;
+    for (let c = b * BAND; c < after; c++) least = Math.min(least, hidden[c]!);
+    shelter[b] = least * (1 - SLACK);
+  }
+}
+
+/** Whether the cylinder round a patch, seen from the point, stands nowhere above the shelter. `at`: where its disc starts. */
+export function isSheltered(
+  p: PatchScratch,
+  discs: Float64Array,
+  at: number,
+  x: number,
+  y: number,
+  z: number,
+): boolean {
+  const dx = discs[at]! - x;
+  const dy = discs[at + 1]! - y;
+  const radius = discs[at + 2]!;
+  const away = Math.sqrt(dx * dx + dy * dy);
+  if (away < 2 * radius) return false;
+  const rise = (discs[at + 3]! - z) / (away - radius);
+  if (!(rise > 0)) return true;
+  // Half the angle that it spans is asin(r / d), which is less than 1.05 r / d from two radii on.
+  const half = ((1.05 * radius) / away) * TURN_PER_RADIAN;
+  const bands = p.shelter.length;
+  const turn = turnOf(dx, dy);
+  const first = Math.floor(((turn - half) * bands) / 4);
+  const last = Math.floor(((turn + half) * bands) / 4);
+  for (let b = first; b <= last; b++) {
+    if (rise > p.shelter[b < 0 ? b + bands : b >= bands ? b - bands : b]!) return false;
+  }
+  return true;
 }

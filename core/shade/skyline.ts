@@ -100,12 +100,12 @@ export function raiseWalls(s: Skyline, walls: Float64Array, n: number, x: number
       let t0 = kx * ux[from]! + ky * uy[from]!;
       for (let c = from; c <= to; c++) {
         const t1 = kx * ux[c + 1]! + ky * uy[c + 1]!;
-        const high = (t0 > t1 ? t0 : t1) * bulge;
+        const high = Math.max(t0, t1) * bulge;
         if (high > sure[c]!) {
           raises = true;
           if (high > may[c]!) may[c] = high;
           if (c !== first && c !== last) {
-            const low = t0 < t1 ? t0 : t1;
+            const low = Math.min(t0, t1);
             if (low > sure[c]!) sure[c] = low;
           }
         }
@@ -158,9 +158,10 @@ function rankColumns(s: Skyline): number {
   return open;
 }
 
-/** Tests the open samples against every wall that might hide them. */
+/** Tests the open samples against every wall that reaches above what is hidden for certain in their column. */
 function testRaised(s: Skyline, kept: number): void {
-  const { light, columns, raised, openFrom, openTo, mark } = s;
+  const { light, columns, sure, raised, openFrom, openTo, mark } = s;
+  const { ux, uy, bulge } = columns;
   const { sx, sy, sz } = light;
   for (let w = 0; w < kept; w++) {
     const r = w * RAISED;
@@ -178,7 +179,10 @@ function testRaised(s: Skyline, kept: number): void {
       for (let c = part === 0 ? first : 0; c <= to; c++) {
         const stop = openTo[c]!;
         if (stop === 0) continue;
+        const high = Math.max(kx * ux[c]! + ky * uy[c]!, kx * ux[c + 1]! + ky * uy[c + 1]!) * bulge;
+        if (high <= sure[c]!) continue;
         for (let i = openFrom[c]!; i < stop; i++) {
+          if (mark[i] === 1) continue;
           const px = sx[i]!;
           const py = sy[i]!;
           if (sz[i]! <= kx * px + ky * py && bx * py - by * px >= 0 && px * ay - py * ax >= 0) mark[i] = 1;
@@ -227,7 +231,7 @@ export function sumSeen(s: Skyline, out: Float64Array, at: number): void {
     const from = floor[c]!;
     const to = ceiling[c]!;
     if (from >= to) continue;
-    const marksTo = openTo[c]! < to ? openTo[c]! : to;
+    const marksTo = Math.min(openTo[c]!, to);
     if (marksTo <= from) {
       minutes += minutesBefore[to]! - minutesBefore[from]!;
       beam += beamBefore[to]! - beamBefore[from]!;
@@ -235,7 +239,7 @@ export function sumSeen(s: Skyline, out: Float64Array, at: number): void {
     }
     // Runs of seen samples, each as long as it can be, so that the sums do not depend on how samples came to be hidden.
     let run = from;
-    const marksFrom = openFrom[c]! > from ? openFrom[c]! : from;
+    const marksFrom = Math.max(openFrom[c]!, from);
     for (let i = marksFrom; i < marksTo; i++) {
       if (mark[i] === 0) continue;
       if (i > run) {
