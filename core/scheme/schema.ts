@@ -1,4 +1,5 @@
 import * as z from 'zod';
+import { Weather } from './weather-schema.ts';
 
 /**
  * The scheme file, version 1: what a person may write by hand. Metres and degrees; axes as in core/units/angle.ts.
@@ -226,7 +227,7 @@ export const Scheme = z.looseObject({
   glass: z.array(Glass).max(500).default([]),
   devices: z.array(Device).max(20000).default([]),
   trees: z.array(Tree).max(5000).default([]),
-  weather: z.unknown().optional(),
+  weather: Weather.nullable().optional(),
   limits: z
     .union([z.string().max(200), z.looseObject({ format: z.literal('shadewright-limits') }), z.null()])
     .default(null),
