@@ -3,7 +3,9 @@ import { hideSeen, listSeen, makeSkyline, raiseWalls, type Skyline, sumSeen } fr
 import { makeColumns } from './skyline-columns.ts';
 import { byNormal, type Receptors, visitReceptors } from './skyline-groups.ts';
 import type { Occluders } from './skyline-occluders.ts';
-import { hidePatches, makePatchScratch } from './skyline-patches.ts';
+import { makePatchScratch } from './skyline-patch-trace.ts';
+import { hidePatches } from './skyline-patches.ts';
+import { makeShelter } from './skyline-shelter.ts';
 
 /** Sun on each receptor: columns, one row a receptor. */
 export type SunOnReceptors = {
@@ -80,6 +82,7 @@ function eachSkyline(
   const plane = lightOnPlane(light, [r.nx[first]!, r.ny[first]!, r.nz[first]!]);
   const skyline = makeSkyline(plane, columns, o.wallSolid.length);
   const patches = makePatchScratch(light.count);
+  const shelter = makeShelter(light.count);
   visitReceptors(o, columns, plane.lowest, r, rows, (row, list) => {
     if (list === null) {
       done(row, null);
@@ -89,7 +92,7 @@ function eachSkyline(
     const y = r.y[row]!;
     const z = r.z[row]!;
     raiseWalls(skyline, list.walls, list.wallCount, x, y, z);
-    if (list.patchCount > 0) hidePatches(skyline, patches, o, list.patchId, list.patchCount, x, y, z);
+    if (list.patchCount > 0) hidePatches(skyline, patches, shelter, o, list.patchId, list.patchCount, x, y, z);
     if (hider !== null) hideSeen(skyline, (sx, sy, sz) => hider(x, y, z, sx, sy, sz));
     done(row, skyline);
   });

@@ -2,14 +2,8 @@ import { LISTED } from './skyline.ts';
 import { type Columns, makeColumns } from './skyline-columns.ts';
 import type { Shortlist } from './skyline-cull.ts';
 import { DISC, type Occluders } from './skyline-occluders.ts';
-import {
-  clearTrace,
-  isSheltered,
-  makePatchScratch,
-  type PatchScratch,
-  shelterOf,
-  tracePatch,
-} from './skyline-patches.ts';
+import { clearTrace, makePatchScratch, type PatchScratch, tracePatch } from './skyline-patch-trace.ts';
+import { fillShelter, isSheltered, makeShelter, type Shelter } from './skyline-shelter.ts';
 
 /**
  * The dome cut by upright half-planes through a point, one an azimuth ray. On each ray the stretches of altitude that stand
@@ -51,6 +45,7 @@ export type SkyTrace = {
   high: Float64Array;
   used: number;
   readonly patches: PatchScratch;
+  readonly shelter: Shelter;
   /** The open stretches of the ray last asked for, from and to in turn. */
   open: Float64Array;
 };
@@ -66,6 +61,7 @@ export function makeSkyTrace(rays: SkyRays): SkyTrace {
     high: new Float64Array(64),
     used: 0,
     patches: makePatchScratch(count),
+    shelter: makeShelter(count),
     open: new Float64Array(16),
   };
 }
@@ -76,10 +72,10 @@ export function traceSky(t: SkyTrace, o: Occluders, list: Shortlist, x: number, 
   t.head.fill(-1);
   t.used = 0;
   traceWalls(t, list, x, y, z);
-  if (list.patchCount > 0) shelterOf(t.patches, t.horizon);
+  if (list.patchCount > 0) fillShelter(t.shelter, t.horizon);
   for (let k = 0; k < list.patchCount; k++) {
     const patch = list.patchId[k]!;
-    if (isSheltered(t.patches, o.patchDisc, patch * DISC, x, y, z)) continue;
+    if (isSheltered(t.shelter, o.patchDisc, patch * DISC, x, y, z)) continue;
     tracePatchOnRays(t, o.corners, o.patchCorner[patch]!, o.patchCorner[patch + 1]!, x, y, z);
   }
 }

@@ -1,6 +1,7 @@
 import { IN_FRONT_m } from '../units/tolerance.ts';
 import { LISTED } from './skyline.ts';
-import { type Columns, turnOf } from './skyline-columns.ts';
+import { mayRise, mayStand, raiseHidden, turnRange } from './skyline-bounds.ts';
+import type { Columns } from './skyline-columns.ts';
 import { type Occluders, WALL } from './skyline-occluders.ts';
 
 /**
@@ -191,66 +192,13 @@ function boundWalls(k: Culler, from: Shortlist, box: ReceptorBox, to: Shortlist)
     k.span[s + 2] = -px * lift;
     k.span[s + 3] = -py * lift;
     k.span[s + 4] = lift;
-    if (base <= z0 && top > z1) {
+    // A wall is seen under less than half a circle.
+    if (base <= z0 && top > z1 && aLeast < bMost + 2) {
       const least = (top - z1) / far;
-      raiseHidden(k, bMost, aLeast, -px * least, -py * least);
+      raiseHidden(k.hidden, k.columns, bMost, aLeast, -px * least, -py * least);
     }
   }
   return kept;
-}
-
-/**
- * The least and the most turn of the directions in a box that does not hold the origin; the most may pass 4. In one quarter
- * two corners decide, else all four are asked.
- */
-function turnRange(range: Float64Array, dx0: number, dx1: number, dy0: number, dy1: number): void {
-  if ((dx0 > 0 || dx1 < 0) && (dy0 > 0 || dy1 < 0)) {
-    // Anticlockwise is towards −x above the x axis and towards +x below it, towards +y right of the y axis and −y left of it.
-    const least = turnOf(dy0 > 0 ? dx1 : dx0, dx0 > 0 ? dy0 : dy1);
-    range[0] = least;
-    range[1] = turnOf(dy0 > 0 ? dx0 : dx1, dx0 > 0 ? dy1 : dy0);
-    return;
-  }
-  const t0 = turnOf(dx0, dy0);
-  const t1 = unwrap(turnOf(dx1, dy0), t0);
-  const t2 = unwrap(turnOf(dx0, dy1), t0);
-  const t3 = unwrap(turnOf(dx1, dy1), t0);
-  const least = Math.min(t0, t1, t2, t3);
-  const up = least < 0 ? 4 : 0;
-  range[0] = least + up;
-  range[1] = Math.max(t0, t1, t2, t3) + up;
-}
-
-/** The turn of `turn`, brought to within half a circle of `near`. */
-const unwrap = (turn: number, near: number): number =>
-  turn - near > 2 ? turn - 4 : turn - near < -2 ? turn + 4 : turn;
-
-/** Columns between two turns that a wall covers from end to end hide at least what it hides at their edges. */
-function raiseHidden(k: Culler, from: number, to: number, kx: number, ky: number): void {
-  const { hidden } = k;
-  const { count, ux, uy } = k.columns;
-  const first = Math.ceil((from * count) / 4);
-  const n = Math.floor((to * count) / 4) - first;
-  let c = first - count * Math.floor(first / count);
-  for (let i = 0; i < n; i++) {
-    const low = Math.min(kx * ux[c]! + ky * uy[c]!, kx * ux[c + 1]! + ky * uy[c + 1]!);
-    if (low > hidden[c]!) hidden[c] = low;
-    if (++c === count) c = 0;
-  }
-}
-
-/** Whether anything between two turns that rises to a cosine over azimuth may stand above what is hidden anyway. */
-function mayRise(k: Culler, from: number, to: number, kx: number, ky: number): boolean {
-  const { hidden } = k;
-  const { count, ux, uy, bulge } = k.columns;
-  const first = Math.floor((from * count) / 4);
-  const n = Math.min(count, Math.floor((to * count) / 4) - first + 1);
-  let c = first - count * Math.floor(first / count);
-  for (let i = 0; i < n; i++) {
-    if (Math.max(kx * ux[c]! + ky * uy[c]!, kx * ux[c + 1]! + ky * uy[c + 1]!) * bulge > hidden[c]!) return true;
-    if (++c === count) c = 0;
-  }
-  return false;
 }
 
 /** Second pass: keeps the walls that may rise above what is hidden, the highest first; those that float over the box as patches. */
@@ -262,7 +210,7 @@ function pickWalls(k: Culler, box: ReceptorBox, bounded: number, to: Shortlist):
     const w = to.wallId[i]!;
     const s = i * SPAN;
     const peak = span[s + 4]!;
-    if (peak < Infinity && !mayRise(k, span[s]!, span[s + 1]!, span[s + 2]!, span[s + 3]!)) continue;
+    if (peak < Infinity && !mayRise(k.hidden, k.columns, span[s]!, span[s + 1]!, span[s + 2]!, span[s + 3]!)) continue;
     if (o.walls[w * WALL + 4]! > box.z0) {
       to.patchId[to.patchCount++] = o.wallPatch[w]!;
       continue;
@@ -315,20 +263,7 @@ function patchMatters(k: Culler, p: number, box: ReceptorBox): boolean {
   const gapX = dx0 > 0 ? dx0 : dx1 < 0 ? -dx1 : 0;
   const gapY = dy0 > 0 ? dy0 : dy1 < 0 ? -dy1 : 0;
   turnRange(k.range, dx0, dx1, dy0, dy1);
-  return mayStand(k, k.range[0]!, k.range[1]!, (top - box.z0) / Math.sqrt(gapX * gapX + gapY * gapY));
-}
-
-/** Whether anything between two turns that rises to one altitude may stand above what is hidden anyway. */
-function mayStand(k: Culler, from: number, to: number, tan: number): boolean {
-  const { count } = k.columns;
-  const first = Math.floor((from * count) / 4);
-  const n = Math.min(count, Math.floor((to * count) / 4) - first + 1);
-  let c = first - count * Math.floor(first / count);
-  for (let i = 0; i < n; i++) {
-    if (tan > k.hidden[c]!) return true;
-    if (++c === count) c = 0;
-  }
-  return false;
+  return mayStand(k.hidden, k.columns, k.range[0]!, k.range[1]!, (top - box.z0) / Math.sqrt(gapX * gapX + gapY * gapY));
 }
 
 /** Solids that may contain a receptor of the box, or touch one. */

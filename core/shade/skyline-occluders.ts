@@ -1,6 +1,6 @@
 import type { Shader, Solid } from '../form/model.ts';
 import { signedArea } from '../plane/ring.ts';
-import type { Point, Ring } from '../plane/vec.ts';
+import type { Point } from '../plane/vec.ts';
 
 /** Numbers of one wall in `Occluders.walls`: x and y of its two corners, base, top. */
 export const WALL = 6;
@@ -109,11 +109,4 @@ function discsOf(corners: readonly number[], patchCorner: readonly number[]): Fl
     discs.set([x, y, radius, top], p * DISC);
   }
   return discs;
-}
-
-/** The outline of solid s, as its walls run. */
-export function outlineOfSolid(o: Occluders, s: number): Ring {
-  const ring: Point[] = [];
-  for (let w = o.solidWall[s]!; w < o.solidWall[s + 1]!; w++) ring.push([o.walls[w * WALL]!, o.walls[w * WALL + 1]!]);
-  return ring;
 }
