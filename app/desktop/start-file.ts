@@ -1,0 +1,14 @@
+import { resolve } from 'node:path';
+
+/**
+ * The scheme that the desktop was started with, as an absolute path; null: none. Electron's own switches are not files, and while
+ * the program is not packaged the first word is the program's folder.
+ * @param words      `process.argv`, or that of a second start
+ * @param isPackaged whether the words begin with the program alone
+ * @param folder     what a relative path stands in
+ */
+export function startFile(words: readonly string[], isPackaged: boolean, folder: string): string | null {
+  const files = words.slice(isPackaged ? 1 : 2).filter((word) => word !== '' && !word.startsWith('-'));
+  const last = files.at(-1);
+  return last === undefined ? null : resolve(folder, last);
+}

@@ -1,0 +1,57 @@
+import { InvalidArgumentError } from 'commander';
+
+/** Readers of option values. Each refuses with what it wants instead; the frame adds the name of the option. */
+
+/** A decimal number within bounds, both included. */
+export const number =
+  (least: number, most: number, what: string) =>
+  (text: string): number => {
+    const value = /^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i.test(text) ? Number(text) : Number.NaN;
+    if (!(value >= least && value <= most))
+      throw new InvalidArgumentError(`It must be ${what} from ${least} to ${most}.`);
+    return value;
+  };
+
+/** A whole number within bounds, both included. */
+export const whole =
+  (least: number, most: number, what: string) =>
+  (text: string): number => {
+    const value = /^\d+$/.test(text) ? Number(text) : Number.NaN;
+    if (!(value >= least && value <= most))
+      throw new InvalidArgumentError(`It must be ${what}, a whole number from ${least} to ${most}.`);
+    return value;
+  };
+
+const daysIn = (year: number, month: number): number => new Date(Date.UTC(year, month, 0)).getUTCDate();
+
+/** A civil date that the calendar has, from 1900 to 2100. */
+export function date(text: string): string {
+  const [, year, month, day] = (/^(\d{4})-(\d\d)-(\d\d)$/.exec(text) ?? []).map(Number);
+  const isReal =
+    year !== undefined &&
+    month !== undefined &&
+    day !== undefined &&
+    year >= 1900 &&
+    year <= 2100 &&
+    month >= 1 &&
+    month <= 12 &&
+    day >= 1 &&
+    day <= daysIn(year, month);
+  if (!isReal)
+    throw new InvalidArgumentError('It must be a date that exists, from 1900-01-01 to 2100-12-31, such as 2025-06-21.');
+  return text;
+}
+
+/** Dates with commas between them, or the option given again, or several after one option. */
+export const dates = (text: string, before: readonly string[] | undefined): readonly string[] => [
+  ...(before ?? []),
+  ...text.split(',').map((part) => date(part.trim())),
+];
+
+/** A time of the civil clock, as minutes since midnight. */
+export function clock(text: string): number {
+  const [, hours, minutes] = (/^(\d{1,2}):(\d\d)$/.exec(text) ?? []).map(Number);
+  if (hours === undefined || minutes === undefined || minutes > 59 || hours * 60 + minutes > 24 * 60)
+    throw new InvalidArgumentError('It must be a time of the clock from 00:00 to 24:00, such as 09:00.');
+  return hours * 60 + minutes;
+}
