@@ -78,6 +78,29 @@ export const contract = {
   },
   /** Write a finished export (PDF, SVG, CSV, JSON …) where the user says. Null: cancelled. */
   'export:write': { ask: z.object({ name: SafeName, bytes: Bytes }), reply: z.object({ name: z.string() }).nullable() },
+  /** A weather file that the user chooses; it is read where the page is, and only its name, hash and mapping are kept. */
+  'weather:open': { ask: z.null(), reply: z.object({ name: z.string(), bytes: Bytes }).nullable() },
+  /** Places of the bundled gazetteer whose name begins with a text. `zone` is a suggestion, null where none is known. */
+  'place:search': {
+    ask: z.object({ text: z.string().max(120) }),
+    reply: z.object({
+      /** To be shown beside the places: their licence asks for it. */
+      credit: z.string(),
+      places: z
+        .array(
+          z.object({
+            name: z.string(),
+            /** ISO 3166 code. */
+            country: z.string(),
+            region: z.string(),
+            latitude: z.number(),
+            longitude: z.number(),
+            zone: z.string().nullable(),
+          }),
+        )
+        .max(12),
+    }),
+  },
   /** PDF pages from a drawing document (core/sheet): fonts and pdfkit live with the host. */
   'sheet:pdf': { ask: z.object({ document: z.unknown() }), reply: z.object({ bytes: Bytes }) },
 } as const;
@@ -85,7 +108,12 @@ export const contract = {
 export type Channel = keyof typeof contract;
 
 /** Channels that need a dialog: the browser's page answers them itself. */
-export const PAGE_DIALOGS = ['scheme:open', 'scheme:save-as', 'export:write'] as const satisfies readonly Channel[];
+export const PAGE_DIALOGS = [
+  'scheme:open',
+  'scheme:save-as',
+  'export:write',
+  'weather:open',
+] as const satisfies readonly Channel[];
 
 export type Ask<C extends Channel> = z.output<(typeof contract)[C]['ask']>;
 export type Answer<C extends Channel> = z.output<(typeof contract)[C]['reply']>;

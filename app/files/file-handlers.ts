@@ -1,6 +1,8 @@
+import { basename } from 'node:path';
 import { type Handlers, HostFault } from '../contract/dispatch.ts';
 import { type FileId, MAX_BYTES, type Opened } from '../contract/host.ts';
 import { listDemos, readDemo } from './demos.ts';
+import { findPlaces } from './find-places.ts';
 import { GrantedFiles } from './granted-files.ts';
 import { readBounded } from './read-bounded.ts';
 import { RecentFiles } from './recent-files.ts';
@@ -11,6 +13,7 @@ import { writeReason } from './write-reason.ts';
 /** How a host asks the user for a file: a path that the user chose, or null when the user thought better of it. */
 export type Dialogs = {
   readonly openScheme: () => Promise<string | null>;
+  readonly openWeather: () => Promise<string | null>;
   readonly saveScheme: (name: string) => Promise<string | null>;
   readonly saveExport: (name: string) => Promise<string | null>;
 };
@@ -120,6 +123,15 @@ export function fileHost({ kind, version, dataDir, startWith, dialogs, pdf }: Se
       await write(granted.find(chosen.id)?.path ?? path, chosen.name, bytes);
       return { name: chosen.name };
     },
+    'weather:open': async () => {
+      const path = await dialogs.openWeather();
+      if (path === null) return null;
+      const name = basename(path);
+      const outcome = await readBounded(path, MAX_BYTES);
+      if (!outcome.ok) throw new HostFault('io', `${name} was not opened: ${outcome.fault.message}`);
+      return { name, bytes: outcome.bytes };
+    },
+    'place:search': ({ text }) => findPlaces(text),
     'sheet:pdf': async ({ document }) => ({ bytes: await pdf(document) }),
   };
   return { handlers, openChosen };

@@ -17,6 +17,8 @@ const CHANNELS = [
   'scheme:discard',
   'export:write',
   'sheet:pdf',
+  'weather:open',
+  'place:search',
 ] as const satisfies readonly Channel[];
 
 const gone = (error: unknown): Reply<never> => ({

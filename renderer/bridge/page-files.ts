@@ -35,11 +35,11 @@ const refused = (error: unknown): Reply<null> => {
 
 const bytesOf = async (file: File): Promise<Uint8Array> => new Uint8Array(await file.arrayBuffer());
 
-function openByField(): Promise<File | null> {
+function openByField(accept: string): Promise<File | null> {
   return new Promise((settle) => {
     const field = document.createElement('input');
     field.type = 'file';
-    field.accept = '.json,application/json';
+    field.accept = accept;
     field.onchange = () => settle(field.files?.[0] ?? null);
     field.oncancel = () => settle(null);
     field.click();
@@ -49,7 +49,7 @@ function openByField(): Promise<File | null> {
 async function open(): Promise<Reply<Answer<'scheme:open'>>> {
   try {
     if (pickers.showOpenFilePicker === undefined) {
-      const file = await openByField();
+      const file = await openByField('.json,application/json');
       if (file === null) return fine(null);
       const id = `${PREFIX}none-${handles.size}` as FileId;
       return fine({ id, name: file.name, bytes: await bytesOf(file) });
@@ -60,6 +60,16 @@ async function open(): Promise<Reply<Answer<'scheme:open'>>> {
     if (handle === undefined) return fine(null);
     const file = await handle.getFile();
     return fine({ id: keep(handle), name: handle.name, bytes: await bytesOf(file) });
+  } catch (error) {
+    return refused(error);
+  }
+}
+
+/** A weather file: read once and not kept, so that a plain file field serves every browser. */
+async function openWeather(): Promise<Reply<Answer<'weather:open'>>> {
+  try {
+    const file = await openByField('.csv,.txt,.tsv,text/csv,text/plain');
+    return fine(file === null ? null : { name: file.name, bytes: await bytesOf(file) });
   } catch (error) {
     return refused(error);
   }
@@ -110,6 +120,7 @@ export function withPageFiles(host: Host): Host {
   return Object.freeze({
     ...host,
     'scheme:open': open,
+    'weather:open': openWeather,
     'scheme:save-as': ({ name, bytes }: Ask<'scheme:save-as'>) => writeWhereAsked(name, bytes),
     'export:write': ({ name, bytes }: Ask<'export:write'>) => writeWhereAsked(name, bytes),
     'scheme:save': (ask: Ask<'scheme:save'>) => (ask.id.startsWith(PREFIX) ? save(ask) : host['scheme:save'](ask)),
