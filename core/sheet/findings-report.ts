@@ -1,3 +1,4 @@
+import { buildModel } from '../form/build-model.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import type { Document } from './drawing.ts';
 import { Flow } from './flow.ts';
@@ -24,7 +25,13 @@ const EXAMPLE = 'Example limits, not the rules of any place: check your local co
  * @param scheme  the scheme that was checked
  */
 export function findingsReport(result: ReportResult, scheme: Scheme, extra: ReportExtra = {}): Document {
-  const report: Report = { result, scheme, ways: extra.ways ?? [], drawn: extra.drawn ?? '–' };
+  const report: Report = {
+    result,
+    scheme,
+    model: buildModel(scheme),
+    ways: extra.ways ?? [],
+    drawn: extra.drawn ?? '–',
+  };
   const flow = new Flow(contentRect('A4', false), (rect, title) => pageHead(rect, title, report));
   summaryPage(flow, report);
   roomsPages(flow, report);

@@ -1,3 +1,4 @@
+import type { Model } from '../form/model.ts';
 import type { Finding } from '../limits/finding.ts';
 import type { Worked, WorkedWindow } from '../limits/worked.ts';
 import type { Fault } from '../scheme/fault.ts';
@@ -39,6 +40,8 @@ export type ReportExtra = {
 export type Report = {
   readonly result: ReportResult;
   readonly scheme: Scheme;
+  /** The scheme as shapes, for the plans. */
+  readonly model: Model;
   readonly ways: readonly Ways[];
   readonly drawn: string;
 };

@@ -1,7 +1,7 @@
 import type { Finding } from '../limits/finding.ts';
 import type { Limit } from '../limits/limit-set.ts';
+import { toDegrees } from '../units/angle.ts';
 import { compassWord } from '../limits/reason.ts';
-import type { WayThatFails, WayThatPasses } from '../sizing/ways.ts';
 import { dayCurve, type CurveLimit } from './day-curve.ts';
 import { counted, figures, limitWords, margin, quantity, verdictWords } from './finding-words.ts';
 import type { Flow } from './flow.ts';
@@ -9,9 +9,10 @@ import { SOFT } from './ink.ts';
 import { READ } from './measure.ts';
 import { fixed, percent } from './numerals.ts';
 import type { Report, ReportRoom } from './report-input.ts';
+import { roomPlan } from './room-plan.ts';
 import { table } from './table.ts';
 import { verdictColour, verdictDisc } from './verdict-disc.ts';
-import { waysOf, wayWords } from './way-words.ts';
+import { waysTable } from './report-ways.ts';
 
 /** The page of one room that is over: why, when, through what, how it was worked out and what would bring it within. */
 export function roomPage(flow: Flow, report: Report, room: ReportRoom): void {
@@ -31,7 +32,8 @@ export function roomPage(flow: Flow, report: Report, room: ReportRoom): void {
   flow.gap(3);
   curve(flow, report, room, worst);
   windowsTable(flow, room, worst);
-  ways(flow, report, findings);
+  waysTable(flow, report, findings);
+  whereItIs(flow, report, room, worst);
 }
 
 function verdictLine(flow: Flow, f: Finding): void {
@@ -107,25 +109,25 @@ function windowsTable(flow: Flow, room: ReportRoom, f: Finding): void {
   flow.gap(2);
 }
 
-function ways(flow: Flow, report: Report, findings: readonly Finding[]): void {
-  const over = findings.filter((f) => f.verdict === 'over');
-  const given = over.flatMap((f) => {
-    const w = waysOf(report.ways, f);
-    return w ? [[f, w] as const] : [];
+/** Plan of the storey with the room, its windows and the sun at the worst moment. */
+function whereItIs(flow: Flow, report: Report, room: ReportRoom, f: Finding): void {
+  const form = report.model.rooms.find((r) => r.id === room.room);
+  if (!form) return;
+  const grid = report.result.days.find((d) => d.key === (f.when?.day ?? f.day));
+  const step = f.when && grid ? nearest(grid.instant_ms, f.when.instant_ms) : null;
+  const sun = grid && step !== null ? toDegrees(grid.azimuth_rad[step] as number) : null;
+  const height = 58;
+  if (flow.left < height + 14) return;
+  flow.heading('Where it is', height + 10);
+  const piece = roomPlan(flow.x, flow.y, flow.width, height, report.model, form, sun);
+  if (piece) flow.put(piece.marks, piece.height);
+  flow.gap(3);
+}
+
+function nearest(instants: Float64Array, instant_ms: number): number {
+  let best = 0;
+  instants.forEach((t, i) => {
+    if (Math.abs(t - instant_ms) < Math.abs((instants[best] as number) - instant_ms)) best = i;
   });
-  if (given.length === 0) return;
-  flow.heading('Ways to pass, one change at a time', 20);
-  for (const [f, all] of given) {
-    if (given.length > 1) flow.say(f.metricName, { face: 'semibold' });
-    const passing = all.ways.filter((w): w is WayThatPasses => w.passes);
-    const failing = all.ways.filter((w): w is WayThatFails => !w.passes);
-    for (const w of passing) flow.say(`${wayWords(w)}.`);
-    for (const w of failing) flow.say(`${w.lever}: ${w.reason}`, { colour: SOFT });
-    for (const r of all.restsOn) {
-      flow.say(
-        `Without the ${r.on === 'no-trees' ? 'trees' : 'neighbours'} it would be ${quantity(r.value, f.unit)}.`,
-        { colour: SOFT },
-      );
-    }
-  }
+  return best;
 }

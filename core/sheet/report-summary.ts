@@ -1,5 +1,5 @@
 import type { Finding, Verdict } from '../limits/finding.ts';
-import type { Mark } from './drawing.ts';
+import type { Mark, Mm } from './drawing.ts';
 import { counted, limitWords, margin, quantity } from './finding-words.ts';
 import type { Flow } from './flow.ts';
 import { HAIR, INK, SOFT } from './ink.ts';
@@ -8,10 +8,14 @@ import { measure, READ } from './measure.ts';
 import type { Report } from './report-input.ts';
 import { titleBlock } from './title-block.ts';
 import { verdictColour, verdictDisc } from './verdict-disc.ts';
-import { bestWay } from './way-words.ts';
+import { choiceOfWays } from './way-words.ts';
 
-/** Rooms whose bars the first page shows. */
-const BARS = 12;
+/** Rooms whose bars the first page shows, as far as there is room, and rooms that it says what to do about. */
+const MOST_BARS = 12;
+const FEWEST_BARS = 3;
+const MOST_TO_DO = 6;
+/** Height of a bar's row. */
+const ROW: Mm = leading(READ) + 2.4;
 
 /** The first page: how many rooms are over, which is worst, what to do about them. */
 export function summaryPage(flow: Flow, report: Report): void {
@@ -28,15 +32,6 @@ export function summaryPage(flow: Flow, report: Report): void {
   flow.gap(4);
   flow.say(verdictSentence(report));
   flow.gap(3);
-  const worst = (result.limitSet ? worstOfRooms(result.findings) : highest(result.findings)).slice(0, BARS);
-  if (worst.length > 0) {
-    flow.heading(result.limitSet ? 'Rooms, worst first' : 'Rooms, highest first');
-    bars(flow, worst);
-    const rooms = new Set(result.findings.map((f) => f.room)).size;
-    if (rooms > worst.length)
-      flow.say(`and ${counted(rooms - worst.length, 'more room', 'more rooms')} in the table`, { colour: SOFT });
-  }
-  whatToDo(flow, report);
   const facts = {
     subject: 'Findings',
     number: null,
@@ -47,6 +42,20 @@ export function summaryPage(flow: Flow, report: Report): void {
   };
   const width = 110;
   const { height } = titleBlock(0, 0, width, scheme, facts);
+  const over = worstOfRooms(result.findings).filter((f) => f.verdict === 'over').length;
+  const toDo =
+    over === 0 ? 0 : 20 + Math.min(over, MOST_TO_DO) * ((report.ways.length > 0 ? 2 : 0) * leading(READ) + 1);
+  const bars = Math.floor((flow.left - height - toDo - 24) / ROW);
+  const all = result.limitSet ? worstOfRooms(result.findings) : highest(result.findings);
+  const worst = all.slice(0, Math.max(FEWEST_BARS, Math.min(MOST_BARS, bars)));
+  if (worst.length > 0) {
+    flow.heading(result.limitSet ? 'Rooms, worst first' : 'Rooms, highest first');
+    drawBars(flow, worst);
+    const rooms = new Set(result.findings.map((f) => f.room)).size;
+    if (rooms > worst.length)
+      flow.say(`and ${counted(rooms - worst.length, 'more room', 'more rooms')} in the table`, { colour: SOFT });
+  }
+  whatToDo(flow, report);
   flow.need(height + 4);
   const x = flow.x + flow.width - width;
   flow.put(titleBlock(x, flow.y + flow.left - height, width, scheme, facts).marks, height);
@@ -97,15 +106,14 @@ function verdictSentence(report: Report): string {
 }
 
 /** One bar a room: its value against its own limit, which stands at the same place for all. */
-function bars(flow: Flow, findings: readonly Finding[]): void {
+function drawBars(flow: Flow, findings: readonly Finding[]): void {
   const most = Math.max(1.1, ...findings.map((f) => (f.limitValue ? f.value / f.limitValue : 0)));
   const top = Math.max(...findings.map((f) => f.value), 1e-9);
   const name = 62;
   const numbers = 56;
   const width = flow.width - name - numbers - 6;
   for (const f of findings) {
-    const row = leading(READ) + 2.4;
-    flow.need(row);
+    flow.need(ROW);
     const y = flow.y + 3.9;
     const share = f.limitValue ? f.value / f.limitValue / most : f.value / top;
     const x = flow.x + name;
@@ -126,7 +134,7 @@ function bars(flow: Flow, findings: readonly Finding[]): void {
     ];
     if (f.limitValue)
       marks.push(line(x + width / most, y - 3.3, x + width / most, y + 0.8, { colour: INK, width: 0.35 }));
-    flow.put(marks, row);
+    flow.put(marks, ROW);
   }
   const said = 'Bar: value as a share of the room’s own limit, which is the tick. Columns: value, margin, limit.';
   flow.say(findings.some((f) => f.limitValue !== null) ? said : 'Bar: value as a share of the highest.', {
@@ -139,12 +147,17 @@ function whatToDo(flow: Flow, report: Report): void {
   if (over.length === 0) return;
   flow.heading('What to do');
   const offered = over.flatMap((f) => {
-    const way = bestWay(report.ways, f);
+    const way = choiceOfWays(report.ways, f);
     return way ? [{ f, way }] : [];
   });
-  for (const { f, way } of offered.slice(0, BARS)) {
+  for (const { f, way } of offered.slice(0, MOST_TO_DO)) {
     flow.say(`Room ${f.room} ${f.roomName}: ${way}`);
+    flow.gap(1);
   }
+  if (offered.length > MOST_TO_DO)
+    flow.say(`and ${counted(offered.length - MOST_TO_DO, 'more room', 'more rooms')}, each on its own page`, {
+      colour: SOFT,
+    });
   if (offered.length === 0) {
     flow.say(
       `Each room that is over has a page of its own here with its worst day, hour by hour, and the window that brings most. Bring down what that window takes in when the limit is passed: shade outside it first, then glass with a lower g, then less of it.`,
