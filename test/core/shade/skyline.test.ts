@@ -12,6 +12,7 @@ import { blockField, box, fieldReceptors, prism } from '../../helpers/block-fiel
 import { nearEdge } from '../../helpers/near-edge.ts';
 import { isHidden, meshOf } from '../../helpers/ray-casts.ts';
 import { yearLight } from '../../helpers/year-light.ts';
+import { hitsSolid } from './ray-oracle.ts';
 
 const WITHIN_deg = 0.25;
 
@@ -83,6 +84,53 @@ describe('against a ray cast for every sample (three-mesh-bvh, single precision)
     expect(total.differ / total.samples).toBeLessThan(0.001);
   });
 });
+
+describe('against rays followed in double precision', () => {
+  it('random schemes: every single sample equal', () => {
+    let samples = 0;
+    fc.assert(
+      fc.property(scheme, ({ solids, shaders, points }) => {
+        const light = yearLight(40, 20, [10, 80, 172, 250, 355]);
+        const columns = sortLight(light, columnsFor(light.sx.length));
+        const occluders = makeOccluders(solids, shaders);
+        for (const { at, normal } of points) {
+          if (touches(at, solids, shaders)) continue;
+          const seen = seenSamples(occluders, columns, facing([at], normal), 0);
+          for (let i = 0; i < light.sx.length; i++) {
+            const s: Vec3 = [light.sx[i]!, light.sy[i]!, light.sz[i]!];
+            const front = normal[0] * s[0] + normal[1] * s[1] + normal[2] * s[2] > 0;
+            const hidden = () =>
+              solids.some((b) => hitsSolid(at, s, b)) || shaders.some((d) => hitsPatch(at, s, d.corners));
+            expect(seen[i]).toBe(front && !hidden() ? 1 : 0);
+            samples++;
+          }
+        }
+      }),
+      { seed: 20250621, numRuns: 700 },
+    );
+    expect(samples).toBeGreaterThan(200_000);
+  });
+});
+
+/** Whether a ray meets a flat convex polygon: it passes all edges on the same side, and the plane lies ahead. */
+function hitsPatch(at: Vec3, s: Vec3, corners: readonly Vec3[]): boolean {
+  const from = (p: Vec3): Vec3 => [p[0] - at[0], p[1] - at[1], p[2] - at[2]];
+  const triple = (a: Vec3, b: Vec3): number =>
+    s[0] * (a[1] * b[2] - a[2] * b[1]) + s[1] * (a[2] * b[0] - a[0] * b[2]) + s[2] * (a[0] * b[1] - a[1] * b[0]);
+  const sides = corners.map((p, i) => triple(from(p), from(corners[(i + 1) % corners.length] as Vec3)));
+  return (sides.every((v) => v > 0) || sides.every((v) => v < 0)) && meets(at, s, corners);
+}
+
+/** Whether the plane of a polygon lies ahead on a ray. */
+function meets(at: Vec3, s: Vec3, [a, b, c]: readonly Vec3[]): boolean {
+  if (!a || !b || !c) return false;
+  const u = [b[0] - a[0], b[1] - a[1], b[2] - a[2]] as const;
+  const v = [c[0] - a[0], c[1] - a[1], c[2] - a[2]] as const;
+  const n = [u[1] * v[2] - u[2] * v[1], u[2] * v[0] - u[0] * v[2], u[0] * v[1] - u[1] * v[0]] as const;
+  const along = n[0] * s[0] + n[1] * s[1] + n[2] * s[2];
+  const off = n[0] * (a[0] - at[0]) + n[1] * (a[1] - at[1]) + n[2] * (a[2] - at[2]);
+  return along !== 0 && off / along > 0;
+}
 
 /**
  * Whether a point lies so near to the plane of something that the ray cast, which starts a millimetre off in single
