@@ -14,6 +14,8 @@ export const CHANNELS = [
   'scheme:discard',
   'export:write',
   'sheet:pdf',
+  'weather:open',
+  'place:search',
 ] as const satisfies readonly Channel[];
 
 /** What passes between the desktop's preload and main beside the contract. */

@@ -7,6 +7,11 @@ const SCHEMES: FileFilter[] = [
   { name: 'All files', extensions: ['*'] },
 ];
 
+const WEATHER: FileFilter[] = [
+  { name: 'Weather', extensions: ['csv', 'txt', 'tsv'] },
+  { name: 'All files', extensions: ['*'] },
+];
+
 /** The system's dialogs, which start in the folder used last: without that the system would start in Downloads each time. */
 export function systemDialogs(dialog: Dialog, window: () => BrowserWindow, startFolder: string): Dialogs {
   let folder = startFolder;
@@ -23,15 +28,17 @@ export function systemDialogs(dialog: Dialog, window: () => BrowserWindow, start
     const ending = /\.([a-z0-9]+)$/i.exec(name)?.[1];
     return ending === undefined ? [] : [{ name: ending.toUpperCase(), extensions: [ending] }];
   };
+  const open = async (filters: FileFilter[]) => {
+    const { canceled, filePaths } = await dialog.showOpenDialog(window(), {
+      defaultPath: folder,
+      properties: ['openFile'],
+      filters,
+    });
+    return canceled ? null : chosen(filePaths[0]);
+  };
   return {
-    openScheme: async () => {
-      const { canceled, filePaths } = await dialog.showOpenDialog(window(), {
-        defaultPath: folder,
-        properties: ['openFile'],
-        filters: SCHEMES,
-      });
-      return canceled ? null : chosen(filePaths[0]);
-    },
+    openScheme: () => open(SCHEMES),
+    openWeather: () => open(WEATHER),
     saveScheme: (name) => save(name, SCHEMES),
     saveExport: (name) => save(name, endingOf(name)),
   };
