@@ -1,64 +1,70 @@
-import type { ShadingMask } from '../shade/sky-view-mask.ts';
-import { clockChanges, civilOf, offset_min } from '../sun/civil.ts';
 import type { SunPath } from '../sun/sun-path.ts';
 import { DEG, toDegrees } from '../units/angle.ts';
 import type { Document, Mark, Mm, Page } from './drawing.ts';
-import { ACCENT, FRAME, SOFT, WHITE } from './ink.ts';
-import { line, type Piece, paragraph, rect } from './marks.ts';
-import { measure, READ } from './measure.ts';
-import { fixed, place } from './numerals.ts';
+import { ACCENT, WHITE } from './ink.ts';
 import { contentRect, finishPages, type PaperName, type Rect } from './paper.ts';
+import { sunPathCaption, TITLE } from './sun-path-caption.ts';
 import { altitudeNames, bearingNames, horizonLine, SMALL_DISC, skyGrid } from './sun-path-grid.ts';
+import type { SunPathInput } from './sun-path-input.ts';
 import { LabelRoom } from './sun-path-labels.ts';
-import { DATE_STROKE, dateMarks, HOUR_STROKE, HOUR_STROKE_LATER, hourMarks } from './sun-path-lines.ts';
-import { MASK_HATCH, maskMarks } from './sun-path-mask.ts';
+import { dateMarks, hourMarks } from './sun-path-lines.ts';
+import { maskMarks } from './sun-path-mask.ts';
 import { dateNames, hourNames, keepOffPath } from './sun-path-names.ts';
 import { type SkyView, type SunPathProjection, skyOnPage } from './sun-path-view.ts';
 
-/** What a sun-path drawing is made of. */
-export type SunPathInput = {
-  readonly path: SunPath;
-  readonly projection: SunPathProjection;
-  readonly place: {
-    /** Of the scheme or the site; may be empty. */
-    readonly name: string;
-    readonly latitude_deg: number;
-    readonly longitude_deg: number;
-    readonly elevation_m: number;
-    /** IANA zone of the clock. */
-    readonly zone: string;
-  };
-  /** The moment to mark, with the sun's true altitude; below the horizon it is only told. Null: none. */
-  readonly moment: { readonly azimuth_deg: number; readonly altitude_deg: number; readonly text: string } | null;
-  /** What hides the sky, and from where, such as `window W3`. */
-  readonly mask?: { readonly of: string; readonly hidden: ShadingMask } | null;
-};
-
-const TITLE = 'Sun path';
 /** Room round the drawing for the names of bearings and altitudes. */
 const RIM = { stereographic: 7.5, left: 10, right: 5, top: 2, foot: 7.5 } as const;
 /** Widths of a caption beside the drawing; the first that fits the height is taken. */
 const CAPTIONS: readonly Mm[] = [66, 88, 112];
 const GAP: Mm = 5;
 
-/** The parts of a sun-path drawing on a page; `view` tells where a direction lies, for pointing at it. */
-export type SunPathDrawing = { readonly view: SkyView; readonly marks: readonly Mark[] };
+/**
+ * How a sun-path drawing lies on the page, with all of it that the moment does not change; `view` tells where a direction lies,
+ * for pointing at it.
+ */
+export type SunPathLayout = {
+  readonly view: SkyView;
+  /** Grid, lines and names. */
+  readonly sky: readonly Mark[];
+  readonly caption: { readonly x: Mm; readonly y: Mm; readonly width: Mm };
+};
 
-/** A sun-path drawing inside a rectangle: the drawing, and its caption beside it or, on an upright one, below. */
-export function sunPathDrawing(box: Rect, input: SunPathInput): SunPathDrawing {
+/** Lays a sun-path drawing out in a rectangle: its caption beside it or, in an upright one, below. */
+export function sunPathLayout(box: Rect, input: SunPathInput): SunPathLayout {
+  // Room for the longest that a moment can say, so that the drawing stands still while the moment moves.
+  const longest = { ...input, moment: input.moment && LONGEST };
+  const height = (width: Mm): Mm => sunPathCaption(longest, 0, 0, width).height;
   const isWide = box.width > box.height * 1.15;
-  const caption = (x: Mm, top: Mm, width: Mm): Piece => captionOf(input, x, top, width);
-  const beside = captionWidth(box, (width) => caption(0, 0, width).height);
-  const below = isWide ? 0 : caption(0, 0, box.width).height + GAP;
+  const beside = captionWidth(box, height);
   const room: Rect = isWide
     ? { ...box, width: box.width - beside - GAP }
-    : { ...box, height: Math.max(30, box.height - below) };
+    : { ...box, height: Math.max(30, box.height - height(box.width) - GAP) };
   const view = viewOf(room, input);
   const used = usedRect(view);
-  const words = isWide
-    ? caption(used.x + used.width + GAP, box.y, beside)
-    : caption(box.x, used.y + used.height + GAP, box.width);
-  return { view, marks: [...skyMarks(view, room, input), { kind: 'group', label: 'caption', marks: words.marks }] };
+  const caption = isWide
+    ? { x: used.x + used.width + GAP, y: box.y, width: beside }
+    : { x: box.x, y: used.y + used.height + GAP, width: box.width };
+  return { view, sky: skyMarks(view, room, input), caption };
+}
+
+const LONGEST = { azimuth_deg: 188.8, altitude_deg: -28.8, text: '28 September 2025, 08:08 (UTC+08:00)' };
+
+/** What the moment changes: the sun and the caption. */
+export function sunPathMoment({ view, caption }: SunPathLayout, input: SunPathInput): readonly Mark[] {
+  const { x, y, width } = caption;
+  const { moment } = input;
+  return [
+    ...(moment && moment.altitude_deg > 0
+      ? [{ kind: 'group' as const, label: 'moment', marks: sunMark(view, moment) }]
+      : []),
+    { kind: 'group', label: 'caption', marks: sunPathCaption(input, x, y, width).marks },
+  ];
+}
+
+/** A sun-path drawing inside a rectangle. */
+function sunPathDrawing(box: Rect, input: SunPathInput): readonly Mark[] {
+  const layout = sunPathLayout(box, input);
+  return [...layout.sky, ...sunPathMoment(layout, input)];
 }
 
 const captionWidth = (box: Rect, height: (width: Mm) => Mm): Mm => {
@@ -66,12 +72,19 @@ const captionWidth = (box: Rect, height: (width: Mm) => Mm): Mm => {
   return Math.min(most, CAPTIONS.find((width) => height(Math.min(width, most)) <= box.height) ?? most);
 };
 
-/** One sun-path drawing as a page of any size: for screens, and for pictures of its own. */
-export function sunPathPage(width: Mm, height: Mm, input: SunPathInput): Page {
+/** The rectangle of a page that holds nothing but one sun-path drawing. */
+export function sunPathBox(width: Mm, height: Mm): Rect {
   const margin = 2;
-  const box: Rect = { x: margin, y: margin, width: width - 2 * margin, height: height - 2 * margin };
-  return { width, height, title: titleOf(input), marks: sunPathDrawing(box, input).marks };
+  return { x: margin, y: margin, width: width - 2 * margin, height: height - 2 * margin };
 }
+
+/** One sun-path drawing as a page of any size. */
+export const sunPathPage = (width: Mm, height: Mm, input: SunPathInput): Page => ({
+  width,
+  height,
+  title: titleOf(input),
+  marks: sunPathDrawing(sunPathBox(width, height), input),
+});
 
 /** Both drawings as printed pages, each with its caption and the foot that every sheet has. @param note repeated in the foot */
 export function sunPathDocument(
@@ -82,7 +95,7 @@ export function sunPathDocument(
 ): Document {
   const contents = inputs.map((input) => ({
     title: titleOf(input),
-    marks: sunPathDrawing(contentRect(paper, landscape), input).marks,
+    marks: sunPathDrawing(contentRect(paper, landscape), input),
   }));
   const title = [facts.title, TITLE].filter((t) => t !== '').join(' – ');
   const { author, language, note } = facts;
@@ -138,7 +151,7 @@ function usedRect(view: SkyView): Rect {
 }
 
 function skyMarks(view: SkyView, room: Rect, input: SunPathInput): readonly Mark[] {
-  const { mask, moment } = input;
+  const { mask } = input;
   const path = isSmall(view) ? sparse(input.path) : input.path;
   const labels = new LabelRoom(room);
   keepOffPath(view, path, labels);
@@ -156,9 +169,6 @@ function skyMarks(view: SkyView, room: Rect, input: SunPathInput): readonly Mark
     { kind: 'group', label: 'hours of the clock', marks: hourMarks(view, path) },
     { kind: 'group', label: 'dates', marks: dateMarks(view, path) },
     { kind: 'group', label: 'names', marks: names },
-    ...(moment && moment.altitude_deg > 0
-      ? [{ kind: 'group' as const, label: 'moment', marks: sunMark(view, moment) }]
-      : []),
   ];
 }
 
@@ -180,87 +190,4 @@ function sunMark(view: SkyView, moment: NonNullable<SunPathInput['moment']>): re
     { kind: 'circle', at, radius: 1.4, fill: ACCENT },
     { kind: 'circle', at, radius: 2, stroke: { colour: ACCENT, width: 0.3 } },
   ];
-}
-
-/** What the drawing shows, for where, by which clock, and how to read its lines. */
-function captionOf(input: SunPathInput, x: Mm, top: Mm, width: Mm): Piece {
-  const { place: site, path, moment, mask } = input;
-  const marks: Mark[] = [];
-  let y = top;
-  const put = (text: string, style: Parameters<typeof paragraph>[4] = {}): void => {
-    const piece = paragraph(text, x, y, width, style);
-    marks.push(...piece.marks);
-    y += piece.height;
-  };
-  const keys: { readonly sample: (x: Mm, y: Mm) => readonly Mark[]; readonly text: string }[] = [
-    { sample: (kx, ky) => [line(kx, ky, kx + 8, ky, DATE_STROKE)], text: 'the sun’s way on a date' },
-    {
-      sample: (kx, ky) => [
-        line(kx, ky - 0.8, kx + 8, ky - 0.8, HOUR_STROKE),
-        line(kx, ky + 0.8, kx + 8, ky + 0.8, HOUR_STROKE_LATER),
-      ],
-      text: 'an hour of the clock',
-    },
-    ...(mask
-      ? [
-          {
-            sample: (kx: Mm, ky: Mm) => [rect(kx, ky - 1.4, 8, 2.8, { hatch: MASK_HATCH, stroke: FRAME })],
-            text: `sky hidden from ${mask.of}`,
-          },
-        ]
-      : []),
-  ];
-  const putKeys = (): void => {
-    let [left, height] = [x, 0];
-    for (const { sample, text } of keys) {
-      const wide = 10 + measure(text, READ);
-      if (left > x && left + wide > x + width) {
-        left = x;
-        y += height;
-      }
-      const piece = paragraph(text, left + 10, y, width - 10);
-      marks.push(...sample(left, y + READ * 0.45), ...piece.marks);
-      height = piece.height;
-      left += wide + 5;
-    }
-    y += height;
-  };
-  put(`${TITLE} ${path.year}`, { size: 5, face: 'semibold' });
-  if (site.name.trim() !== '') put(site.name.trim(), {});
-  put(`${place(site.latitude_deg, site.longitude_deg)}, ${fixed(site.elevation_m, 0)} m`);
-  put(clockWords(site.zone, path.year));
-  y += 1.6;
-  if (moment !== null) {
-    put(moment.text, { face: 'semibold' });
-    put(sunWords(moment));
-    y += 1.6;
-  }
-  putKeys();
-  put('Broken from the June to the December solstice. True altitude, no refraction. Bearings from true north.', {
-    colour: SOFT,
-  });
-  return { marks, height: y - top };
-}
-
-function sunWords({ azimuth_deg, altitude_deg }: NonNullable<SunPathInput['moment']>): string {
-  const bearing = fixed(azimuth_deg, 1);
-  return altitude_deg > 0
-    ? `sun ${fixed(altitude_deg, 1)}° high, azimuth ${bearing}°`
-    : `sun below the horizon (${fixed(altitude_deg, 1)}°), azimuth ${bearing}°`;
-}
-
-const sign = (minutes: number): string =>
-  `UTC${minutes < 0 ? '−' : '+'}${String(Math.floor(Math.abs(minutes) / 60)).padStart(2, '0')}:${String(Math.abs(minutes) % 60).padStart(2, '0')}`;
-
-/** A zone and what its clocks show in a year, such as `Europe/London: UTC+00:00, 30 March to 26 October UTC+01:00`. */
-export function clockWords(zone: string, year: number): string {
-  const start = Date.UTC(year, 0, 1, 12);
-  const first = offset_min(start, zone);
-  const changes = clockChanges(start, Date.UTC(year + 1, 0, 1), zone);
-  const day = (instant_ms: number): string => civilOf(instant_ms, zone).text.replace(/ \d{4},.*$/u, '');
-  const [on, off] = changes;
-  if (on !== undefined && off !== undefined && changes.length === 2 && off.after_min === first)
-    return `${zone}: ${sign(first)}, ${day(on.instant_ms)} to ${day(off.instant_ms)} ${sign(on.after_min)}`;
-  const told = changes.map((change) => `from ${day(change.instant_ms)} ${sign(change.after_min)}`);
-  return `${zone}: ${[sign(first), ...told].join(', ')}`;
 }

@@ -2,7 +2,9 @@ import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import type { Mark, Page } from '../../../core/sheet/drawing.ts';
 import { CAP_HEIGHT, measure } from '../../../core/sheet/measure.ts';
-import { clockWords, sunPathDocument, type SunPathInput, sunPathPage } from '../../../core/sheet/sun-path.ts';
+import { sunPathDocument, sunPathPage } from '../../../core/sheet/sun-path.ts';
+import { clockWords } from '../../../core/sheet/sun-path-caption.ts';
+import type { SunPathInput } from '../../../core/sheet/sun-path-input.ts';
 import { maskMarks } from '../../../core/sheet/sun-path-mask.ts';
 import {
   pageToSky,
