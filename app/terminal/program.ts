@@ -1,8 +1,11 @@
 import { readFileSync } from 'node:fs';
 import { Command, CommanderError } from 'commander';
 import { shipped } from '../files/shipped.ts';
+import { declareCheck } from './check.ts';
 import type { Declare } from './declare.ts';
+import { declareOpen } from './open.ts';
 import { declareSchema } from './schema.ts';
+import { declareShadows } from './shadows.ts';
 import { declareSun } from './sun.ts';
 import { EXIT, Refusal } from './refusal.ts';
 import type { Screen } from './screen.ts';
@@ -14,7 +17,7 @@ Exit status:
   2  the input or the call is wrong; nothing was written
   3  a fault of the program`;
 
-const DECLARED: readonly Declare[] = [declareSun, declareSchema];
+const DECLARED: readonly Declare[] = [declareCheck, declareShadows, declareSun, declareSchema, declareOpen];
 
 /** The version that package.json states. */
 export const version = (): string =>

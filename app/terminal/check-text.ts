@@ -1,0 +1,65 @@
+import type { Finding } from '../../core/limits/finding.ts';
+import type { CheckResult } from '../../core/study/check-result.ts';
+import { table } from './table.ts';
+
+/** The disc of the findings, which reads without colour: full over, half close, empty within. */
+const DISC = { over: '●', close: '◐', within: '○' } as const;
+
+const number = (value: number | null): string => (value === null ? '–' : value.toFixed(Math.abs(value) < 100 ? 1 : 0));
+const signed = (value: number | null): string => (value === null ? '–' : `${value > 0 ? '+' : ''}${number(value)}`);
+
+/** The worst finding of each room, in the order of the findings. */
+function worstOfRooms(findings: readonly Finding[]): readonly Finding[] {
+  const seen = new Set<string>();
+  return findings.filter((f) => !seen.has(f.room) && seen.add(f.room));
+}
+
+function roomTable(findings: readonly Finding[]): string {
+  const judged = findings.some((f) => f.verdict !== null);
+  return table(
+    [
+      { head: judged ? 'verdict' : '', align: 'left' },
+      { head: 'room', align: 'left' },
+      { head: 'name', align: 'left' },
+      { head: 'value', align: 'right' },
+      { head: 'limit', align: 'right' },
+      { head: 'margin', align: 'right' },
+      { head: 'unit', align: 'left' },
+      { head: 'of', align: 'left' },
+    ],
+    findings.map((f) => [
+      f.verdict === null ? '' : `${DISC[f.verdict]} ${f.verdict}`,
+      f.room,
+      f.roomName,
+      number(f.value),
+      number(f.limitValue),
+      signed(f.margin),
+      f.unit,
+      f.metricName,
+    ]),
+  );
+}
+
+/** A check as text for people: what it rests on, every room by its worst finding, why rooms are over, and the cautions. */
+export function checkText(result: CheckResult): string {
+  const { over, close, within } = result.counts;
+  const set = result.limitSet;
+  const head = [
+    `${result.title || 'Untitled scheme'}: ${result.rooms.length} rooms, scheme ${result.schemeHash.slice(0, 12)}, engine ${result.engine}`,
+    set === null
+      ? 'No limit set is chosen: these are metrics without a verdict. Choose one in the scheme ("limits") or with --limits FILE.'
+      : `${over} over, ${close} close, ${within} within; limits: ${set.name}${set.example ? ' (example: check your local code)' : ''}`,
+    `Clear-sky days at five-minute steps: ${result.days.map((d) => `${d.name} (${d.date})`).join(', ')}`,
+  ];
+  const why = result.findings.filter((f) => f.verdict === 'over').map((f) => `  ${f.room} ${f.roomName}: ${f.reason}`);
+  const notes = result.notes.map((n) => `  ${n.place}: ${n.message}; ${n.cure}`);
+  return [
+    ...head,
+    '',
+    roomTable(worstOfRooms(result.findings)),
+    ...(why.length > 0 ? ['Why rooms are over:', ...why, ''] : []),
+    ...(notes.length > 0 ? ['Notes:', ...notes, ''] : []),
+    ...result.cautions,
+    '',
+  ].join('\n');
+}

@@ -1,0 +1,125 @@
+import type { Finding } from '../../core/limits/finding.ts';
+import type { LimitSet } from '../../core/limits/limit-set.ts';
+import type { Scheme } from '../../core/scheme/schema.ts';
+import type { CheckResult } from '../../core/study/check-result.ts';
+import type { Declare } from './declare.ts';
+import { progress } from './progress.ts';
+import { accepted, readLimits, readScheme } from './read-input.ts';
+import { EXIT, Refusal } from './refusal.ts';
+import type { Screen } from './screen.ts';
+import { today } from './today.ts';
+import { writeOutput } from './write-output.ts';
+
+type Options = {
+  readonly limits?: string;
+  readonly json?: true;
+  readonly csv?: true;
+  readonly pdf?: string;
+  readonly working?: string;
+};
+
+const HELP = `
+Rooms are judged by the limit set that the scheme names, or by the file given. Exit status 1 says that a room is over.
+
+Examples:
+  shadewright check scheme.json
+  shadewright check scheme.json --pdf report.pdf
+  shadewright check scheme.json --limits our-brief.limits.json --json > report.json
+  shadewright check scheme.json --working 2.4`;
+
+async function limitsFor(path: string, scheme: Scheme, options: Options, screen: Screen): Promise<LimitSet | null> {
+  if (options.limits !== undefined) return readLimits(options.limits, screen);
+  const { limitsOfScheme } = await import('../files/shipped-limits.ts');
+  return accepted(path, limitsOfScheme(scheme), screen);
+}
+
+/** The working of every finding of a room, as text. */
+async function workingOfRoom(result: CheckResult, scheme: Scheme, room: string): Promise<string> {
+  const findings = result.findings.filter((f) => f.room === room);
+  if (!result.rooms.some((r) => r.room === room)) {
+    const known = result.rooms.map((r) => r.room).slice(0, 12);
+    throw new Refusal(
+      `shadewright check: the scheme has no room ${JSON.stringify(room)}; it has ${known.join(', ')}${result.rooms.length > 12 ? ' …' : ''}.`,
+    );
+  }
+  const [{ workingOf }, { workingText }] = await Promise.all([
+    import('../../core/limits/working.ts'),
+    import('./working-text.ts'),
+  ]);
+  return workingText(findings.map((f) => workingOf(result, scheme, f)));
+}
+
+/** The report with, for each room that is over, the ways to bring its worst finding within. */
+async function pdfReport(result: CheckResult, scheme: Scheme, limitSet: LimitSet | null): Promise<Uint8Array> {
+  const [{ findingsReport }, { waysToPass }, { createCheckMemo }, { printDocument }] = await Promise.all([
+    import('../../core/sheet/findings-report.ts'),
+    import('../../core/sizing/ways-to-pass.ts'),
+    import('../../core/gain/gain-memo.ts'),
+    import('../files/print-document.ts'),
+  ]);
+  const memo = createCheckMemo(Math.max(600, scheme.windows.length));
+  const seen = new Set<string>();
+  const worst = result.findings.filter((f: Finding) => f.verdict === 'over' && !seen.has(f.room) && seen.add(f.room));
+  const ways = limitSet === null ? [] : worst.map((f) => waysToPass(scheme, limitSet, f.room, f, memo));
+  return printDocument(findingsReport(result, scheme, { drawn: today(), ways }));
+}
+
+/** `shadewright check`: every room against its limits. */
+export const declareCheck: Declare = (program, screen, end) => {
+  program
+    .command('check')
+    .description('check what the rooms of a scheme take in against limits')
+    .argument('<SCHEME>', 'the scheme file')
+    .option('--limits <FILE>', 'judge by this limit set and not by the one that the scheme names')
+    .option('--json', 'print the whole report as JSON, which `verify` can recompute')
+    .option('--csv', 'print the findings as CSV')
+    .option('--pdf <FILE>', 'write the report as PDF')
+    .option('--working <ROOM>', 'show how the numbers of a room were reached')
+    .addHelpText('after', HELP)
+    .action(async (path: string, options: Options) => {
+      if (options.json && options.csv)
+        throw new Refusal('shadewright check: both --json and --csv were given; give one of the two.');
+      const { scheme, notes } = await readScheme(path, screen);
+      const limitSet = await limitsFor(path, scheme, options, screen);
+      const { checkScheme } = await import('../../core/study/check.ts');
+      const { pulse, done } = progress(screen, 'checking');
+      const result = await checkScheme(scheme, limitSet, notes, pulse);
+      done();
+      if (result === null) throw new Error('the check was stopped');
+      if (options.pdf !== undefined) {
+        await writeOutput(options.pdf, await pdfReport(result, scheme, limitSet));
+        screen.note(`report written to ${options.pdf}\n`);
+      }
+      screen.out(await printed(result, scheme, limitSet, options));
+      if (result.counts.over > 0) end(EXIT.over);
+    });
+};
+
+async function printed(
+  result: CheckResult,
+  scheme: Scheme,
+  limitSet: LimitSet | null,
+  options: Options,
+): Promise<string> {
+  if (options.json) {
+    const { reportJson } = await import('../../core/study/report-json.ts');
+    const report: Record<string, unknown> = { ...reportJson(result, scheme, limitSet) };
+    if (options.working !== undefined) {
+      const { workingOf } = await import('../../core/limits/working.ts');
+      report.working = result.findings
+        .filter((f) => f.room === options.working)
+        .map((f) => workingOf(result, scheme, f));
+    }
+    return `${JSON.stringify(report, null, 2)}\n`;
+  }
+  if (options.csv) {
+    const [{ writeCsv }, { findingsTable }] = await Promise.all([
+      import('../../core/sheet/csv.ts'),
+      import('../../core/sheet/data-tables.ts'),
+    ]);
+    return writeCsv(findingsTable(result));
+  }
+  if (options.working !== undefined) return workingOfRoom(result, scheme, options.working);
+  const { checkText } = await import('./check-text.ts');
+  return checkText(result);
+}

@@ -1,0 +1,172 @@
+import { Option } from 'commander';
+import type { Model } from '../../core/form/model.ts';
+import type { Scheme } from '../../core/scheme/schema.ts';
+import type { Document } from '../../core/sheet/drawing.ts';
+import type { ShadowMoment } from '../../core/sheet/shadow-moment.ts';
+import type { Declare } from './declare.ts';
+import { clock, dates, number, whole } from './option-values.ts';
+import { readScheme } from './read-input.ts';
+import { Refusal } from './refusal.ts';
+import { shadowText } from './shadow-text.ts';
+import { today } from './today.ts';
+import { writeOutput } from './write-output.ts';
+
+type Options = {
+  readonly on?: readonly string[];
+  readonly from: number;
+  readonly to: number;
+  readonly every: number;
+  readonly pdf?: string;
+  readonly svg?: string;
+  readonly png?: string;
+  readonly geojson?: string;
+  readonly csv?: true;
+  readonly json?: true;
+  readonly scale?: number;
+  readonly paper: 'A4' | 'A3' | 'A2' | 'A1';
+  readonly portrait?: true;
+  readonly perPage?: number;
+  readonly dpi: number;
+};
+
+/** Moments of one call: more would be days of drawing, and a mistake. */
+const MOST_MOMENTS = 2000;
+
+const HELP = `
+Without --on: 21 March, 21 June and 21 December of the scheme's year. Times are what the clock on the wall shows.
+Without --scale: the largest standard scale that fits. Several pages in SVG or PNG get a number before the file's ending.
+
+Examples:
+  shadewright shadows scheme.json --pdf study.pdf --from 09:00 --to 15:00 --every 180
+  shadewright shadows scheme.json --on 2025-06-21 --every 60 --pdf june.pdf --scale 500 --paper A2
+  shadewright shadows scheme.json --on 2025-03-21,2025-12-21 --geojson shadows.geojson --csv`;
+
+const timeOf = (minute: number): string =>
+  `${String(Math.floor(minute / 60)).padStart(2, '0')}:${String(minute % 60).padStart(2, '0')}`;
+
+function timesOf({ from, to, every }: Options): readonly string[] {
+  if (to < from)
+    throw new Refusal(`shadewright shadows: --to ${timeOf(to)} lies before --from ${timeOf(from)}; give a later time.`);
+  const times: string[] = [];
+  for (let minute = from; minute <= to && minute < 24 * 60; minute += every) times.push(timeOf(minute));
+  return times;
+}
+
+/** Where page k of several goes: `study.svg`, or `study-2.svg` from the second on. */
+const pagePath = (path: string, k: number): string => (k === 0 ? path : path.replace(/(\.[^./\\]*)?$/, `-${k + 1}$1`));
+
+async function sheetOf(
+  scheme: Scheme,
+  model: Model,
+  moments: readonly ShadowMoment[],
+  options: Options,
+): Promise<Document> {
+  const [{ shadowSheet }, { contentHash }, { writeScheme }, { ENGINE_VERSION }] = await Promise.all([
+    import('../../core/sheet/shadow-sheet.ts'),
+    import('../../core/scheme/hash.ts'),
+    import('../../core/scheme/write.ts'),
+    import('../../core/study/engine.ts'),
+  ]);
+  const drawn = shadowSheet({
+    scheme,
+    model,
+    moments,
+    scale: options.scale ?? null,
+    paper: options.paper,
+    landscape: options.portrait !== true,
+    ...(options.perPage === undefined ? {} : { perPage: options.perPage }),
+    drawn: today(),
+    engine: ENGINE_VERSION,
+    hash: contentHash(writeScheme(scheme)),
+  });
+  if (drawn.ok) return drawn.value;
+  throw new Refusal(...drawn.faults.map((f) => `shadewright shadows: ${f.message}; ${f.cure}.`));
+}
+
+/** Every file is made before the first is written, so that a refusal leaves nothing half done. */
+async function writeSheets(document: Document, options: Options): Promise<readonly string[]> {
+  const files: [string, Uint8Array | string][] = [];
+  if (options.pdf !== undefined) {
+    const { printDocument } = await import('../files/print-document.ts');
+    files.push([options.pdf, await printDocument(document)]);
+  }
+  if (options.svg !== undefined) {
+    const [{ pageToSvg }, { fontFaceCss }] = await Promise.all([
+      import('../../core/sheet/svg.ts'),
+      import('../pdf/font-css.ts'),
+    ]);
+    for (const [k, page] of document.pages.entries())
+      files.push([pagePath(options.svg, k), pageToSvg(page, fontFaceCss(page))]);
+  }
+  if (options.png !== undefined) {
+    const { writePng } = await import('../pdf/write-png.ts');
+    for (const [k, page] of document.pages.entries())
+      files.push([pagePath(options.png, k), await imageOf(writePng(page, options.dpi))]);
+  }
+  for (const [path, bytes] of files) await writeOutput(path, bytes);
+  return files.map(([path]) => path);
+}
+
+async function imageOf(made: Promise<Uint8Array>): Promise<Uint8Array> {
+  try {
+    return await made;
+  } catch (error) {
+    if (error instanceof RangeError) throw new Refusal(`shadewright shadows: ${error.message}.`);
+    throw error;
+  }
+}
+
+/** `shadewright shadows`: the shadow study, as a table, as sheets to scale and as GeoJSON. */
+export const declareShadows: Declare = (program, screen) => {
+  program
+    .command('shadows')
+    .description('work out where shadows fall before and after, and draw the study to scale')
+    .argument('<SCHEME>', 'the scheme file')
+    .option('--on <DATES>', 'civil dates with commas between them', dates)
+    .addOption(new Option('--from <TIME>', 'first time of the clock').argParser(clock).default(540, '09:00'))
+    .addOption(new Option('--to <TIME>', 'last time of the clock').argParser(clock).default(1020, '17:00'))
+    .addOption(new Option('--every <MIN>', 'between the times').argParser(whole(1, 720, 'minutes')).default(60))
+    .option('--pdf <FILE>', 'write the sheets as PDF')
+    .option('--svg <FILE>', 'write the sheets as SVG')
+    .option('--png <FILE>', 'write the sheets as PNG')
+    .option('--geojson <FILE>', 'write the shadows as GeoJSON, in longitude and latitude')
+    .option('--csv', 'print the table as CSV')
+    .option('--json', 'print the table as JSON')
+    .option('--scale <N>', 'scale of the drawing, such as 500 for 1:500', number(1, 100_000, 'a scale'))
+    .addOption(new Option('--paper <SIZE>', 'paper').choices(['A4', 'A3', 'A2', 'A1']).default('A3'))
+    .option('--portrait', 'stand the paper upright')
+    .option('--per-page <N>', 'diagrams a page, at most', whole(1, 60, 'diagrams'))
+    .addOption(new Option('--dpi <N>', 'resolution of PNG').argParser(whole(36, 1200, 'dots per inch')).default(150))
+    .addHelpText('after', HELP)
+    .action(async (path: string, options: Options) => {
+      if (options.json && options.csv)
+        throw new Refusal('shadewright shadows: both --json and --csv were given; give one of the two.');
+      const { scheme } = await readScheme(path, screen);
+      const [{ buildModel }, { shadowMoments }, { DEFAULT_YEAR }] = await Promise.all([
+        import('../../core/form/build-model.ts'),
+        import('../../core/study/shadow-moments.ts'),
+        import('../../core/scheme/schema.ts'),
+      ]);
+      const year = scheme.year ?? DEFAULT_YEAR;
+      const on = options.on ?? [`${year}-03-21`, `${year}-06-21`, `${year}-12-21`];
+      const times = timesOf(options);
+      if (on.length * times.length > MOST_MOMENTS) {
+        throw new Refusal(
+          `shadewright shadows: ${on.length * times.length} moments were asked for; at most ${MOST_MOMENTS} are drawn at once, so take fewer dates or a longer --every.`,
+        );
+      }
+      const model = buildModel(scheme);
+      const moments = shadowMoments(scheme, model, on, times);
+      const written: string[] = [];
+      if (options.pdf !== undefined || options.svg !== undefined || options.png !== undefined) {
+        written.push(...(await writeSheets(await sheetOf(scheme, model, moments, options), options)));
+      }
+      if (options.geojson !== undefined) {
+        const { shadowGeoJson } = await import('../../core/sheet/geojson.ts');
+        await writeOutput(options.geojson, `${JSON.stringify(shadowGeoJson(scheme, model, moments))}\n`);
+        written.push(options.geojson);
+      }
+      for (const file of written) screen.note(`written: ${file}\n`);
+      screen.out(shadowText(scheme, moments, options.csv ? 'csv' : options.json ? 'json' : 'text'));
+    });
+};
