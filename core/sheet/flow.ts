@@ -65,9 +65,12 @@ export class Flow {
     this.#y += height;
   }
 
-  /** A paragraph over the full width, or from an inset; a page break falls between its lines only when it is longer than a page. */
-  say(text: string, style: WordStyle = {}, inset: Mm = 0): void {
-    const at = (): Piece => paragraph(text, this.x + inset, this.#y, this.width - inset, style);
+  /**
+   * A paragraph over the full width, or from an inset; a page break falls between its lines only when it is longer than a page.
+   * @param most  lines at most, the last of them cut
+   */
+  say(text: string, style: WordStyle = {}, inset: Mm = 0, most = Number.POSITIVE_INFINITY): void {
+    const at = (): Piece => paragraph(text, this.x + inset, this.#y, this.width - inset, style, most);
     const piece = at();
     if (piece.height <= this.#rect.height * 0.8) {
       this.need(piece.height);
@@ -85,7 +88,7 @@ export class Flow {
   /** A heading that stays with what follows it. */
   heading(text: string, keep: Mm = 24): void {
     if (!this.need(keep)) this.gap(3);
-    this.say(text, { size: 4.6, face: 'semibold' });
+    this.say(text, { size: 4.6, face: 'semibold' }, 0, 2);
     this.put([line(this.x, this.#y, this.x + this.width, this.#y, RULE)], 2);
   }
 }

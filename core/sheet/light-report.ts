@@ -46,7 +46,7 @@ export function lightReport(input: LightReportInput): Document {
   const flow = new Flow(contentRect('A4', false), (rect, title) => head(rect, title, input));
   const title = 'Sun and light of neighbours';
   flow.turn(title);
-  flow.say(scheme.title.trim() === '' ? 'Scheme without a title' : scheme.title, { size: 7.5, face: 'semibold' });
+  flow.say(scheme.title.trim() === '' ? 'Scheme without a title' : scheme.title, { size: 7.5, face: 'semibold' }, 0, 3);
   flow.say('Sun and light of neighbours and open ground, before and after', { size: 5 });
   flow.gap(4);
   const names = new Map(scheme.receptors.map((r) => [r.id, r.name]));

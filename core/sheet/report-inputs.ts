@@ -6,10 +6,24 @@ import { type Column, table } from './table.ts';
 
 type Shaped = Pick<Scheme['blocks'][number], 'box' | 'outline'>;
 
-const shape = (s: Shaped): string =>
-  s.box
-    ? `box at ${s.box.at.map(plain).join(', ')}; ${s.box.width} × ${s.box.depth}${s.box.turn === 0 ? '' : `; turned ${plain(s.box.turn)}°`}`
-    : (s.outline ?? []).map((p) => p.map(plain).join(', ')).join('; ');
+/** Corners that stand in one row of a table; an outline of more runs on over rows of its own. */
+const CORNERS_A_ROW = 8;
+
+/** The shape of a block or room in as many texts as it needs rows. */
+function shapeRows(s: Shaped): readonly string[] {
+  if (s.box) {
+    const turned = s.box.turn === 0 ? '' : `; turned ${plain(s.box.turn)}°`;
+    return [`box at ${s.box.at.map(plain).join(', ')}; ${s.box.width} × ${s.box.depth}${turned}`];
+  }
+  const corners = (s.outline ?? []).map((p) => p.map(plain).join(', '));
+  const rows: string[] = [];
+  for (let i = 0; i < corners.length; i += CORNERS_A_ROW) rows.push(corners.slice(i, i + CORNERS_A_ROW).join('; '));
+  return rows.length > 0 ? rows : [''];
+}
+
+/** Rows of something with a shape: its own cells in the first, the rest of a long outline under it. */
+const withShape = (cells: readonly string[], s: Shaped): readonly (readonly string[])[] =>
+  shapeRows(s).map((text, i) => [...(i === 0 ? cells : cells.map(() => '')), text]);
 
 /** A device in words, with its own dimensions. */
 export function deviceWords(d: Device): string {
@@ -46,7 +60,7 @@ export function inputsPages(flow: Flow, report: Report): void {
       { head: 'height', width: 18, align: 'end' },
       { head: 'outline', width: 72 },
     ],
-    scheme.blocks.map((b) => [b.id, b.name, b.standing, fixed(b.base, 2), fixed(b.height, 2), shape(b)]),
+    scheme.blocks.flatMap((b) => withShape([b.id, b.name, b.standing, fixed(b.base, 2), fixed(b.height, 2)], b)),
   );
   put(
     'Rooms',
@@ -59,7 +73,7 @@ export function inputsPages(flow: Flow, report: Report): void {
       { head: 'height', width: 16, align: 'end' },
       { head: 'outline', width: 56 },
     ],
-    scheme.rooms.map((r) => [r.id, r.name, r.use, r.block, fixed(r.floor, 2), fixed(r.height, 2), shape(r)]),
+    scheme.rooms.flatMap((r) => withShape([r.id, r.name, r.use, r.block, fixed(r.floor, 2), fixed(r.height, 2)], r)),
   );
   put(
     'Windows',

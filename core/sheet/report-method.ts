@@ -1,9 +1,14 @@
 import { METRICS } from '../limits/metric.ts';
 import { DEFAULT_YEAR } from '../scheme/schema.ts';
+import { DEG } from '../units/angle.ts';
 import { SKY_MODELS } from '../sky/transpose.ts';
 import { limitWords } from './finding-words.ts';
 import type { Flow } from './flow.ts';
-import { SOFT } from './ink.ts';
+import { FRAME, SOFT } from './ink.ts';
+import { paragraph, rect } from './marks.ts';
+import { plan } from './plan.ts';
+import { bestScale } from './scale.ts';
+import { northPoint, scaleBar } from './scale-marks.ts';
 import { fixed, place } from './numerals.ts';
 import type { Report } from './report-input.ts';
 import { table } from './table.ts';
@@ -16,6 +21,7 @@ export function methodPage(flow: Flow, report: Report): void {
   const { site } = scheme;
   flow.turn('Site and method');
   flow.heading('Site');
+  sitePlan(flow, report);
   pairs(flow, [
     ['place', place(site.latitude, site.longitude)],
     ['height above the sea', `${fixed(site.elevation, 0)} m`],
@@ -62,6 +68,36 @@ export function methodPage(flow: Flow, report: Report): void {
   flow.say('The workings at the end give every step and the source of every formula for each room that is over.', {
     colour: SOFT,
   });
+}
+
+/** The scheme in plan, to the largest scale that fits, with north and scale beside it. */
+function sitePlan(flow: Flow, report: Report): void {
+  const { model } = report;
+  const [x0, y0, x1, y1] = model.extent;
+  const beside = 54;
+  const frame = { x: flow.x, y: flow.y, width: flow.width - beside, height: 84 };
+  const scale = bestScale([x1 - x0, y1 - y0], [frame.width - 4, frame.height - 4]);
+  if (scale === null || model.solids.length === 0) return;
+  const view = { frame, scale, centre: [(x0 + x1) / 2, (y0 + y1) / 2] as const };
+  const side = frame.x + frame.width + 6;
+  const bar = scaleBar(side, flow.y + 22, beside - 6, scale, 'A4');
+  const note = paragraph(
+    'Figures on blocks: height of the top in metres.',
+    side,
+    flow.y + 24 + bar.height,
+    beside - 6,
+    { colour: SOFT },
+  );
+  flow.put(
+    [
+      ...plan(view, model, null),
+      rect(frame.x, frame.y, frame.width, frame.height, { stroke: FRAME }),
+      northPoint(side + 7, flow.y + 13, 7, model.north_rad / DEG),
+      ...bar.marks,
+      ...note.marks,
+    ],
+    frame.height + 3,
+  );
 }
 
 /** The sentences that several texts start with, and what each has of its own: nothing is printed three times. */

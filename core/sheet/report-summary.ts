@@ -1,7 +1,7 @@
 import type { Finding, Verdict } from '../limits/finding.ts';
 import type { Mark, Mm } from './drawing.ts';
 import { counted, limitWords, margin, quantity } from './finding-words.ts';
-import type { Flow } from './flow.ts';
+import { Flow } from './flow.ts';
 import { HAIR, INK, SOFT } from './ink.ts';
 import { field, leading, line, rect, words } from './marks.ts';
 import { measure, READ } from './measure.ts';
@@ -21,7 +21,7 @@ const ROW: Mm = leading(READ) + 2.4;
 export function summaryPage(flow: Flow, report: Report): void {
   const { result, scheme } = report;
   flow.turn('Summary');
-  flow.say(result.title.trim() === '' ? 'Scheme without a title' : result.title, { size: 7.5, face: 'semibold' });
+  flow.say(result.title.trim() === '' ? 'Scheme without a title' : result.title, { size: 7.5, face: 'semibold' }, 0, 3);
   flow.say('Sun and summer heat in its rooms', { size: 5 });
   flow.gap(5);
   if (result.limitSet) counts(flow, report);
@@ -42,10 +42,8 @@ export function summaryPage(flow: Flow, report: Report): void {
   };
   const width = 110;
   const { height } = titleBlock(0, 0, width, scheme, facts);
-  const over = worstOfRooms(result.findings).filter((f) => f.verdict === 'over').length;
-  const toDo =
-    over === 0 ? 0 : 20 + Math.min(over, MOST_TO_DO) * ((report.ways.length > 0 ? 2 : 0) * leading(READ) + 1);
-  const bars = Math.floor((flow.left - height - toDo - 24) / ROW);
+  // Heading and the two lines under the bars take 24 mm.
+  const bars = Math.floor((flow.left - height - heightOf(flow, (trial) => whatToDo(trial, report)) - 24) / ROW);
   const all = result.limitSet ? worstOfRooms(result.findings) : highest(result.findings);
   const worst = all.slice(0, Math.max(FEWEST_BARS, Math.min(MOST_BARS, bars)));
   if (worst.length > 0) {
@@ -59,6 +57,14 @@ export function summaryPage(flow: Flow, report: Report): void {
   flow.need(height + 4);
   const x = flow.x + flow.width - width;
   flow.put(titleBlock(x, flow.y + flow.left - height, width, scheme, facts).marks, height);
+}
+
+/** How high something stands that is drawn down a page of the same width. */
+function heightOf(flow: Flow, draw: (trial: Flow) => void): Mm {
+  const trial = new Flow({ x: flow.x, y: 0, width: flow.width, height: 1e6 }, () => ({ marks: [], height: 0 }));
+  trial.turn('');
+  draw(trial);
+  return trial.y;
 }
 
 /** The worst finding of each room, in the order of the findings. */

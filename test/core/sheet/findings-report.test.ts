@@ -135,3 +135,25 @@ test('without a limit set there are values and no verdicts', async () => {
   expect(text).toContain('No limit set was chosen');
   expect(text).not.toMatch(/rooms over|over \(\+/u);
 });
+
+test('an outline of two thousand corners is printed whole, and a title of two thousand letters is cut to its place', () => {
+  const outline = Array.from({ length: 2000 }, (_, i): [number, number] => {
+    const a = (2 * Math.PI * i) / 2000;
+    return [Number((50 + 9 * Math.cos(a)).toFixed(3)), Number((70 + 9 * Math.sin(a)).toFixed(3))];
+  });
+  const round = {
+    ...scheme,
+    blocks: [
+      ...scheme.blocks,
+      { id: 'ROUND', name: 'x'.repeat(2000), standing: 'context' as const, outline, base: 0, height: 5 },
+    ],
+  };
+  const long = findingsReport({ ...result, title: 'Wide '.repeat(400) }, round);
+  const inputs = long.pages
+    .filter((p) => p.title === 'Inputs')
+    .map(said)
+    .join(' ');
+  for (const p of outline) expect(inputs).toContain(`${p[0]}, ${p[1]}`);
+  for (const page of long.pages) for (const t of texts(page.marks)) expect(t.at[1]).toBeLessThanOrEqual(287);
+  expect(long.pages[1]?.title).toBe('All rooms');
+});
