@@ -1,12 +1,13 @@
 import { signal } from '@preact/signals';
 import { useLayoutEffect } from 'preact/hooks';
 import { countOf, KINDS, ScheduleOf } from './schedule/schedules.tsx';
+import { SunPathPanel } from './sun-path/sun-path-panel.tsx';
 import { type Kind, selection } from './state/selection.ts';
 import { type Tab, Tabs } from './ui/tabs.tsx';
 import { words } from './ui/words.ts';
 import { YearStrip } from './year-strip/year-strip.tsx';
 
-type Page = Kind | 'year';
+type Page = Kind | 'year' | 'sun-path';
 
 const page = signal<Page>('year');
 
@@ -22,14 +23,18 @@ export function Drawer() {
   // On a wide window a schedule is always there; picking something in the massing turns to its schedule.
   const picked = selection.value?.kind;
   useLayoutEffect(() => {
-    if (picked !== undefined && (isWide.value || page.value !== 'year')) page.value = picked;
+    if (picked !== undefined && (isWide.value || page.value !== 'year') && page.value !== 'sun-path')
+      page.value = picked;
   }, [picked]);
   const wide = isWide.value;
   const shown: Page = wide && page.value === 'year' ? 'window' : page.value;
   const schedules = KINDS.map(
     (kind): Tab<Page> => ({ value: kind, text: words.schedule.tabs[kind], count: countOf(kind) }),
   );
-  const tabs = wide ? schedules : [{ value: 'year' as const, text: words.year.tab }, ...schedules];
+  const sunPath: Tab<Page> = { value: 'sun-path', text: words.sunPath.tab };
+  const tabs: Tab<Page>[] = wide
+    ? [...schedules, sunPath]
+    : [{ value: 'year', text: words.year.tab }, sunPath, ...schedules];
   return (
     <>
       <section class="schedules" aria-label={words.schedule.label}>
@@ -44,13 +49,8 @@ export function Drawer() {
             }}
           />
         </div>
-        <div
-          id="schedule-panel"
-          class="schedule-panel"
-          role="tabpanel"
-          aria-label={shown === 'year' ? words.year.label : words.schedule.tabs[shown]}
-        >
-          {shown === 'year' ? <YearStrip /> : <ScheduleOf kind={shown} />}
+        <div id="schedule-panel" class="schedule-panel" role="tabpanel" aria-label={labelOf(shown)}>
+          <Shown page={shown} />
         </div>
       </section>
       {wide ? (
@@ -60,4 +60,12 @@ export function Drawer() {
       ) : null}
     </>
   );
+}
+
+const labelOf = (shown: Page): string =>
+  shown === 'year' ? words.year.label : shown === 'sun-path' ? words.sunPath.label : words.schedule.tabs[shown];
+
+function Shown({ page: shown }: { page: Page }) {
+  if (shown === 'year') return <YearStrip />;
+  return shown === 'sun-path' ? <SunPathPanel /> : <ScheduleOf kind={shown} />;
 }

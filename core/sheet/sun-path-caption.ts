@@ -10,9 +10,13 @@ import { MASK_HATCH } from './sun-path-mask.ts';
 
 export const TITLE = 'Sun path';
 
+/** Brief where room is short: without the heading and the key to the lines. */
+export type CaptionAmount = 'full' | 'brief';
+
 /** What the drawing shows, for where, by which clock, and how to read its lines. */
-export function sunPathCaption(input: SunPathInput, x: Mm, top: Mm, width: Mm): Piece {
-  const { place: site, path, moment, mask } = input;
+export function sunPathCaption(input: SunPathInput, x: Mm, top: Mm, width: Mm, amount: CaptionAmount): Piece {
+  const { place: site, path, moment } = input;
+  const isFull = amount === 'full';
   const marks: Mark[] = [];
   let y = top;
   const put = (text: string, style: Parameters<typeof paragraph>[4] = {}): void => {
@@ -20,7 +24,31 @@ export function sunPathCaption(input: SunPathInput, x: Mm, top: Mm, width: Mm): 
     marks.push(...piece.marks);
     y += piece.height;
   };
-  const keys: { readonly sample: (x: Mm, y: Mm) => readonly Mark[]; readonly text: string }[] = [
+  if (isFull) put(`${TITLE} ${path.year}`, { size: 5, face: 'semibold' });
+  if (isFull && site.name.trim() !== '') put(site.name.trim());
+  put(`${place(site.latitude_deg, site.longitude_deg)}, ${fixed(site.elevation_m, 0)} m`);
+  put(clockWords(site.zone, path.year));
+  y += isFull ? 1.6 : 0.8;
+  if (moment !== null) {
+    put(moment.text, { face: 'semibold' });
+    put(sunWords(moment));
+    y += isFull ? 1.6 : 0.8;
+  }
+  if (isFull) {
+    const key = lineKey(input, x, y, width);
+    marks.push(...key.marks);
+    y += key.height;
+    put('Broken from the June to the December solstice.', { colour: SOFT });
+  }
+  put('True altitude, no refraction. Bearings from true north.', { colour: SOFT });
+  return { marks, height: y - top };
+}
+
+type Key = { readonly sample: (x: Mm, y: Mm) => readonly Mark[]; readonly text: string };
+
+/** Samples of the lines with their meaning, as many side by side as there is room for. */
+function lineKey({ mask }: SunPathInput, x: Mm, top: Mm, width: Mm): Piece {
+  const keys: readonly Key[] = [
     { sample: (kx, ky) => [line(kx, ky, kx + 8, ky, DATE_STROKE)], text: 'the sun’s way on a date' },
     {
       sample: (kx, ky) => [
@@ -38,36 +66,20 @@ export function sunPathCaption(input: SunPathInput, x: Mm, top: Mm, width: Mm): 
         ]
       : []),
   ];
-  const putKeys = (): void => {
-    let [left, height] = [x, 0];
-    for (const { sample, text } of keys) {
-      const wide = 10 + measure(text, READ);
-      if (left > x && left + wide > x + width) {
-        left = x;
-        y += height;
-      }
-      const piece = paragraph(text, left + 10, y, width - 10);
-      marks.push(...sample(left, y + READ * 0.45), ...piece.marks);
-      height = piece.height;
-      left += wide + 5;
+  const marks: Mark[] = [];
+  let [left, y, height] = [x, top, 0];
+  for (const { sample, text } of keys) {
+    const wide = 10 + measure(text, READ);
+    if (left > x && left + wide > x + width) {
+      left = x;
+      y += height;
     }
-    y += height;
-  };
-  put(`${TITLE} ${path.year}`, { size: 5, face: 'semibold' });
-  if (site.name.trim() !== '') put(site.name.trim(), {});
-  put(`${place(site.latitude_deg, site.longitude_deg)}, ${fixed(site.elevation_m, 0)} m`);
-  put(clockWords(site.zone, path.year));
-  y += 1.6;
-  if (moment !== null) {
-    put(moment.text, { face: 'semibold' });
-    put(sunWords(moment));
-    y += 1.6;
+    const piece = paragraph(text, left + 10, y, width - 10);
+    marks.push(...sample(left, y + READ * 0.45), ...piece.marks);
+    height = piece.height;
+    left += wide + 5;
   }
-  putKeys();
-  put('Broken from the June to the December solstice. True altitude, no refraction. Bearings from true north.', {
-    colour: SOFT,
-  });
-  return { marks, height: y - top };
+  return { marks, height: y + height - top };
 }
 
 function sunWords({ azimuth_deg, altitude_deg }: NonNullable<SunPathInput['moment']>): string {

@@ -6,7 +6,7 @@ import { ACCENT, INK, WHITE } from './ink.ts';
 import { measure, READ } from './measure.ts';
 import type { LabelRoom, LabelSpot, LabelText } from './sun-path-labels.ts';
 import { type DateOnPage, datesOnPage, type HourStretch, hourStretches } from './sun-path-lines.ts';
-import { type PagePoint, type SkyView, skyOnPage } from './sun-path-view.ts';
+import { type PagePoint, pageToSky, type SkyView, skyOnPage } from './sun-path-view.ts';
 
 /** Adds the lines of a path to what labels keep off. */
 export function keepOffPath(view: SkyView, path: SunPath, room: LabelRoom): void {
@@ -132,7 +132,8 @@ export function hourNames(view: SkyView, path: SunPath, room: LabelRoom): readon
     const stretch = stretches[i] as HourStretch;
     const label: LabelText = { text: stretch.hour, size: READ, face: 'semibold', colour: ACCENT };
     const tips = [juneSolstice_ms, decemberSolstice_ms].flatMap((t) => tipAt(view, stretch.runs, t) ?? []);
-    const beyond = room.find(label, tips.flatMap(tipSpots), ['date', 'hour', 'horizon']);
+    const inSky = tips.flatMap(tipSpots).filter((spot) => pageToSky(view, spot.at) !== null);
+    const beyond = room.find(label, inSky, ['date', 'hour', 'horizon']);
     const others = stretches.flatMap((_, k) => (k === i ? [] : [`hour ${k}`]));
     const spot = beyond ?? room.find(label, onLineSpots(stretch), ['date', 'horizon', ...others]);
     if (spot === null || named.some((n) => n.hour === stretch.hour && apart(n.at, spot.at) < TWICE)) return [];

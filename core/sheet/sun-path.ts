@@ -3,7 +3,7 @@ import { DEG, toDegrees } from '../units/angle.ts';
 import type { Document, Mark, Mm, Page } from './drawing.ts';
 import { ACCENT, WHITE } from './ink.ts';
 import { contentRect, finishPages, type PaperName, type Rect } from './paper.ts';
-import { sunPathCaption, TITLE } from './sun-path-caption.ts';
+import { type CaptionAmount, sunPathCaption, TITLE } from './sun-path-caption.ts';
 import { altitudeNames, bearingNames, horizonLine, SMALL_DISC, skyGrid } from './sun-path-grid.ts';
 import type { SunPathInput } from './sun-path-input.ts';
 import { LabelRoom } from './sun-path-labels.ts';
@@ -14,8 +14,13 @@ import { type SkyView, type SunPathProjection, skyOnPage } from './sun-path-view
 
 /** Room round the drawing for the names of bearings and altitudes. */
 const RIM = { stereographic: 7.5, left: 10, right: 5, top: 2, foot: 7.5 } as const;
-/** Widths of a caption beside the drawing; the first that fits the height is taken. */
-const CAPTIONS: readonly Mm[] = [66, 88, 112];
+/** Captions beside the drawing; the first that fits the height is taken. */
+const CAPTIONS: readonly (readonly [width: Mm, amount: CaptionAmount])[] = [
+  [66, 'full'],
+  [88, 'full'],
+  [66, 'brief'],
+  [88, 'brief'],
+];
 const GAP: Mm = 5;
 
 /**
@@ -26,24 +31,24 @@ export type SunPathLayout = {
   readonly view: SkyView;
   /** Grid, lines and names. */
   readonly sky: readonly Mark[];
-  readonly caption: { readonly x: Mm; readonly y: Mm; readonly width: Mm };
+  readonly caption: { readonly x: Mm; readonly y: Mm; readonly width: Mm; readonly amount: CaptionAmount };
 };
 
 /** Lays a sun-path drawing out in a rectangle: its caption beside it or, in an upright one, below. */
 export function sunPathLayout(box: Rect, input: SunPathInput): SunPathLayout {
   // Room for the longest that a moment can say, so that the drawing stands still while the moment moves.
   const longest = { ...input, moment: input.moment && LONGEST };
-  const height = (width: Mm): Mm => sunPathCaption(longest, 0, 0, width).height;
+  const height = (width: Mm, amount: CaptionAmount): Mm => sunPathCaption(longest, 0, 0, width, amount).height;
   const isWide = box.width > box.height * 1.15;
-  const beside = captionWidth(box, height);
+  const { width: beside, amount } = besideOf(box, height);
   const room: Rect = isWide
     ? { ...box, width: box.width - beside - GAP }
-    : { ...box, height: Math.max(30, box.height - height(box.width) - GAP) };
+    : { ...box, height: Math.max(30, box.height - height(box.width, 'full') - GAP) };
   const view = viewOf(room, input);
   const used = usedRect(view);
   const caption = isWide
-    ? { x: used.x + used.width + GAP, y: box.y, width: beside }
-    : { x: box.x, y: used.y + used.height + GAP, width: box.width };
+    ? { x: used.x + used.width + GAP, y: box.y, width: beside, amount }
+    : { x: box.x, y: used.y + used.height + GAP, width: box.width, amount: 'full' as const };
   return { view, sky: skyMarks(view, room, input), caption };
 }
 
@@ -51,13 +56,13 @@ const LONGEST = { azimuth_deg: 188.8, altitude_deg: -28.8, text: '28 September 2
 
 /** What the moment changes: the sun and the caption. */
 export function sunPathMoment({ view, caption }: SunPathLayout, input: SunPathInput): readonly Mark[] {
-  const { x, y, width } = caption;
+  const { x, y, width, amount } = caption;
   const { moment } = input;
   return [
     ...(moment && moment.altitude_deg > 0
       ? [{ kind: 'group' as const, label: 'moment', marks: sunMark(view, moment) }]
       : []),
-    { kind: 'group', label: 'caption', marks: sunPathCaption(input, x, y, width).marks },
+    { kind: 'group', label: 'caption', marks: sunPathCaption(input, x, y, width, amount).marks },
   ];
 }
 
@@ -67,10 +72,14 @@ function sunPathDrawing(box: Rect, input: SunPathInput): readonly Mark[] {
   return [...layout.sky, ...sunPathMoment(layout, input)];
 }
 
-const captionWidth = (box: Rect, height: (width: Mm) => Mm): Mm => {
+function besideOf(
+  box: Rect,
+  height: (width: Mm, amount: CaptionAmount) => Mm,
+): { readonly width: Mm; readonly amount: CaptionAmount } {
   const most = box.width * 0.45;
-  return Math.min(most, CAPTIONS.find((width) => height(Math.min(width, most)) <= box.height) ?? most);
-};
+  const fits = CAPTIONS.find(([width, amount]) => height(Math.min(width, most), amount) <= box.height);
+  return fits === undefined ? { width: most, amount: 'brief' } : { width: Math.min(most, fits[0]), amount: fits[1] };
+}
 
 /** The rectangle of a page that holds nothing but one sun-path drawing. */
 export function sunPathBox(width: Mm, height: Mm): Rect {

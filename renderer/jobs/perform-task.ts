@@ -7,7 +7,11 @@ import { checkScheme } from '../../core/study/check.ts';
 import type { Pulse } from '../../core/study/job.ts';
 import { momentStudy } from '../../core/study/moment.ts';
 import { sunYear } from '../../core/study/sun-year.ts';
+import { windowMask } from '../../core/study/window-mask.ts';
 import { sunEvents } from '../../core/sun/events.ts';
+import { sunPath } from '../../core/sun/sun-path.ts';
+import { whenSunAt } from '../../core/sun/when-sun-at.ts';
+import { zoneOfPlace } from '../../core/sun/zone-of-place.ts';
 import { findingsReport } from '../../core/sheet/findings-report.ts';
 import { limitSetOf } from './limit-set.ts';
 import type { AnswerOf, AskOf, DayEnds, Task, Work } from './tasks.ts';
@@ -58,6 +62,13 @@ const performers: { readonly [T in Task]: Performer<T> } = {
     const { scheme, model } = held();
     return sunYear(scheme, model, windows, year, YEAR_STEP_min, pulse);
   },
+  sunPath: async ({ observer, zone, year, window }, held) => ({
+    path: sunPath(observer, zone, year),
+    mask: window === null ? null : windowMask(held().model, window),
+  }),
+  whenSun: async ({ observer, azimuth_rad, altitude_rad, near_ms }) =>
+    whenSunAt(azimuth_rad, altitude_rad, observer, near_ms),
+  zoneOf: async ({ latitude, longitude }) => ({ zone: zoneOfPlace(latitude, longitude) }),
   report: async ({ result }, held) => ({ ok: true, value: findingsReport(result, held().scheme), notes: [] }),
   shadowSheet: async () => {
     throw new Error('not here yet');

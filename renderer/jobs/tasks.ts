@@ -1,10 +1,14 @@
 import type { Model } from '../../core/form/model.ts';
 import type { Checked, Fault } from '../../core/scheme/fault.ts';
+import type { ShadingMask } from '../../core/shade/sky-view-mask.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import type { Document } from '../../core/sheet/drawing.ts';
 import type { CheckResult } from '../../core/study/check-result.ts';
 import type { MomentResult } from '../../core/study/moment.ts';
 import type { SunYear } from '../../core/study/sun-year.ts';
+import type { Observer } from '../../core/sun/position.ts';
+import type { SunPath } from '../../core/sun/sun-path.ts';
+import type { WhenSun } from '../../core/sun/when-sun-at.ts';
 
 /** What a day brings: the ends of the day as clock times, for the slider. */
 export type DayEnds = {
@@ -29,6 +33,18 @@ export type Tasks = {
   check: { ask: { notes: readonly Fault[] }; answer: CheckResult };
   /** Direct sun on some windows through a year. */
   year: { ask: { windows: readonly string[]; year: number }; answer: SunYear };
+  /** The lines of the sun path. `window`: what hides the sky from it is wanted too, and the scheme is needed. */
+  sunPath: {
+    ask: { observer: Observer; zone: string; year: number; window: string | null };
+    answer: { path: SunPath; mask: ShadingMask | null };
+  };
+  /** When the sun comes nearest to a direction. */
+  whenSun: {
+    ask: { observer: Observer; azimuth_rad: number; altitude_rad: number; near_ms: number };
+    answer: WhenSun;
+  };
+  /** The zone that a place most likely keeps; null where none is known. */
+  zoneOf: { ask: { latitude: number; longitude: number }; answer: { zone: string | null } };
   /** The findings on paper. `drawn`: the date of the drawing, YYYY-MM-DD. */
   report: { ask: { result: CheckResult; drawn: string }; answer: Checked<Document> };
   /** The shadows of a date on paper, hour by hour while the sun is up. */
