@@ -5,6 +5,8 @@ import { Cautions } from './ui/cautions.tsx';
 import { Drawer } from './drawer.tsx';
 import { Findings } from './findings/findings.tsx';
 import { Massing } from './massing/massing.tsx';
+import { PlaceDialog } from './place/place-dialog.tsx';
+import { AboutButton, AboutDialog } from './start/about-dialog.tsx';
 import { FaultsDialog } from './start/faults-dialog.tsx';
 import { Start } from './start/start.tsx';
 import { TopBar } from './start/top-bar.tsx';
@@ -59,11 +61,15 @@ export function Desk() {
       <div class="desk">
         <TopBar />
         {scheme.value === null ? <Start /> : <OpenDesk />}
-        <Cautions />
+        <Cautions>
+          <AboutButton />
+        </Cautions>
       </div>
       <MessageLine shown={message.value} onDismiss={dismissMessage} />
       <FaultsDialog />
       <UnsavedDialog />
+      <PlaceDialog />
+      <AboutDialog />
       {isOver.value ? <div class="drop-cover">{words.drop}</div> : null}
     </>
   );

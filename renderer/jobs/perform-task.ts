@@ -11,7 +11,8 @@ import { windowMask } from '../../core/study/window-mask.ts';
 import { sunEvents } from '../../core/sun/events.ts';
 import { sunPath } from '../../core/sun/sun-path.ts';
 import { whenSunAt } from '../../core/sun/when-sun-at.ts';
-import { zoneOfPlace } from '../../core/sun/zone-of-place.ts';
+import { isZone } from '../../core/sun/civil.ts';
+import { zoneDisagrees, zoneOfPlace } from '../../core/sun/zone-of-place.ts';
 import { findingsReport } from '../../core/sheet/findings-report.ts';
 import { limitSetOf } from './limit-set.ts';
 import type { AnswerOf, AskOf, DayEnds, Task, Work } from './tasks.ts';
@@ -68,7 +69,10 @@ const performers: { readonly [T in Task]: Performer<T> } = {
   }),
   whenSun: async ({ observer, azimuth_rad, altitude_rad, near_ms }) =>
     whenSunAt(azimuth_rad, altitude_rad, observer, near_ms),
-  zoneOf: async ({ latitude, longitude }) => ({ zone: zoneOfPlace(latitude, longitude) }),
+  zoneOf: async ({ latitude, longitude, zone, instant_ms }) => ({
+    suggested: zoneOfPlace(latitude, longitude),
+    isOdd: isZone(zone) && zoneDisagrees(zone, longitude, instant_ms),
+  }),
   report: async ({ result }, held) => ({ ok: true, value: findingsReport(result, held().scheme), notes: [] }),
   shadowSheet: async () => {
     throw new Error('not here yet');

@@ -43,8 +43,11 @@ export type Tasks = {
     ask: { observer: Observer; azimuth_rad: number; altitude_rad: number; near_ms: number };
     answer: WhenSun;
   };
-  /** The zone that a place most likely keeps; null where none is known. */
-  zoneOf: { ask: { latitude: number; longitude: number }; answer: { zone: string | null } };
+  /** The zone that a place most likely keeps, null where none is known; and whether a zone given strays far from the sun there. */
+  zoneOf: {
+    ask: { latitude: number; longitude: number; zone: string; instant_ms: number };
+    answer: { suggested: string | null; isOdd: boolean };
+  };
   /** The findings on paper. `drawn`: the date of the drawing, YYYY-MM-DD. */
   report: { ask: { result: CheckResult; drawn: string }; answer: Checked<Document> };
   /** The shadows of a date on paper, hour by hour while the sun is up. */

@@ -4,6 +4,7 @@ import type { Answer } from '../../app/contract/host.ts';
 import { host } from '../bridge/host.ts';
 import { isReading, openByDialog, openDemo, openRecent, openRecovered, takeOpened } from '../state/files.ts';
 import { tell } from '../state/messages.ts';
+import { version } from '../state/program.ts';
 import { Button } from '../ui/button.tsx';
 import { words } from '../ui/words.ts';
 
@@ -22,6 +23,7 @@ export async function greetHost(): Promise<void> {
   if (unsaved.ok) kept.value = unsaved.value;
   if (!hello.ok) return tell('failure', hello.message);
   demos.value = hello.value.demos;
+  version.value = hello.value.version;
   if (hello.value.opened !== null) takeOpened(hello.value.opened);
 }
 

@@ -2,6 +2,7 @@ import { isUnsaved, redoEdit, redoName, scheme, undoEdit, undoName } from '../st
 import { openByDialog, save, saveAs } from '../state/files.ts';
 import { checkJob, runCheck } from '../state/studies.ts';
 import { switchTheme, theme } from '../state/theme.ts';
+import { openPlace } from '../place/place-dialog.tsx';
 import { Exports } from '../sheets/exports.tsx';
 import { Button } from '../ui/button.tsx';
 import { degrees, placeOnEarth } from '../ui/format.ts';
@@ -41,9 +42,9 @@ function Titles() {
     <div class="titles">
       <h1 title={title}>{title || words.bar.untitled}</h1>
       {isUnsaved.value ? <span class="unsaved">{words.bar.unsaved}</span> : null}
-      <span class="facts" title={facts.join(' · ')}>
-        {facts.join(' · ')}
-      </span>
+      <button type="button" class="facts-button" title={words.place.title} onClick={openPlace}>
+        <span class="facts">{facts.join(' · ')}</span>
+      </button>
     </div>
   );
 }
