@@ -7,3 +7,6 @@ import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils.js';
  * @see FIPS 180-4, Secure Hash Standard
  */
 export const contentHash = (text: string): string => bytesToHex(sha256(utf8ToBytes(text)));
+
+/** Content hash of a file's bytes, as `contentHash`: a weather file is known again by it, whatever its name. */
+export const bytesHash = (bytes: Uint8Array): string => bytesToHex(sha256(bytes));
