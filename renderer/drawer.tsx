@@ -5,11 +5,15 @@ import { SunPathPanel } from './sun-path/sun-path-panel.tsx';
 import { type Kind, selection } from './state/selection.ts';
 import { type Tab, Tabs } from './ui/tabs.tsx';
 import { words } from './ui/words.ts';
+import { WeatherPanel } from './weather/weather-panel.tsx';
 import { YearStrip } from './year-strip/year-strip.tsx';
 
-type Page = Kind | 'year' | 'sun-path';
+type Page = Kind | 'year' | 'sun-path' | 'weather';
 
 const page = signal<Page>('year');
+
+/** Panels that a selection does not turn away from. */
+const isAside = (shown: Page): boolean => shown === 'sun-path' || shown === 'weather';
 
 /** From this width on, the schedules and the year strip have each a place of their own. */
 const WIDE = window.matchMedia('(min-width: 1680px)');
@@ -23,8 +27,7 @@ export function Drawer() {
   // On a wide window a schedule is always there; picking something in the massing turns to its schedule.
   const picked = selection.value?.kind;
   useLayoutEffect(() => {
-    if (picked !== undefined && (isWide.value || page.value !== 'year') && page.value !== 'sun-path')
-      page.value = picked;
+    if (picked !== undefined && (isWide.value || page.value !== 'year') && !isAside(page.value)) page.value = picked;
   }, [picked]);
   const wide = isWide.value;
   const shown: Page = wide && page.value === 'year' ? 'window' : page.value;
@@ -32,9 +35,10 @@ export function Drawer() {
     (kind): Tab<Page> => ({ value: kind, text: words.schedule.tabs[kind], count: countOf(kind) }),
   );
   const sunPath: Tab<Page> = { value: 'sun-path', text: words.sunPath.tab };
+  const weather: Tab<Page> = { value: 'weather', text: words.weather.tab };
   const tabs: Tab<Page>[] = wide
-    ? [...schedules, sunPath]
-    : [{ value: 'year', text: words.year.tab }, sunPath, ...schedules];
+    ? [...schedules, sunPath, weather]
+    : [{ value: 'year', text: words.year.tab }, sunPath, ...schedules, weather];
   return (
     <>
       <section class="schedules" aria-label={words.schedule.label}>
@@ -62,10 +66,14 @@ export function Drawer() {
   );
 }
 
-const labelOf = (shown: Page): string =>
-  shown === 'year' ? words.year.label : shown === 'sun-path' ? words.sunPath.label : words.schedule.tabs[shown];
+const labelOf = (shown: Page): string => {
+  if (shown === 'year') return words.year.label;
+  if (shown === 'sun-path') return words.sunPath.label;
+  return shown === 'weather' ? words.weather.label : words.schedule.tabs[shown];
+};
 
 function Shown({ page: shown }: { page: Page }) {
   if (shown === 'year') return <YearStrip />;
-  return shown === 'sun-path' ? <SunPathPanel /> : <ScheduleOf kind={shown} />;
+  if (shown === 'sun-path') return <SunPathPanel />;
+  return shown === 'weather' ? <WeatherPanel /> : <ScheduleOf kind={shown} />;
 }

@@ -13,6 +13,7 @@ export const hands = {
   check: new WorkerHand(make),
   year: new WorkerHand(make),
   sunPath: new WorkerHand(make),
+  weather: new WorkerHand(make),
   /** What is answered at once: a moment for a place in the sky, a zone for a place on Earth. */
   quick: new WorkerHand(make),
 } as const;

@@ -1,12 +1,15 @@
 import { buildModel } from '../../core/form/build-model.ts';
 import type { Model } from '../../core/form/model.ts';
+import { bytesHash } from '../../core/scheme/hash.ts';
 import { loadScheme } from '../../core/scheme/load.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import { writeScheme } from '../../core/scheme/write.ts';
+import { guessTable } from '../../core/sky/weather/guess-table.ts';
 import { checkScheme } from '../../core/study/check.ts';
 import type { Pulse } from '../../core/study/job.ts';
 import { momentStudy } from '../../core/study/moment.ts';
 import { sunYear } from '../../core/study/sun-year.ts';
+import { weatherFacts } from '../../core/study/weather-facts.ts';
 import { windowMask } from '../../core/study/window-mask.ts';
 import { sunEvents } from '../../core/sun/events.ts';
 import { sunPath } from '../../core/sun/sun-path.ts';
@@ -42,6 +45,15 @@ function dayEnds(scheme: Scheme, date: string): DayEnds {
   return { date, sunrise_ms, sunset_ms, transit_ms, state };
 }
 
+/** A file's text: UTF-8 where it is that, else Latin 1, in which older weather files spell their stations. */
+function textOf(bytes: Uint8Array): string {
+  try {
+    return new TextDecoder('utf-8', { fatal: true }).decode(bytes);
+  } catch {
+    return new TextDecoder('latin1').decode(bytes);
+  }
+}
+
 type Performer<T extends Task> = (ask: AskOf<T>, held: () => Held, pulse: Pulse) => Promise<AnswerOf<T> | null>;
 
 const performers: { readonly [T in Task]: Performer<T> } = {
@@ -73,6 +85,11 @@ const performers: { readonly [T in Task]: Performer<T> } = {
     suggested: zoneOfPlace(latitude, longitude),
     isOdd: isZone(zone) && zoneDisagrees(zone, longitude, instant_ms),
   }),
+  weather: async ({ bytes, mapping, observer, zone }) => {
+    const text = textOf(bytes);
+    const facts = weatherFacts(text, mapping, observer, zone);
+    return { hash: bytesHash(bytes), facts, guess: facts.ok ? null : guessTable(text) };
+  },
   report: async ({ result }, held) => ({ ok: true, value: findingsReport(result, held().scheme), notes: [] }),
   shadowSheet: async () => {
     throw new Error('not here yet');

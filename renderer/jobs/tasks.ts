@@ -3,9 +3,12 @@ import type { Checked, Fault } from '../../core/scheme/fault.ts';
 import type { ShadingMask } from '../../core/shade/sky-view-mask.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import type { Document } from '../../core/sheet/drawing.ts';
+import type { TableGuess } from '../../core/sky/weather/guess-table.ts';
+import type { WeatherMapping } from '../../core/sky/weather/mapping.ts';
 import type { CheckResult } from '../../core/study/check-result.ts';
 import type { MomentResult } from '../../core/study/moment.ts';
 import type { SunYear } from '../../core/study/sun-year.ts';
+import type { WeatherFacts } from '../../core/study/weather-facts.ts';
 import type { Observer } from '../../core/sun/position.ts';
 import type { SunPath } from '../../core/sun/sun-path.ts';
 import type { WhenSun } from '../../core/sun/when-sun-at.ts';
@@ -47,6 +50,11 @@ export type Tasks = {
   zoneOf: {
     ask: { latitude: number; longitude: number; zone: string; instant_ms: number };
     answer: { suggested: string | null; isOdd: boolean };
+  };
+  /** A weather file read and summed up; `guess` comes with a table that does not say what its columns are. */
+  weather: {
+    ask: { bytes: Uint8Array; mapping: WeatherMapping | null; observer: Observer; zone: string };
+    answer: { hash: string; facts: Checked<WeatherFacts>; guess: TableGuess | null };
   };
   /** The findings on paper. `drawn`: the date of the drawing, YYYY-MM-DD. */
   report: { ask: { result: CheckResult; drawn: string }; answer: Checked<Document> };
