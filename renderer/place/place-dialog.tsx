@@ -25,23 +25,25 @@ export function PlaceDialog() {
 }
 
 type Advice = { readonly suggested: string | null; readonly isOdd: boolean };
+const NO_ADVICE: Advice = { suggested: null, isOdd: false };
 
-/** What the coordinates say of the zone; asked anew when either changes. */
-function useAdvice(form: PlaceForm): Advice | null {
-  const [advice, setAdvice] = useState<Advice | null>(null);
+/** What the coordinates say of the zone; asked anew when either changes. An answer counts only for what it was asked of. */
+function useAdvice(form: PlaceForm): Advice {
+  const [answer, setAnswer] = useState<(Advice & { readonly of: string; readonly zone: string | null }) | null>(null);
   const { latitude, longitude, zone } = readForm(form);
   useEffect(() => {
-    if (latitude === null || longitude === null) return setAdvice(null);
+    if (latitude === null || longitude === null) return;
     let isWanted = true;
     const ask = { latitude, longitude, zone: zone ?? '', instant_ms: instant.peek()?.instant_ms ?? 0 };
     void hands.quick.run('zoneOf', ask).then((outcome) => {
-      if (isWanted && outcome.kind === 'done') setAdvice(outcome.result);
+      if (isWanted && outcome.kind === 'done') setAnswer({ ...outcome.result, of: `${latitude} ${longitude}`, zone });
     });
     return () => {
       isWanted = false;
     };
   }, [latitude, longitude, zone]);
-  return advice;
+  if (answer === null || answer.of !== `${latitude} ${longitude}`) return NO_ADVICE;
+  return { suggested: answer.suggested, isOdd: answer.isOdd && answer.zone === zone };
 }
 
 function OpenPlace({ scheme }: { readonly scheme: Scheme }) {
@@ -49,7 +51,7 @@ function OpenPlace({ scheme }: { readonly scheme: Scheme }) {
   const [refused, setRefused] = useState<string | null>(null);
   const advice = useAdvice(form);
   const faults = faultsOf(form);
-  const suggested = advice?.suggested ?? null;
+  const { suggested } = advice;
   const close = (): void => {
     isOpen.value = false;
   };
@@ -111,7 +113,7 @@ function OpenPlace({ scheme }: { readonly scheme: Scheme }) {
         />
       </div>
       <ZoneField form={form} fault={faults.zone} suggested={suggested} onChange={change} />
-      {advice?.isOdd === true && faults.zone === null ? (
+      {advice.isOdd && faults.zone === null ? (
         <p class="notice" role="alert">
           {words.place.odd}
         </p>
