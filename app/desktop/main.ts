@@ -7,6 +7,7 @@ import type { DeskEvent } from '../contract/host.ts';
 import { fileHost } from '../files/file-handlers.ts';
 import { printDocument } from '../files/print-document.ts';
 import { RecentFiles } from '../files/recent-files.ts';
+import { settingsFolder } from '../files/settings-folder.ts';
 import { shipped } from '../files/shipped.ts';
 import { systemDialogs } from './dialogs.ts';
 import { guardContents } from './guard-contents.ts';
@@ -96,7 +97,7 @@ function openWindow(): void {
 
 async function start(): Promise<void> {
   await app.whenReady();
-  const dataDir = app.getPath('userData');
+  const dataDir = settingsFolder();
   const [latest] = await new RecentFiles(dataDir).list();
   const shown = (): BrowserWindow => {
     if (!window) throw new HostFault('forbidden', 'the window has closed');
