@@ -169,7 +169,7 @@ function skyMarks(view: SkyView, room: Rect, input: SunPathInput): readonly Mark
     ...bearingNames(view, labels),
     ...dateNames(view, path, labels, 'solstices'),
     ...hourNames(view, path, labels),
-    ...dateNames(view, path, labels, 'others'),
+    ...(isSmall(view) ? [] : dateNames(view, path, labels, 'others')),
     ...altitudeNames(view, labels),
   ];
   return [

@@ -289,7 +289,8 @@ export const words = {
     take: 'Take off',
     reading: 'Reading the file…',
     absent: (file: string) => `This scheme goes by ${file}. Choose it again to see what it holds.`,
-    changed: (file: string) => `This is not the ${file} that the scheme goes by: its content differs.`,
+    changed: (file: string) =>
+      `This ${file} has other content than the one the scheme went by. The scheme goes by this one now; undo brings the old one back.`,
     unread: (file: string) => `${file} was not read`,
     unknown: (file: string) => `${file} does not say what its columns are`,
     unknownLine: 'Say which column is what; it is kept with the scheme.',

@@ -1,4 +1,4 @@
-import { computed, signal } from '@preact/signals';
+import { computed, effect, signal } from '@preact/signals';
 import { applyEdit } from '../../core/scheme/edit.ts';
 import { type Fault, faultLine } from '../../core/scheme/fault.ts';
 import type { Weather } from '../../core/scheme/weather-schema.ts';
@@ -7,7 +7,7 @@ import type { WeatherMapping } from '../../core/sky/weather/mapping.ts';
 import type { WeatherFacts } from '../../core/study/weather-facts.ts';
 import { host } from '../bridge/host.ts';
 import { hands } from '../jobs/hands.ts';
-import { committed, edit, scheme } from '../state/document.ts';
+import { committed, edit, file as schemeFile, scheme } from '../state/document.ts';
 import { tell } from '../state/messages.ts';
 import { words } from '../ui/words.ts';
 
@@ -34,7 +34,16 @@ export const weatherOfScheme = computed<Weather | null>(() => scheme.value?.weat
 /** Whether the file at hand is the one that the scheme goes by, read as the scheme says. */
 export const isAtHand = computed(() => {
   const [kept, now] = [weatherOfScheme.value, reading.value];
-  return kept !== null && now !== null && now.hash === kept.hash && now.outcome.kind === 'read';
+  if (kept === null || now === null || now.outcome.kind !== 'read') return false;
+  return now.hash === kept.hash && isSameMapping(now.mapping, kept.mapping);
+});
+
+const isSameMapping = (a: WeatherMapping | null, b: WeatherMapping | null): boolean =>
+  JSON.stringify(a) === JSON.stringify(b);
+
+// Faults of a file belong to the scheme that it was chosen for.
+effect(() => {
+  if (schemeFile.value === null || reading.peek()?.outcome.kind === 'faults') reading.value = null;
 });
 
 /** Whether the file does not say itself what its columns are. */
@@ -76,7 +85,10 @@ export async function readFile(file: WeatherFile, mapping: WeatherMapping | null
       ? { kind: 'read', facts: facts.value, notes: facts.notes }
       : { kind: 'faults', faults: facts.faults },
   };
-  if (facts.ok && scheme.peek() === of) keep({ file: file.name, hash, mapping });
+  if (!facts.ok || scheme.peek() !== of) return;
+  const before = of.weather;
+  if (before?.file === file.name && before.hash !== hash) tell('news', words.weather.changed(file.name));
+  keep({ file: file.name, hash, mapping });
 }
 
 /** Has the scheme go by a file, as one step; nothing is done where it does so already. */
@@ -84,9 +96,13 @@ function keep(weather: { file: string; hash: string; mapping: WeatherMapping | n
   const of = committed.peek();
   if (of === null) return;
   const now = of.weather ?? null;
-  if (weather !== null && now !== null && now.hash === weather.hash && now.file === weather.file) {
-    if (JSON.stringify(now.mapping) === JSON.stringify(weather.mapping)) return;
-  }
+  const isSame =
+    weather !== null &&
+    now !== null &&
+    now.hash === weather.hash &&
+    now.file === weather.file &&
+    isSameMapping(now.mapping, weather.mapping);
+  if (isSame) return;
   const next = applyEdit(of, { kind: 'set-head', field: 'weather', value: weather });
   if (next.ok) edit(weather === null ? words.weather.editOff : words.weather.editSet, () => next.value);
   else tell('failure', next.faults.map(faultLine).join(' · '));
