@@ -3,10 +3,13 @@ import { Command, CommanderError } from 'commander';
 import { shipped } from '../files/shipped.ts';
 import { declareCheck } from './check.ts';
 import type { Declare } from './declare.ts';
+import { declareExposure } from './exposure.ts';
 import { declareOpen } from './open.ts';
 import { declareSchema } from './schema.ts';
 import { declareShadows } from './shadows.ts';
+import { declareSize } from './size.ts';
 import { declareSun } from './sun.ts';
+import { declareVerify } from './verify.ts';
 import { EXIT, Refusal } from './refusal.ts';
 import type { Screen } from './screen.ts';
 
@@ -17,7 +20,16 @@ Exit status:
   2  the input or the call is wrong; nothing was written
   3  a fault of the program`;
 
-const DECLARED: readonly Declare[] = [declareCheck, declareShadows, declareSun, declareSchema, declareOpen];
+const DECLARED: readonly Declare[] = [
+  declareCheck,
+  declareShadows,
+  declareExposure,
+  declareSun,
+  declareSize,
+  declareVerify,
+  declareSchema,
+  declareOpen,
+];
 
 /** The version that package.json states. */
 export const version = (): string =>

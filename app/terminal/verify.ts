@@ -1,0 +1,82 @@
+import type { ReportFile } from '../../core/study/report-json.ts';
+import type { Declare } from './declare.ts';
+import { progress } from './progress.ts';
+import { accepted, readText } from './read-input.ts';
+import { Refusal } from './refusal.ts';
+
+/** Differences that are named; one is enough for the report not to hold. */
+const MOST_NAMED = 10;
+/** What is compared: everything that a reader would rely on. Notes and cautions are words, and may be worded anew. */
+const COMPARED = ['schemeHash', 'title', 'zone', 'skyModel', 'counts', 'findings', 'rooms', 'days'] as const;
+
+const HELP = `
+The scheme and the limits are in the report; every number is worked out from them again. Exit status 0 says that the report holds,
+2 that it does not.
+
+Examples:
+  shadewright check scheme.json --json > report.json
+  shadewright verify report.json`;
+
+const shown = (value: unknown): string => (value === undefined ? 'nothing' : JSON.stringify(value).slice(0, 80));
+
+async function readReport(path: string): Promise<Partial<ReportFile>> {
+  const text = await readText(path);
+  let read: unknown;
+  try {
+    read = JSON.parse(text.charCodeAt(0) === 0xfeff ? text.slice(1) : text);
+  } catch {
+    throw new Refusal(`${path}: the file is not valid JSON; give what shadewright check --json printed.`);
+  }
+  const report = (typeof read === 'object' && read !== null ? read : {}) as Partial<ReportFile>;
+  if (report.format !== 'shadewright-report')
+    throw new Refusal(`${path}: format: this is not a report; give what shadewright check --json printed.`);
+  if (report.version !== 1)
+    throw new Refusal(
+      `${path}: version: ${shown(report.version)} is not one that this program reads; use the program that wrote it.`,
+    );
+  return report;
+}
+
+/** `shadewright verify`: works a report out again and says whether it holds. */
+export const declareVerify: Declare = (program, screen) => {
+  program
+    .command('verify')
+    .description('work a JSON report out again and say whether its numbers hold')
+    .argument('<REPORT>', 'what check --json printed')
+    .addHelpText('after', HELP)
+    .action(async (path: string) => {
+      const said = await readReport(path);
+      const [{ loadScheme }, { checkLimitSet }, { checkScheme }, { reportDifferences, reportJson }] = await Promise.all(
+        [
+          import('../../core/scheme/load.ts'),
+          import('../../core/limits/load-limits.ts'),
+          import('../../core/study/check.ts'),
+          import('../../core/study/report-json.ts'),
+        ],
+      );
+      const loaded = loadScheme(JSON.stringify(said.scheme ?? null));
+      const scheme = accepted(`${path}: scheme`, loaded, screen);
+      const limitSet = said.limitSet === null ? null : accepted(path, checkLimitSet(said.limitSet, 'limitSet'), screen);
+      const { pulse, done } = progress(screen, 'verifying');
+      const result = await checkScheme(scheme, limitSet, loaded.ok ? loaded.notes : [], pulse);
+      done();
+      if (result === null) throw new Error('the check was stopped');
+      // By way of JSON, so that what it cannot say (such as infinity) reads alike on both sides.
+      const found = JSON.parse(JSON.stringify(reportJson(result, scheme, limitSet))) as ReportFile;
+      const pick = (report: Partial<ReportFile>) => Object.fromEntries(COMPARED.map((key) => [key, report[key]]));
+      const differences = reportDifferences(pick(said), pick(found), MOST_NAMED);
+      const engine =
+        said.engine === found.engine ? '' : ` (written by engine ${said.engine}, worked out by ${found.engine})`;
+      if (differences.length > 0) {
+        throw new Refusal(
+          ...differences.map(
+            (d) => `${path}: ${d.place}: the report says ${shown(d.said)}, worked out again it is ${shown(d.found)}.`,
+          ),
+          `${path}: the report does not hold${engine}; ${differences.length === MOST_NAMED ? `the first ${MOST_NAMED} places are` : 'the places are'} named above, so print it again with shadewright check --json.`,
+        );
+      }
+      screen.out(
+        `The report holds: ${found.findings.length} findings of ${found.rooms.length} rooms come out the same${engine}.\n`,
+      );
+    });
+};
