@@ -59,7 +59,9 @@ function OpenPlace({ scheme }: { readonly scheme: Scheme }) {
   // Whoever moves the coordinates gets the zone that belongs to them, until a zone is chosen by hand.
   const [isMoved, setMoved] = useState(false);
   useEffect(() => {
-    if (isMoved && suggested !== null && !form.isZoneOwn) change({ zone: suggested });
+    if (!isMoved || suggested === null) return;
+    // Asked of the form as it is by then: a zone may have been typed while the answer was on its way.
+    setForm((now) => (now.isZoneOwn ? now : { ...now, zone: suggested }));
   }, [suggested, isMoved]);
   const move = (part: Pick<PlaceForm, 'latitude'> | Pick<PlaceForm, 'longitude'>): void => {
     const pair = parsePair(Object.values(part)[0] as string);
