@@ -28,6 +28,8 @@ type Setting = {
   readonly version: string;
   /** Called when the window has been closed: it held its request and then held none for some seconds. */
   readonly onWindowClosed?: () => void;
+  /** How long after the last held request a window counts as closed [ms]; absent: longer than a reload takes. */
+  readonly grace_ms?: number;
   readonly report?: (error: unknown) => void;
 };
 
@@ -82,7 +84,7 @@ class Answers {
     this.#files = files;
     this.#screens = screens;
     this.#report = setting.report ?? (() => undefined);
-    this.presence = new Presence(() => setting.onWindowClosed?.());
+    this.presence = new Presence(() => setting.onWindowClosed?.(), setting.grace_ms);
   }
 
   async answer(request: IncomingMessage, response: ServerResponse): Promise<void> {

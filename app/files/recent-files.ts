@@ -1,4 +1,5 @@
-import { basename, join } from 'node:path';
+import { mkdir } from 'node:fs/promises';
+import { basename, dirname, join } from 'node:path';
 import { RecentList } from '../contract/stored.ts';
 import { readBounded } from './read-bounded.ts';
 import { saveAtomic } from './save-atomic.ts';
@@ -37,6 +38,7 @@ export class RecentFiles {
         .filter((entry) => entry.path !== path)
         .map(({ path, opened }) => ({ path, opened }));
       const list = [{ path, opened: this.#clock().toISOString() }, ...others].slice(0, MOST);
+      await mkdir(dirname(this.#file), { recursive: true, mode: 0o700 });
       await saveAtomic(this.#file, `${JSON.stringify(list, null, 2)}\n`);
     });
     this.#last = next.catch(() => undefined);
