@@ -17,7 +17,12 @@ export type ReportFile = {
   readonly findings: readonly Finding[];
   /** Areas [m²] and shares; the day's curves are left out, because they follow from the scheme. */
   readonly rooms: readonly Omit<RoomResult, 'days'>[];
-  readonly days: readonly { readonly key: string; readonly name: string; readonly date: string; readonly step_min: number }[];
+  readonly days: readonly {
+    readonly key: string;
+    readonly name: string;
+    readonly date: string;
+    readonly step_min: number;
+  }[];
   readonly notes: CheckResult['notes'];
   readonly cautions: readonly string[];
   readonly limitSet: LimitSet | null;
@@ -55,7 +60,8 @@ const isSame = (a: unknown, b: unknown): boolean =>
     ? Math.abs(a - b) <= SAME_SHARE * Math.max(1, Math.abs(a), Math.abs(b))
     : a === b;
 
-const isObject = (value: unknown): value is { readonly [key: string]: unknown } => typeof value === 'object' && value !== null;
+const isObject = (value: unknown): value is { readonly [key: string]: unknown } =>
+  typeof value === 'object' && value !== null;
 
 /** One place at which a report says something else than what was worked out again. */
 export type Difference = { readonly place: string; readonly said: unknown; readonly found: unknown };
