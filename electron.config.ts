@@ -62,6 +62,8 @@ export default defineConfig({
     build: {
       outDir: at('out/renderer'),
       minify: true,
+      // Read from the disk, not over a network: one large file costs nothing.
+      chunkSizeWarningLimit: 4000,
       rolldownOptions: { input: { index: at('renderer/index.html') } },
     },
   },

@@ -12,6 +12,8 @@ const SWITCHES = [
   '--disable-component-update',
   '--disable-extensions',
   '--disable-features=Translate',
+  // Without a graphics card WebGL is drawn in software, which browsers refuse to pages of strangers; this page is our own.
+  '--enable-unsafe-swiftshader',
 ];
 
 /** The switches of a browser that shows one address in a window of its own, without tabs or an address line. */

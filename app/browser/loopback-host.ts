@@ -127,9 +127,8 @@ class Answers {
 
   #claim(request: IncomingMessage, response: ServerResponse): void {
     const session = this.admission.claim(headerOf(request, LAUNCH_HEADER));
-    if (session === null)
-      return this.#refuse(response, 403, 'this address has been used already; start again for a new one');
-    this.#reply(response, 200, { ok: true, value: session });
+    if (session === null) this.#refuse(response, 403, 'this address has been used already; start again for a new one');
+    else this.#reply(response, 200, { ok: true, value: session });
   }
 
   #stay(response: ServerResponse): void {

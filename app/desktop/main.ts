@@ -23,6 +23,8 @@ const PRELOAD = join(BUILT, 'preload', 'preload.cjs');
 const SCREENS = join(BUILT, 'renderer');
 
 app.enableSandbox();
+// Without a graphics card the massing is drawn in software; the only page that can use it is our own.
+app.commandLine.appendSwitch('enable-unsafe-swiftshader');
 protocol.registerSchemesAsPrivileged([
   { scheme: PAGE_SCHEME, privileges: { standard: true, secure: true, supportFetchAPI: true } },
 ]);

@@ -3,7 +3,7 @@ import { readScheme } from './read-input.ts';
 
 const HELP = `
 Examples:
-  shadewright open                      on the demo scheme
+  shadewright open
   shadewright open scheme.json`;
 
 /** `shadewright open`: the desk, in Electron where its runtime is there, else in an installed browser. */
@@ -11,7 +11,7 @@ export const declareOpen: Declare = (program, screen) => {
   program
     .command('open')
     .description('open the desk')
-    .argument('[SCHEME]', 'the scheme to open with; without one, the demo')
+    .argument('[SCHEME]', 'the scheme to open with; without one, the desk offers recent ones and examples')
     .addHelpText('after', HELP)
     .action(async (path: string | undefined) => {
       // A broken file is told here, where its faults can be read, and not in a window.

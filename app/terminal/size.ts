@@ -38,7 +38,7 @@ function conclusion(sweep: Sweep, target: number | undefined): string[] {
     lines.push(
       met === null
         ? `No setting tried brings the summer's gain down to ${target} Wh.`
-        : `${met.toFixed(3)} ${sweep.unit}`.trim() + ` brings the summer's gain down to ${target} Wh.`,
+        : `${met.toFixed(3)}${sweep.unit === '' ? '' : ` ${sweep.unit}`} brings the summer's gain down to ${target} Wh.`,
     );
   }
   if (sweep.enough !== null)

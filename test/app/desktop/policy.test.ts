@@ -1,6 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { join, resolve } from 'node:path';
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import { hasDisplay, windowSwitches } from '../../../app/browser/browser-window.ts';
 import { browserPlaces } from '../../../app/browser/find-browser.ts';
 import { guardContents } from '../../../app/desktop/guard-contents.ts';
@@ -47,23 +47,21 @@ describe('permissions', () => {
   });
 
   test('all three questions of a session are answered, and downloads stopped', () => {
-    const set: Record<string, (...words: never[]) => unknown> = {};
-    const answers: boolean[] = [];
-    guardSession({
-      setPermissionRequestHandler: (handler) => void (set.request = handler as never),
-      setPermissionCheckHandler: (handler) => void (set.check = handler as never),
-      setDevicePermissionHandler: (handler) => void (set.device = handler),
-      on: (_event, listener) => void (set.download = listener as never),
-    });
-    (set.request as (c: unknown, p: string, a: (granted: boolean) => void) => void)(null, 'media', (granted) =>
-      answers.push(granted),
-    );
-    expect(answers).toEqual([false]);
-    expect((set.check as (c: unknown, p: string) => boolean)(null, 'geolocation')).toBe(false);
-    expect((set.device as () => boolean)()).toBe(false);
-    let isStopped = false;
-    (set.download as (e: { preventDefault(): void }) => void)({ preventDefault: () => (isStopped = true) });
-    expect(isStopped).toBe(true);
+    const session = {
+      setPermissionRequestHandler: vi.fn<Parameters<typeof guardSession>[0]['setPermissionRequestHandler']>(),
+      setPermissionCheckHandler: vi.fn<Parameters<typeof guardSession>[0]['setPermissionCheckHandler']>(),
+      setDevicePermissionHandler: vi.fn<Parameters<typeof guardSession>[0]['setDevicePermissionHandler']>(),
+      on: vi.fn<Parameters<typeof guardSession>[0]['on']>(),
+    };
+    guardSession(session);
+    const answer = vi.fn();
+    session.setPermissionRequestHandler.mock.calls[0]?.[0](null, 'media', answer);
+    expect(answer.mock.calls).toEqual([[false]]);
+    expect(session.setPermissionCheckHandler.mock.calls[0]?.[0](null, 'geolocation')).toBe(false);
+    expect(session.setDevicePermissionHandler.mock.calls[0]?.[0]()).toBe(false);
+    const preventDefault = vi.fn();
+    session.on.mock.calls[0]?.[1]({ preventDefault });
+    expect(preventDefault).toHaveBeenCalledOnce();
   });
 });
 
@@ -110,10 +108,10 @@ describe('addresses', () => {
 
 test('a window goes nowhere, embeds nothing and opens no other', () => {
   const listeners = new Map<string, (event: never) => void>();
-  let onOpen: () => { action: string } = () => ({ action: 'allow' });
+  const setWindowOpenHandler = vi.fn<Parameters<typeof guardContents>[0]['setWindowOpenHandler']>();
   guardContents({
     on: (event: string, listener: (event: never) => void) => void listeners.set(event, listener),
-    setWindowOpenHandler: (handler) => void (onOpen = handler as never),
+    setWindowOpenHandler,
   });
   const isStopped = (event: string, url: string): boolean => {
     let stopped = false;
@@ -125,7 +123,7 @@ test('a window goes nowhere, embeds nothing and opens no other', () => {
     expect(isStopped(event, PAGE_URL)).toBe(false);
   }
   expect(isStopped('will-attach-webview', PAGE_URL)).toBe(true);
-  expect(onOpen()).toEqual({ action: 'deny' });
+  expect(setWindowOpenHandler.mock.calls[0]?.[0]({} as never)).toEqual({ action: 'deny' });
 });
 
 describe('messages to main', () => {
