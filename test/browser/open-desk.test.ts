@@ -21,7 +21,7 @@ const freePort = (): Promise<number> =>
 async function connected(port: number): Promise<Browser> {
   for (let attempt = 0; ; attempt++) {
     try {
-      return await chromium.connectOverCDP(`http://127.0.0.1:${port}`);
+      return await chromium.connectOverCDP(`http://127.0.0.1:${port}`, { timeout: 3000 });
     } catch (error) {
       if (attempt === 60) throw error;
       await new Promise((go) => setTimeout(go, 250));
