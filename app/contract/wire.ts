@@ -3,7 +3,7 @@
  * none of this: its messages are cloned as they are. No library and no Node in here, so that the page can import it.
  *
  * The page's side of the conversation, all of it `POST` to its own address:
- * - `/claim` with the header `x-shadewright-launch: <token from the address's #fragment>` once, answered by `{ ok, value: session }`;
+ * - `/claim` with the header `x-shadewright-launch: <token from the address's fragment, #t=token>` once, answered by `{ ok, value: session }`;
  *   the page then drops the fragment and keeps the session for itself (sessionStorage, so that a reload stays signed in).
  * - `/host/<channel>` with `x-shadewright-session: <session>` and an encoded ask, answered by an encoded `Reply`.
  * - `/stay` with the same header: an answer that never ends while the window is open. The host takes its end, with no new one

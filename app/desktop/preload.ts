@@ -7,6 +7,15 @@ const host = Object.freeze(
   Object.fromEntries(CHANNELS.map((channel) => [channel, (ask: unknown) => ipcRenderer.invoke(channel, ask)])),
 ) as unknown as Host;
 
+/** Where a dropped file lies; empty for one that a script made, and for what is no file at all. */
+function pathOf(file: unknown): string {
+  try {
+    return webUtils.getPathForFile(file as never);
+  } catch {
+    return '';
+  }
+}
+
 const bridge: Bridge = Object.freeze({
   host,
   listen: (hear: (event: DeskEvent) => void) => {
@@ -14,7 +23,7 @@ const bridge: Bridge = Object.freeze({
     ipcRenderer.on(DESK_EVENT, onEvent);
     return () => void ipcRenderer.off(DESK_EVENT, onEvent);
   },
-  dropped: (file: unknown) => ipcRenderer.invoke(DESK_DROPPED, { path: webUtils.getPathForFile(file as never) }),
+  dropped: (file: unknown) => ipcRenderer.invoke(DESK_DROPPED, { path: pathOf(file) }),
   setUnsaved: (isUnsaved: boolean) => void ipcRenderer.invoke(DESK_UNSAVED, isUnsaved),
 });
 
