@@ -154,7 +154,7 @@ export function deviceSchedule(scheme: Scheme): Schedule<Device> {
     columns: [
       { key: 'id', head: head.id, value: (r) => r.id },
       { key: 'kind', head: head.kind, value: (r) => words.schedule.kinds[r.kind] },
-      { key: 'depth', head: head.depth, unit: 'm', value: (r) => ('depth' in r ? r.depth : null), write: length },
+      { key: 'depth', head: head.depth, unit: 'm', value: (r) => (r.kind === 'blind' ? null : r.depth), write: length },
       { key: 'size', head: head.size, value: sizeOf },
       { key: 'place', head: head.place, value: placeOf },
       { key: 'used', head: head.usedBy, value: (r) => used.get(r.id) ?? 0, write: (v) => fixed(v, 0) },

@@ -28,7 +28,9 @@ const oneWindow = (wall: number, more: Parts = {}, window: object = {}, turn = 0
     ...more,
   });
 const near = (a: readonly number[], b: readonly number[]) =>
-  a.forEach((v, i) => expect(v).toBeCloseTo(b[i] as number, 9));
+  a.forEach((v, i) => {
+    expect(v).toBeCloseTo(b[i] as number, 9);
+  });
 
 describe('walls and windows', () => {
   // Design conventions: wall 0 of a box is the −y side, 1 the +x side, 2 the +y side, 3 the −x side.
