@@ -53,16 +53,19 @@ const PAGE_DIALOGS: Dialogs = {
   saveExport: pageAsks,
 };
 
-/** The body of a request up to the bound; null when it is longer. */
+/**
+ * The body of a request up to the bound; null when it is longer. What is past the bound is read and let go, because a page hears
+ * a refusal only when it has been allowed to finish; only the admitted window gets this far.
+ */
 async function bodyOf(request: IncomingMessage): Promise<string | null> {
   const parts: Buffer[] = [];
   let length = 0;
   for await (const part of request as AsyncIterable<Buffer>) {
     length += part.length;
-    if (length > MAX_MESSAGE_BYTES) return null;
-    parts.push(part);
+    if (length > MAX_MESSAGE_BYTES) parts.length = 0;
+    else parts.push(part);
   }
-  return Buffer.concat(parts).toString('utf8');
+  return length > MAX_MESSAGE_BYTES ? null : Buffer.concat(parts).toString('utf8');
 }
 
 const headerOf = (request: IncomingMessage, name: string): string => {

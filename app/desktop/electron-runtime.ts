@@ -1,6 +1,12 @@
 import { existsSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
 
+/** The program inside an unpacked runtime, where its installer has not said. */
+const PROGRAM: { readonly [platform: string]: string } = {
+  win32: 'electron.exe',
+  darwin: 'Electron.app/Contents/MacOS/Electron',
+};
+
 /**
  * The Electron runtime beside this project; null: not there. Found by what its installer leaves behind, because requiring the
  * package would start a download.
@@ -17,6 +23,6 @@ export function electronRuntime(root: string, env: NodeJS.ProcessEnv = process.e
   })();
   const folder = env.ELECTRON_OVERRIDE_DIST_PATH || (named === '' ? null : join(home, 'dist'));
   if (folder === null) return null;
-  const path = join(folder, named === '' ? 'electron' : named);
+  const path = join(folder, named === '' ? (PROGRAM[process.platform] ?? 'electron') : named);
   return existsSync(path) ? path : null;
 }

@@ -33,7 +33,7 @@ if (process.argv.includes('--check')) process.exit(0);
 
 const provided = process.env.ELECTRON_OVERRIDE_DIST_PATH;
 if (!provided) {
-  const { status } = spawnSync('npx', ['install-electron', '--no'], {
+  const { status } = spawnSync('npx', ['--no', 'install-electron'], {
     cwd: root,
     stdio: 'ignore',
     timeout: 300_000,

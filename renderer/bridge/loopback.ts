@@ -1,25 +1,9 @@
+import { CHANNELS } from '../../app/contract/channels.ts';
 import type { Answer, Ask, Channel, Host, Reply } from '../../app/contract/host.ts';
 import { decode, encode, LAUNCH_HEADER, SESSION_HEADER } from '../../app/contract/wire.ts';
 
 const SESSION_KEY = 'shadewright-session';
 const AGAIN_ms = 1500;
-
-const CHANNELS = [
-  'host:hello',
-  'scheme:demo',
-  'scheme:open',
-  'scheme:reopen',
-  'scheme:save',
-  'scheme:save-as',
-  'scheme:recent',
-  'scheme:autosave',
-  'scheme:recover',
-  'scheme:discard',
-  'export:write',
-  'sheet:pdf',
-  'weather:open',
-  'place:search',
-] as const satisfies readonly Channel[];
 
 const gone = (error: unknown): Reply<never> => ({
   ok: false,

@@ -61,9 +61,28 @@ describe.skipIf(executable === null || process.platform === 'win32')(
       await page?.close();
       const ran = await running;
       expect(ran.status, ran.err).toBe(0);
-      expect(ran.out).toContain('The Electron runtime is not here: opening the desk in a window of');
+      expect(ran.out).toContain('The Electron runtime is not here.\nOpening the desk in a window of');
       expect(ran.out).not.toContain('#t=');
       expect(profiles(), 'the window’s profile is thrown away').toBe(before);
+    });
+
+    test('prints an address that was not used yet, and keeps serving, where the runtime and the browser fail', async () => {
+      const folder = tempFolder();
+      for (const name of ['electron', 'browser']) {
+        writeFileSync(join(folder, name), '#!/bin/sh\nexit 3\n');
+        chmodSync(join(folder, name), 0o755);
+      }
+      const env = {
+        SHADEWRIGHT_BROWSER: join(folder, 'browser'),
+        SHADEWRIGHT_DATA: join(folder, 'data'),
+        DISPLAY: ':1',
+        ELECTRON_OVERRIDE_DIST_PATH: folder,
+      };
+      const ran = await runCommand(['open', DEMO], folder, env, 4000);
+      expect(ran.out).toContain('Electron ended with an error');
+      expect(ran.out).toContain(`${join(folder, 'browser')} ended with an error.`);
+      expect(ran.out).toMatch(/http:\/\/127\.0\.0\.1:\d+\/#t=[\w-]{43}\n/);
+      expect(ran.status, 'it was still serving when this test stopped it').toBeNull();
     });
 
     test('prints an address and keeps serving where no window can be shown', async () => {
