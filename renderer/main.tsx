@@ -3,6 +3,7 @@ import { desktopBridge } from './bridge/host.ts';
 import { Desk } from './desk.tsx';
 import { greetHost } from './start/start.tsx';
 import { pressShortcut } from './start/top-bar.tsx';
+import { keepUnsavedWork } from './state/autosave.ts';
 import { redoEdit, undoEdit } from './state/document.ts';
 import { openByDialog, reportUnsaved, save, saveAs, takeOpened } from './state/files.ts';
 import { followScheme } from './state/studies.ts';
@@ -18,6 +19,7 @@ const commands: { readonly [command: string]: () => unknown } = {
 
 followScheme();
 reportUnsaved();
+keepUnsavedWork();
 render(<Desk />, document.getElementById('desk') as HTMLElement);
 document.addEventListener('keydown', (event) => {
   if (pressShortcut(event)) event.preventDefault();

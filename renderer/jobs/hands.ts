@@ -6,8 +6,12 @@ const make = (): Worker => new Worker(new URL('./study.worker.ts', import.meta.u
  * One hand a kind of work, so that a check never holds up the shadow of a moving clock. Workers start with their first job.
  */
 export const hands = {
-  /** Reads and writes schemes, sets sheets. */
+  /** Reads schemes, sets sheets. */
   clerk: new WorkerHand(make),
+  /** Writes a scheme that is being saved: nothing else may push it aside. */
+  writer: new WorkerHand(make),
+  /** Writes unsaved work, again and again; the newest is enough. */
+  keeper: new WorkerHand(make),
   /** The moment on the massing. */
   moment: new WorkerHand(make),
   check: new WorkerHand(make),

@@ -8,6 +8,7 @@ import { desktopBridge, host } from '../bridge/host.ts';
 import { canSaveOver } from '../bridge/page-files.ts';
 import { hands } from '../jobs/hands.ts';
 import { words } from '../ui/words.ts';
+import { beginSlot, letGoOfSlot } from './autosave.ts';
 import { committed, file, isUnsaved, markSaved, place } from './document.ts';
 import { tell } from './messages.ts';
 import { civil } from './moment.ts';
@@ -27,7 +28,7 @@ const bytes = new TextEncoder();
 
 /** Goes on at once, or after the user has said what becomes of unsaved changes. */
 function afterLeaving(go: () => void): void {
-  if (isUnsaved.peek() && file.peek()?.id !== null) pendingOpen.value = go;
+  if (isUnsaved.peek()) pendingOpen.value = go;
   else go();
 }
 
@@ -35,14 +36,16 @@ export async function answerPending(answer: 'save' | 'discard' | 'stay'): Promis
   const go = pendingOpen.peek();
   if (answer === 'save' && !(await save())) return;
   pendingOpen.value = null;
+  if (answer === 'discard') letGoOfSlot();
   if (answer !== 'stay') go?.();
 }
 
 /**
  * Reads a file and puts it on the desk whole, or shows its faults and leaves the desk as it was.
- * @param id  null when there is no file to save over: an example, or work brought back
+ * @param id    null when there is no file to save over: an example, or work brought back
+ * @param slot  where unsaved work was brought back from; null: what is opened lies somewhere else as well
  */
-async function take(name: string, data: Uint8Array, id: FileId | null): Promise<void> {
+async function take(name: string, data: Uint8Array, id: FileId | null, slot: string | null = null): Promise<void> {
   isReading.value = true;
   const outcome = await hands.clerk.run('read', { text: text.decode(data) });
   isReading.value = false;
@@ -53,13 +56,19 @@ async function take(name: string, data: Uint8Array, id: FileId | null): Promise<
     refusal.value = { name, faults: checked.faults };
     return;
   }
-  show(checked.value, { id, name }, checked.notes);
+  beginSlot(slot);
+  show(checked.value, { id, name }, checked.notes, slot === null);
 }
 
-function show(scheme: Scheme, where: { id: FileId | null; name: string }, warnings: readonly Fault[]): void {
+function show(
+  scheme: Scheme,
+  where: { id: FileId | null; name: string },
+  warnings: readonly Fault[],
+  isSaved: boolean,
+): void {
   selectNothing();
   civil.value = { date: firstDate(scheme), time: civil.peek().time };
-  place(scheme, where, warnings, where.id !== null);
+  place(scheme, where, warnings, isSaved);
   void runCheck();
 }
 
@@ -101,12 +110,12 @@ export async function openDropped(dropped: File): Promise<void> {
   afterLeaving(() => void take(dropped.name, data, null));
 }
 
-export function openRecovered(kept: { name: string; bytes: Uint8Array }): void {
-  afterLeaving(() => void take(kept.name, kept.bytes, null));
+export function openRecovered(kept: { key: string; name: string; bytes: Uint8Array }): void {
+  afterLeaving(() => void take(kept.name, kept.bytes, null, kept.key));
 }
 
 async function textOf(scheme: Scheme): Promise<string | null> {
-  const outcome = await hands.clerk.run('write', { scheme });
+  const outcome = await hands.writer.run('write', { scheme });
   if (outcome.kind === 'done') return outcome.result;
   if (outcome.kind === 'failed') tell('failure', words.status.notSaved(outcome.message));
   return null;

@@ -419,6 +419,7 @@ export const words = {
     saved: (name: string) => `Saved: ${name}`,
     notSaved: (why: string) => `Not saved: ${why}`,
     notOpened: (why: string) => `Not opened: ${why}`,
+    notKept: (why: string) => `Unsaved work is not being kept for recovery: ${why}`,
     stopped: 'Stopped',
     dismiss: 'Dismiss',
     workerFailed: (what: string, why: string) => `${what} could not be worked out: ${why}`,
