@@ -1,6 +1,8 @@
 import { render } from 'preact';
+import type { DeskCommand } from '../app/contract/host.ts';
 import { desktopBridge } from './bridge/host.ts';
 import { Desk } from './desk.tsx';
+import { openAbout } from './start/about-dialog.tsx';
 import { greetHost } from './start/start.tsx';
 import { pressShortcut } from './start/top-bar.tsx';
 import { keepUnsavedWork } from './state/autosave.ts';
@@ -9,12 +11,13 @@ import { openByDialog, reportUnsaved, save, saveAs, takeOpened } from './state/f
 import { followScheme } from './state/studies.ts';
 
 /** What the host's own menu may ask for. */
-const commands: { readonly [command: string]: () => unknown } = {
+const commands: { readonly [C in DeskCommand]: () => unknown } = {
   open: openByDialog,
   save,
   'save-as': saveAs,
   undo: undoEdit,
   redo: redoEdit,
+  about: openAbout,
 };
 
 followScheme();
@@ -26,6 +29,6 @@ document.addEventListener('keydown', (event) => {
 });
 desktopBridge?.listen((event) => {
   if (event.kind === 'opened') takeOpened(event.opened);
-  else commands[event.command]?.();
+  else commands[event.command]();
 });
 void greetHost();

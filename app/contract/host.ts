@@ -123,7 +123,7 @@ export type Reply<T> =
 export type Host = { [C in Channel]: (ask: Ask<C>) => Promise<Reply<Answer<C>>> };
 
 /** What a menu or a shortcut of the host may ask of the screens. */
-export const DESK_COMMANDS = ['new', 'open', 'save', 'save-as', 'undo', 'redo', 'help'] as const;
+export const DESK_COMMANDS = ['open', 'save', 'save-as', 'undo', 'redo', 'about'] as const;
 export type DeskCommand = (typeof DESK_COMMANDS)[number];
 
 /** What reaches the screens unasked: a menu's command, or a scheme that the system handed over (double click, second start). */

@@ -20,7 +20,6 @@ export function menuTemplate(platform: NodeJS.Platform, isPackaged: boolean, sen
     {
       label: '&File',
       submenu: [
-        command('New scheme', 'new', 'CmdOrCtrl+Alt+N'),
         command('Open…', 'open', 'CmdOrCtrl+O'),
         line,
         command('Save', 'save', 'CmdOrCtrl+S'),
@@ -52,6 +51,6 @@ export function menuTemplate(platform: NodeJS.Platform, isPackaged: boolean, sen
         ...(isPackaged ? [] : [line, { role: 'toggleDevTools' } satisfies MenuItemConstructorOptions]),
       ],
     },
-    { role: 'help', submenu: [command('Help', 'help', 'F1')] },
+    { role: 'help', submenu: [command('About Shadewright', 'about')] },
   ];
 }

@@ -8,13 +8,12 @@ import { words } from '../ui/words.ts';
 const isOpen = signal(false);
 
 /** Opens what the program is, what it is made with, and its cautions. */
+export function openAbout(): void {
+  isOpen.value = true;
+}
+
 export const AboutButton = () => (
-  <button
-    type="button"
-    onClick={() => {
-      isOpen.value = true;
-    }}
-  >
+  <button type="button" onClick={openAbout}>
     {words.about.open}
   </button>
 );
