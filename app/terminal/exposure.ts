@@ -114,10 +114,6 @@ export const declareExposure: Declare = (program, screen) => {
         throw new Refusal('shadewright exposure: both --json and --csv were given; give one of the two.');
       const { scheme } = await readScheme(path, screen);
       const period = await periodOf(scheme, options);
-      if (scheme.receptors.length === 0)
-        screen.note(
-          `note: ${path}: receptors: the scheme has none; add points, areas or windows whose sun is asked for.\n`,
-        );
       const [{ exposureStudy }, { buildModel }] = await Promise.all([
         import('../../core/study/exposure.ts'),
         import('../../core/form/build-model.ts'),
@@ -132,7 +128,7 @@ export const declareExposure: Declare = (program, screen) => {
       const study = await exposureStudy(scheme, buildModel(scheme), ask, pulse);
       done();
       if (study === null) throw new Error('the study was stopped');
-      const result = accepted('shadewright exposure', study, screen);
+      const result = accepted(study.ok ? path : 'shadewright exposure', study, screen);
       const rows = result.receptors.map(
         ({ id, sunMinutes, beam, sky, ground }): Row => ({ id, sunMinutes, beam, sky, ground }),
       );

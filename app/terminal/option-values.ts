@@ -2,15 +2,23 @@ import { InvalidArgumentError } from 'commander';
 
 /** Readers of option values. Each refuses with what it wants instead; the frame adds the name of the option. */
 
+const DECIMAL = /^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i;
+
 /** A decimal number within bounds, both included. */
 export const number =
   (least: number, most: number, what: string) =>
   (text: string): number => {
-    const value = /^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i.test(text) ? Number(text) : Number.NaN;
+    const value = DECIMAL.test(text) ? Number(text) : Number.NaN;
     if (!(value >= least && value <= most))
       throw new InvalidArgumentError(`It must be ${what} from ${least} to ${most}.`);
     return value;
   };
+
+/** Any decimal number, for values whose bounds are checked further on. */
+export function decimal(text: string): number {
+  if (!DECIMAL.test(text)) throw new InvalidArgumentError('It must be a number, such as 51.45 or -2.6.');
+  return Number(text);
+}
 
 /** A whole number within bounds, both included. */
 export const whole =

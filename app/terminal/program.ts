@@ -16,7 +16,7 @@ import type { Screen } from './screen.ts';
 const STATUS_HELP = `
 Exit status:
   0  done, and nothing is over a limit
-  1  done, and something is over a limit
+  1  done, and something is over a limit, or a report does not hold
   2  the input or the call is wrong; nothing was written
   3  a fault of the program`;
 

@@ -1,4 +1,5 @@
 import { Option } from 'commander';
+import type { Stretch } from '../../core/sizing/shaded-dates.ts';
 import type { Sweep, Swept } from '../../core/sizing/sweep.ts';
 import type { Declare } from './declare.ts';
 import { number } from './option-values.ts';
@@ -15,7 +16,8 @@ type Options = {
 
 const HELP = `
 The window's own device is set to every depth in turn (glass: every g), with everything round it standing. Summer is the clear
-hottest design day, winter the clear day of the winter solstice.
+hottest design day, winter the clear day of the winter solstice. Kept off: the dates between which no sun reaches the glass while it
+stands squarely in front of the window (noon for glass that faces the equator); a dash stands for no such dates, or the whole year.
 
 Examples:
   shadewright size scheme.json --window W3 --device overhang
@@ -31,9 +33,17 @@ const NAMES: { readonly [S in Swept]: string } = {
 
 const amount = (value: number, unit: string): string => `${value.toFixed(2)}${unit === '' ? '' : ` ${unit}`}`;
 
+const MONTHS = 'Jan Feb Mar Apr May Jun Jul Aug Sep Oct Nov Dec'.split(' ');
+
+/** Month and day without the year, because the sun is the same from year to year within half a day. */
+const dayOfYear = (date: string): string => `${Number(date.slice(8))} ${MONTHS[Number(date.slice(5, 7)) - 1]}`;
+const stretchText = (s: Stretch | null): string => (s === null ? '–' : `${dayOfYear(s.from)} to ${dayOfYear(s.to)}`);
+
 function conclusion(sweep: Sweep, target: number | undefined): string[] {
   const lines = [sweep.now === null ? 'Now: none, or several that differ.' : `Now: ${amount(sweep.now, sweep.unit)}.`];
-  if (target !== undefined) {
+  if (target === undefined) {
+    lines.push("Give --target WH to be told which setting brings the summer's gain down to it.");
+  } else {
     const met = sweep.meetsTarget;
     lines.push(
       met === null
@@ -41,13 +51,18 @@ function conclusion(sweep: Sweep, target: number | undefined): string[] {
         : `${met.toFixed(3)}${sweep.unit === '' ? '' : ` ${sweep.unit}`} brings the summer's gain down to ${target} Wh.`,
     );
   }
-  if (sweep.enough !== null)
-    lines.push(`Beyond ${amount(sweep.enough, sweep.unit)} a further step saves less than 1 % of the summer's gain.`);
+  if (sweep.swept !== 'glass')
+    lines.push(
+      sweep.enough === null
+        ? 'Every step tried still saves 1 % or more of the summer gain of the window without it.'
+        : `Beyond ${amount(sweep.enough, sweep.unit)} a further step saves less than 1 % of the summer gain of the window without it.`,
+    );
   return lines;
 }
 
-const asText = (sweep: Sweep, target: number | undefined): string =>
-  [
+function asText(sweep: Sweep, target: number | undefined): string {
+  const isGlass = sweep.swept === 'glass';
+  return [
     `Window ${sweep.window}: ${NAMES[sweep.swept]}`,
     '',
     table(
@@ -56,17 +71,20 @@ const asText = (sweep: Sweep, target: number | undefined): string =>
         { head: 'summer Wh', align: 'right' },
         { head: 'summer peak W', align: 'right' },
         { head: 'winter Wh', align: 'right' },
+        ...(isGlass ? [] : [{ head: 'sun kept off', align: 'left' as const }]),
       ],
       sweep.points.map((p) => [
         p.amount.toFixed(2),
         p.summer_Wh.toFixed(0),
         p.summerPeak_W.toFixed(0),
         p.winter_Wh.toFixed(0),
+        ...(isGlass ? [] : [stretchText(p.keptOff)]),
       ]),
     ),
     ...conclusion(sweep, target),
     '',
   ].join('\n');
+}
 
 /** `shadewright size`: how deep a window's device must be, summer and winter side by side. */
 export const declareSize: Declare = (program, screen) => {

@@ -1,10 +1,11 @@
 import { Option } from 'commander';
+import { checkInstant, checkObserver } from '../../core/sun/check-observer.ts';
 import type { Observer } from '../../core/sun/position.ts';
 import { checkedZone } from './checked-zone.ts';
 import type { Declare } from './declare.ts';
-import { date, number, whole } from './option-values.ts';
+import { date, decimal, whole } from './option-values.ts';
 import { readInstant } from './read-instant.ts';
-import { readScheme } from './read-input.ts';
+import { accepted, readScheme } from './read-input.ts';
 import { Refusal } from './refusal.ts';
 import type { Screen } from './screen.ts';
 import { table } from './table.ts';
@@ -36,7 +37,8 @@ type Row = {
 const HELP = `
 One of --at and --on says when; a scheme, or --lat, --lon and --zone, says where.
 An instant without Z or an offset is a time of the clock in the zone.
-Altitude is without refraction, apparent altitude with it.
+Altitude is without refraction, apparent altitude with it. With --on, the text ends in sunrise, highest sun and sunset; JSON has the
+rows alone.
 
 Examples:
   shadewright sun scheme.json --on 2025-06-21
@@ -59,13 +61,14 @@ async function placeOf(path: string | undefined, options: Options, screen: Scree
     const { site } = (await readScheme(path, screen)).scheme;
     const zone = options.zone === undefined ? site.zone : await checkedZone(options.zone);
     const elevation_m = options.elevation ?? site.elevation;
-    return { zone, observer: { latitude_deg: site.latitude, longitude_deg: site.longitude, elevation_m, ...air } };
+    const observer = { latitude_deg: site.latitude, longitude_deg: site.longitude, elevation_m, ...air };
+    return { zone, observer: accepted('shadewright sun', checkObserver(observer), screen) };
   }
   const { lat, lon, zone } = options;
   if (lat === undefined || lon === undefined || zone === undefined)
     throw new Refusal('shadewright sun: nothing says where; give a scheme, or all of --lat, --lon and --zone.');
   const observer = { latitude_deg: lat, longitude_deg: lon, elevation_m: options.elevation ?? 0, ...air };
-  return { zone: await checkedZone(zone), observer };
+  return { zone: await checkedZone(zone), observer: accepted('shadewright sun', checkObserver(observer), screen) };
 }
 
 /** The instants asked for; those of a civil day run in steps from its first moment, so that a day of 23 hours has 23 of them. */
@@ -74,8 +77,10 @@ async function instantsOf(options: Options, zone: string, screen: Screen): Promi
     throw new Refusal('shadewright sun: exactly one of --at and --on must say when; give --at INSTANT or --on DATE.');
   if (options.at) {
     const instants: number[] = [];
-    for (const text of options.at)
-      instants.push(await readInstant(text, zone, (note) => screen.note(`note: ${note}\n`)));
+    for (const text of options.at) {
+      const instant_ms = await readInstant(text, zone, (note) => screen.note(`note: ${note}\n`));
+      instants.push(accepted(`--at ${text}`, checkInstant(instant_ms), screen));
+    }
     return instants;
   }
   const { daySamples } = await import('../../core/sun/civil.ts');
@@ -117,10 +122,15 @@ async function dayText(day: string, { zone, observer }: Place): Promise<string> 
     import('../../core/sun/civil.ts'),
   ]);
   const events = sunEvents(day, zone, observer);
-  const time = (instant_ms: number | null) => (instant_ms === null ? 'none' : civilOf(instant_ms, zone).time);
+  const time = (instant_ms: number | null): string => {
+    if (instant_ms === null) return 'none';
+    const civil = civilOf(instant_ms, zone);
+    // Where summer nights are short, the sun of a day sets past midnight.
+    return civil.date === day ? civil.time : `${civil.time} on ${civil.date}`;
+  };
   const highest = `highest ${time(events.transit_ms)} at ${events.transitAltitude_deg.toFixed(2)}°`;
-  if (events.state === 'never-rises') return `The sun does not rise on this day; ${highest}.\n`;
-  if (events.state === 'never-sets') return `The sun does not set on this day; ${highest}.\n`;
+  if (events.state === 'never-rises') return `Polar night: the sun does not rise on this day; ${highest}.\n`;
+  if (events.state === 'never-sets') return `Polar day: the sun does not set on this day; ${highest}.\n`;
   return `Sunrise ${time(events.sunrise_ms)}, ${highest}, sunset ${time(events.sunset_ms)}.\n`;
 }
 
@@ -130,13 +140,13 @@ export const declareSun: Declare = (program, screen) => {
     .command('sun')
     .description('print where the sun stands at instants or through a day')
     .argument('[SCHEME]', 'the scheme whose site is meant')
-    .option('--lat <D>', 'latitude in degrees, north positive', number(-90, 90, 'degrees'))
-    .option('--lon <D>', 'longitude in degrees, east positive', number(-180, 180, 'degrees'))
+    .option('--lat <D>', 'latitude in degrees, north positive', decimal)
+    .option('--lon <D>', 'longitude in degrees, east positive', decimal)
     .option('--zone <Z>', 'time zone by its IANA name, such as Europe/London')
-    .option('--elevation <M>', 'above sea level in metres', number(-500, 9000, 'metres'))
-    .option('--pressure <HPA>', 'station pressure, for refraction only', number(0, 1200, 'hectopascals'))
-    .option('--temperature <C>', 'air temperature, for refraction only', number(-90, 60, 'degrees Celsius'))
-    .option('--delta-t <S>', 'terrestrial minus universal time', number(-8000, 8000, 'seconds'))
+    .option('--elevation <M>', 'above sea level in metres', decimal)
+    .option('--pressure <HPA>', 'station pressure in hPa, for refraction only', decimal)
+    .option('--temperature <C>', 'air temperature in °C, for refraction only', decimal)
+    .option('--delta-t <S>', 'terrestrial minus universal time in seconds', decimal)
     .option('--at <INSTANT...>', 'one instant or more, such as 2025-06-21T12:00Z')
     .option('--on <DATE>', 'a civil day', date)
     .addOption(new Option('--step <MIN>', 'between the rows of --on').argParser(whole(1, 720, 'minutes')).default(60))

@@ -53,7 +53,7 @@ export function reportJson(result: CheckResult, scheme: Scheme, limitSet: LimitS
 }
 
 /** How far a number may differ between two machines, as a share of it: the last digits of sine and power differ, nothing else. */
-const SAME_SHARE = 1e-9;
+export const SAME_SHARE = 1e-9;
 
 const isSame = (a: unknown, b: unknown): boolean =>
   typeof a === 'number' && typeof b === 'number'

@@ -2,6 +2,9 @@ import { spawnSync } from 'node:child_process';
 import { existsSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join, resolve } from 'node:path';
 import { describe, expect, test, vi } from 'vitest';
+import type { Sweep } from '../../../core/sizing/sweep.ts';
+import type { ReceptorExposure } from '../../../core/study/exposure.ts';
+import { apart_deg, type PositionCase, positionCases } from '../../core/sun/reference.ts';
 import { faultText } from '../../../app/terminal/program.ts';
 import { runCommand } from '../../helpers/run-command.ts';
 import { tempFolder } from '../../helpers/temp-folder.ts';
@@ -100,8 +103,22 @@ describe('verify', () => {
     changed.findings[2].value *= 1.0001;
     writeFileSync(join(folder, 'report.json'), JSON.stringify(changed));
     const ran = await runCommand(['verify', 'report.json'], folder);
-    expect(ran.status).toBe(2);
-    expect(ran.err).toContain('findings[2].value');
+    expect(ran.status).toBe(1);
+    expect(ran.err).toBe('');
+    expect(ran.out).toMatch(/findings\[2\]\.value: .* \(apart by .*, 0\.0100 %\)/);
+  });
+
+  test('takes the last digits of another machine for the same, and no more than those', async () => {
+    const folder = tempFolder();
+    const { out } = await runCommand(['check', DEMO, '--json'], folder);
+    const off = async (share: number) => {
+      const report = JSON.parse(out);
+      for (const finding of report.findings) finding.value *= 1 + share;
+      writeFileSync(join(folder, 'report.json'), JSON.stringify(report));
+      return (await runCommand(['verify', 'report.json'], folder)).status;
+    };
+    expect(await off(1e-12)).toBe(0);
+    expect(await off(1e-7)).toBe(1);
   });
 
   test('sees a scheme that was changed under its findings, and a finding that was left out', async () => {
@@ -113,7 +130,7 @@ describe('verify', () => {
     fewer.findings.pop();
     for (const changed of [wider, fewer]) {
       writeFileSync(join(folder, 'report.json'), JSON.stringify(changed));
-      expect((await runCommand(['verify', 'report.json'], folder)).status).toBe(2);
+      expect((await runCommand(['verify', 'report.json'], folder)).status).toBe(1);
     }
   });
 });
@@ -134,6 +151,90 @@ describe('sun', () => {
     expect(row.azimuth).toBeCloseTo(194.34024, 4);
     expect(90 - row.apparentAltitude).toBeCloseTo(50.11162, 4);
     expect(row.equationOfTime).toBeCloseTo(14.641503, 4);
+  });
+
+  // Sixty positions by an independent implementation; see the head of the reference file.
+  test('agrees with the reference positions, asked one by one and on the clock of their zone', async () => {
+    const folder = tempFolder();
+    const off: unknown[] = [];
+    const check = async (known: PositionCase) => {
+      const { inputs: i, expected } = known;
+      const place = [
+        '--lat',
+        `${i.latitude}`,
+        '--lon',
+        `${i.longitude}`,
+        '--zone',
+        i.zone,
+        '--elevation',
+        `${i.altitude}`,
+      ];
+      const air = [
+        '--pressure',
+        `${i.pressure / 100}`,
+        '--temperature',
+        `${i.temperature}`,
+        '--delta-t',
+        `${i.delta_t}`,
+      ];
+      const ran = await runCommand(['sun', ...place, ...air, '--at', i.utc, '--json'], folder);
+      expect(ran.status, `${known.id}: ${ran.err}`).toBe(0);
+      const [row] = JSON.parse(ran.out);
+      const zenith_rad = (expected.zenith * Math.PI) / 180;
+      const holds =
+        row.local.startsWith(i.local) &&
+        apart_deg(row.azimuth, expected.azimuth) * Math.sin(zenith_rad) < 1e-4 &&
+        Math.abs(row.altitude - (90 - expected.zenith)) < 1e-4 &&
+        Math.abs(row.apparentAltitude - expected.apparent_elevation) < 1e-4 &&
+        Math.abs(row.equationOfTime - expected.equation_of_time) < 1e-4;
+      if (!holds) off.push([known.id, row, expected]);
+    };
+    const waiting = [...positionCases()];
+    expect(waiting).toHaveLength(60);
+    const lane = async () => {
+      for (let next = waiting.pop(); next !== undefined; next = waiting.pop()) await check(next);
+    };
+    await Promise.all([lane(), lane(), lane()]);
+    expect(off).toEqual([]);
+  });
+
+  test('takes several instants, in their order', async () => {
+    const at = ['2025-06-21T12:00Z', '2025-01-01T09:00', '2025-06-21T13:00:30+01:00'];
+    const { out } = await runCommand(['sun', DEMO, '--at', ...at, '--json'], tempFolder());
+    expect(JSON.parse(out).map((row: { instant: string }) => row.instant)).toEqual([
+      '2025-06-21T12:00:00Z',
+      '2025-01-01T09:00:00Z',
+      '2025-06-21T12:00:30Z',
+    ]);
+  });
+
+  test('says the same in text as in JSON, to the digits shown', async () => {
+    const ask = ['sun', DEMO, '--on', '2025-06-21'];
+    const [text, json] = await Promise.all([
+      runCommand(ask, tempFolder()),
+      runCommand([...ask, '--json'], tempFolder()),
+    ]);
+    const said = text.out.split('\n').filter((line) => line.startsWith('2025-06-21T'));
+    type Row = { local: string; azimuth: number; altitude: number; apparentAltitude: number; equationOfTime: number };
+    expect(said.map((line) => line.split(/\s+/))).toEqual(
+      (JSON.parse(json.out) as Row[]).map((r) => [
+        r.local,
+        ...[r.azimuth, r.altitude, r.apparentAltitude, r.equationOfTime].map((n) => n.toFixed(3)),
+      ]),
+    );
+  });
+
+  test.each([
+    ['90', '2025-06-21', /Polar day/, /at a pole every direction is south/],
+    ['-90', '2025-06-21', /Polar night/, /at a pole every direction is north/],
+    // The sun that rises on this day at 65.7° north sets after the next midnight.
+    ['65.7', '2025-06-19', /sunset 0\d:\d\d on 2025-06-20/, /^$/],
+  ])('says what the day is like at latitude %s', async (latitude, day, words, note) => {
+    const place = ['--lat', latitude, '--lon', '25', '--zone', 'Europe/Helsinki'];
+    const { status, out, err } = await runCommand(['sun', ...place, '--on', day, '--step', '360'], tempFolder());
+    expect(status).toBe(0);
+    expect(out).toMatch(words);
+    expect(err).toMatch(note);
   });
 
   test.each([
@@ -190,6 +291,45 @@ describe('exposure', () => {
       for (const key of ['sunMinutes', 'beam', 'sky', 'ground'] as const)
         expect(row[key]).toBeCloseTo(june[i][key] + december[i][key], 6);
   });
+});
+
+test('size says the same in text as in JSON, with the target it was given', async () => {
+  const ask = ['size', DEMO, '--window', 'W1', '--device', 'overhang'];
+  const folder = tempFolder();
+  const { points, enough } = JSON.parse((await runCommand([...ask, '--json'], folder)).out) as Sweep;
+  const target = ((points[3]?.summer_Wh ?? 0) + (points[4]?.summer_Wh ?? 0)) / 2;
+  const { out } = await runCommand([...ask, '--target', String(target)], folder);
+  const rows = out
+    .split('\n')
+    .flatMap((line) => (/^ +\d\.\d\d /.test(line) ? [line.trim().split(/\s+/).slice(0, 4)] : []));
+  expect(rows).toEqual(
+    points.map((p) => [p.amount.toFixed(2), p.summer_Wh.toFixed(0), p.summerPeak_W.toFixed(0), p.winter_Wh.toFixed(0)]),
+  );
+  if (enough !== null) expect(out).toContain(`Beyond ${enough.toFixed(2)} m`);
+  const met = Number(/^(\d\.\d+) m brings/m.exec(out)?.[1]);
+  expect(met).toBeGreaterThan(points[3]?.amount ?? Number.NaN);
+  expect(met).toBeLessThanOrEqual(points[4]?.amount ?? Number.NaN);
+});
+
+test('exposure says the same in text, CSV and JSON', async () => {
+  const ask = ['exposure', DEMO, '--on', '2025-03-21', '--step', '15'];
+  const [text, csv, json] = await Promise.all(
+    [ask, [...ask, '--csv'], [...ask, '--json']].map((words) => runCommand(words, tempFolder())),
+  );
+  const rows = JSON.parse(json?.out ?? '') as ReceptorExposure[];
+  expect(rows.length).toBeGreaterThan(0);
+  for (const { id, sunMinutes, beam, sky, ground } of rows) {
+    const cells = csv?.out
+      .split('\r\n')
+      .find((l) => l.startsWith(`${id},`))
+      ?.split(',')
+      .slice(1)
+      .map(Number);
+    // Tables are written to six figures.
+    expect(cells).toEqual([sunMinutes, beam, sky, ground].map((n) => Number(n.toPrecision(6))));
+    const [line = ''] = text?.out.split('\n').filter((l) => l.startsWith(`${id} `)) ?? [];
+    expect(line.split(/\s{2,}/).slice(2)).toEqual([beam, sky, ground].map((n) => n.toFixed(0)));
+  }
 });
 
 test('size gives a sweep whose summer gain falls with depth', async () => {
