@@ -17,13 +17,13 @@ export function progress(screen: Screen, what: string): { readonly pulse: Pulse;
       last_ms = now_ms;
       if (screen.isWatched) {
         isDrawn = true;
-        screen.note(`\r${what}: ${Math.floor((100 * done) / Math.max(total, 1))} %\u001b[K`);
+        screen.redraw(`${what}: ${Math.floor((100 * done) / Math.max(total, 1))} %`);
       }
       await new Promise((go) => setImmediate(go));
       return 'go';
     },
     done: () => {
-      if (isDrawn) screen.note('\r\u001b[K');
+      if (isDrawn) screen.redraw('');
     },
   };
 }

@@ -1,3 +1,4 @@
+import { nestsTooDeep } from '../../core/scheme/nesting.ts';
 import type { Difference, ReportFile } from '../../core/study/report-json.ts';
 import type { Declare } from './declare.ts';
 import { progress } from './progress.ts';
@@ -36,6 +37,8 @@ async function readReport(path: string): Promise<Partial<ReportFile>> {
   } catch {
     throw new Refusal(`${path}: the file is not valid JSON; give what shadewright check --json printed.`);
   }
+  if (nestsTooDeep(read))
+    throw new Refusal(`${path}: the file nests deeper than any report; give what shadewright check --json printed.`);
   const report = (typeof read === 'object' && read !== null ? read : {}) as Partial<ReportFile>;
   if (report.format !== 'shadewright-report')
     throw new Refusal(`${path}: format: this is not a report; give what shadewright check --json printed.`);

@@ -2,6 +2,7 @@ import { clockMinutes } from '../gain/clock-window.ts';
 import { CHECK_DAYS } from '../gain/check-days.ts';
 import type { Checked, Fault } from '../scheme/fault.ts';
 import { LimitSetFile } from '../scheme/limit-schema.ts';
+import { MOST_NESTED, nestsTooDeep } from '../scheme/nesting.ts';
 import { sayIssue } from '../scheme/say-issue.ts';
 import { Room } from '../scheme/schema.ts';
 import type { LimitSet } from './limit-set.ts';
@@ -27,6 +28,8 @@ export function parseLimitSet(text: string): Checked<LimitSet> {
   } catch {
     return failed('not-json', 'the limit set is not valid JSON', 'look for a missing comma, bracket or quote');
   }
+  if (nestsTooDeep(parsed))
+    return failed('too-deep', `the limit set nests deeper than ${MOST_NESTED} levels`, 'a set is a short list');
   return checkLimitSet(parsed);
 }
 

@@ -3,6 +3,7 @@ import { checkReferences } from './check-references.ts';
 import type { Checked, Fault } from './fault.ts';
 import { jsonFaultAt, lineAndColumn } from './json-fault.ts';
 import { migrate } from './migrate.ts';
+import { MOST_NESTED, nestsTooDeep } from './nesting.ts';
 import { sayIssue } from './say-issue.ts';
 import { Scheme } from './schema.ts';
 import { zoneExists } from './zone-exists.ts';
@@ -76,6 +77,12 @@ export function loadScheme(text: string): Checked<Scheme> {
       'not-a-scheme',
       'the file is JSON, but not a scheme',
       'a scheme is an object with "format": "shadewright"',
+    );
+  if (nestsTooDeep(parsed))
+    return wholeFile(
+      'too-deep',
+      `the file nests deeper than ${MOST_NESTED} levels`,
+      'take out what is not of the scheme',
     );
   const file = parsed as Record<string, unknown>;
   if (file['format'] !== 'shadewright') {

@@ -45,6 +45,8 @@ const BROKEN: { readonly [what: string]: { readonly break: (scheme: Loose) => vo
   'a window of no glass': { break: (s) => (s.windows[0].glass = 'none'), place: /windows\[0\]\.glass/ },
   'two rooms of one name': { break: (s) => (s.rooms[1].id = s.rooms[0].id), place: /rooms\[1\]/ },
   'a newer version': { break: (s) => (s.version = 99), place: /version/ },
+  'a turbidity below nothing': { break: (s) => (s.site.linkeTurbidity = -1), place: /site\.linkeTurbidity: .*-1/ },
+  'weather that is a number': { break: (s) => (s.weather = -1), place: /weather: .*-1/ },
   'limits that nobody knows': { break: (s) => (s.limits = 'no-such-set'), place: /limits/ },
 };
 
@@ -77,6 +79,23 @@ describe('a scheme with', () => {
     const ran = await runCommand(['check', 'scheme.json'], folder);
     expectRefused(ran, /site\.latitude/, /windows\[0\]\.width/);
     expect(ran.err.trim().split('\n').length).toBeGreaterThan(1);
+  });
+});
+
+describe('a report that', () => {
+  const nested = '['.repeat(100_000) + ']'.repeat(100_000);
+  test.each([
+    ['is missing', null, /no such file/],
+    ['is no JSON', 'Dear all,', /not valid JSON/],
+    ['is a list', '[]', /not a report/],
+    ['is of a newer version', '{"format":"shadewright-report","version":2}', /version: 2/],
+    ['has no scheme', '{"format":"shadewright-report","version":1}', /scheme/],
+    ['has no scheme but a number', '{"format":"shadewright-report","version":1,"scheme":7}', /scheme/],
+    ['nests without end', `{"format":"shadewright-report","version":1,"scheme":${nested}}`, /nests deeper/],
+  ])('%s is refused', async (_what, text, words) => {
+    const folder = tempFolder();
+    if (text !== null) writeFileSync(join(folder, 'report.json'), text);
+    expectRefused(await runCommand(['verify', 'report.json'], folder), /report\.json: /, words);
   });
 });
 

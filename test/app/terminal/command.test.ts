@@ -376,6 +376,26 @@ describe('the program around it', () => {
     expect([0, null]).toContain(ran.status);
   });
 
+  test.skipIf(process.platform !== 'linux')('says so when the disk is full, as a thing the user can cure', () => {
+    const cli = join(root, 'out/main/cli.js');
+    const ran = spawnSync('bash', ['-c', `node "${cli}" schema > /dev/full`], { encoding: 'utf8' });
+    expect(ran.status).toBe(2);
+    expect(ran.stderr).toBe('shadewright: the results were not written, the disk is full; send them elsewhere.\n');
+  });
+
+  test('hands no control character of a file to the terminal, and says the same in JSON', async () => {
+    const folder = tempFolder();
+    const scheme = JSON.parse(readFileSync(DEMO, 'utf8'));
+    scheme.title = 'a\u001b[2Jb\u009bc\u202ed\re';
+    writeFileSync(join(folder, 'a.json'), JSON.stringify(scheme));
+    const [text, json] = await Promise.all([
+      runCommand(['check', 'a.json'], folder),
+      runCommand(['check', 'a.json', '--json'], folder),
+    ]);
+    expect(text.out).toContain('a\\u001b[2Jb\\u009bc\\u202ed\\u000de');
+    expect(JSON.parse(json.out).title).toBe(scheme.title);
+  });
+
   test('starts fast: the demo is checked within a second, cold (median of three)', async () => {
     const times: number[] = [];
     for (let i = 0; i < 3; i++) times.push((await runCommand(['check', DEMO], tempFolder())).took_ms);
