@@ -39,6 +39,12 @@ const MONTHS = 'Jan Feb Mar Apr May Jun Jul Aug Sep Oct Nov Dec'.split(' ');
 const dayOfYear = (date: string): string => `${Number(date.slice(8))} ${MONTHS[Number(date.slice(5, 7)) - 1]}`;
 const stretchText = (s: Stretch | null): string => (s === null ? '–' : `${dayOfYear(s.from)} to ${dayOfYear(s.to)}`);
 
+function enoughText(enough: number | null): string {
+  if (enough === null) return 'Every step tried still saves 1 % or more of the summer gain of the window without it.';
+  const where = enough === 0 ? 'No depth is worth having: every' : `Beyond ${enough.toFixed(2)} m a further`;
+  return `${where} step saves less than 1 % of the summer gain of the window without it.`;
+}
+
 function conclusion(sweep: Sweep, target: number | undefined): string[] {
   const lines = [sweep.now === null ? 'Now: none, or several that differ.' : `Now: ${amount(sweep.now, sweep.unit)}.`];
   if (target === undefined) {
@@ -51,12 +57,7 @@ function conclusion(sweep: Sweep, target: number | undefined): string[] {
         : `${met.toFixed(3)}${sweep.unit === '' ? '' : ` ${sweep.unit}`} brings the summer's gain down to ${target} Wh.`,
     );
   }
-  if (sweep.swept !== 'glass')
-    lines.push(
-      sweep.enough === null
-        ? 'Every step tried still saves 1 % or more of the summer gain of the window without it.'
-        : `Beyond ${amount(sweep.enough, sweep.unit)} a further step saves less than 1 % of the summer gain of the window without it.`,
-    );
+  if (sweep.swept !== 'glass') lines.push(enoughText(sweep.enough));
   return lines;
 }
 
