@@ -1,4 +1,4 @@
-import { effect, untracked } from '@preact/signals';
+import { computed, effect, untracked } from '@preact/signals';
 import { useLayoutEffect, useRef } from 'preact/hooks';
 import { areasOf } from './site.ts';
 import { scheme } from '../state/document.ts';
@@ -15,6 +15,9 @@ import { MassingScene } from './scene.ts';
 import { solidsLayer } from './solids-layer.ts';
 import { Strokes } from './strokes.ts';
 import { camera, lookAs, size, stage } from './view-state.ts';
+
+/** Changes only when the hatch should: most moves of the camera leave it alone. */
+const hatchSpacing_m = computed(() => hatchSpacing(camera.value.scale));
 
 /** The ground that shadows are drawn on [m]. */
 const GROUND_m = 0;
@@ -66,7 +69,7 @@ function drive(scene: MassingScene): () => void {
       const hatch = new Strokes();
       const change = moment.value?.value.shadows ?? null;
       if (change !== null && stage.value === 'after') {
-        hatchRegions(change.added.regions, hatchSpacing(camera.value.scale), GROUND_m, palette.over, hatch);
+        hatchRegions(change.added.regions, hatchSpacing_m.value, GROUND_m, palette.over, hatch);
         outlineRegions(change.added.regions, GROUND_m, palette.over, hatch);
         outlineRegions(change.gained.regions, GROUND_m, palette.edge, hatch);
       }
@@ -92,11 +95,12 @@ type Props = { readonly onUnavailable: (isLost: boolean) => void };
 /** The massing on the graphics card, or in software where there is none. */
 export function MassingCanvas({ onUnavailable }: Props) {
   const ref = useRef<HTMLCanvasElement>(null);
+  const above = useRef<HTMLCanvasElement>(null);
   useLayoutEffect(() => {
     const canvas = ref.current as HTMLCanvasElement;
     let scene: MassingScene;
     try {
-      scene = new MassingScene(canvas);
+      scene = new MassingScene(canvas, above.current as HTMLCanvasElement);
     } catch {
       onUnavailable(false);
       return;
@@ -149,6 +153,7 @@ export function MassingCanvas({ onUnavailable }: Props) {
       }}
     >
       <canvas ref={ref} class="massing-canvas" />
+      <canvas ref={above} class="massing-canvas at-rest" />
     </div>
   );
 }

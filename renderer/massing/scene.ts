@@ -18,6 +18,7 @@ import {
 import { axesOf, type Camera, type Size } from './camera.ts';
 import type { Faces, Owner } from './faces.ts';
 import type { Rgb } from './palette.ts';
+import { StillPicture } from './still-picture.ts';
 import type { Strokes } from './strokes.ts';
 
 /** The layers of the drawing from the ground up. Ground layers are painted in this order; solids hide what lies behind them. */
@@ -27,6 +28,8 @@ export type Layer = (typeof ORDER)[number];
 /** The camera stands this far back: outside any site [m]. */
 const BACK_m = 5000;
 const DASH_px = 5;
+/** A view that has not changed for so long is at rest. */
+const STILL_AFTER_ms = 160;
 
 const FLAT = { vertexColors: true, side: DoubleSide } as const;
 const ON_GROUND = { depthTest: false, depthWrite: false } as const;
@@ -65,10 +68,19 @@ export class MassingScene {
   #size: Size = { width: 1, height: 1 };
   #view: Camera | null = null;
   #frame = 0;
+  readonly #rest: StillPicture | null;
+  #still: ReturnType<typeof setTimeout> | null = null;
 
-  /** @throws {Error} when the machine gives no WebGL context */
-  constructor(canvas: HTMLCanvasElement) {
-    this.#renderer = new WebGLRenderer({ canvas, antialias: true, powerPreference: 'low-power' });
+  /**
+   * @param canvas  drawn on by the graphics card, or by software in its place
+   * @param above   a canvas over it for the picture at rest
+   * @throws {Error} when the machine gives no WebGL context
+   */
+  constructor(canvas: HTMLCanvasElement, above: HTMLCanvasElement) {
+    const isSoftware = drawsInSoftware();
+    this.#renderer = new WebGLRenderer({ canvas, antialias: !isSoftware, powerPreference: 'low-power' });
+    this.#rest = isSoftware ? new StillPicture(above, (dx, dy) => this.#drawAside(dx, dy)) : null;
+    above.hidden = true;
     this.#scene.matrixAutoUpdate = false;
   }
 
@@ -171,6 +183,9 @@ export class MassingScene {
 
   /** Asks for one redraw on the next frame, however often it is called. */
   invalidate(): void {
+    this.#rest?.disturb();
+    if (this.#still !== null) clearTimeout(this.#still);
+    this.#still = this.#rest === null ? null : setTimeout(() => this.#rest?.rest(), STILL_AFTER_ms);
     if (this.#frame !== 0) return;
     this.#frame = requestAnimationFrame(() => {
       this.#frame = 0;
@@ -180,6 +195,16 @@ export class MassingScene {
 
   draw(): void {
     if (this.#view !== null) this.#renderer.render(this.#scene, this.#camera);
+  }
+
+  /** The picture moved by a fraction of a pixel, for smooth edges at rest. */
+  #drawAside(dx: number, dy: number): HTMLCanvasElement {
+    const { width, height } = this.#size;
+    const pixel = 1 / this.#renderer.getPixelRatio();
+    this.#camera.setViewOffset(width, height, dx * pixel, dy * pixel, width, height);
+    this.draw();
+    this.#camera.clearViewOffset();
+    return this.#renderer.domElement;
   }
 
   /** What lies under a place on the screen, from the top left [px]. */
@@ -194,10 +219,21 @@ export class MassingScene {
 
   dispose(): void {
     cancelAnimationFrame(this.#frame);
+    if (this.#still !== null) clearTimeout(this.#still);
     for (const thing of this.#layers.values()) thing.geometry.dispose();
     for (const material of Object.values(this.#materials)) material.dispose();
+    this.#rest?.dispose();
     this.#renderer.dispose();
   }
+}
+
+/** Whether pictures are drawn by the processor: smoothing edges as the card does then costs more than all the rest. */
+function drawsInSoftware(): boolean {
+  const probe = document.createElement('canvas').getContext('webgl2');
+  if (probe === null) return true;
+  const name = String(probe.getParameter(probe.getExtension('WEBGL_debug_renderer_info')?.UNMASKED_RENDERER_WEBGL ?? probe.RENDERER));
+  probe.getExtension('WEBGL_lose_context')?.loseContext();
+  return /swiftshader|llvmpipe|software|basic render/i.test(name);
 }
 
 /** Style sheet colours are in sRGB; the card mixes and writes from linear light. */
