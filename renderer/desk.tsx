@@ -15,7 +15,7 @@ import { scheme } from './state/document.ts';
 import { openDropped } from './state/files.ts';
 import { dismissMessage, message } from './state/messages.ts';
 import { MessageLine } from './ui/message-line.tsx';
-import { words } from './ui/words.ts';
+import { words } from './words/words.ts';
 import './ui/fonts.css';
 import './ui/tokens.css';
 import './ui/base.css';

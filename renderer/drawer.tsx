@@ -4,7 +4,7 @@ import { countOf, KINDS, ScheduleOf } from './schedule/schedules.tsx';
 import { SunPathPanel } from './sun-path/sun-path-panel.tsx';
 import { type Kind, selection } from './state/selection.ts';
 import { type Tab, Tabs } from './ui/tabs.tsx';
-import { words } from './ui/words.ts';
+import { words } from './words/words.ts';
 import { WeatherPanel } from './weather/weather-panel.tsx';
 import { YearStrip } from './year-strip/year-strip.tsx';
 

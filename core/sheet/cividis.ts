@@ -21,17 +21,20 @@ const STOPS: readonly (readonly [number, number, number])[] = [
 /**
  * The cividis scale: perceptually even, and the same to eyes that tell no red from green.
  * @param t 0..1, brought into that range
- * @returns #rrggbb
+ * @returns red, green, blue, 0..255
  * @see J. R. Nuñez, C. R. Anderton, R. S. Renslow, PLoS ONE 13(7), e0199239 (2018); table as published with matplotlib (CC0),
  *      read linearly between its sixteenth parts
  */
-export function cividis(t: number): string {
+export function cividisRgb(t: number): readonly [number, number, number] {
   const place = Math.min(1, Math.max(0, t)) * (STOPS.length - 1);
   const i = Math.min(STOPS.length - 2, Math.floor(place));
   const [a, b] = [STOPS[i] as (typeof STOPS)[0], STOPS[i + 1] as (typeof STOPS)[0]];
-  const part = (k: 0 | 1 | 2): string =>
-    Math.round(255 * (a[k] + (b[k] - a[k]) * (place - i)))
-      .toString(16)
-      .padStart(2, '0');
-  return `#${part(0)}${part(1)}${part(2)}`;
+  const between = (k: 0 | 1 | 2): number => Math.round(255 * (a[k] + (b[k] - a[k]) * (place - i)));
+  return [between(0), between(1), between(2)];
+}
+
+/** The same scale as #rrggbb. */
+export function cividis(t: number): string {
+  const parts = cividisRgb(t).map((part) => part.toString(16).padStart(2, '0'));
+  return `#${parts.join('')}`;
 }

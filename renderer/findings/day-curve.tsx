@@ -1,6 +1,6 @@
 import { fixed } from '../ui/format.ts';
 import { useSize } from '../ui/use-size.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { axisTop, type RoomCurve } from './room-curve.ts';
 
 const HEIGHT = 168;

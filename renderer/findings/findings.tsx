@@ -9,7 +9,7 @@ import { Choice } from '../ui/choice.tsx';
 import { Disc } from '../ui/disc.tsx';
 import { decimalsFor, fixed, signed } from '../ui/format.ts';
 import { Progress } from '../ui/progress.tsx';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { byRoom, type Group, inGroup, type RoomFindings } from './by-room.ts';
 import { RoomDetail } from './room-detail.tsx';
 import './findings.css';

@@ -8,7 +8,7 @@ import { civilOf } from '../../core/sun/civil.ts';
 import { civil, minutesOf } from '../state/moment.ts';
 import { Button } from '../ui/button.tsx';
 import { decimalsFor, fixed, signed } from '../ui/format.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import type { RoomFindings } from './by-room.ts';
 import { DayCurve } from './day-curve.tsx';
 import { Disc } from '../ui/disc.tsx';

@@ -1,6 +1,6 @@
 import type { Working, WorkingStep } from '../../core/limits/finding.ts';
 import { decimalsFor, fixed } from '../ui/format.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 
 /** A step's value as it is read: numbers to about four figures, text as it stands. */
 export function stepValue({ value, unit }: WorkingStep): string {

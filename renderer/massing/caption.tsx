@@ -3,7 +3,7 @@ import { scheme } from '../state/document.ts';
 import { instant } from '../state/moment.ts';
 import { moment } from '../state/studies.ts';
 import { degrees } from '../ui/format.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 
 /** What the drawing shows: the moment in civil time, and where the sun stands. */
 export function Caption() {

@@ -4,7 +4,7 @@ import { model, moment } from '../state/studies.ts';
 import { scheme } from '../state/document.ts';
 import { selection } from '../state/selection.ts';
 import { fixed, percent } from '../ui/format.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { axesOf, barLength, project } from './camera.ts';
 import { selectionEdges, windowCorners } from './solids-layer.ts';
 import { camera, size, stage } from './view-state.ts';

@@ -5,7 +5,7 @@ import { scheme } from '../state/document.ts';
 import { selection, select, selectNothing, toggle } from '../state/selection.ts';
 import { model, moment } from '../state/studies.ts';
 import { theme } from '../state/theme.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { faceShadowLayer } from './face-shadow-layer.ts';
 import { Faces } from './faces.ts';
 import { listenToPointer, pressKey } from './gestures.ts';

@@ -4,7 +4,7 @@ import { moment, momentJob } from '../state/studies.ts';
 import { Button } from '../ui/button.tsx';
 import { Choice } from '../ui/choice.tsx';
 import { AllIcon, MinusIcon, PlusIcon } from '../ui/icons.tsx';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { Caption } from './caption.tsx';
 import { zoomBy } from './gestures.ts';
 import { Key, NorthPoint, ScaleBar, SelectionOutline, SelectionTag } from './instruments.tsx';

@@ -9,7 +9,7 @@ import { Button } from '../ui/button.tsx';
 import { Choice } from '../ui/choice.tsx';
 import { dayAndMonth } from '../ui/format.ts';
 import { BackIcon, ForwardIcon } from '../ui/icons.tsx';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import './clock.css';
 
 const STEP_min = 5;

@@ -6,7 +6,7 @@ import { committed } from '../state/document.ts';
 import { instant } from '../state/moment.ts';
 import { Button } from '../ui/button.tsx';
 import { Dialog } from '../ui/dialog.tsx';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { parsePair } from './parse-degrees.ts';
 import { applyPlace, faultsOf, formOf, type PlaceForm, plain, readForm } from './place-form.ts';
 import { type FoundPlace, PlaceSearch } from './place-search.tsx';

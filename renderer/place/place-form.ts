@@ -3,7 +3,7 @@ import { applyEdit } from '../../core/scheme/edit.ts';
 import type { Scheme, Site } from '../../core/scheme/schema.ts';
 import { isZone } from '../../core/sun/civil.ts';
 import { committed, edit } from '../state/document.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { parseLatitude, parseLongitude } from './parse-degrees.ts';
 
 /** The fields of the dialog as they are typed. */

@@ -2,7 +2,7 @@ import { useEffect, useId, useRef, useState } from 'preact/hooks';
 import type { Answer } from '../../app/contract/host.ts';
 import { host } from '../bridge/host.ts';
 import { placeOnEarth } from '../ui/format.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 
 type Found = Answer<'place:search'>;
 export type FoundPlace = Found['places'][number];

@@ -3,7 +3,7 @@ import { signedArea } from '../../core/plane/ring.ts';
 import type { Block, Device, Glass, Room, Scheme, Window } from '../../core/scheme/schema.ts';
 import type { Kind } from '../state/selection.ts';
 import { bearing, fixed, percent } from '../ui/format.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 
 /** What a cell is worth: a number sorts as a number and stands to the right. */
 export type Cell = string | number | null;

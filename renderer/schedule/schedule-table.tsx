@@ -1,6 +1,6 @@
 import { useLayoutEffect, useMemo, useRef, useState } from 'preact/hooks';
 import { isSelected, type Kind, selection, select, toggle } from '../state/selection.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import type { Cell, Column, Schedule } from './columns.ts';
 import { nextOrder, type Order, sortRows } from './sort-rows.ts';
 

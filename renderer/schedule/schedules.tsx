@@ -2,7 +2,7 @@ import { computed } from '@preact/signals';
 import { scheme } from '../state/document.ts';
 import type { Kind } from '../state/selection.ts';
 import { model, moment } from '../state/studies.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { blockSchedule, deviceSchedule, glassSchedule, roomSchedule, windowSchedule } from './columns.ts';
 import { ScheduleTable } from './schedule-table.tsx';
 import './schedule.css';

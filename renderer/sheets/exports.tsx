@@ -10,7 +10,7 @@ import { tell } from '../state/messages.ts';
 import { civil } from '../state/moment.ts';
 import { check, isCheckStale } from '../state/studies.ts';
 import { Menu } from '../ui/menu.tsx';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 
 const isSetting = signal(false);
 

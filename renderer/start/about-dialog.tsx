@@ -3,7 +3,7 @@ import { CAUTIONS } from '../../core/limits/cautions.ts';
 import { version } from '../state/program.ts';
 import { Button } from '../ui/button.tsx';
 import { Dialog } from '../ui/dialog.tsx';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 
 const isOpen = signal(false);
 

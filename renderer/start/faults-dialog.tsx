@@ -4,7 +4,7 @@ import { scheme } from '../state/document.ts';
 import { refusal } from '../state/files.ts';
 import { Button } from '../ui/button.tsx';
 import { Dialog } from '../ui/dialog.tsx';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 
 /** More faults than anybody reads at once; the copied text holds them all. */
 const MOST_SHOWN = 200;

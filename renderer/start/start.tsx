@@ -6,7 +6,7 @@ import { isReading, openByDialog, openDemo, openRecent, openRecovered, takeOpene
 import { tell } from '../state/messages.ts';
 import { version } from '../state/program.ts';
 import { Button } from '../ui/button.tsx';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 
 const demos = signal<Answer<'host:hello'>['demos']>([]);
 const recent = signal<Answer<'scheme:recent'>>([]);

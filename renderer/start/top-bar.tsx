@@ -7,7 +7,7 @@ import { Exports } from '../sheets/exports.tsx';
 import { Button } from '../ui/button.tsx';
 import { degrees, placeOnEarth } from '../ui/format.ts';
 import { DayIcon, MoonIcon, RedoIcon, UndoIcon } from '../ui/icons.tsx';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 
 /** Whose scheme this is and where, and what can be done with the whole of it. */
 export function TopBar() {

@@ -2,7 +2,7 @@ import { scheme } from '../state/document.ts';
 import { answerPending, pendingOpen } from '../state/files.ts';
 import { Button } from '../ui/button.tsx';
 import { Dialog } from '../ui/dialog.tsx';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 
 /** Before another scheme takes the place of one with changes: what becomes of them. */
 export function UnsavedDialog() {

@@ -1,7 +1,7 @@
 import { effect } from '@preact/signals';
 import { desktopBridge, host } from '../bridge/host.ts';
 import { hands } from '../jobs/hands.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { committed, file, isUnsaved } from './document.ts';
 import { tell } from './messages.ts';
 

@@ -7,7 +7,7 @@ import { seasons } from '../../core/sun/seasons.ts';
 import { desktopBridge, host } from '../bridge/host.ts';
 import { canSaveOver } from '../bridge/page-files.ts';
 import { hands } from '../jobs/hands.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { beginSlot, letGoOfSlot } from './autosave.ts';
 import { committed, file, isUnsaved, markSaved, place } from './document.ts';
 import { tell } from './messages.ts';

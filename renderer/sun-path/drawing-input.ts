@@ -3,7 +3,7 @@ import type { SunPathInput } from '../../core/sheet/sun-path-input.ts';
 import type { SunPathProjection } from '../../core/sheet/sun-path-view.ts';
 import { scheme } from '../state/document.ts';
 import { moment } from '../state/studies.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { observerOf, sunPathResult } from './sun-path-state.ts';
 
 type Fixed = Omit<SunPathInput, 'projection' | 'moment'>;

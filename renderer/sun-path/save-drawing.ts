@@ -3,7 +3,7 @@ import { pageToSvg } from '../../core/sheet/svg.ts';
 import { host } from '../bridge/host.ts';
 import { file, scheme } from '../state/document.ts';
 import { tell } from '../state/messages.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { drawingOf, inputFor } from './drawing-input.ts';
 import { projection } from './sun-path-state.ts';
 

@@ -7,7 +7,7 @@ import { deskPaint } from '../ui/desk-paint.ts';
 import { Marks } from '../ui/drawing-view.tsx';
 import { degrees } from '../ui/format.ts';
 import { useSize } from '../ui/use-size.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { drawingOf, inputFor } from './drawing-input.ts';
 import { projection, setMomentBySky } from './sun-path-state.ts';
 

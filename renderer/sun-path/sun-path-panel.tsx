@@ -5,7 +5,7 @@ import { Button } from '../ui/button.tsx';
 import { Choice } from '../ui/choice.tsx';
 import { Dialog } from '../ui/dialog.tsx';
 import { Menu } from '../ui/menu.tsx';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { drawingOf } from './drawing-input.ts';
 import { savePdf, saveSvg } from './save-drawing.ts';
 import { SunPathDrawing } from './sun-path-drawing.tsx';

@@ -3,7 +3,7 @@ import { useState } from 'preact/hooks';
 import { CAUTIONS, SHORT_CAUTION } from '../../core/limits/cautions.ts';
 import { Button } from './button.tsx';
 import { Dialog } from './dialog.tsx';
-import { words } from './words.ts';
+import { words } from '../words/words.ts';
 
 /** The cautions that go with every result: one line always in sight, the whole of them one press away. */
 export function Cautions({ children }: { readonly children?: ComponentChildren }) {

@@ -1,7 +1,7 @@
 import type { Message } from '../state/messages.ts';
 import { Button } from './button.tsx';
 import { CloseIcon } from './icons.tsx';
-import { words } from './words.ts';
+import { words } from '../words/words.ts';
 
 type Props = { readonly shown: Message | null; readonly onDismiss: () => void };
 

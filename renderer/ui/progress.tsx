@@ -1,5 +1,5 @@
 import { Button } from './button.tsx';
-import { words } from './words.ts';
+import { words } from '../words/words.ts';
 
 type Props = { readonly text: string; readonly done: number; readonly total: number; readonly onStop?: () => void };
 

@@ -4,7 +4,7 @@ import type { Quantity } from '../../core/sky/weather/weather-year.ts';
 import { scheme } from '../state/document.ts';
 import { Button } from '../ui/button.tsx';
 import { Dialog } from '../ui/dialog.tsx';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { Pick, TextField } from './mapping-fields.tsx';
 import {
   formOfGuess,

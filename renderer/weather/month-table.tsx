@@ -1,6 +1,6 @@
 import type { WeatherSummary, WeatherSum } from '../../core/sky/weather/summary.ts';
 import { fixed, monthNames } from '../ui/format.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 
 /** Height of a bar [px]. */
 const BAR = 16;

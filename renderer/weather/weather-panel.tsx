@@ -4,7 +4,7 @@ import type { WeatherFacts } from '../../core/study/weather-facts.ts';
 import { Button } from '../ui/button.tsx';
 import { Dialog } from '../ui/dialog.tsx';
 import { fixed, placeOnEarth } from '../ui/format.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { MappingDialog } from './mapping-dialog.tsx';
 import { MonthTable } from './month-table.tsx';
 import {

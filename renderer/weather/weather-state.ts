@@ -9,7 +9,7 @@ import { host } from '../bridge/host.ts';
 import { hands } from '../jobs/hands.ts';
 import { committed, edit, file as schemeFile, scheme } from '../state/document.ts';
 import { tell } from '../state/messages.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 
 /** A file that was chosen in this session: its data stay here and never go into the scheme. */
 export type WeatherFile = { readonly name: string; readonly bytes: Uint8Array };

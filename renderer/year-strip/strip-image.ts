@@ -1,5 +1,5 @@
 import { NO_SUCH_TIME, SUN_DOWN, type SunYear } from '../../core/study/sun-year.ts';
-import { cividis } from '../ui/cividis.ts';
+import { cividisRgb } from '../../core/sheet/cividis.ts';
 
 type Rgb8 = readonly [number, number, number];
 /** The two greys that are no share: the sun up and not on the glass, and down. */
@@ -33,7 +33,8 @@ export function stripPixels(
   for (let d = 0; d < width; d++) {
     for (let r = 0; r < height; r++) {
       const share = year.share[d * year.rows + first + r]!;
-      const colour = share === SUN_DOWN || share === NO_SUCH_TIME ? greys.down : share <= 0 ? greys.up : cividis(share);
+      const colour =
+        share === SUN_DOWN || share === NO_SUCH_TIME ? greys.down : share <= 0 ? greys.up : cividisRgb(share);
       const at = ((height - 1 - r) * width + d) * 4;
       data[at] = colour[0];
       data[at + 1] = colour[1];

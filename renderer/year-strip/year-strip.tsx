@@ -6,11 +6,11 @@ import { scheme } from '../state/document.ts';
 import { civil, minutesOf, moveDays, moveMinutes, timeOf } from '../state/moment.ts';
 import { isYearShown, sunYearResult, type YearSubject, yearJob, yearSubject } from '../state/studies.ts';
 import { theme } from '../state/theme.ts';
-import { cividis } from '../ui/cividis.ts';
+import { cividisRgb } from '../../core/sheet/cividis.ts';
 import { dayAndMonth, monthNames, percent, signed } from '../ui/format.ts';
 import { Progress } from '../ui/progress.tsx';
 import { useSize } from '../ui/use-size.ts';
-import { words } from '../ui/words.ts';
+import { words } from '../words/words.ts';
 import { clockMoves, type Greys, shareAt, shownHours, stripPixels } from './strip-image.ts';
 import './year-strip.css';
 
@@ -54,7 +54,7 @@ const nameOf = (subject: YearSubject): string =>
   subject.kind === 'all' ? words.year.all : words.year[subject.kind](subject.id);
 
 function StripKey() {
-  const stops = Array.from({ length: 11 }, (_, i) => `rgb(${cividis(i / 10).join(' ')})`);
+  const stops = Array.from({ length: 11 }, (_, i) => `rgb(${cividisRgb(i / 10).join(' ')})`);
   return (
     <div class="strip-key">
       <span class="swatch down" aria-hidden="true" /> {words.year.keyDown}

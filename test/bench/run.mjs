@@ -17,7 +17,14 @@ await build({
   root,
   logLevel: 'error',
   ssr: { noExternal: ['temporal-polyfill', 'clipper2-ts', 'three', 'three-mesh-bvh', 'zod', '@noble/hashes'] },
-  build: { ssr: true, outDir: resolve(root, 'out/bench'), emptyOutDir: true, minify: false, target: 'node20', rolldownOptions: { input } },
+  build: {
+    ssr: true,
+    outDir: resolve(root, 'out/bench'),
+    emptyOutDir: true,
+    minify: false,
+    target: 'node20',
+    rolldownOptions: { input },
+  },
 });
 
 const wanted = process.argv.slice(2);
@@ -31,7 +38,9 @@ for (const name of Object.keys(input)) {
   console.log(`\n${name}`);
   console.log(`${pad('work', 62)}${pad('ours /s', 12)}${pad('beside', 26)}${pad('its /s', 12)}ratio`);
   for (const row of await bench[1]()) {
-    console.log(`${pad(row.what, 62)}${pad(num(row.ours_perSecond), 12)}${pad(row.other ?? '', 26)}${pad(num(row.other_perSecond), 12)}${row.ratio ? `${row.ratio.toPrecision(3)}×` : ''}`);
+    console.log(
+      `${pad(row.what, 62)}${pad(num(row.ours_perSecond), 12)}${pad(row.other ?? '', 26)}${pad(num(row.other_perSecond), 12)}${row.ratio ? `${row.ratio.toPrecision(3)}×` : ''}`,
+    );
     if (row.note) console.log(`    ${row.note}`);
   }
 }

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { NO_SUCH_TIME, SUN_DOWN, type SunYear } from '../../core/study/sun-year.ts';
-import { cividis } from '../../renderer/ui/cividis.ts';
+import { cividisRgb } from '../../core/sheet/cividis.ts';
 import { clockMoves, shareAt, shownHours, stripPixels } from '../../renderer/year-strip/strip-image.ts';
 
 /** Three dates of a day in 24 rows: sun from 8 to 17 h, on the glass from 12 h. */
@@ -41,8 +41,8 @@ describe('the year strip', () => {
     expect(at(0, 3)).toEqual(greys.down);
     expect(at(1, 1)).toEqual(greys.down);
     expect(at(0, 9)).toEqual(greys.up);
-    expect(at(2, 16)).toEqual([...cividis(1)]);
-    expect(at(2, 12)).toEqual([...cividis(Math.fround(0.2))]);
+    expect(at(2, 16)).toEqual([...cividisRgb(1)]);
+    expect(at(2, 12)).toEqual([...cividisRgb(Math.fround(0.2))]);
   });
 
   it('finds the share of a moment and the moves of the clock', () => {
@@ -59,14 +59,14 @@ describe('cividis', () => {
     [127 / 255, 0.485141, 0.482451, 0.470384],
     [1, 0.995737, 0.909344, 0.217772],
   ])('at %s', (t, ...published) => {
-    cividis(t).forEach((value, i) => {
+    cividisRgb(t).forEach((value, i) => {
       expect(Math.abs(value - 255 * (published[i] as number))).toBeLessThanOrEqual(1);
     });
   });
 
   it('grows lighter all the way', () => {
     const light = (t: number): number => {
-      const [r, g, b] = cividis(t);
+      const [r, g, b] = cividisRgb(t);
       return 0.2126 * r + 0.7152 * g + 0.0722 * b;
     };
     for (let i = 1; i <= 50; i++) expect(light(i / 50)).toBeGreaterThan(light((i - 1) / 50));

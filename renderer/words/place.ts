@@ -1,0 +1,28 @@
+/** Words of the place dialog. */
+export const placeWords = {
+  place: {
+    open: 'Place',
+    title: 'Place and clock',
+    search: 'Town or city',
+    searchHint: 'Bristol, or Bristol, GB',
+    found: (count: number) => `${count === 1 ? 'One place' : `${count} places`} found`,
+    none: 'No place of this name is known; type its coordinates instead.',
+    failed: (why: string) => `The places could not be searched: ${why}`,
+    latitude: 'Latitude',
+    longitude: 'Longitude',
+    elevation: 'Height above sea level',
+    zone: 'Time zone',
+    badLatitude: 'From 90° S to 90° N, such as 51.45, 51.45 N or 51°27′N',
+    badLongitude: 'From 180° W to 180° E, such as −2.59, 2.59 W or 2°35′W',
+    badElevation: 'From −500 to 9000 m',
+    badZone: 'A name of the time zone database, such as Europe/London',
+    followed: 'The zone follows the coordinates by a coarse map: near a border, check it.',
+    suggested: (zone: string) => `The coordinates suggest ${zone}.`,
+    use: (zone: string) => `Use ${zone}`,
+    odd: 'This zone’s clock stands more than three hours from the sun at this longitude. Check the sign of the longitude and the zone.',
+    keep: 'Height is kept as it was; places in the list do not bring one.',
+    apply: 'Set place',
+    cancel: 'Cancel',
+    edit: 'place',
+  },
+} as const;

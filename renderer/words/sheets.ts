@@ -1,0 +1,11 @@
+/** Words of sheets and exports. */
+export const sheetsWords = {
+  sheets: {
+    report: 'Findings report (PDF)',
+    shadow: 'Shadow sheet (PDF)',
+    needsCheck: 'Check the rooms first',
+    setting: (what: string) => `Setting ${what}…`,
+    written: (name: string) => `Written: ${name}`,
+    failed: (what: string, why: string) => `${what} was not written: ${why}`,
+  },
+} as const;

@@ -1,0 +1,26 @@
+import { findingsWords } from './findings.ts';
+import { frameWords } from './frame.ts';
+import { massingWords } from './massing.ts';
+import { momentWords } from './moment.ts';
+import { placeWords } from './place.ts';
+import { scheduleWords } from './schedule.ts';
+import { sheetsWords } from './sheets.ts';
+import { startWords } from './start.ts';
+import { sunPathWords } from './sun-path.ts';
+import { weatherWords } from './weather.ts';
+import { yearStripWords } from './year-strip.ts';
+
+/** Every word of the desk, a file for each part of it, so that it can be translated. Numbers are formatted by ui/format.ts before they come here. */
+export const words = {
+  ...frameWords,
+  ...startWords,
+  ...massingWords,
+  ...momentWords,
+  ...scheduleWords,
+  ...yearStripWords,
+  ...sunPathWords,
+  ...placeWords,
+  ...weatherWords,
+  ...findingsWords,
+  ...sheetsWords,
+} as const;

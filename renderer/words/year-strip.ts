@@ -1,0 +1,25 @@
+/** Words of the year strip. */
+export const yearStripWords = {
+  year: {
+    tab: 'Year',
+    label: 'Year of direct sun',
+    title: (what: string) => `${what} through the year: share of the glass in direct sun`,
+    all: 'All windows',
+    window: (id: string) => `Window ${id}`,
+    room: (id: string) => `Room ${id}`,
+    none: 'No windows: the year strip shows the sun on glass.',
+    working: 'Working out the year…',
+    keyNone: '0',
+    keyAll: 'all of it',
+    keyUp: 'sun up, not on it',
+    keyDown: 'sun down',
+    clocks: (change: string) => `clocks ${change}`,
+    solstice: 'solstice',
+    equinox: 'equinox',
+    reading: (when: string, what: string) => `${when}: ${what}`,
+    down: 'the sun is down',
+    noSuchTime: 'the clock skips this time',
+    share: (share: string) => `${share} of the glass in direct sun`,
+    canvas: 'Dates across, hours of the day up. Arrow keys move the moment by ten minutes and by days.',
+  },
+} as const;
