@@ -23,6 +23,8 @@ type Setting = {
   readonly port: number;
   /** The scheme to open with. */
   readonly scheme?: string | undefined;
+  /** The example, by key, to open with where there is no scheme. */
+  readonly example?: string | undefined;
   /** Where recent files and unsaved work are kept. */
   readonly dataDir: string;
   readonly version: string;
@@ -171,9 +173,16 @@ async function listen(server: Server, port: number): Promise<number> {
  * @throws when the port is taken or the address is refused
  */
 export async function startBrowserHost(setting: Setting): Promise<BrowserHost> {
-  const { dataDir, version, scheme } = setting;
-  const startWith = scheme ?? null;
-  const files = fileHost({ kind: 'browser', version, dataDir, startWith, dialogs: PAGE_DIALOGS, pdf: printDocument });
+  const { dataDir, version, scheme, example } = setting;
+  const files = fileHost({
+    kind: 'browser',
+    version,
+    dataDir,
+    startWith: scheme ?? null,
+    example,
+    dialogs: PAGE_DIALOGS,
+    pdf: printDocument,
+  });
   const answers = new Answers(files, shipped('out', 'renderer'), setting);
   const server = createServer((request, response) => {
     answers.answer(request, response).catch((error: unknown) => {

@@ -1,6 +1,7 @@
 import { spawn } from 'node:child_process';
 import { readFileSync } from 'node:fs';
 import { resolve } from 'node:path';
+import { EXAMPLE_WORD } from '../desktop/start-file.ts';
 import { electronRuntime } from '../desktop/electron-runtime.ts';
 import { settingsFolder } from '../files/settings-folder.ts';
 import { shipped } from '../files/shipped.ts';
@@ -8,8 +9,10 @@ import { type BrowserWindow, hasDisplay, openBrowserWindow } from './browser-win
 import { findBrowser } from './find-browser.ts';
 import { type BrowserHost, startBrowserHost } from './loopback-host.ts';
 
-type Asked = {
-  readonly scheme?: string;
+/** What the desk begins with: a file, an example by key, or neither. */
+type Beginning = { readonly scheme?: string | undefined; readonly example?: string | undefined };
+
+type Asked = Beginning & {
   /** Tells the user, a line at a time. */
   readonly say: (line: string) => void;
 };
@@ -19,10 +22,12 @@ const NO_BROWSER =
 const NO_DISPLAY = 'There is no display here to open a window on.';
 
 /** The Electron desktop, until its window is closed; false when it ended with an error (a system library is missing, mostly). */
-async function openElectron(runtime: string, scheme: string | undefined): Promise<boolean> {
+async function openElectron(runtime: string, { scheme, example }: Beginning): Promise<boolean> {
   const { ELECTRON_RUN_AS_NODE: _, ...env } = process.env;
   const isRoot = process.platform === 'linux' && process.getuid?.() === 0;
-  const words = [shipped(), ...(isRoot ? ['--no-sandbox'] : []), ...(scheme === undefined ? [] : [resolve(scheme)])];
+  const words = [shipped(), ...(isRoot ? ['--no-sandbox'] : [])];
+  if (example !== undefined) words.push(`${EXAMPLE_WORD}${example}`);
+  if (scheme !== undefined) words.push(resolve(scheme));
   const child = spawn(runtime, words, { env, stdio: 'inherit' });
   return new Promise<boolean>((settle) => {
     child.once('error', () => settle(false));
@@ -71,7 +76,11 @@ async function showWindow(browser: string, host: BrowserHost, windowClosed: Prom
 }
 
 /** Serves the desk on the loopback address and shows it in an installed browser, or prints the address where that cannot be. */
-async function openInBrowser(scheme: string | undefined, isShown: boolean, say: (line: string) => void): Promise<void> {
+async function openInBrowser(
+  { scheme, example }: Beginning,
+  isShown: boolean,
+  say: (line: string) => void,
+): Promise<void> {
   const { version } = JSON.parse(readFileSync(shipped('package.json'), 'utf8')) as { version: string };
   let closed: () => void = () => undefined;
   const windowClosed = new Promise<void>((settle) => {
@@ -80,6 +89,7 @@ async function openInBrowser(scheme: string | undefined, isShown: boolean, say: 
   const host: BrowserHost = await startBrowserHost({
     port: 0,
     scheme: scheme === undefined ? undefined : resolve(scheme),
+    example,
     dataDir: settingsFolder(),
     version,
     onWindowClosed: () => closed(),
@@ -105,13 +115,13 @@ async function openInBrowser(scheme: string | undefined, isShown: boolean, say: 
  * Opens the desk and waits until it is closed: in Electron where its runtime is there and starts, else in a window of an installed
  * browser, else at an address that it prints. Says which of them it did.
  */
-export async function openDesk({ scheme, say }: Asked): Promise<void> {
+export async function openDesk({ say, ...beginning }: Asked): Promise<void> {
   const isShown = hasDisplay(process);
   const runtime = electronRuntime(shipped());
   if (runtime !== null && isShown) {
     say('Opening the desk in Electron.');
-    if (await openElectron(runtime, scheme)) return;
+    if (await openElectron(runtime, beginning)) return;
     say('Electron ended with an error; what was not saved waits to be recovered.');
   } else if (runtime === null) say('The Electron runtime is not here.');
-  await openInBrowser(scheme, isShown, say);
+  await openInBrowser(beginning, isShown, say);
 }

@@ -36,13 +36,14 @@ const SafeName = z
  * command line has a host id, and saving it writes the real file.
  */
 export const contract = {
-  /** What this host is, and the scheme it was started with (null: none). */
+  /** What this host is, and the scheme or the example (by key) that it was started with; null: none. */
   'host:hello': {
     ask: z.null(),
     reply: z.object({
       kind: z.enum(['desktop', 'browser']),
       version: z.string(),
       opened: Opened.nullable(),
+      example: z.string().nullable(),
       demos: z.array(z.object({ key: z.string(), name: z.string() })),
     }),
   },

@@ -15,7 +15,7 @@ import { menuTemplate } from './menu.ts';
 import { answerPage, isAllowedRequest, PAGE_SCHEME, PAGE_URL } from './page-protocol.ts';
 import { guardSession } from './permissions.ts';
 import { serve } from './serve.ts';
-import { startFile } from './start-file.ts';
+import { startExample, startFile } from './start-file.ts';
 import { windowOptions } from './window-options.ts';
 
 const BUILT = dirname(import.meta.dirname);
@@ -110,6 +110,7 @@ async function start(): Promise<void> {
     version: app.getVersion(),
     dataDir,
     startWith,
+    example: startExample(process.argv),
     dialogs: systemDialogs(dialog, shown, latest ? dirname(latest.path) : app.getPath('documents')),
     pdf: printDocument,
   });

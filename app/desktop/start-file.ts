@@ -1,5 +1,14 @@
 import { resolve } from 'node:path';
 
+/** Begins the word that names an example to start with; the key follows. */
+export const EXAMPLE_WORD = '--example=';
+
+/** The key of the example that the desktop was started with; null: none. */
+export function startExample(words: readonly string[]): string | null {
+  const word = words.findLast((w) => w.startsWith(EXAMPLE_WORD));
+  return word === undefined ? null : word.slice(EXAMPLE_WORD.length);
+}
+
 /**
  * The scheme that the desktop was started with, as an absolute path; null: none. Electron's own switches are not files, and while
  * the program is not packaged the first word is the program's folder.

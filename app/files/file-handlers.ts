@@ -30,6 +30,8 @@ type Setting = {
   readonly dataDir: string;
   /** The scheme that the host was started with. */
   readonly startWith: string | null;
+  /** The example, by key, that it was started with. */
+  readonly example?: string | null | undefined;
   readonly dialogs: Dialogs;
   readonly pdf: (document: unknown) => Promise<Uint8Array>;
 };
@@ -43,7 +45,7 @@ async function write(path: string, name: string, bytes: Uint8Array): Promise<voi
 }
 
 /** Everything of the contract that is files and no window: the same code behind the desktop and the loopback host. */
-export function fileHost({ kind, version, dataDir, startWith, dialogs, pdf }: Setting): FileHost {
+export function fileHost({ kind, version, dataDir, startWith, example, dialogs, pdf }: Setting): FileHost {
   const granted = new GrantedFiles();
   const recent = new RecentFiles(dataDir);
   const recovery = new Recovery(dataDir);
@@ -79,7 +81,7 @@ export function fileHost({ kind, version, dataDir, startWith, dialogs, pdf }: Se
     'host:hello': async () => {
       // Whoever started the host has been told already that a scheme does not open; the desk opens all the same.
       const opened = startWith === null ? null : await openChosen(startWith).catch(() => null);
-      return { kind, version, opened, demos: [...(await listDemos())] };
+      return { kind, version, opened, example: example ?? null, demos: [...(await listDemos())] };
     },
     'scheme:demo': async ({ key }) => {
       const demo = await readDemo(key);

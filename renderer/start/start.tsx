@@ -24,7 +24,10 @@ export async function greetHost(): Promise<void> {
   if (!hello.ok) return tell('failure', hello.message);
   demos.value = hello.value.demos;
   version.value = hello.value.version;
-  if (hello.value.opened !== null) takeOpened(hello.value.opened);
+  const { opened, example } = hello.value;
+  if (opened !== null) takeOpened(opened);
+  // Work that waits to be brought back goes before an example, which can be had at any time.
+  else if (example !== null && kept.value.length === 0) await openDemo(example);
 }
 
 /** Nothing is open yet: the ways to begin. */

@@ -70,7 +70,7 @@ export async function claim(host: BrowserHost): Promise<string> {
   return (decode(heard.text) as { value: string }).value;
 }
 
-type Options = { readonly dataDir: string; readonly scheme?: string };
+type Options = { readonly dataDir: string; readonly scheme?: string; readonly example?: string };
 
 /** A running loopback host that ends with the test. */
 export async function runningHost(
@@ -105,12 +105,16 @@ export const ourFrame = { senderFrame: { parent: null, url: PAGE_URL } } as unkn
 type Handle = (event: IpcMainInvokeEvent, ask: unknown) => Promise<Answered>;
 
 /** Main's side of the desktop without Electron: the handlers that `serve` registers, by channel. */
-export function desktopHandles({ dataDir, scheme }: Options, dialogs: Dialogs = NO_DIALOGS): Map<string, Handle> {
+export function desktopHandles(
+  { dataDir, scheme, example }: Options,
+  dialogs: Dialogs = NO_DIALOGS,
+): Map<string, Handle> {
   const files = fileHost({
     kind: 'desktop',
     version: '0.0.0',
     dataDir,
     startWith: scheme ?? null,
+    example,
     dialogs,
     pdf: printDocument,
   });

@@ -18,15 +18,21 @@ export type LoopbackDesk = {
 /**
  * The built desk in Chromium, served by the loopback host on a copy of a shipped scheme.
  * @param executable path of the browser; @param demo key of the scheme; @param dark the system's theme
+ * @param as         `file`: a copy on disk is opened; `example`: the shipped one, which has no file
  */
-export async function openLoopbackDesk(executable: string, demo: string, dark = false): Promise<LoopbackDesk> {
+export async function openLoopbackDesk(
+  executable: string,
+  demo: string,
+  dark = false,
+  as: 'file' | 'example' = 'file',
+): Promise<LoopbackDesk> {
   const folder = await mkdtemp(join(tmpdir(), 'desk-'));
   const scheme = join(folder, `${demo}.scheme.json`);
   await copyFile(resolve(root, `assets/demo/${demo}.scheme.json`), scheme);
   const failures: unknown[] = [];
   const host = await startBrowserHost({
     port: 0,
-    scheme,
+    ...(as === 'file' ? { scheme } : { example: demo }),
     dataDir: folder,
     version: '0.0.0',
     report: (error) => failures.push(error),

@@ -40,6 +40,14 @@ describe.each([
     expect(await ask('host:hello', null)).toMatchObject({ ok: true, value: { opened: null } });
   });
 
+  test('starts with an example by its key, as a scheme that has no file', async () => {
+    const { dataDir } = folderWithScheme();
+    const ask = await client({ dataDir, example: 'tannery-yard' });
+    expect(await ask('host:hello', null)).toMatchObject({ ok: true, value: { opened: null, example: 'tannery-yard' } });
+    const { value } = await ask('scheme:demo', { key: 'tannery-yard' });
+    expect(Object.keys(value as object).sort()).toEqual(['bytes', 'name']);
+  });
+
   test('saves over the real file, and reads back what it saved', async () => {
     const { scheme, dataDir } = folderWithScheme();
     const ask = await client({ dataDir, scheme });

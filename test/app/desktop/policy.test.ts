@@ -9,7 +9,7 @@ import { DESK_COMMANDS } from '../../../app/contract/host.ts';
 import { answerPage, isAllowedRequest, isOurs, PAGE_URL } from '../../../app/desktop/page-protocol.ts';
 import { guardSession, isGranted } from '../../../app/desktop/permissions.ts';
 import { isTrusted } from '../../../app/desktop/serve.ts';
-import { startFile } from '../../../app/desktop/start-file.ts';
+import { startExample, startFile } from '../../../app/desktop/start-file.ts';
 import { windowOptions } from '../../../app/desktop/window-options.ts';
 import { desktopHandles, ourFrame } from '../../helpers/host-client.ts';
 import { tempFolder } from '../../helpers/temp-folder.ts';
@@ -191,6 +191,9 @@ test('the file to start with is the last word that is no switch', () => {
   expect(startFile(['electron', '.', '--no-sandbox', 'a.json'], false, '/w')).toBe(resolve('/w', 'a.json'));
   expect(startFile(['electron', '.'], false, '/w')).toBeNull();
   expect(startFile(['/app/shadewright', '--enable-logging'], true, '/w')).toBeNull();
+  expect(startFile(['electron', '.', '--example=tannery-yard'], false, '/w')).toBeNull();
+  expect(startExample(['electron', '.', '--example=tannery-yard'])).toBe('tannery-yard');
+  expect(startExample(['electron', '.', 'a.json'])).toBeNull();
 });
 
 describe('the browser’s window', () => {

@@ -228,3 +228,15 @@ describe('a call with', () => {
     expect(readdirSync(folder), 'nothing is written').toEqual([]);
   });
 });
+
+describe('open', () => {
+  test('names the examples there are when asked for one that is none', async () => {
+    const ran = await runCommand(['open', '--example', 'nosuch'], tempFolder());
+    expectRefused(ran, /nosuch/, /tannery-yard/, /jacaranda-clinic/);
+  });
+
+  test('takes a scheme or an example, not both', async () => {
+    const ran = await runCommand(['open', 'scheme.json', '--example', 'tannery-yard'], tempFolder());
+    expectRefused(ran, /not both/);
+  });
+});
