@@ -12,7 +12,7 @@ Examples:
 async function findExample(key: string): Promise<void> {
   const { listDemos } = await import('../files/demos.ts');
   const keys = (await listDemos()).map((demo) => demo.key);
-  if (!keys.includes(key)) throw new Refusal(`--example: there is no example “${key}”; there are ${keys.join(', ')}`);
+  if (!keys.includes(key)) throw new Refusal(`--example: there is no example “${key}”; there are ${keys.join(', ')}.`);
 }
 
 /** `shadewright open`: the desk, in Electron where its runtime is there, else in an installed browser. */
@@ -25,7 +25,7 @@ export const declareOpen: Declare = (program, screen) => {
     .addHelpText('after', HELP)
     .action(async (path: string | undefined, { example }: { example?: string }) => {
       if (path !== undefined && example !== undefined)
-        throw new Refusal('open takes a scheme or --example, not both: leave one out');
+        throw new Refusal('open takes a scheme or --example, not both: leave one out.');
       if (example !== undefined) await findExample(example);
       // A broken file is told here, where its faults can be read, and not in a window.
       if (path !== undefined) await readScheme(path, screen);
