@@ -1,3 +1,5 @@
+import { check } from '@placemarkio/check-geojson';
+import { Geodesic } from 'geographiclib-geodesic';
 import { describe, expect, test } from 'vitest';
 import { Site } from '../../../core/scheme/schema.ts';
 import { shadowGeoJson, toLonlat } from '../../../core/sheet/geojson.ts';
@@ -12,19 +14,11 @@ const E2 = 0.00669437999014;
 const meridian = (phi: number): number => (A * (1 - E2)) / (1 - E2 * Math.sin(phi) ** 2) ** 1.5;
 const vertical = (phi: number): number => A / Math.sqrt(1 - E2 * Math.sin(phi) ** 2);
 
-/** Signed area of a small ring on the ellipsoid [m²]: shoelace in metres of arc about its own middle latitude. */
+/** Signed area of a ring on the ellipsoid by Karney's method (geographiclib), anticlockwise positive [m²]. */
 function areaOnEllipsoid(ring: readonly (readonly [number, number])[]): number {
-  const phi = (ring.reduce((s, p) => s + p[1], 0) / ring.length) * DEG;
-  const [lon0, lat0] = ring[0] as readonly [number, number];
-  const xy = ring.map(
-    ([lon, lat]) => [(lon - lon0) * DEG * vertical(phi) * Math.cos(phi), (lat - lat0) * DEG * meridian(phi)] as const,
-  );
-  let twice = 0;
-  for (let i = 0; i + 1 < xy.length; i++) {
-    const [a, b] = [xy[i], xy[i + 1]] as [readonly [number, number], readonly [number, number]];
-    twice += a[0] * b[1] - b[0] * a[1];
-  }
-  return twice / 2;
+  const polygon = Geodesic.WGS84.Polygon(false);
+  for (const [lon, lat] of ring.slice(0, -1)) polygon.AddPoint(lat, lon);
+  return polygon.Compute(false, true).area ?? Number.NaN;
 }
 
 describe('longitude and latitude', () => {
@@ -66,6 +60,12 @@ describe('shadows as GeoJSON', () => {
       const area = rings.reduce((s, r) => s + areaOnEllipsoid(r), 0);
       expect(Math.abs(area / (f.properties['area_m2'] as number) - 1)).toBeLessThan(0.001);
     }
+  });
+
+  test('an independent reader takes it as GeoJSON', () => {
+    const read = check(JSON.stringify(json));
+    expect(read.type).toBe('FeatureCollection');
+    expect(() => check(JSON.stringify({ ...json, features: [{ type: 'Feature' }] }))).toThrow();
   });
 
   test('rings are closed; outer ones run anticlockwise and holes clockwise (RFC 7946, 3.1.6)', () => {
