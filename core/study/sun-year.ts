@@ -1,19 +1,19 @@
-import type { Model, WindowForm } from '../form/model.ts';
-import { solidsAt } from '../form/stands.ts';
+import type { Model, Stage } from '../form/model.ts';
+import type { Vec3 } from '../plane/vec.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import { sunVector } from '../shade/sun-vector.ts';
-import { sunlitFraction, windowShade } from '../shade/sunlit-fraction.ts';
 import { daySamples } from '../sun/civil.ts';
 import { sunTable } from '../sun/sun-table.ts';
 import { DEG } from '../units/angle.ts';
 import type { Pulse } from './job.ts';
+import { shareInSun, type YearSubject } from './year-subject.ts';
 
 /** Cells in which there is no share to state. */
 export const SUN_DOWN = -1;
 /** The clock shows no such time on that date: it was put forward. */
 export const NO_SUCH_TIME = -2;
 
-/** Direct sun on some windows through a year: one column a civil date, one row a step of the civil clock. */
+/** Direct sun on something through a year: one column a civil date, one row a step of the civil clock. */
 export type SunYear = {
   readonly year: number;
   readonly zone: string;
@@ -23,7 +23,7 @@ export type SunYear = {
   /** Rows a column: 24 h over the step. */
   readonly rows: number;
   /**
-   * Share of the windows' glass area in direct sun, 0..1, at the middle of each step, column after column; SUN_DOWN or
+   * Share in direct sun, 0..1 (see `year-subject.ts`), at the middle of each step, column after column; SUN_DOWN or
    * NO_SUCH_TIME where there is none. Where the clock is put back, the first of the two times counts.
    */
   readonly share: Float32Array;
@@ -34,8 +34,6 @@ export type SunYear = {
   readonly offset_min: Float32Array;
 };
 
-type Prepared = { readonly form: WindowForm; readonly shade: ReturnType<typeof windowShade> };
-
 const datesOf = (year: number): readonly string[] => {
   const dates: string[] = [];
   for (let t = Date.UTC(year, 0, 1); t < Date.UTC(year + 1, 0, 1); t += 86_400_000) {
@@ -44,20 +42,10 @@ const datesOf = (year: number): readonly string[] => {
   return dates;
 };
 
-/** Share of the prepared windows' glass that a sun direction reaches, weighted by glass area. @returns 0..1 */
-function shareInSun(windows: readonly Prepared[], sun: readonly [number, number, number], month: number): number {
-  let lit = 0;
-  let all = 0;
-  for (const { form, shade } of windows) {
-    all += form.glass_m2;
-    lit += form.glass_m2 * sunlitFraction(shade, sun, month);
-  }
-  return all > 0 ? Math.min(1, lit / all) : 0;
-}
-
 /**
- * The year of direct sun on some windows of a scheme as proposed.
- * @param windows   ids of windows; ids that the model does not know are left out
+ * The year of direct sun on something of a scheme.
+ * @param subject   what is asked of the model does not hold is never in sun
+ * @param stage     what stands while receptors and faces of blocks are asked; windows are those of the proposal
  * @param step_min  step of the clock [min], a divisor of 1440
  * @param pulse     asked every few dates
  * @returns null when told to stop
@@ -65,7 +53,8 @@ function shareInSun(windows: readonly Prepared[], sun: readonly [number, number,
 export async function sunYear(
   scheme: Scheme,
   model: Model,
-  windows: readonly string[],
+  subject: YearSubject,
+  stage: Stage,
   year: number,
   step_min: number,
   pulse: Pulse,
@@ -77,11 +66,7 @@ export async function sunYear(
     elevation_m: site.elevation,
   };
   const lowSun_rad = (site.lowSun ?? 0) * DEG;
-  const solids = solidsAt(model.solids, 'after');
-  const wanted = new Set(windows);
-  const prepared = model.windows
-    .filter((form) => wanted.has(form.id))
-    .map((form): Prepared => ({ form, shade: windowShade(form, solids, model.trees) }));
+  const shareOf = shareInSun(model, subject, stage);
   const dates = datesOf(year);
   const rows = Math.round(1440 / step_min);
   const share = new Float32Array(dates.length * rows).fill(NO_SUCH_TIME);
@@ -92,10 +77,11 @@ export async function sunYear(
   for (let d = 0; d < dates.length; d++) {
     if (d % 8 === 0 && (await pulse(d, dates.length)) === 'stop') return null;
     const date = dates[d] as string;
-    const month = Number(date.slice(5, 7)) - 1;
     const { instant_ms, clock_min } = daySamples(date, site.zone, step_min);
     const sun = sunTable(instant_ms, observer);
     offset_min[d] = offsetAtNoon(date, instant_ms, clock_min);
+    const cells: number[] = [];
+    const suns: Vec3[] = [];
     for (let i = 0; i < instant_ms.length; i++) {
       const row = Math.floor(clock_min[i]! / step_min);
       const cell = d * rows + row;
@@ -105,10 +91,15 @@ export async function sunYear(
         sunset_min[d] = (row + 1) * step_min;
       }
       if (share[cell] !== NO_SUCH_TIME) continue;
-      if (altitude_rad <= 0) share[cell] = SUN_DOWN;
-      else if (altitude_rad <= lowSun_rad) share[cell] = 0;
-      else share[cell] = shareInSun(prepared, sunVector(sun.azimuth_rad[i]!, altitude_rad, model.north_rad), month);
+      share[cell] = altitude_rad <= 0 ? SUN_DOWN : 0;
+      if (altitude_rad <= Math.max(0, lowSun_rad)) continue;
+      cells.push(cell);
+      suns.push(sunVector(sun.azimuth_rad[i]!, altitude_rad, model.north_rad));
     }
+    const lit = shareOf(suns, Number(date.slice(5, 7)));
+    cells.forEach((cell, i) => {
+      share[cell] = lit[i]!;
+    });
   }
   return { year, zone: site.zone, step_min, dates, rows, share, sunrise_min, sunset_min, offset_min };
 }

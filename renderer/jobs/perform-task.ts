@@ -71,9 +71,9 @@ const performers: { readonly [T in Task]: Performer<T> } = {
     const { scheme } = held();
     return checkScheme(scheme, limitSetOf(scheme), notes, pulse);
   },
-  year: ({ windows, year }, held, pulse) => {
+  year: ({ subject, stage, year }, held, pulse) => {
     const { scheme, model } = held();
-    return sunYear(scheme, model, windows, year, YEAR_STEP_min, pulse);
+    return sunYear(scheme, model, subject, stage, year, YEAR_STEP_min, pulse);
   },
   sunPath: async ({ observer, zone, year, window }, held) => ({
     path: sunPath(observer, zone, year),

@@ -1,4 +1,4 @@
-import type { Model } from '../../core/form/model.ts';
+import type { Model, Stage } from '../../core/form/model.ts';
 import type { Checked, Fault } from '../../core/scheme/fault.ts';
 import type { ShadingMask } from '../../core/shade/sky-view-mask.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
@@ -8,6 +8,7 @@ import type { WeatherMapping } from '../../core/sky/weather/mapping.ts';
 import type { CheckResult } from '../../core/study/check-result.ts';
 import type { MomentResult } from '../../core/study/moment.ts';
 import type { SunYear } from '../../core/study/sun-year.ts';
+import type { YearSubject } from '../../core/study/year-subject.ts';
 import type { WeatherFacts } from '../../core/study/weather-facts.ts';
 import type { Observer } from '../../core/sun/position.ts';
 import type { SunPath } from '../../core/sun/sun-path.ts';
@@ -34,8 +35,8 @@ export type Tasks = {
     answer: { model: Model | null; moment: MomentResult; day: DayEnds };
   };
   check: { ask: { notes: readonly Fault[] }; answer: CheckResult };
-  /** Direct sun on some windows through a year. */
-  year: { ask: { windows: readonly string[]; year: number }; answer: SunYear };
+  /** Direct sun on something through a year. */
+  year: { ask: { subject: YearSubject; stage: Stage; year: number }; answer: SunYear };
   /** The lines of the sun path. `window`: what hides the sky from it is wanted too, and the scheme is needed. */
   sunPath: {
     ask: { observer: Observer; zone: string; year: number; window: string | null };

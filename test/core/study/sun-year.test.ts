@@ -30,7 +30,7 @@ function scheme(site: Record<string, unknown>, extra: Record<string, unknown> = 
 }
 
 const yearOf = async (s: Scheme, windows: readonly string[]) => {
-  const year = await sunYear(s, buildModel(s), windows, 2025, 10, go);
+  const year = await sunYear(s, buildModel(s), { kind: 'windows', ids: windows }, 'after', 2025, 10, go);
   if (year === null) throw new Error('stopped');
   return year;
 };
@@ -97,6 +97,6 @@ describe('the year of direct sun on a window', () => {
 
   it('stops when it is told to', async () => {
     const s = scheme({});
-    expect(await sunYear(s, buildModel(s), ['W0'], 2025, 10, async (done) => (done > 100 ? 'stop' : 'go'))).toBeNull();
+    expect(await sunYear(s, buildModel(s), { kind: 'windows', ids: ['W0'] }, 'after', 2025, 10, async (done) => (done > 100 ? 'stop' : 'go'))).toBeNull();
   });
 });
