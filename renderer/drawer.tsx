@@ -27,7 +27,9 @@ export function Drawer() {
   // On a wide window a schedule is always there; picking something in the massing turns to its schedule.
   const picked = selection.value?.kind;
   useLayoutEffect(() => {
-    if (picked !== undefined && (isWide.value || page.value !== 'year') && !isAside(page.value)) page.value = picked;
+    if (picked === undefined || isAside(page.value)) return;
+    if (picked === 'receptor' || picked === 'face') return;
+    if (isWide.value || page.value !== 'year') page.value = picked;
   }, [picked]);
   const wide = isWide.value;
   const shown: Page = wide && page.value === 'year' ? 'window' : page.value;

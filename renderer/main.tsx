@@ -8,6 +8,7 @@ import { pressShortcut } from './start/top-bar.tsx';
 import { keepUnsavedWork } from './state/autosave.ts';
 import { redoEdit, undoEdit } from './state/document.ts';
 import { openByDialog, reportUnsaved, save, saveAs, takeOpened } from './state/files.ts';
+import { followMaps } from './maps/map-state.ts';
 import { followScheme } from './state/studies.ts';
 
 /** What the host's own menu may ask for. */
@@ -21,6 +22,7 @@ const commands: { readonly [C in DeskCommand]: () => unknown } = {
 };
 
 followScheme();
+followMaps();
 reportUnsaved();
 keepUnsavedWork();
 render(<Desk />, document.getElementById('desk') as HTMLElement);

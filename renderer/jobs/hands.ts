@@ -16,6 +16,9 @@ export const hands = {
   moment: new WorkerHand(make),
   check: new WorkerHand(make),
   year: new WorkerHand(make),
+  map: new WorkerHand(make),
+  /** The light of neighbours and amenity areas. */
+  light: new WorkerHand(make),
   sunPath: new WorkerHand(make),
   weather: new WorkerHand(make),
   /** What is answered at once: a moment for a place in the sky, a zone for a place on Earth. */

@@ -6,6 +6,7 @@ import type { Scheme } from '../../core/scheme/schema.ts';
 import { writeScheme } from '../../core/scheme/write.ts';
 import { guessTable } from '../../core/sky/weather/guess-table.ts';
 import { checkScheme } from '../../core/study/check.ts';
+import { exposureMap } from '../../core/study/exposure-map.ts';
 import type { Pulse } from '../../core/study/job.ts';
 import { momentStudy } from '../../core/study/moment.ts';
 import { sunYear } from '../../core/study/sun-year.ts';
@@ -74,6 +75,10 @@ const performers: { readonly [T in Task]: Performer<T> } = {
   year: ({ subject, stage, year }, held, pulse) => {
     const { scheme, model } = held();
     return sunYear(scheme, model, subject, stage, year, YEAR_STEP_min, pulse);
+  },
+  map: (ask, held, pulse) => {
+    const { scheme, model } = held();
+    return exposureMap(scheme, model, ask, pulse);
   },
   sunPath: async ({ observer, zone, year, window }, held) => ({
     path: sunPath(observer, zone, year),

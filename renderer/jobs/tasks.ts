@@ -8,6 +8,7 @@ import type { WeatherMapping } from '../../core/sky/weather/mapping.ts';
 import type { CheckResult } from '../../core/study/check-result.ts';
 import type { MomentResult } from '../../core/study/moment.ts';
 import type { SunYear } from '../../core/study/sun-year.ts';
+import type { ExposureMap, ExposureMapAsk } from '../../core/study/exposure-map.ts';
 import type { YearSubject } from '../../core/study/year-subject.ts';
 import type { WeatherFacts } from '../../core/study/weather-facts.ts';
 import type { Observer } from '../../core/sun/position.ts';
@@ -37,6 +38,8 @@ export type Tasks = {
   check: { ask: { notes: readonly Fault[] }; answer: CheckResult };
   /** Direct sun on something through a year. */
   year: { ask: { subject: YearSubject; stage: Stage; year: number }; answer: SunYear };
+  /** Exposure over facades, roofs and ground. */
+  map: { ask: ExposureMapAsk; answer: Checked<ExposureMap> };
   /** The lines of the sun path. `window`: what hides the sky from it is wanted too, and the scheme is needed. */
   sunPath: {
     ask: { observer: Observer; zone: string; year: number; window: string | null };

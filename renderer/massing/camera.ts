@@ -37,6 +37,16 @@ export function project(camera: Camera, size: Size, p: Vec3): Point {
   return [size.width / 2 + x * camera.scale, size.height / 2 - y * camera.scale];
 }
 
+/** The place at a height [m] that a point of the screen, from the top left [px], looks at. */
+export function onLevel(camera: Camera, size: Size, x: number, y: number, level_m: number): Vec3 {
+  const { right, up, into } = axesOf(camera);
+  const across = (x - size.width / 2) / camera.scale;
+  const upward = (size.height / 2 - y) / camera.scale;
+  const at = (i: 0 | 1 | 2): number => camera.centre[i] + right[i] * across + up[i] * upward;
+  const further = (level_m - at(2)) / into[2];
+  return [at(0) + into[0] * further, at(1) + into[1] * further, level_m];
+}
+
 /** Turned and tilted by angles; never below the ground, never past straight down. */
 export function orbit(camera: Camera, turn_rad: number, tilt_rad: number): Camera {
   const tilt = Math.min(PLAN_rad, Math.max(LEAST_TILT_rad, camera.tilt_rad + tilt_rad));

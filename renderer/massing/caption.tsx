@@ -1,8 +1,11 @@
 import { civilOf } from '../../core/sun/civil.ts';
+import { shownMap } from '../maps/map-shown.ts';
+import { isMapOn, quantity } from '../maps/map-state.ts';
+import { periodText } from '../maps/map-words.ts';
 import { scheme } from '../state/document.ts';
 import { instant } from '../state/moment.ts';
 import { moment } from '../state/studies.ts';
-import { degrees } from '../ui/format.ts';
+import { degrees, fixed } from '../ui/format.ts';
 import { words } from '../words/words.ts';
 
 /** What the drawing shows: the moment in civil time, and where the sun stands. */
@@ -11,6 +14,7 @@ export function Caption() {
   const zone = scheme.value?.site.zone;
   const sun = moment.value?.value.sun;
   if (at === null || zone === undefined) return null;
+  if (isMapOn.value) return <MapCaption />;
   return (
     <p class="caption">
       <strong>{civilOf(at.instant_ms, zone).text}</strong>
@@ -21,6 +25,23 @@ export function Caption() {
             : words.moment.sunDown(degrees(sun.azimuth_deg, 1), degrees(sun.altitude_deg, 1))}
         </span>
       )}
+    </p>
+  );
+}
+
+/** For when the map holds, and how it was made. */
+function MapCaption() {
+  const shown = shownMap.value;
+  if (shown === null) return null;
+  const made = words.maps.made(`${shown.step_min}`, fixed(shown.spacing_m, shown.spacing_m < 1 ? 2 : 0));
+  const left = [
+    quantity.value === 'energy' ? words.maps.clear : '',
+    shown.scheme.trees.length > 0 ? words.maps.noTrees : '',
+  ].filter(Boolean);
+  return (
+    <p class="caption">
+      <strong>{periodText(shown.dates)}</strong>
+      <span>{[made, ...left].join(', ')}</span>
     </p>
   );
 }

@@ -4,7 +4,7 @@ import type { Point, Vec3 } from '../../core/plane/vec.ts';
 import type { FaceShadow } from '../../core/shade/face-shadow.ts';
 import { Faces } from './faces.ts';
 import { mix, type Palette, type Rgb } from './palette.ts';
-import { tintsOf, wallTint } from './solids-layer.ts';
+import { tintsOf, wallCorners, wallTint } from './solids-layer.ts';
 
 /** How much of the shadow's tint a shaded face takes on. */
 const DEPTH = 0.42;
@@ -17,18 +17,6 @@ function fill(polygon: readonly Vec3[], isLevel: boolean, along: Point, colour: 
   for (const [a, b, c] of ShapeUtils.triangulateShape(flat, []) as [number, number, number][]) {
     faces.triangle(polygon[a] as Vec3, polygon[b] as Vec3, polygon[c] as Vec3, colour, null);
   }
-}
-
-function wallCorners(solid: Solid, wall: number): readonly Vec3[] {
-  const a = solid.outline[wall] as Point;
-  const b = solid.outline[(wall + 1) % solid.outline.length] as Point;
-  const { base_m, top_m } = solid;
-  return [
-    [...a, base_m],
-    [...b, base_m],
-    [...b, top_m],
-    [...a, top_m],
-  ];
 }
 
 /** No polygons and yet shaded: the face is turned from the sun, and wholly shaded. */

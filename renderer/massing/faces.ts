@@ -1,8 +1,11 @@
 import type { Vec3 } from '../../core/plane/vec.ts';
+import type { Face } from '../state/faces.ts';
 import type { Rgb } from './palette.ts';
 
 /** What a triangle belongs to, for picking. */
-export type Owner = { readonly kind: 'block' | 'window'; readonly id: string };
+export type Owner =
+  | { readonly kind: 'block'; readonly id: string; readonly face: Face }
+  | { readonly kind: 'window' | 'receptor'; readonly id: string };
 
 /** Flat-tinted triangles of many things in one list, with their owners. */
 export class Faces {

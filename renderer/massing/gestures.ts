@@ -10,16 +10,19 @@ const ZOOM_STEP = 1.2;
 
 type Hand = { x: number; y: number };
 
+export type Listener = {
+  /** A press and release in one place [px from the top left]. */
+  readonly press: (x: number, y: number, event: PointerEvent) => void;
+  /** Where the pointer stands while no button is held; x is −1 when it has gone or begins to drag. */
+  readonly hover: (x: number, y: number) => void;
+};
+
 /**
  * Turning, moving and zooming by pointer: drag turns (moves, in a plan), drag with shift or the other buttons moves, the wheel
  * zooms at the pointer, two fingers zoom and move.
- * @param click  a press and release in one place
  * @returns the way to stop listening
  */
-export function listenToPointer(
-  surface: HTMLElement,
-  click: (x: number, y: number, event: PointerEvent) => void,
-): () => void {
+export function listenToPointer(surface: HTMLElement, { press, hover }: Listener): () => void {
   const hands = new Map<number, Hand>();
   let travelled = 0;
 
@@ -36,11 +39,12 @@ export function listenToPointer(
 
   const move = (event: PointerEvent): void => {
     const before = hands.get(event.pointerId);
-    if (before === undefined) return;
     const now = place(event);
+    if (before === undefined) return hover(now.x, now.y);
     const [dx, dy] = [now.x - before.x, now.y - before.y];
     travelled += Math.abs(dx) + Math.abs(dy);
     if (travelled <= SLACK_px) return;
+    hover(-1, -1);
     if (hands.size === 2) pinch(event.pointerId, before, now);
     else if (event.shiftKey || event.buttons !== 1 || isPlan.peek()) camera.value = pan(camera.peek(), dx, dy);
     else camera.value = orbit(camera.peek(), dx * TURN_PER_px, dy * TURN_PER_px);
@@ -65,7 +69,7 @@ export function listenToPointer(
     if (!hands.delete(event.pointerId)) return;
     if (travelled <= SLACK_px && event.type === 'pointerup' && event.button === 0) {
       const { x, y } = place(event);
-      click(x, y, event);
+      press(x, y, event);
     }
   };
 
@@ -75,12 +79,15 @@ export function listenToPointer(
     camera.value = zoomAt(camera.peek(), size.peek(), Math.exp(-event.deltaY * 0.0015), x, y);
   };
 
+  const leave = (): void => hover(-1, -1);
+
   const menu = (event: Event): void => event.preventDefault();
 
   surface.addEventListener('pointerdown', down);
   surface.addEventListener('pointermove', move);
   surface.addEventListener('pointerup', up);
   surface.addEventListener('pointercancel', up);
+  surface.addEventListener('pointerleave', leave);
   surface.addEventListener('wheel', wheel, { passive: false });
   surface.addEventListener('contextmenu', menu);
   return () => {
@@ -88,6 +95,7 @@ export function listenToPointer(
     surface.removeEventListener('pointermove', move);
     surface.removeEventListener('pointerup', up);
     surface.removeEventListener('pointercancel', up);
+    surface.removeEventListener('pointerleave', leave);
     surface.removeEventListener('wheel', wheel);
     surface.removeEventListener('contextmenu', menu);
   };

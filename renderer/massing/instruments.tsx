@@ -3,11 +3,12 @@ import type { Vec3 } from '../../core/plane/vec.ts';
 import { model, moment } from '../state/studies.ts';
 import { scheme } from '../state/document.ts';
 import { selection } from '../state/selection.ts';
+import { stage } from '../state/stage.ts';
 import { fixed, percent } from '../ui/format.ts';
 import { words } from '../words/words.ts';
 import { axesOf, barLength, project } from './camera.ts';
 import { selectionEdges, windowCorners } from './solids-layer.ts';
-import { camera, size, stage } from './view-state.ts';
+import { camera, size } from './view-state.ts';
 
 const BAR_MOST_px = 120;
 

@@ -1,17 +1,24 @@
 import { useCallback, useState } from 'preact/hooks';
-import type { Stage } from '../../core/form/model.ts';
+import { MapKey } from '../maps/map-key.tsx';
+import { MapButton, MapPanel } from '../maps/map-panel.tsx';
+import type { Side } from '../maps/map-picture.ts';
+import { isChangeWanted, isMapOn, side } from '../maps/map-state.ts';
+import { stage } from '../state/stage.ts';
 import { moment, momentJob } from '../state/studies.ts';
 import { Button } from '../ui/button.tsx';
 import { Choice } from '../ui/choice.tsx';
 import { AllIcon, MinusIcon, PlusIcon } from '../ui/icons.tsx';
 import { words } from '../words/words.ts';
 import { Caption } from './caption.tsx';
+import { CellMark, CellReader } from './cell-mark.tsx';
 import { zoomBy } from './gestures.ts';
 import { Key, NorthPoint, ScaleBar, SelectionOutline, SelectionTag } from './instruments.tsx';
 import { MassingCanvas } from './massing-canvas.tsx';
 import { PlanDrawing } from './plan-drawing.tsx';
-import { isPlan, lookAs, showAll, stage } from './view-state.ts';
+import { ReceptorMarks } from './receptor-marks.tsx';
+import { isPlan, lookAs, showAll } from './view-state.ts';
 import './massing.css';
+import '../maps/maps.css';
 
 /** The scheme as a drawing: massing or plan, with the shadows of the moment. */
 export function Massing() {
@@ -24,6 +31,7 @@ export function Massing() {
       <div class="massing-tools">
         {has3d ? <ViewChoice /> : null}
         <StageChoice />
+        {has3d ? <MapButton /> : null}
         {has3d ? (
           <div class="group">
             <Button icon onPress={() => zoomBy(-1)} label={words.massing.zoomOut}>
@@ -38,11 +46,15 @@ export function Massing() {
           </div>
         ) : null}
       </div>
-      <Key />
+      {has3d ? <MapPanel /> : null}
+      {has3d && isMapOn.value ? <MapKey /> : <Key />}
       {has3d ? (
         <>
           <SelectionOutline />
+          <ReceptorMarks />
           <SelectionTag />
+          <CellMark />
+          <CellReader />
         </>
       ) : null}
       <div class="massing-foot">
@@ -71,17 +83,21 @@ function ViewChoice() {
   );
 }
 
+/** What stands in the drawing; of a map also what the proposal changes. */
 function StageChoice() {
+  const change = { value: 'change', text: words.maps.change } as const;
   return (
-    <Choice<Stage>
+    <Choice<Side>
       label={words.massing.stage}
-      value={stage.value}
+      value={isMapOn.value ? side.value : stage.value}
       options={[
         { value: 'before', text: words.massing.before },
         { value: 'after', text: words.massing.after },
+        ...(isMapOn.value ? [change] : []),
       ]}
       onChoose={(value) => {
-        stage.value = value;
+        isChangeWanted.value = value === 'change';
+        stage.value = value === 'change' ? 'after' : value;
       }}
     />
   );
@@ -89,7 +105,7 @@ function StageChoice() {
 
 function MassingNote({ graphics }: { graphics: 'here' | 'none' | 'lost' }) {
   const job = momentJob.value;
-  const isDown = moment.value !== null && moment.value.value.shadows === null;
+  const isDown = !isMapOn.value && moment.value !== null && moment.value.value.shadows === null;
   const text =
     job.kind === 'failed'
       ? words.status.workerFailed(words.massing.label, job.message)

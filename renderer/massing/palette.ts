@@ -23,6 +23,7 @@ const ROLES = [
   'glass-lit',
   'glass-shade',
   'device',
+  'up-grey',
 ] as const;
 export type Role = (typeof ROLES)[number];
 export type Palette = { readonly [R in Role]: Rgb };

@@ -3,9 +3,9 @@ import { stands } from '../../core/form/stands.ts';
 import type { Region } from '../../core/plane/region.ts';
 import type { Ring } from '../../core/plane/vec.ts';
 import { isSelected, select } from '../state/selection.ts';
+import { stage } from '../state/stage.ts';
 import { model, moment } from '../state/studies.ts';
 import { words } from '../words/words.ts';
-import { stage } from './view-state.ts';
 
 const ROOM_m = 4;
 

@@ -2,56 +2,36 @@ import {
   BufferAttribute,
   BufferGeometry,
   Color,
-  DoubleSide,
-  LineBasicMaterial,
+  DataTexture,
   LineDashedMaterial,
   LineSegments,
-  type Material,
   Mesh,
-  MeshBasicMaterial,
+  type MeshBasicMaterial,
   OrthographicCamera,
   Raycaster,
   Scene,
+  SRGBColorSpace,
   Vector2,
   WebGLRenderer,
 } from 'three';
 import { axesOf, type Camera, type Size } from './camera.ts';
+import { drawsInSoftware } from './draws-in-software.ts';
+import type { Vec3 } from '../../core/plane/vec.ts';
 import type { Faces, Owner } from './faces.ts';
+import type { Laid } from './map-layer.ts';
+import { type Layer, materials, ORDER } from './layers.ts';
 import type { Rgb } from './palette.ts';
 import { StillPicture } from './still-picture.ts';
 import type { Strokes } from './strokes.ts';
 
-/** The layers of the drawing from the ground up. Ground layers are painted in this order; solids hide what lies behind them. */
-const ORDER = ['plot', 'shadow', 'added', 'hatch', 'boundary', 'solids', 'faceShadow', 'edges', 'dashes'] as const;
-export type Layer = (typeof ORDER)[number];
+/** Layers of things that can be picked. */
+const PICKED = ['solids', 'openings'] as const;
 
 /** The camera stands this far back: outside any site [m]. */
 const BACK_m = 5000;
 const DASH_px = 5;
 /** A view that has not changed for so long is at rest. */
 const STILL_AFTER_ms = 160;
-
-const FLAT = { vertexColors: true, side: DoubleSide } as const;
-const ON_GROUND = { depthTest: false, depthWrite: false } as const;
-
-/** Each layer's way of drawing. Faces stand back a little so that ink edges on them stay whole. */
-const materials = (): { readonly [L in Layer]: Material } => ({
-  plot: new MeshBasicMaterial({ ...FLAT, ...ON_GROUND }),
-  shadow: new MeshBasicMaterial({ ...FLAT, ...ON_GROUND }),
-  added: new MeshBasicMaterial({ ...FLAT, ...ON_GROUND }),
-  hatch: new LineBasicMaterial({ vertexColors: true, ...ON_GROUND }),
-  boundary: new LineDashedMaterial({ vertexColors: true, ...ON_GROUND }),
-  solids: new MeshBasicMaterial({ ...FLAT, polygonOffset: true, polygonOffsetFactor: 2, polygonOffsetUnits: 4 }),
-  faceShadow: new MeshBasicMaterial({
-    ...FLAT,
-    polygonOffset: true,
-    polygonOffsetFactor: 1,
-    polygonOffsetUnits: 2,
-    depthWrite: false,
-  }),
-  edges: new LineBasicMaterial({ vertexColors: true }),
-  dashes: new LineDashedMaterial({ vertexColors: true }),
-});
 
 /**
  * The drawing on the graphics card: a few merged meshes, redrawn only when something has changed. It holds no state of its own
@@ -64,7 +44,8 @@ export class MassingScene {
   readonly #materials = materials();
   readonly #layers = new Map<Layer, Mesh | LineSegments>();
   readonly #caster = new Raycaster();
-  #owners: readonly (Owner | null)[] = [];
+  readonly #owners = new Map<Layer, readonly (Owner | null)[]>();
+  #picture: DataTexture | null = null;
   #size: Size = { width: 1, height: 1 };
   #view: Camera | null = null;
   #frame = 0;
@@ -90,12 +71,44 @@ export class MassingScene {
   }
 
   setFaces(layer: Layer, faces: Faces): void {
-    if (layer === 'solids') this.#owners = faces.owners;
-    this.#put(layer, faces.positions, faces.colours, (g) => new Mesh(g, this.#materials[layer]));
+    this.#owners.set(layer, faces.owners);
+    const colours = new BufferAttribute(linear(faces.colours), 3);
+    this.#put(layer, faces.positions, 'color', colours, (g) => new Mesh(g, this.#materials[layer]));
+  }
+
+  /** Surfaces that carry a map; none, and they carry none. The picture comes by `setPicture`. */
+  setMap(laid: { readonly ground: Laid; readonly faces: Laid } | null): void {
+    for (const [layer, part] of [
+      ['groundMap', laid?.ground],
+      ['faceMap', laid?.faces],
+    ] as const) {
+      const places = new BufferAttribute(part?.places ?? new Float32Array(0), 2);
+      const positions = part?.positions ?? new Float32Array(0);
+      this.#put(layer, positions, 'uv', places, (g) => new Mesh(g, this.#materials[layer]));
+    }
+  }
+
+  /** The cells of the map, a pixel each: red, green, blue and cover, from the lower left. */
+  setPicture(pixels: Uint8Array<ArrayBuffer>, width: number, height: number): void {
+    if (this.#picture?.image.width === width && this.#picture.image.height === height) {
+      this.#picture.image.data = pixels;
+    } else {
+      this.#picture?.dispose();
+      this.#picture = new DataTexture(pixels, width, height);
+      this.#picture.colorSpace = SRGBColorSpace;
+      for (const layer of ['groundMap', 'faceMap'] as const) {
+        const material = this.#materials[layer] as MeshBasicMaterial;
+        material.map = this.#picture;
+        material.needsUpdate = true;
+      }
+    }
+    this.#picture.needsUpdate = true;
+    this.invalidate();
   }
 
   setStrokes(layer: Layer, strokes: Strokes): void {
-    this.#put(layer, strokes.positions, strokes.colours, (g) => {
+    const colours = new BufferAttribute(linear(strokes.colours), 3);
+    this.#put(layer, strokes.positions, 'color', colours, (g) => {
       const lines = new LineSegments(g, this.#materials[layer]);
       if (this.#materials[layer] instanceof LineDashedMaterial) lines.computeLineDistances();
       return lines;
@@ -105,7 +118,8 @@ export class MassingScene {
   #put(
     layer: Layer,
     positions: Float32Array,
-    colours: Float32Array,
+    name: 'color' | 'uv',
+    attribute: BufferAttribute,
     make: (g: BufferGeometry) => Mesh | LineSegments,
   ): void {
     const old = this.#layers.get(layer);
@@ -117,7 +131,7 @@ export class MassingScene {
     if (positions.length > 0) {
       const geometry = new BufferGeometry();
       geometry.setAttribute('position', new BufferAttribute(positions, 3));
-      geometry.setAttribute('color', new BufferAttribute(linear(colours), 3));
+      geometry.setAttribute(name, attribute);
       const thing = make(geometry);
       thing.renderOrder = ORDER.indexOf(layer);
       thing.frustumCulled = false;
@@ -207,14 +221,19 @@ export class MassingScene {
     return this.#renderer.domElement;
   }
 
-  /** What lies under a place on the screen, from the top left [px]. */
-  pick(x: number, y: number): Owner | null {
-    const solids = this.#layers.get('solids');
-    if (solids === undefined) return null;
+  /** What stands under a place on the screen, from the top left [px], and where it is met; null for the ground. */
+  pick(x: number, y: number): { readonly owner: Owner | null; readonly at: Vec3 } | null {
     const at = new Vector2((x / this.#size.width) * 2 - 1, 1 - (y / this.#size.height) * 2);
     this.#caster.setFromCamera(at, this.#camera);
-    const hit = this.#caster.intersectObject(solids)[0];
-    return hit?.faceIndex === undefined || hit.faceIndex === null ? null : (this.#owners[hit.faceIndex] ?? null);
+    let [nearest, found]: [number, ReturnType<MassingScene['pick']>] = [Infinity, null];
+    for (const layer of PICKED) {
+      const mesh = this.#layers.get(layer);
+      const hit = mesh === undefined ? undefined : this.#caster.intersectObject(mesh)[0];
+      if (hit === undefined || hit.distance >= nearest) continue;
+      const owner = this.#owners.get(layer)?.[hit.faceIndex ?? -1] ?? null;
+      [nearest, found] = [hit.distance, { owner, at: [hit.point.x, hit.point.y, hit.point.z] }];
+    }
+    return found;
   }
 
   dispose(): void {
@@ -222,20 +241,10 @@ export class MassingScene {
     if (this.#still !== null) clearTimeout(this.#still);
     for (const thing of this.#layers.values()) thing.geometry.dispose();
     for (const material of Object.values(this.#materials)) material.dispose();
+    this.#picture?.dispose();
     this.#rest?.dispose();
     this.#renderer.dispose();
   }
-}
-
-/** Whether pictures are drawn by the processor: smoothing edges as the card does then costs more than all the rest. */
-function drawsInSoftware(): boolean {
-  const probe = document.createElement('canvas').getContext('webgl2');
-  if (probe === null) return true;
-  const name = String(
-    probe.getParameter(probe.getExtension('WEBGL_debug_renderer_info')?.UNMASKED_RENDERER_WEBGL ?? probe.RENDERER),
-  );
-  probe.getExtension('WEBGL_lose_context')?.loseContext();
-  return /swiftshader|llvmpipe|software|basic render/i.test(name);
 }
 
 /** Style sheet colours are in sRGB; the card mixes and writes from linear light. */

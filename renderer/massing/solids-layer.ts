@@ -1,16 +1,23 @@
-import type { Model, Solid, Stage, WindowForm } from '../../core/form/model.ts';
+import type { Model, Panel, ReceptorForm, Solid, Stage, WindowForm } from '../../core/form/model.ts';
 import { stands } from '../../core/form/stands.ts';
 import { along, type Point, type Vec3 } from '../../core/plane/vec.ts';
+import { type Face, faceOf } from '../state/faces.ts';
 import type { Selection } from '../state/selection.ts';
 import { crown } from './crown.ts';
-import { Faces } from './faces.ts';
+import { Faces, type Owner } from './faces.ts';
 import { mix, type Palette, type Rgb } from './palette.ts';
 import { Strokes } from './strokes.ts';
 
 /** A window drawn this far in front of its wall does not flicker with it [m]. */
 const PROUD_m = 0.02;
 
-export type SolidsLayer = { readonly faces: Faces; readonly edges: Strokes; readonly dashes: Strokes };
+/** `openings`: glass and devices, which stand proud of the faces that they are in and are painted after what lies on those. */
+export type SolidsLayer = {
+  readonly faces: Faces;
+  readonly openings: Faces;
+  readonly edges: Strokes;
+  readonly dashes: Strokes;
+};
 
 type Tints = { readonly roof: Rgb; readonly wall: Rgb; readonly edge: Rgb };
 
@@ -39,60 +46,81 @@ function edgesOf(solid: Solid, strokes: Strokes, colour: Rgb): void {
   for (const [a, b] of prismEdges(solid.outline, solid.base_m, solid.top_m)) strokes.add(a, b, colour);
 }
 
+/** The corners of a wall, from its lower left as seen from outside. */
+export function wallCorners(solid: Solid, wall: number): readonly Vec3[] {
+  const a = solid.outline[wall] as Point;
+  const b = solid.outline[(wall + 1) % solid.outline.length] as Point;
+  const { base_m, top_m } = solid;
+  return [
+    [...a, base_m],
+    [...b, base_m],
+    [...b, top_m],
+    [...a, top_m],
+  ];
+}
+
 function drawSolid(solid: Solid, tints: Tints, layer: SolidsLayer): void {
-  const owner = { kind: 'block', id: solid.id } as const;
-  for (const piece of solid.pieces) layer.faces.convex(lifted(piece, solid.top_m), tints.roof, owner);
+  const owner = (face: Face): Owner => ({ kind: 'block', id: solid.id, face });
+  const roof = owner({ kind: 'roof', block: solid.id });
+  for (const piece of solid.pieces) layer.faces.convex(lifted(piece, solid.top_m), tints.roof, roof);
   const n = solid.outline.length;
   for (let i = 0; i < n; i++) {
     const a = solid.outline[i] as Point;
     const b = solid.outline[(i + 1) % n] as Point;
     const span = Math.hypot(b[0] - a[0], b[1] - a[1]) || 1;
     const tint = wallTint(tints, (b[1] - a[1]) / span, (a[0] - b[0]) / span);
-    const { base_m, top_m } = solid;
-    layer.faces.convex(
-      [
-        [...a, base_m],
-        [...b, base_m],
-        [...b, top_m],
-        [...a, top_m],
-      ],
-      tint,
-      owner,
-    );
+    layer.faces.convex(wallCorners(solid, i), tint, owner({ kind: 'wall', block: solid.id, wall: i }));
   }
   edgesOf(solid, layer.edges, tints.edge);
 }
 
 /** The corners of a window, a little proud of its wall, from its lower left. */
-export function windowCorners(w: WindowForm, proud_m = PROUD_m): readonly Vec3[] {
+export function windowCorners(w: Panel, proud_m = PROUD_m): readonly Vec3[] {
   const o = along(w.origin, w.normal, proud_m);
   const r = along(o, w.right, w.width_m);
   return [o, r, along(r, w.up, w.height_m), along(o, w.up, w.height_m)];
 }
 
-function drawWindow(w: WindowForm, sunlit: number, palette: Palette, layer: SolidsLayer): void {
+/** @param sunlit  share of the glass in direct sun; null where a map shows through it */
+function drawWindow(w: WindowForm, sunlit: number | null, palette: Palette, layer: SolidsLayer): void {
   const owner = { kind: 'window', id: w.id } as const;
-  const glass = mix(palette['glass-shade'], palette['glass-lit'], sunlit);
-  layer.faces.convex(windowCorners(w), glass, owner);
+  if (sunlit !== null) layer.openings.convex(windowCorners(w), glassTint(sunlit, palette), owner);
   layer.edges.loop(windowCorners(w, PROUD_m * 1.5), mix(palette.ink, palette['proposed-wall'], 0.35));
   for (const shader of w.shaders) {
-    layer.faces.convex(shader.corners, palette.device, owner);
+    layer.openings.convex(shader.corners, palette.device, owner);
     layer.edges.loop(shader.corners, mix(palette.ink, palette['proposed-wall'], 0.25));
   }
+}
+
+const glassTint = (sunlit: number, palette: Palette): Rgb => mix(palette['glass-shade'], palette['glass-lit'], sunlit);
+
+/** A neighbour's window that the scheme asks after. */
+function drawNeighbour(r: ReceptorForm, sunlit: number | null, palette: Palette, layer: SolidsLayer): void {
+  if (r.panel === undefined) return;
+  const owner = { kind: 'receptor', id: r.id } as const;
+  if (sunlit !== null) layer.openings.convex(windowCorners(r.panel), glassTint(sunlit, palette), owner);
+  layer.edges.loop(windowCorners(r.panel, PROUD_m * 1.5), palette.ink);
 }
 
 export type SolidsAsk = {
   readonly model: Model;
   readonly stage: Stage;
   readonly selection: Selection | null;
-  /** Share of each window's glass in direct sun, by id. */
-  readonly sunlit: ReadonlyMap<string, number>;
+  /** Share of each window's glass in direct sun, by id; null while a map shows on the faces, through the glass. */
+  readonly sunlit: ReadonlyMap<string, number> | null;
+  /** The same of neighbours' windows, at the stage. */
+  readonly neighbours: ReadonlyMap<string, number> | null;
   readonly palette: Palette;
 };
 
 /** Everything that stands, as one list of flat faces and one of ink edges; what does not stand at the stage is dashed. */
-export function solidsLayer({ model, stage, selection, sunlit, palette }: SolidsAsk): SolidsLayer {
-  const layer: SolidsLayer = { faces: new Faces(), edges: new Strokes(), dashes: new Strokes() };
+export function solidsLayer({ model, stage, selection, sunlit, neighbours, palette }: SolidsAsk): SolidsLayer {
+  const layer: SolidsLayer = {
+    faces: new Faces(),
+    openings: new Faces(),
+    edges: new Strokes(),
+    dashes: new Strokes(),
+  };
   const isChosen = (id: string): boolean => selection?.kind === 'block' && selection.ids.includes(id);
   const standing = new Set<string>();
   for (const solid of model.solids) {
@@ -106,7 +134,12 @@ export function solidsLayer({ model, stage, selection, sunlit, palette }: Solids
   }
   for (const w of model.windows) {
     if (!standing.has(w.block)) continue;
-    drawWindow(w, stage === 'after' ? (sunlit.get(w.id) ?? 0) : 0, palette, layer);
+    const share = stage === 'after' ? (sunlit?.get(w.id) ?? 0) : 0;
+    drawWindow(w, sunlit === null ? null : share, palette, layer);
+  }
+  for (const r of model.receptors) {
+    if (r.kind === 'window' && standing.has(r.block))
+      drawNeighbour(r, neighbours === null ? null : (neighbours.get(r.id) ?? 0), palette, layer);
   }
   for (const tree of model.trees) crown(tree, palette, layer.faces, layer.edges);
   return layer;
@@ -130,11 +163,29 @@ export function selectionEdges(model: Model, selection: Selection | null): reado
   if (selection.kind === 'block') {
     return model.solids.filter((s) => ids.has(s.id)).flatMap((s) => prismEdges(s.outline, s.base_m, s.top_m));
   }
+  if (selection.kind === 'face') return selection.ids.flatMap((id) => faceEdges(model, id));
+  if (selection.kind === 'receptor') {
+    return model.receptors.filter((r) => ids.has(r.id)).flatMap(receptorEdges);
+  }
   const isChosen = (w: WindowForm): boolean =>
     (selection.kind === 'window' && ids.has(w.id)) ||
     (selection.kind === 'glass' && ids.has(w.glass.id)) ||
     (selection.kind === 'device' && w.shaders.some((shader) => ids.has(shader.device)));
   return model.windows.filter(isChosen).flatMap((w) => loopEdges(windowCorners(w)));
+}
+
+function faceEdges(model: Model, id: string): readonly (readonly [Vec3, Vec3])[] {
+  const face = faceOf(id);
+  const solid = model.solids.find((s) => s.id === face.block);
+  if (solid === undefined) return [];
+  if (face.kind === 'roof') return loopEdges(lifted(solid.outline, solid.top_m));
+  return face.wall < solid.outline.length ? loopEdges(wallCorners(solid, face.wall)) : [];
+}
+
+/** A point has no edges: its mark says that it is selected. */
+function receptorEdges(r: ReceptorForm): readonly (readonly [Vec3, Vec3])[] {
+  if (r.kind === 'area') return loopEdges(lifted(r.outline, r.level));
+  return r.panel === undefined ? [] : loopEdges(windowCorners(r.panel));
 }
 
 const loopEdges = (corners: readonly Vec3[]): readonly (readonly [Vec3, Vec3])[] =>

@@ -1,5 +1,5 @@
 import { computed, signal } from '@preact/signals';
-import type { Model, Solid, Stage } from '../../core/form/model.ts';
+import type { Model, Solid } from '../../core/form/model.ts';
 import type { Point, Vec3 } from '../../core/plane/vec.ts';
 import { scheme } from '../state/document.ts';
 import { model } from '../state/studies.ts';
@@ -8,7 +8,6 @@ import { AXONOMETRIC, type Camera, framed, type Margins, PLAN, type Size } from 
 /** Room kept for the instruments when all of the drawing is shown [px]. */
 const ROOM: Margins = { top: 56, right: 40, bottom: 52, left: 40 };
 
-export const stage = signal<Stage>('after');
 export const camera = signal<Camera>({ centre: [0, 0, 0], ...AXONOMETRIC, scale: 8 });
 export const size = signal<Size>({ width: 1, height: 1 });
 export const isPlan = computed(() => camera.value.tilt_rad > (Math.PI / 2) * 0.999);

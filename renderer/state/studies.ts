@@ -8,7 +8,7 @@ import { hands } from '../jobs/hands.ts';
 import type { DayEnds } from '../jobs/tasks.ts';
 import { notes, scheme } from './document.ts';
 import { civil, instant } from './moment.ts';
-import { selection } from './selection.ts';
+import { type YearSubject, yearSubjectOf } from './year-subject.ts';
 
 /** How a piece of work stands. The last result stays where it was until a newer one takes its place. */
 export type JobState =
@@ -70,44 +70,13 @@ export function stopCheck(): void {
   hands.check.stop();
 }
 
-// The year of sun on the windows of what is selected.
+// The year of sun on what is selected.
 
-export type YearSubject = {
-  readonly kind: 'window' | 'room' | 'all';
-  readonly id: string;
-  readonly windows: readonly string[];
-};
-
-/**
- * Whose year the strip shows: the selected window or the windows of the selected room; else the window that brings most into the
- * worst room; before the first check, all of them.
- */
-export const yearSubject = computed<YearSubject | null>(() => {
-  const shapes = model.value?.value;
-  const source = scheme.value;
-  if (shapes === undefined || source === null || shapes.windows.length === 0) return null;
-  const id = selection.value?.ids.at(-1);
-  const kind = selection.value?.kind;
-  const worst = check.value?.value.findings[0]?.through?.window;
-  const all: YearSubject =
-    worst !== undefined && shapes.windows.some((w) => w.id === worst)
-      ? { kind: 'window', id: worst, windows: [worst] }
-      : { kind: 'all', id: '', windows: shapes.windows.map((w) => w.id) };
-  if (id === undefined) return all;
-  const of = (windows: readonly string[], as: 'window' | 'room'): YearSubject =>
-    windows.length === 0 ? all : { kind: as, id, windows };
-  if (kind === 'window')
-    return of(
-      shapes.windows.filter((w) => w.id === id).map((w) => w.id),
-      'window',
-    );
-  if (kind === 'room')
-    return of(
-      shapes.windows.filter((w) => w.room === id).map((w) => w.id),
-      'room',
-    );
-  return all;
-});
+export const yearSubject = computed<YearSubject | null>(() =>
+  scheme.value === null
+    ? null
+    : yearSubjectOf({ model: model.value?.value ?? null, check: check.value?.value ?? null }),
+);
 
 export const sunYearResult = signal<(From<SunYear> & { readonly subject: YearSubject }) | null>(null);
 export const yearJob = signal<JobState>(IDLE);
@@ -116,7 +85,7 @@ export const isYearShown = signal(false);
 
 async function studyYear(of: Scheme, subject: YearSubject): Promise<void> {
   yearJob.value = working();
-  const ask = { windows: subject.windows, year: of.year ?? DEFAULT_YEAR };
+  const ask = { subject: subject.asked, stage: subject.stage, year: of.year ?? DEFAULT_YEAR };
   const outcome = await hands.year.run('year', ask, of, (done, total) => {
     yearJob.value = working(done, total);
   });
@@ -153,7 +122,7 @@ export function followScheme(): void {
     const of = scheme.value;
     const subject = yearSubject.value;
     if (of === null || subject === null || !isYearShown.value) return;
-    const key = subject.windows.join('\n');
+    const key = JSON.stringify([subject.asked, subject.stage]);
     if (asked?.of === of && asked.subject === key) return;
     asked = { of, subject: key };
     untracked(() => void studyYear(of, subject));

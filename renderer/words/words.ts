@@ -1,7 +1,9 @@
 import { findingsWords } from './findings.ts';
 import { frameWords } from './frame.ts';
+import { mapsWords } from './maps.ts';
 import { massingWords } from './massing.ts';
 import { momentWords } from './moment.ts';
+import { namesWords } from './names.ts';
 import { placeWords } from './place.ts';
 import { scheduleWords } from './schedule.ts';
 import { sheetsWords } from './sheets.ts';
@@ -14,8 +16,10 @@ import { yearStripWords } from './year-strip.ts';
 export const words = {
   ...frameWords,
   ...startWords,
+  ...mapsWords,
   ...massingWords,
   ...momentWords,
+  ...namesWords,
   ...scheduleWords,
   ...yearStripWords,
   ...sunPathWords,

@@ -4,8 +4,10 @@ import { civilOf } from '../../core/sun/civil.ts';
 import { seasons } from '../../core/sun/seasons.ts';
 import { scheme } from '../state/document.ts';
 import { civil, minutesOf, moveDays, moveMinutes, timeOf } from '../state/moment.ts';
-import { isYearShown, sunYearResult, type YearSubject, yearJob, yearSubject } from '../state/studies.ts';
+import { subjectName } from '../state/names.ts';
+import { isYearShown, model, sunYearResult, yearJob, yearSubject } from '../state/studies.ts';
 import { theme } from '../state/theme.ts';
+import type { YearSubject } from '../state/year-subject.ts';
 import { cividisRgb } from '../../core/sheet/cividis.ts';
 import { dayAndMonth, monthNames, percent, signed } from '../ui/format.ts';
 import { Progress } from '../ui/progress.tsx';
@@ -33,7 +35,7 @@ export function YearStrip() {
   return (
     <div class="year">
       <div class="year-head">
-        <h3>{found === null ? words.year.label : words.year.title(nameOf(found.subject))}</h3>
+        <h3>{found === null ? words.year.label : titleOf(found.subject)}</h3>
         {job.kind === 'working' ? (
           <Progress text={words.year.working} done={job.done} total={job.total} />
         ) : (
@@ -50,8 +52,24 @@ export function YearStrip() {
   );
 }
 
-const nameOf = (subject: YearSubject): string =>
-  subject.kind === 'all' ? words.year.all : words.year[subject.kind](subject.id);
+/** What a share is a share of. */
+const SHARE_OF = {
+  window: 'glass',
+  room: 'glass',
+  all: 'glass',
+  neighbour: 'glass',
+  wall: 'wall',
+  roof: 'roof',
+  area: 'area',
+  point: 'point',
+} as const;
+
+function titleOf(subject: YearSubject): string {
+  const shapes = model.value?.value;
+  const of = words.year.of[SHARE_OF[subject.kind]];
+  const text = words.year.title(shapes === undefined ? subject.id : subjectName(shapes, subject), of);
+  return subject.stage === 'before' ? `${text}, ${words.year.asItIsNow}` : text;
+}
 
 function StripKey() {
   const stops = Array.from({ length: 11 }, (_, i) => `rgb(${cividisRgb(i / 10).join(' ')})`);

@@ -1,0 +1,23 @@
+import type { ExposureDates } from '../../core/study/exposure-dates.ts';
+import { dayAndMonth, fixed, signed } from '../ui/format.ts';
+import { words } from '../words/words.ts';
+import type { MapScale } from './map-scale.ts';
+
+/** A date with its year, such as `21 June 2025`. */
+export const wholeDate = (date: string): string => `${dayAndMonth(date)} ${date.slice(0, 4)}`;
+
+/** For when a map holds, in words. */
+export function periodText(dates: ExposureDates): string {
+  if ('year' in dates) return words.maps.inYear(`${dates.year}`);
+  if ('between' in dates) return words.maps.between(wholeDate(dates.between[0]), wholeDate(dates.between[1]));
+  if (!('dates' in dates)) return '';
+  const [first] = dates.dates;
+  if (first === undefined) return '';
+  return dates.dates.length === 1 ? words.maps.on(wholeDate(first)) : words.maps.meanDay(first.slice(0, 4));
+}
+
+/** A number of the map as it is shown, with one decimal more than the scale's own numbers. */
+export const mapNumber = (scale: MapScale, value: number): string => {
+  const decimals = Math.min(2, scale.decimals + 1);
+  return (scale.isSigned ? signed : fixed)(value, scale.unit === 'Wh/m²' ? scale.decimals : decimals);
+};
