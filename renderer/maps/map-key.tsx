@@ -26,7 +26,7 @@ import {
 import { mapNumber } from './map-words.ts';
 
 const WIDTH = 232;
-const INSET = 12;
+const INSET = 16;
 
 /** What the colours of the map mean, with numbers, and how the work on it stands. */
 export function MapKey() {

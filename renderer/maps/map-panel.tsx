@@ -85,7 +85,7 @@ function Asked() {
         value={when.value}
         options={[
           ['day', words.maps.day(wholeDate(date))],
-          ['turns', words.maps.turns(year)],
+          ['turns', words.maps.turns],
           ['span', words.maps.span],
           ['year', words.maps.year(year)],
         ]}

@@ -2,20 +2,10 @@ import { cividisRgb } from '../../core/sheet/cividis.ts';
 import { divergingRgb } from '../../core/sheet/diverging.ts';
 import type { Quantity, Side } from './map-picture.ts';
 
-/** Round ends of a scale, as multiples of a power of ten, and into how many steps each is cut. */
-const ENDS: readonly (readonly [number, number])[] = [
-  [1, 4],
-  [1.2, 4],
-  [1.5, 3],
-  [2, 4],
-  [2.5, 5],
-  [3, 3],
-  [4, 4],
-  [5, 5],
-  [6, 3],
-  [8, 4],
-  [10, 5],
-];
+/** Steps between the numbers of a scale, as multiples of a power of ten, the plainest first. */
+const STEPS = [1, 2, 5, 2.5, 3, 4] as const;
+const FEWEST_STEPS = 3;
+const MOST_STEPS = 6;
 
 export type MapUnit = 'h' | 'Wh/m²' | 'kWh/m²';
 
@@ -44,14 +34,26 @@ export function scaleFor(quantity: Quantity, side: Side, size: number, share: nu
   const isKilo = quantity === 'energy' && size * share >= KILO_FROM;
   const factor = share * (isKilo ? 1e-3 : 1);
   const shown = Math.max(size * factor, quantity === 'sun' ? 0.5 : 1e-3);
-  const power = 10 ** Math.floor(Math.log10(shown) + 1e-9);
-  const [end, steps] = ENDS.find(([e]) => e * power >= shown * (1 - 1e-9)) ?? [10, 5];
-  const most = end * power;
+  const { step, steps } = roundSteps(shown);
+  const most = steps * step;
   const isSigned = side === 'change';
-  const step = most / steps;
-  const ticks = Array.from({ length: (isSigned ? 2 : 1) * steps + 1 }, (_, i) => (isSigned ? -most : 0) + i * step);
-  const decimals = Math.max(0, Math.min(3, -Math.floor(Math.log10(step) + 1e-9) + (isWhole(step / power) ? 0 : 1)));
+  const ticks = Array.from({ length: (isSigned ? 2 : 1) * steps + 1 }, (_, i) => (isSigned ? i - steps : i) * step);
+  const decimals = [0, 1, 2, 3].find((d) => isWhole(step * 10 ** d)) ?? 4;
   return { isSigned, unit: quantity === 'sun' ? 'h' : isKilo ? 'kWh/m²' : 'Wh/m²', factor, most, ticks, decimals };
+}
+
+/** Round steps that reach a length with little to spare. */
+function roundSteps(length: number): { readonly step: number; readonly steps: number } {
+  const power = 10 ** Math.floor(Math.log10(length) + 1e-9);
+  let best = { step: length, steps: 1, over: Infinity };
+  for (const multiple of [...STEPS, ...STEPS.map((m) => m / 10)]) {
+    const step = multiple * power;
+    const steps = Math.ceil(length / step - 1e-9);
+    if (steps < FEWEST_STEPS || steps > MOST_STEPS) continue;
+    const over = steps * step - length;
+    if (over < best.over - 1e-9 * length) best = { step, steps, over };
+  }
+  return best;
 }
 
 const isWhole = (v: number): boolean => Math.abs(v - Math.round(v)) < 1e-9;

@@ -40,7 +40,10 @@ export function listenToPointer(surface: HTMLElement, { press, hover }: Listener
   const move = (event: PointerEvent): void => {
     const before = hands.get(event.pointerId);
     const now = place(event);
-    if (before === undefined) return hover(now.x, now.y);
+    if (before === undefined) {
+      hover(now.x, now.y);
+      return;
+    }
     const [dx, dy] = [now.x - before.x, now.y - before.y];
     travelled += Math.abs(dx) + Math.abs(dy);
     if (travelled <= SLACK_px) return;

@@ -46,16 +46,25 @@ function areaAt(shapes: Model, x: number, y: number): string | null {
 export function pressAt(scene: MassingScene, x: number, y: number, isMore: boolean): void {
   const shapes = model.peek()?.value;
   if (shapes === undefined) return;
-  const take = (kind: Picked, id: string): void => (isMore ? toggle : select)(kind, id);
+  const found = thingAt(scene, shapes, x, y);
+  if (found === null) selectNothing();
+  else (isMore ? toggle : select)(found.kind, found.id);
+}
+
+function thingAt(
+  scene: MassingScene,
+  shapes: Model,
+  x: number,
+  y: number,
+): { readonly kind: Picked; readonly id: string } | null {
   const point = pointAt(shapes, x, y);
-  if (point !== null) return take('receptor', point);
+  if (point !== null) return { kind: 'receptor', id: point };
   const owner = scene.pick(x, y)?.owner ?? null;
   if (owner === null) {
     const area = areaAt(shapes, x, y);
-    return area === null ? selectNothing() : take('receptor', area);
+    return area === null ? null : { kind: 'receptor', id: area };
   }
-  if (owner.kind !== 'block') return take(owner.kind, owner.id);
-  return isInside(owner.id) ? take('face', faceId(owner.face)) : take('block', owner.id);
+  return owner.kind === 'block' && isInside(owner.id) ? { kind: 'face', id: faceId(owner.face) } : owner;
 }
 
 /** Whether a block, or a face of it, is all that is selected. */

@@ -6,14 +6,14 @@ import { model } from '../state/studies.ts';
 import { AXONOMETRIC, type Camera, framed, type Margins, PLAN, type Size } from './camera.ts';
 
 /** Room kept for the instruments when all of the drawing is shown [px]. */
-const ROOM: Margins = { top: 56, right: 40, bottom: 52, left: 40 };
+const ROOM: Margins = { top: 48, right: 28, bottom: 44, left: 28 };
 
 export const camera = signal<Camera>({ centre: [0, 0, 0], ...AXONOMETRIC, scale: 8 });
 export const size = signal<Size>({ width: 1, height: 1 });
 export const isPlan = computed(() => camera.value.tilt_rad > (Math.PI / 2) * 0.999);
 
 /** How far round the site the first look reaches: so many times the site's own radius, and never less than this. */
-const FIRST_REACH = 2.5;
+const FIRST_REACH = 2;
 const LEAST_REACH_m = 45;
 
 const cornersOf = (solid: Solid): readonly Vec3[] =>
