@@ -1,5 +1,6 @@
 import { signal } from '@preact/signals';
 import { useLayoutEffect } from 'preact/hooks';
+import { LightPanel } from './light/light-panel.tsx';
 import { countOf, KINDS, ScheduleOf } from './schedule/schedules.tsx';
 import { SunPathPanel } from './sun-path/sun-path-panel.tsx';
 import { type Kind, selection } from './state/selection.ts';
@@ -8,12 +9,12 @@ import { words } from './words/words.ts';
 import { WeatherPanel } from './weather/weather-panel.tsx';
 import { YearStrip } from './year-strip/year-strip.tsx';
 
-type Page = Kind | 'year' | 'sun-path' | 'weather';
+type Page = Kind | 'year' | 'light' | 'sun-path' | 'weather';
 
 const page = signal<Page>('year');
 
 /** Panels that a selection does not turn away from. */
-const isAside = (shown: Page): boolean => shown === 'sun-path' || shown === 'weather';
+const isAside = (shown: Page): boolean => shown === 'light' || shown === 'sun-path' || shown === 'weather';
 
 /** From this width on, the schedules and the year strip have each a place of their own. */
 const WIDE = window.matchMedia('(min-width: 1680px)');
@@ -28,19 +29,22 @@ export function Drawer() {
   const picked = selection.value?.kind;
   useLayoutEffect(() => {
     if (picked === undefined || isAside(page.value)) return;
-    if (picked === 'receptor' || picked === 'face') return;
-    if (isWide.value || page.value !== 'year') page.value = picked;
+    // Receptors and faces have no schedule: their year is what there is to see, and beside it the light of receptors.
+    if (picked === 'receptor') page.value = isWide.value ? 'light' : 'year';
+    else if (picked === 'face') page.value = isWide.value ? page.value : 'year';
+    else if (isWide.value || page.value !== 'year') page.value = picked;
   }, [picked]);
   const wide = isWide.value;
   const shown: Page = wide && page.value === 'year' ? 'window' : page.value;
   const schedules = KINDS.map(
     (kind): Tab<Page> => ({ value: kind, text: words.schedule.tabs[kind], count: countOf(kind) }),
   );
+  const light: Tab<Page> = { value: 'light', text: words.light.tab };
   const sunPath: Tab<Page> = { value: 'sun-path', text: words.sunPath.tab };
   const weather: Tab<Page> = { value: 'weather', text: words.weather.tab };
   const tabs: Tab<Page>[] = wide
-    ? [...schedules, sunPath, weather]
-    : [{ value: 'year', text: words.year.tab }, sunPath, ...schedules, weather];
+    ? [...schedules, light, sunPath, weather]
+    : [{ value: 'year', text: words.year.tab }, light, sunPath, ...schedules, weather];
   return (
     <>
       <section class="schedules" aria-label={words.schedule.label}>
@@ -70,12 +74,14 @@ export function Drawer() {
 
 const labelOf = (shown: Page): string => {
   if (shown === 'year') return words.year.label;
+  if (shown === 'light') return words.light.label;
   if (shown === 'sun-path') return words.sunPath.label;
   return shown === 'weather' ? words.weather.label : words.schedule.tabs[shown];
 };
 
 function Shown({ page: shown }: { page: Page }) {
   if (shown === 'year') return <YearStrip />;
+  if (shown === 'light') return <LightPanel />;
   if (shown === 'sun-path') return <SunPathPanel />;
   return shown === 'weather' ? <WeatherPanel /> : <ScheduleOf kind={shown} />;
 }

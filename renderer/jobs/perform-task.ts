@@ -7,10 +7,12 @@ import { writeScheme } from '../../core/scheme/write.ts';
 import { guessTable } from '../../core/sky/weather/guess-table.ts';
 import { checkScheme } from '../../core/study/check.ts';
 import { exposureMap } from '../../core/study/exposure-map.ts';
+import { neighbourLight } from '../../core/study/exposure-neighbours.ts';
 import type { Pulse } from '../../core/study/job.ts';
 import { momentStudy } from '../../core/study/moment.ts';
 import { sunYear } from '../../core/study/sun-year.ts';
 import { weatherFacts } from '../../core/study/weather-facts.ts';
+import { askingWindow } from '../../core/study/window-light.ts';
 import { windowMask } from '../../core/study/window-mask.ts';
 import { sunEvents } from '../../core/sun/events.ts';
 import { sunPath } from '../../core/sun/sun-path.ts';
@@ -79,6 +81,12 @@ const performers: { readonly [T in Task]: Performer<T> } = {
   map: (ask, held, pulse) => {
     const { scheme, model } = held();
     return exposureMap(scheme, model, ask, pulse);
+  },
+  light: ({ window }, held, pulse) => {
+    const { scheme, model } = held();
+    const asked = window === null ? model : askingWindow(model, window);
+    if (asked === null) throw new Error(`the scheme has no window ${window}`);
+    return neighbourLight(scheme, asked, {}, pulse);
   },
   sunPath: async ({ observer, zone, year, window }, held) => ({
     path: sunPath(observer, zone, year),

@@ -9,6 +9,7 @@ import type { CheckResult } from '../../core/study/check-result.ts';
 import type { MomentResult } from '../../core/study/moment.ts';
 import type { SunYear } from '../../core/study/sun-year.ts';
 import type { ExposureMap, ExposureMapAsk } from '../../core/study/exposure-map.ts';
+import type { NeighbourLight } from '../../core/study/exposure-neighbours.ts';
 import type { YearSubject } from '../../core/study/year-subject.ts';
 import type { WeatherFacts } from '../../core/study/weather-facts.ts';
 import type { Observer } from '../../core/sun/position.ts';
@@ -40,6 +41,8 @@ export type Tasks = {
   year: { ask: { subject: YearSubject; stage: Stage; year: number }; answer: SunYear };
   /** Exposure over facades, roofs and ground. */
   map: { ask: ExposureMapAsk; answer: Checked<ExposureMap> };
+  /** What receptors keep of their daylight and sun, or what a window of the proposal has of it. */
+  light: { ask: { window: string | null }; answer: Checked<NeighbourLight> };
   /** The lines of the sun path. `window`: what hides the sky from it is wanted too, and the scheme is needed. */
   sunPath: {
     ask: { observer: Observer; zone: string; year: number; window: string | null };

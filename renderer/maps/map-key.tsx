@@ -5,6 +5,7 @@ import { scheme } from '../state/document.ts';
 import { faceOf } from '../state/faces.ts';
 import { faceName } from '../state/names.ts';
 import { leadOf } from '../state/selection.ts';
+import { theme } from '../state/theme.ts';
 import { Button } from '../ui/button.tsx';
 import { fixed, signed } from '../ui/format.ts';
 import { Progress } from '../ui/progress.tsx';
@@ -50,7 +51,9 @@ const STOPS = 24;
 
 function Ramp({ scale }: { scale: MapScale }) {
   const { isSigned, most, ticks, decimals, unit } = scale;
-  const colour = (t: number): string => `rgb(${(isSigned ? divergingRgb(2 * t - 1) : cividisRgb(t)).join(' ')})`;
+  const isOnDark = theme.value === 'dark';
+  const colour = (t: number): string =>
+    `rgb(${(isSigned ? divergingRgb(2 * t - 1, isOnDark) : cividisRgb(t)).join(' ')})`;
   const stops = Array.from({ length: STOPS + 1 }, (_, i) => colour(i / STOPS));
   const x = (v: number): number => INSET + (isSigned ? (v + most) / (2 * most) : v / most) * (WIDTH - 2 * INSET);
   const write = (v: number): string => (isSigned ? signed(v, decimals) : fixed(v, decimals));

@@ -75,11 +75,11 @@ export function shadeOf(scale: MapScale, value: number | null): number {
 type Rgb8 = readonly [number, number, number];
 
 /** The colour table: red, green, blue and cover of each entry, 0..255. @param none the grey that says: none of it */
-export function colourTable(isSigned: boolean, none: Rgb8): Uint8Array {
+export function colourTable(isSigned: boolean, none: Rgb8, isOnDark: boolean): Uint8Array {
   const table = new Uint8Array(256 * 4);
   for (let i = NONE; i <= LAST; i++) {
     const t = (i - FIRST) / (LAST - FIRST);
-    const rgb = i === NONE ? none : isSigned ? divergingRgb(2 * t - 1) : cividisRgb(t);
+    const rgb = i === NONE ? none : isSigned ? divergingRgb(2 * t - 1, isOnDark) : cividisRgb(t);
     table.set([...rgb, 255], i * 4);
   }
   return table;

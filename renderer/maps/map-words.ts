@@ -13,7 +13,7 @@ export function periodText(dates: ExposureDates): string {
   if (!('dates' in dates)) return '';
   const [first] = dates.dates;
   if (first === undefined) return '';
-  return dates.dates.length === 1 ? words.maps.on(wholeDate(first)) : words.maps.meanDay(first.slice(0, 4));
+  return dates.dates.length === 1 ? wholeDate(first) : words.maps.meanDay(first.slice(0, 4));
 }
 
 /** A number of the map as it is shown, with one decimal more than the scale's own numbers. */

@@ -22,7 +22,7 @@ export function driveMap(scene: MassingScene): () => void {
     }),
     effect(() => scene.setMap(laidMap.value?.atlas ? laidMap.value : null)),
     effect(() => {
-      theme.value;
+      const isOnDark = theme.value === 'dark';
       arrivals.value;
       const [laid, shown, scale, of, shownSide] = [
         laidMap.value,
@@ -35,7 +35,7 @@ export function driveMap(scene: MassingScene): () => void {
       const [r, g, b] = readPalette()['up-grey'].map((v) => Math.round(v * 255)) as [number, number, number];
       const shade = (surface: number, row: number): number =>
         shadeOf(scale, valueAt(shown.picture, of, shownSide, surface, row));
-      const pixels = paint(laid.atlas, shade, colourTable(scale.isSigned, [r, g, b]));
+      const pixels = paint(laid.atlas, shade, colourTable(scale.isSigned, [r, g, b], isOnDark));
       scene.setPicture(pixels, laid.atlas.width, laid.atlas.height);
     }),
   ];

@@ -1,7 +1,7 @@
 import type { Cells } from '../maps/map-cells.ts';
 
 /** Where the cells of one surface lie in the picture that is laid over all of them [pixels]; a border of one runs round each. */
-type Slot = { readonly x: number; readonly y: number; readonly cells: Cells; readonly shown: Int32Array };
+type Slot = { readonly x: number; readonly y: number; readonly cells: Cells };
 
 /** All surfaces of a map in one picture, a pixel a cell. */
 export type Atlas = { readonly width: number; readonly height: number; readonly slots: readonly Slot[] };
@@ -25,7 +25,7 @@ export function layOut(surfaces: readonly Cells[]): Atlas | null {
   for (const i of order) {
     const cells = surfaces[i] as Cells;
     if (x + cells.across + 2 > width) [x, y, high] = [0, y + high, 0];
-    slots[i] = { x: x + 1, y: y + 1, cells, shown: spreadOut(cells) };
+    slots[i] = { x: x + 1, y: y + 1, cells };
     x += cells.across + 2;
     high = Math.max(high, cells.up + 2);
   }
@@ -33,32 +33,25 @@ export function layOut(surfaces: readonly Cells[]): Atlas | null {
   return width > MOST_px || height > MOST_px ? null : { width, height: Math.max(1, height), slots };
 }
 
+/** Rings of cells that take their neighbours' colour: what a slanting outline cuts is never farther from a middle inside it. */
+const RINGS = 2;
+
 /**
- * The row of numbers that each cell is coloured by. An outline cuts cells whose middle lies outside it; the part of them that
- * is inside takes the colour of the nearest cell that has a receptor, found ring by ring.
+ * The entries of the colour table for the cells of a surface. A cell whose middle lies outside the outline, or inside a block
+ * that stands on the ground, has no number; the part of it that can be seen takes the colour of a cell beside it.
  */
-function spreadOut({ across, up, rowOf }: Cells): Int32Array {
-  let shown = rowOf.slice();
-  for (let ring = 0; ring < 2 && shown.includes(-1); ring++) {
-    const next = shown.slice();
+function shadesOf({ across, up, rowOf }: Cells, shade: (row: number) => number): Uint8Array {
+  let shades = Uint8Array.from(rowOf, (row) => (row < 0 ? 0 : shade(row)));
+  const at = (i: number, j: number): number => (i < 0 || j < 0 || i >= across || j >= up ? 0 : shades[j * across + i]!);
+  for (let ring = 0; ring < RINGS; ring++) {
+    const next = shades.slice();
     for (let j = 0; j < up; j++)
-      for (let i = 0; i < across; i++) {
-        if (shown[j * across + i] !== -1) continue;
-        for (const [di, dj] of [
-          [-1, 0],
-          [1, 0],
-          [0, -1],
-          [0, 1],
-        ] as const) {
-          const [u, v] = [i + di, j + dj];
-          if (u < 0 || v < 0 || u >= across || v >= up || shown[v * across + u] === -1) continue;
-          next[j * across + i] = shown[v * across + u]!;
-          break;
-        }
-      }
-    shown = next;
+      for (let i = 0; i < across; i++)
+        if (shades[j * across + i] === 0)
+          next[j * across + i] = at(i - 1, j) || at(i + 1, j) || at(i, j - 1) || at(i, j + 1);
+    shades = next;
   }
-  return shown;
+  return shades;
 }
 
 /**
@@ -70,20 +63,20 @@ export function paint(
   { width, height, slots }: Atlas,
   shade: (surface: number, row: number) => number,
   table: Uint8Array,
-  into = new Uint8Array(width * height * 4),
 ): Uint8Array<ArrayBuffer> {
-  slots.forEach(({ x, y, cells, shown }, s) => {
-    for (let j = -1; j <= cells.up; j++)
-      for (let i = -1; i <= cells.across; i++) {
-        const u = Math.min(cells.across - 1, Math.max(0, i));
-        const v = Math.min(cells.up - 1, Math.max(0, j));
-        const row = shown[v * cells.across + u]!;
-        const from = 4 * (row < 0 ? 0 : shade(s, row));
+  const pixels = new Uint8Array(width * height * 4);
+  slots.forEach(({ x, y, cells }, s) => {
+    const { across, up } = cells;
+    const shades = shadesOf(cells, (row) => shade(s, row));
+    for (let j = -1; j <= up; j++)
+      for (let i = -1; i <= across; i++) {
+        const cell = Math.min(up - 1, Math.max(0, j)) * across + Math.min(across - 1, Math.max(0, i));
+        const from = 4 * shades[cell]!;
         const to = 4 * ((y + j) * width + x + i);
-        for (let k = 0; k < 4; k++) into[to + k] = table[from + k]!;
+        for (let k = 0; k < 4; k++) pixels[to + k] = table[from + k]!;
       }
   });
-  return into;
+  return pixels;
 }
 
 /** Where a place of a surface, across and up 0..1, lies in the picture, 0..1. */

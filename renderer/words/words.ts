@@ -1,5 +1,6 @@
 import { findingsWords } from './findings.ts';
 import { frameWords } from './frame.ts';
+import { lightWords } from './light.ts';
 import { mapsWords } from './maps.ts';
 import { massingWords } from './massing.ts';
 import { momentWords } from './moment.ts';
@@ -16,6 +17,7 @@ import { yearStripWords } from './year-strip.ts';
 export const words = {
   ...frameWords,
   ...startWords,
+  ...lightWords,
   ...mapsWords,
   ...massingWords,
   ...momentWords,

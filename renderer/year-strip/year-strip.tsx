@@ -202,11 +202,19 @@ function pressKey(event: KeyboardEvent): boolean {
   return true;
 }
 
+/** Hours nearer than this run into one another [px]. */
+const HOUR_APART_px = 25;
+
+/** Between the hours that are named [min]. */
+const hourStep = (pixelsAnHour: number): number =>
+  60 * ([1, 2, 3, 4, 6].find((h) => h * pixelsAnHour >= HOUR_APART_px) ?? 12);
+
 type RuleProps = { from_min: number; to_min: number; x1: number; x2: number; y: (min: number) => number };
 
 function HourRules({ from_min, to_min, x1, x2, y }: RuleProps) {
+  const every = hourStep(Math.abs(y(60) - y(0)));
   const hours: number[] = [];
-  for (let h = Math.ceil(from_min / 180) * 180; h <= to_min; h += 180) hours.push(h);
+  for (let h = Math.ceil(from_min / every) * every; h <= to_min; h += every) hours.push(h);
   return (
     <>
       {hours.map((h) => (

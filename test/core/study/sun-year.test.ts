@@ -97,6 +97,10 @@ describe('the year of direct sun on a window', () => {
 
   it('stops when it is told to', async () => {
     const s = scheme({});
-    expect(await sunYear(s, buildModel(s), { kind: 'windows', ids: ['W0'] }, 'after', 2025, 10, async (done) => (done > 100 ? 'stop' : 'go'))).toBeNull();
+    expect(
+      await sunYear(s, buildModel(s), { kind: 'windows', ids: ['W0'] }, 'after', 2025, 10, async (done) =>
+        done > 100 ? 'stop' : 'go',
+      ),
+    ).toBeNull();
   });
 });
