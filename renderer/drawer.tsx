@@ -3,18 +3,26 @@ import { useLayoutEffect } from 'preact/hooks';
 import { LightPanel } from './light/light-panel.tsx';
 import { countOf, KINDS, ScheduleOf } from './schedule/schedules.tsx';
 import { SunPathPanel } from './sun-path/sun-path-panel.tsx';
+import { SizingPanel } from './sizing/sizing-panel.tsx';
 import { type Kind, selection } from './state/selection.ts';
 import { type Tab, Tabs } from './ui/tabs.tsx';
 import { words } from './words/words.ts';
 import { WeatherPanel } from './weather/weather-panel.tsx';
 import { YearStrip } from './year-strip/year-strip.tsx';
 
-type Page = Kind | 'year' | 'light' | 'sun-path' | 'weather';
+/** Panels beside the schedules, which a selection does not turn away from, in the order of their tabs. */
+const ASIDES = [
+  { page: 'light', tab: words.light.tab, label: words.light.label, Panel: LightPanel },
+  { page: 'sizing', tab: words.sizing.tab, label: words.sizing.label, Panel: SizingPanel },
+  { page: 'sun-path', tab: words.sunPath.tab, label: words.sunPath.label, Panel: SunPathPanel },
+  { page: 'weather', tab: words.weather.tab, label: words.weather.label, Panel: WeatherPanel },
+] as const;
+
+type Page = Kind | 'year' | (typeof ASIDES)[number]['page'];
 
 const page = signal<Page>('year');
 
-/** Panels that a selection does not turn away from. */
-const isAside = (shown: Page): boolean => shown === 'light' || shown === 'sun-path' || shown === 'weather';
+const asideOf = (shown: Page) => ASIDES.find((aside) => aside.page === shown);
 
 /** From this width on, the schedules and the year strip have each a place of their own. */
 const WIDE = window.matchMedia('(min-width: 1680px)');
@@ -28,7 +36,7 @@ export function Drawer() {
   // On a wide window a schedule is always there; picking something in the massing turns to its schedule.
   const picked = selection.value?.kind;
   useLayoutEffect(() => {
-    if (picked === undefined || isAside(page.value)) return;
+    if (picked === undefined || asideOf(page.value) !== undefined) return;
     // Receptors and faces have no schedule: their year is what there is to see, and beside it the light of receptors.
     if (picked === 'receptor') page.value = isWide.value ? 'light' : 'year';
     else if (picked === 'face') page.value = isWide.value ? page.value : 'year';
@@ -39,12 +47,10 @@ export function Drawer() {
   const schedules = KINDS.map(
     (kind): Tab<Page> => ({ value: kind, text: words.schedule.tabs[kind], count: countOf(kind) }),
   );
-  const light: Tab<Page> = { value: 'light', text: words.light.tab };
-  const sunPath: Tab<Page> = { value: 'sun-path', text: words.sunPath.tab };
-  const weather: Tab<Page> = { value: 'weather', text: words.weather.tab };
+  const asides = ASIDES.map((aside): Tab<Page> => ({ value: aside.page, text: aside.tab }));
   const tabs: Tab<Page>[] = wide
-    ? [...schedules, light, sunPath, weather]
-    : [{ value: 'year', text: words.year.tab }, light, sunPath, ...schedules, weather];
+    ? [...schedules, ...asides]
+    : [{ value: 'year', text: words.year.tab }, ...asides, ...schedules];
   return (
     <>
       <section class="schedules" aria-label={words.schedule.label}>
@@ -72,16 +78,13 @@ export function Drawer() {
   );
 }
 
-const labelOf = (shown: Page): string => {
+function labelOf(shown: Page): string {
   if (shown === 'year') return words.year.label;
-  if (shown === 'light') return words.light.label;
-  if (shown === 'sun-path') return words.sunPath.label;
-  return shown === 'weather' ? words.weather.label : words.schedule.tabs[shown];
-};
+  return asideOf(shown)?.label ?? words.schedule.tabs[shown as Kind];
+}
 
 function Shown({ page: shown }: { page: Page }) {
   if (shown === 'year') return <YearStrip />;
-  if (shown === 'light') return <LightPanel />;
-  if (shown === 'sun-path') return <SunPathPanel />;
-  return shown === 'weather' ? <WeatherPanel /> : <ScheduleOf kind={shown} />;
+  const Panel = asideOf(shown)?.Panel;
+  return Panel === undefined ? <ScheduleOf kind={shown as Kind} /> : <Panel />;
 }

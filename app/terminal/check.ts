@@ -1,7 +1,7 @@
-import type { Finding } from '../../core/limits/finding.ts';
 import type { LimitSet } from '../../core/limits/limit-set.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import type { CheckResult } from '../../core/study/check-result.ts';
+import type { Pulse } from '../../core/study/job.ts';
 import type { Declare } from './declare.ts';
 import { progress } from './progress.ts';
 import { accepted, readLimits, readScheme } from './read-input.ts';
@@ -50,18 +50,16 @@ async function workingOfRoom(result: CheckResult, scheme: Scheme, room: string):
 }
 
 /** The report with, for each room that is over, the ways to bring its worst finding within. */
-async function pdfReport(result: CheckResult, scheme: Scheme, limitSet: LimitSet | null): Promise<Uint8Array> {
-  const [{ findingsReport }, { waysToPass }, { createCheckMemo }, { printDocument }] = await Promise.all([
+async function pdfReport(result: CheckResult, scheme: Scheme, pulse: Pulse): Promise<Uint8Array> {
+  const [{ findingsReport }, { waysOfOver }, { createCheckMemo }, { printDocument }] = await Promise.all([
     import('../../core/sheet/findings-report.ts'),
-    import('../../core/sizing/ways-to-pass.ts'),
+    import('../../core/study/ways-of-over.ts'),
     import('../../core/gain/gain-memo.ts'),
     import('../files/print-document.ts'),
   ]);
   const memo = createCheckMemo(Math.max(600, scheme.windows.length));
-  const seen = new Set<string>();
-  const worst = result.findings.filter((f: Finding) => f.verdict === 'over' && !seen.has(f.room) && seen.add(f.room));
-  const ways = limitSet === null ? [] : worst.map((f) => waysToPass(scheme, limitSet, f.room, f, memo));
-  return printDocument(findingsReport(result, scheme, { drawn: today(), ways }));
+  const ways = await waysOfOver(result, scheme, memo, pulse);
+  return printDocument(findingsReport(result, scheme, { drawn: today(), ways: ways ?? [] }));
 }
 
 /** `shadewright check`: every room against its limits. */
@@ -87,7 +85,7 @@ export const declareCheck: Declare = (program, screen, end) => {
       done();
       if (result === null) throw new Error('the check was stopped');
       if (options.pdf !== undefined) {
-        await writeOutput(options.pdf, await pdfReport(result, scheme, limitSet));
+        await writeOutput(options.pdf, await pdfReport(result, scheme, async () => 'go'));
         screen.note(`report written to ${options.pdf}\n`);
       }
       screen.out(await printed(result, scheme, limitSet, options));

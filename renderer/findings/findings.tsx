@@ -1,9 +1,10 @@
 import { computed, signal } from '@preact/signals';
+import { useLayoutEffect, useRef } from 'preact/hooks';
 import type { CheckResult } from '../../core/study/check-result.ts';
 import type { Finding } from '../../core/limits/finding.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import { leadOf, select } from '../state/selection.ts';
-import { check, checkJob, isCheckStale, runCheck, stopCheck } from '../state/studies.ts';
+import { check, checkJob, isCheckSlow, isCheckStale, runCheck, stopCheck } from '../state/studies.ts';
 import { Button } from '../ui/button.tsx';
 import { Choice } from '../ui/choice.tsx';
 import { Disc } from '../ui/disc.tsx';
@@ -71,6 +72,7 @@ function Counts({ result }: { result: CheckResult }) {
 function JobLine() {
   const job = checkJob.value;
   if (job.kind === 'working') {
+    if (!isCheckSlow.value) return null;
     return <Progress text={words.findings.working} done={job.done} total={job.total} onStop={stopCheck} />;
   }
   if (job.kind === 'failed') {
@@ -83,10 +85,10 @@ function JobLine() {
       </div>
     );
   }
-  if (job.kind === 'stopped' || isCheckStale.value) {
+  if (job.kind === 'stopped') {
     return (
       <div class="notice row" role="status">
-        <span>{job.kind === 'stopped' ? words.findings.stopped : words.findings.stale}</span>
+        <span>{isCheckStale.value ? words.findings.stale : words.findings.stopped}</span>
         <Button onPress={() => void runCheck()}>{words.findings.again}</Button>
       </div>
     );
@@ -138,13 +140,18 @@ function RoomItem({ of, result, scheme }: { of: RoomFindings; result: CheckResul
   const isOpen = open.value === of.room;
   const { worst } = of;
   const isChosen = leadOf('room') === of.room;
+  const head = useRef<HTMLButtonElement>(null);
+  useLayoutEffect(() => {
+    // A change moves the room down the list; its reader goes with it.
+    if (isOpen) head.current?.scrollIntoView({ block: 'nearest' });
+  }, [worst.value]);
   const press = (): void => {
     open.value = isOpen ? null : of.room;
     if (!isOpen) select('room', of.room);
   };
   return (
     <li class={['room', worst.verdict ?? 'none', isOpen ? 'open' : '', isChosen ? 'chosen' : ''].join(' ')}>
-      <button type="button" class="room-head" aria-expanded={isOpen} onClick={press}>
+      <button ref={head} type="button" class="room-head" aria-expanded={isOpen} onClick={press}>
         <Disc verdict={worst.verdict} />
         <span class="room-name">
           <span class="room-id">{of.room}</span> {of.name}

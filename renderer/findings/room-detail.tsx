@@ -13,6 +13,8 @@ import type { RoomFindings } from './by-room.ts';
 import { DayCurve } from './day-curve.tsx';
 import { Disc } from '../ui/disc.tsx';
 import { roomCurve } from './room-curve.ts';
+import { SensitivityOf } from './sensitivity.tsx';
+import { WaysOf } from './ways.tsx';
 import { stepValue, workingText } from './working-text.ts';
 
 type Props = { readonly of: RoomFindings; readonly result: CheckResult; readonly scheme: Scheme };
@@ -32,6 +34,8 @@ export function RoomDetail({ of, result, scheme }: Props) {
       ))}
       <CurveOf finding={finding} result={result} />
       <ShowMoment finding={finding} zone={result.zone} />
+      <WaysOf key={`ways ${finding.limit}`} finding={finding} result={result} scheme={scheme} />
+      <SensitivityOf key={`moves ${finding.limit}`} finding={finding} result={result} scheme={scheme} />
       <WorkingOf key={finding.limit} finding={finding} result={result} scheme={scheme} />
     </div>
   );

@@ -15,6 +15,10 @@ export const hands = {
   /** The moment on the massing. */
   moment: new WorkerHand(make),
   check: new WorkerHand(make),
+  /** What is worked out beside the check for the room that is open. */
+  ways: new WorkerHand(make),
+  sensitivity: new WorkerHand(make),
+  sizing: new WorkerHand(make),
   year: new WorkerHand(make),
   map: new WorkerHand(make),
   /** The light of neighbours and amenity areas. */

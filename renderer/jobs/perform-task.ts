@@ -1,11 +1,8 @@
-import { buildModel } from '../../core/form/build-model.ts';
-import type { Model } from '../../core/form/model.ts';
 import { bytesHash } from '../../core/scheme/hash.ts';
 import { loadScheme } from '../../core/scheme/load.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import { writeScheme } from '../../core/scheme/write.ts';
 import { guessTable } from '../../core/sky/weather/guess-table.ts';
-import { checkScheme } from '../../core/study/check.ts';
 import { exposureMap } from '../../core/study/exposure-map.ts';
 import { neighbourLight } from '../../core/study/exposure-neighbours.ts';
 import type { Pulse } from '../../core/study/job.ts';
@@ -19,27 +16,12 @@ import { sunPath } from '../../core/sun/sun-path.ts';
 import { whenSunAt } from '../../core/sun/when-sun-at.ts';
 import { isZone } from '../../core/sun/civil.ts';
 import { zoneDisagrees, zoneOfPlace } from '../../core/sun/zone-of-place.ts';
-import { findingsReport } from '../../core/sheet/findings-report.ts';
-import { limitSetOf } from './limit-set.ts';
-import type { AnswerOf, AskOf, DayEnds, Task, Work } from './tasks.ts';
+import { Held, type Performer, type Performers } from './performer.ts';
+import { roomTasks } from './room-tasks.ts';
+import type { DayEnds, Task, Work } from './tasks.ts';
 
 /** Step of the year strip's clock [min]. */
 const YEAR_STEP_min = 10;
-
-/** The scheme that a worker was last sent, and its shapes once somebody needs them. */
-class Held {
-  readonly scheme: Scheme;
-  #model: Model | null = null;
-
-  constructor(scheme: Scheme) {
-    this.scheme = scheme;
-  }
-
-  get model(): Model {
-    this.#model ??= buildModel(this.scheme);
-    return this.#model;
-  }
-}
 
 function dayEnds(scheme: Scheme, date: string): DayEnds {
   const { site } = scheme;
@@ -57,9 +39,8 @@ function textOf(bytes: Uint8Array): string {
   }
 }
 
-type Performer<T extends Task> = (ask: AskOf<T>, held: () => Held, pulse: Pulse) => Promise<AnswerOf<T> | null>;
-
-const performers: { readonly [T in Task]: Performer<T> } = {
+const performers = (): Performers => ({
+  ...roomTasks(),
   read: async ({ text }) => loadScheme(text),
   write: async ({ scheme }) => writeScheme(scheme),
   moment: async ({ instant_ms, date, wantModel }, held) => {
@@ -69,10 +50,6 @@ const performers: { readonly [T in Task]: Performer<T> } = {
       moment: momentStudy(scheme, model, instant_ms),
       day: dayEnds(scheme, date),
     };
-  },
-  check: ({ notes }, held, pulse) => {
-    const { scheme } = held();
-    return checkScheme(scheme, limitSetOf(scheme), notes, pulse);
   },
   year: ({ subject, stage, year }, held, pulse) => {
     const { scheme, model } = held();
@@ -103,14 +80,14 @@ const performers: { readonly [T in Task]: Performer<T> } = {
     const facts = weatherFacts(text, mapping, observer, zone);
     return { hash: bytesHash(bytes), facts, guess: facts.ok ? null : guessTable(text) };
   },
-  report: async ({ result }, held) => ({ ok: true, value: findingsReport(result, held().scheme), notes: [] }),
   shadowSheet: async () => {
     throw new Error('not here yet');
   },
-};
+});
 
 /** A worker's memory of the scheme, and its one way in. */
 export function taskPerformer(): (work: Work, pulse: Pulse) => Promise<unknown> {
+  const all = performers();
   let held: Held | null = null;
   const given = (): Held => {
     if (held === null) throw new Error('this task needs a scheme, and none was sent');
@@ -118,7 +95,7 @@ export function taskPerformer(): (work: Work, pulse: Pulse) => Promise<unknown> 
   };
   return (work, pulse) => {
     if (work.scheme !== null) held = new Held(work.scheme);
-    const perform = performers[work.task] as Performer<Task>;
+    const perform = all[work.task] as Performer<Task>;
     return perform(work.ask, given, pulse) as Promise<unknown>;
   };
 }

@@ -2,6 +2,12 @@ import type { Model, Stage } from '../../core/form/model.ts';
 import type { Checked, Fault } from '../../core/scheme/fault.ts';
 import type { ShadingMask } from '../../core/shade/sky-view-mask.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
+import type { LimitSet } from '../../core/limits/limit-set.ts';
+import type { SkyModel } from '../../core/sky/transpose.ts';
+import type { Finding } from '../../core/limits/finding.ts';
+import type { Bar } from '../../core/sizing/sensitivity.ts';
+import type { Sweep, Swept } from '../../core/sizing/sweep.ts';
+import type { Ways } from '../../core/sizing/ways.ts';
 import type { Document } from '../../core/sheet/drawing.ts';
 import type { TableGuess } from '../../core/sky/weather/guess-table.ts';
 import type { WeatherMapping } from '../../core/sky/weather/mapping.ts';
@@ -63,6 +69,14 @@ export type Tasks = {
     ask: { bytes: Uint8Array; mapping: WeatherMapping | null; observer: Observer; zone: string };
     answer: { hash: string; facts: Checked<WeatherFacts>; guess: TableGuess | null };
   };
+  /** How a room that is over comes within: the smallest change of each lever. */
+  ways: { ask: { limitSet: LimitSet; skyModel: SkyModel; finding: Finding }; answer: Ways };
+  /** Which input moves a finding most. */
+  sensitivity: { ask: { limitSet: LimitSet; skyModel: SkyModel; finding: Finding }; answer: readonly Bar[] };
+  /** What a window takes in over the depths of a device, or the g of its glass. `target_Wh`: summer gain to come down to. */
+  sweep: { ask: { window: string; swept: Swept; target_Wh: number | null }; answer: Sweep };
+  /** The findings as a file: a table, or the report that can be recomputed. */
+  findingsFile: { ask: { result: CheckResult; form: 'csv' | 'json' }; answer: string };
   /** The findings on paper. `drawn`: the date of the drawing, YYYY-MM-DD. */
   report: { ask: { result: CheckResult; drawn: string }; answer: Checked<Document> };
   /** The shadows of a date on paper, hour by hour while the sun is up. */

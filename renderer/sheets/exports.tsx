@@ -28,6 +28,18 @@ export function Exports() {
           tip: canReport ? undefined : words.sheets.needsCheck,
           onPress: () => void printReport(),
         },
+        {
+          text: words.sheets.findingsCsv,
+          off: !canReport,
+          tip: canReport ? undefined : words.sheets.needsCheck,
+          onPress: () => void writeFindings('csv'),
+        },
+        {
+          text: words.sheets.findingsJson,
+          off: !canReport,
+          tip: canReport ? undefined : words.sheets.needsCheck,
+          onPress: () => void writeFindings('json'),
+        },
         { text: words.sheets.shadow, onPress: () => void printShadowSheet() },
       ]}
     />
@@ -47,6 +59,20 @@ async function printReport(): Promise<void> {
   if (found === null) return;
   const ask = { result: found.value, drawn: today() };
   await print(words.sheets.report, `${stem()} findings.pdf`, hands.clerk.run('report', ask, found.scheme));
+}
+
+/** The findings as a table, or as the report that `shadewright verify` works out again. */
+async function writeFindings(form: 'csv' | 'json'): Promise<void> {
+  const found = check.peek();
+  if (found === null) return;
+  const what = form === 'csv' ? words.sheets.findingsCsv : words.sheets.findingsJson;
+  const outcome = await hands.clerk.run('findingsFile', { result: found.value, form }, found.scheme);
+  if (outcome.kind === 'failed') return tell('failure', words.sheets.failed(what, outcome.message));
+  if (outcome.kind === 'stopped') return;
+  const bytes = new TextEncoder().encode(outcome.result);
+  const written = await host['export:write']({ name: `${stem()} findings.${form}`, bytes });
+  if (!written.ok) return tell('failure', words.sheets.failed(what, written.message));
+  if (written.value !== null) tell('news', words.sheets.written(written.value.name));
 }
 
 async function printShadowSheet(): Promise<void> {

@@ -6,7 +6,7 @@ import type { MomentResult } from '../../core/study/moment.ts';
 import type { SunYear } from '../../core/study/sun-year.ts';
 import { hands } from '../jobs/hands.ts';
 import type { DayEnds } from '../jobs/tasks.ts';
-import { notes, scheme } from './document.ts';
+import { committed, notes, scheme } from './document.ts';
 import { civil, instant } from './moment.ts';
 import { type YearSubject, yearSubjectOf } from './year-subject.ts';
 
@@ -49,19 +49,36 @@ export const check = signal<From<CheckResult> | null>(null);
 export const checkJob = signal<JobState>(IDLE);
 export const isCheckStale = computed(() => check.value !== null && check.value.scheme !== scheme.value);
 
+/** How long the scheme must rest before it is checked by itself [ms]: not after every key. */
+const REST_ms = 250;
+/** Shorter work is not worth a line on the screen [ms]. */
+const PATIENCE_ms = 400;
+
+/** The check has run long enough for its progress to be shown. */
+export const isCheckSlow = signal(false);
+let checked: Scheme | null = null;
+
 export async function runCheck(): Promise<void> {
-  const of = scheme.peek();
+  const of = committed.peek();
   if (of === null) return;
+  checked = of;
   checkJob.value = working();
+  isCheckSlow.value = false;
+  const patience = setTimeout(() => {
+    isCheckSlow.value = checkJob.peek().kind === 'working';
+  }, PATIENCE_ms);
   const ask = { notes: notes.peek() };
   const outcome = await hands.check.run('check', ask, of, (done, total) => {
     checkJob.value = working(done, total);
   });
+  clearTimeout(patience);
   if (outcome.kind === 'done') {
     if (outcome.superseded) return;
+    isCheckSlow.value = false;
     check.value = { scheme: of, value: outcome.result };
     checkJob.value = IDLE;
-  } else if (scheme.peek() === of) {
+  } else if (committed.peek() === of && checked === of) {
+    isCheckSlow.value = false;
     checkJob.value = outcome;
   }
 }
@@ -103,6 +120,7 @@ function clear(): void {
   check.value = null;
   sunYearResult.value = null;
   momentJob.value = IDLE;
+  checked = null;
   checkJob.value = IDLE;
   yearJob.value = IDLE;
 }
@@ -115,6 +133,13 @@ export function followScheme(): void {
     if (of === null || at === null) return untracked(clear);
     const { date } = civil.value;
     untracked(() => void studyMoment(of, at.instant_ms, date));
+  });
+
+  effect(() => {
+    const of = committed.value;
+    if (of === null || of === checked || of === check.peek()?.scheme) return;
+    const rest = setTimeout(() => void runCheck(), REST_ms);
+    return () => clearTimeout(rest);
   });
 
   let asked: { of: Scheme; subject: string } | null = null;

@@ -23,6 +23,9 @@ export const signed = (value: number, decimals: number): string => {
 /** A share 0..1 as a percentage. */
 export const percent = (share: number): string => `${fixed(share * 100, 0)} %`;
 
+/** A change as a percentage with its sign. */
+export const signedPercent = (share: number): string => `${signed(share * 100, 0)} %`;
+
 export const metres = (m: number): string => fixed(m, 2);
 
 export const degrees = (deg: number, decimals = 0): string => `${fixed(deg, decimals)}°`;

@@ -26,6 +26,7 @@ export const frameWords = {
     saved: (name: string) => `Saved: ${name}`,
     notSaved: (why: string) => `Not saved: ${why}`,
     notOpened: (why: string) => `Not opened: ${why}`,
+    notEdited: (why: string) => `Not changed: ${why}`,
     notKept: (why: string) => `Unsaved work is not being kept for recovery: ${why}`,
     stopped: 'Stopped',
     dismiss: 'Dismiss',

@@ -2,6 +2,8 @@
 export const sheetsWords = {
   sheets: {
     report: 'Findings report (PDF)',
+    findingsCsv: 'Findings table (CSV)',
+    findingsJson: 'Findings to recompute (JSON)',
     shadow: 'Shadow sheet (PDF)',
     needsCheck: 'Check the rooms first',
     setting: (what: string) => `Setting ${what}…`,

@@ -8,6 +8,7 @@ import { namesWords } from './names.ts';
 import { placeWords } from './place.ts';
 import { scheduleWords } from './schedule.ts';
 import { sheetsWords } from './sheets.ts';
+import { sizingWords } from './sizing.ts';
 import { startWords } from './start.ts';
 import { sunPathWords } from './sun-path.ts';
 import { weatherWords } from './weather.ts';
@@ -29,4 +30,5 @@ export const words = {
   ...weatherWords,
   ...findingsWords,
   ...sheetsWords,
+  ...sizingWords,
 } as const;

@@ -1,0 +1,128 @@
+import { readFile, writeFile } from 'node:fs/promises';
+import { join } from 'node:path';
+import type { Download, Locator, Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, inject, test } from 'vitest';
+import { readCsv } from '../helpers/read-csv.ts';
+import { type LoopbackDesk, openLoopbackDesk } from '../helpers/loopback-desk.ts';
+import { runCommand } from '../helpers/run-command.ts';
+import { tempFolder } from '../helpers/temp-folder.ts';
+
+const executable = inject('chromium');
+const PATIENT = { timeout: 15_000 };
+
+/** What pressing makes the page download. */
+async function downloaded(page: Page, press: () => Promise<void>): Promise<Buffer> {
+  const [download] = await Promise.all([page.waitForEvent('download'), press()]);
+  return readFile(await (download as Download).path());
+}
+
+type Report = { findings: { room: string; limit: string; value: number; verdict: string }[] };
+
+describe.skipIf(executable === null)('from what is over to what cures it, without a manual', () => {
+  let desk: LoopbackDesk;
+  let page: Page;
+  let office: Locator;
+  beforeAll(async () => {
+    desk = await openLoopbackDesk(executable as string, 'tannery-yard', false, 'example');
+    page = desk.page;
+    page.setDefaultTimeout(PATIENT.timeout);
+    office = page.locator('li.room', { hasText: '1.3 Office' });
+  });
+  afterAll(async () => {
+    await desk?.close();
+  });
+
+  const sheets = async (entry: string): Promise<Buffer> =>
+    downloaded(page, async () => {
+      await page.getByRole('button', { name: 'Sheets' }).click();
+      await page.getByRole('menuitem', { name: entry }).click();
+    });
+
+  test('the rooms that are over stand first, and one opens on why', async () => {
+    await page.getByText('6 over', { exact: true }).waitFor();
+    expect(await office.locator('.room-head').textContent()).toContain('over');
+    await office.locator('.room-head').click();
+    await office
+      .getByText(/above the limit of 60\.0/)
+      .first()
+      .waitFor();
+  });
+
+  test('a way to pass is applied, passes, and is undone where it was applied', async () => {
+    await office.getByRole('button', { name: /^Apply: overhang/ }).click();
+    await page.getByText('5 over', { exact: true }).waitFor();
+    expect(await office.locator('.room-head').textContent()).toContain('close');
+    await office.getByText(/^Applied: overhang/).waitFor();
+    await office.getByRole('button', { name: 'Undo', exact: true }).click();
+    await page.getByText('6 over', { exact: true }).waitFor();
+    expect(await office.locator('.room-head').textContent()).toContain('over');
+  });
+
+  test('every way that is offered brings the room to close or within, by itself', async () => {
+    await office
+      .getByRole('button', { name: /^Apply: / })
+      .first()
+      .waitFor();
+    const names = await office
+      .getByRole('button', { name: /^Apply: / })
+      .evaluateAll((all) => all.map((b) => b.getAttribute('aria-label') ?? ''));
+    expect(names.length).toBeGreaterThanOrEqual(3);
+    for (const name of names) {
+      await office.getByRole('button', { name, exact: true }).click();
+      await page.getByText('5 over', { exact: true }).waitFor();
+      await office.getByRole('button', { name: 'Undo', exact: true }).click();
+      await page.getByText('6 over', { exact: true }).waitFor();
+    }
+  });
+
+  test('what moves the result most is shown with its figures, longest first', async () => {
+    await office.getByText('What moves it most').click();
+    const first = office.locator('.tornado li').first();
+    await first.waitFor();
+    expect(await first.textContent()).toMatch(/width of the windows|g of the glass/);
+  });
+
+  test('an overhang for the west front is sized to a target and set', async () => {
+    await page.getByRole('tab', { name: 'Windows' }).click();
+    await page.getByRole('row', { name: /^W4 / }).click();
+    await page.getByRole('tab', { name: 'Sizing' }).click();
+    await page.getByRole('heading', { name: 'Window W4' }).waitFor();
+    await page.getByLabel('Summer gain to come down to').fill('12');
+    await page.keyboard.press('Enter');
+    await page.getByText(/m deep meets the target/).waitFor();
+    const setting = page.getByLabel('Setting', { exact: true });
+    await setting.focus();
+    for (let i = 0; i < 18; i++) await page.keyboard.press('ArrowRight');
+    const reading = page.locator('.sizing-reading');
+    expect(await reading.textContent()).toContain('1.80 m deep');
+    await page.getByRole('button', { name: 'Set 1.80 m deep' }).click();
+    await page.getByRole('button', { name: /^Undo overhang of W4/ }).waitFor();
+    await expect.poll(() => office.locator('.room-head').textContent(), PATIENT).not.toContain('111.2');
+  });
+
+  test('the findings go out as PDF, CSV and JSON, and the command finds the same to the last digit', async () => {
+    await expect.poll(() => page.locator('.findings.stale').count(), PATIENT).toBe(0);
+    const pdf = await sheets('Findings report (PDF)');
+    expect(pdf.subarray(0, 5).toString()).toBe('%PDF-');
+    const csv = readCsv((await sheets('Findings table (CSV)')).toString());
+    const json = await sheets('Findings to recompute (JSON)');
+    const report = JSON.parse(json.toString()) as Report;
+    expect(csv.length - 1).toBe(report.findings.length);
+    const folder = tempFolder();
+    await writeFile(join(folder, 'report.json'), json);
+    const verified = await runCommand(['verify', 'report.json'], folder);
+    expect(verified.status, verified.err).toBe(0);
+
+    const scheme = await downloaded(page, () => page.keyboard.press('Control+s'));
+    await writeFile(join(folder, 'yard.scheme.json'), scheme);
+    const ran = await runCommand(['check', 'yard.scheme.json', '--json'], folder);
+    const found = JSON.parse(ran.out) as Report;
+    expect(found.findings.map((f) => [f.room, f.limit, f.verdict])).toEqual(
+      report.findings.map((f) => [f.room, f.limit, f.verdict]),
+    );
+    // Two engines of JavaScript differ in the last bit of sine and cosine: twelve digits are what both have.
+    for (const [i, f] of found.findings.entries())
+      expect(f.value.toPrecision(12)).toBe(report.findings[i]?.value.toPrecision(12));
+    expect(desk.complaints).toEqual([]);
+  });
+});
