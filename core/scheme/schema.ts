@@ -205,6 +205,11 @@ export const SheetSet = z.looseObject({
   scale: finite.gt(0).max(100000).optional(),
   paper: z.enum(['A4', 'A3', 'A2', 'A1']).default('A3'),
   landscape: z.boolean().default(true),
+  perPage: z.int().min(1).max(60).optional().describe('diagrams a page, at most'),
+  window: id.optional().describe('of a section, or whose shading mask a sun path shows'),
+  block: id.optional().describe('whose facades are drawn; absent: those of every proposed block'),
+  units: z.enum(['metric', 'imperial']).optional().describe('units of the drawing; absent: metric'),
+  number: z.string().max(60).optional().describe('drawing number'),
 });
 
 export const Scheme = z.looseObject({

@@ -2,13 +2,11 @@ import type { Model } from '../form/model.ts';
 import { CAUTIONS } from '../limits/cautions.ts';
 import type { Checked } from '../scheme/fault.ts';
 import type { Scheme } from '../scheme/schema.ts';
-import { cividis } from './cividis.ts';
-import { niceStep } from './day-curve.ts';
+import { colourKey, type Quantity, scaleEnd } from './colour-key.ts';
 import type { Document, Mark, Mm } from './drawing.ts';
-import { type ElevationMap, elevation, NEVER } from './elevation.ts';
-import { FINE, SOFT } from './ink.ts';
-import { leading, line, type Piece, paragraph, rect, words } from './marks.ts';
-import { READ } from './measure.ts';
+import { type ElevationMap, elevation } from './elevation.ts';
+import { SOFT } from './ink.ts';
+import { paragraph } from './marks.ts';
 import { fixed } from './numerals.ts';
 import { finishPages, type PaperName, type Rect } from './paper.ts';
 import { SCALES, scaleWords } from './scale.ts';
@@ -21,7 +19,7 @@ export type ElevationSheetInput = {
   readonly model: Model;
   readonly maps: readonly ElevationMap[];
   /** What the values are, such as `sun hours` in `h`. */
-  readonly quantity: { readonly name: string; readonly unit: string };
+  readonly quantity: Quantity;
   /** Such as `21 March, 21 June and 21 December 2025`. */
   readonly period: string;
   /** How the values were worked out, in sentences. */
@@ -37,8 +35,6 @@ export type ElevationSheetInput = {
 
 const GAP: Mm = 10;
 const CAPTION: Mm = 13;
-/** Parts of the colour scale, at most. */
-const TICKS = 6;
 
 type Placed = { readonly map: ElevationMap; readonly page: number; readonly x: Mm; readonly bottom: Mm };
 
@@ -70,7 +66,7 @@ export function elevationSheet(input: ElevationSheetInput): Checked<Document> {
     return { ok: false, faults: [{ level: 'error', code: 'scale-too-large', place: '', message, cure }] };
   }
   const { scale, placed } = one;
-  const most = scaleEnd(maps);
+  const most = scaleEnd(maps.map((m) => m.value));
   const count = 1 + Math.max(...placed.map((p) => p.page));
   const title = `Facades, ${input.quantity.name}`;
   const contents = Array.from({ length: count }, (_, page) => ({
@@ -124,13 +120,6 @@ function levelled(placed: readonly Placed[], k: number): readonly Placed[] {
   return placed.map((p) => ({ ...p, bottom: bottoms.get(top(p)) ?? p.bottom }));
 }
 
-/** The end of the colour scale: the first tick at or above the highest value. */
-function scaleEnd(maps: readonly ElevationMap[]): number {
-  const highest = Math.max(1e-6, ...maps.map((m) => m.value.reduce((a, b) => Math.max(a, b), 0)));
-  const step = niceStep(highest, TICKS);
-  return Math.ceil(highest / step - 1e-9) * step;
-}
-
 function drawn(p: Placed, input: ElevationSheetInput, scale: number, most: number): readonly Mark[] {
   const width = Math.max(62, (p.map.panel.width_m * 1000) / scale);
   const title = paragraph(p.map.title, p.x, p.bottom + 2, width, { face: 'semibold' }, 1);
@@ -144,25 +133,6 @@ function drawn(p: Placed, input: ElevationSheetInput, scale: number, most: numbe
     ...title.marks,
     ...paragraph(said, p.x, p.bottom + 2 + title.height, width, { colour: SOFT }, 1).marks,
   ];
-}
-
-/** The colours with their numbers. */
-function colourKey(x: Mm, top: Mm, width: Mm, most: number, quantity: ElevationSheetInput['quantity']): Piece {
-  const marks: Mark[] = [words(`${quantity.name} [${quantity.unit}]`, x, top + READ * 0.75, { face: 'semibold' })];
-  const y = top + leading(READ) + 0.6;
-  const n = 50;
-  for (let i = 0; i < n; i++)
-    marks.push(rect(x + (width * i) / n, y, width / n + (i < n - 1 ? 0.06 : 0), 5, { fill: cividis((i + 0.5) / n) }));
-  marks.push(rect(x, y, width, 5, { stroke: FINE }));
-  const step = niceStep(most, TICKS);
-  for (let v = 0; v <= most + 1e-9; v += step) {
-    const at = x + (width * v) / most;
-    marks.push(line(at, y + 5, at, y + 6.2, FINE));
-    const anchor = v === 0 ? 'start' : v > most - step / 2 ? 'end' : 'middle';
-    marks.push(words(fixed(v, step >= 1 ? 0 : step >= 0.1 ? 1 : 2), at, y + 10, { anchor }));
-  }
-  marks.push(rect(x, y + 13, 11, 4, { fill: NEVER, stroke: FINE }), words('none in the period', x + 14, y + 16.3));
-  return { marks, height: leading(READ) + 20 };
 }
 
 function panel(input: ElevationSheetInput, area: Rect, scale: number, most: number): readonly Mark[] {

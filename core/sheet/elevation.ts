@@ -2,6 +2,7 @@ import type { Model, Panel, WindowForm } from '../form/model.ts';
 import { dot, minus } from '../plane/vec.ts';
 import type { ExposureGrid } from '../shade/exposure-grid.ts';
 import { cividis } from './cividis.ts';
+import { NEVER } from './colour-key.ts';
 import type { Mark, Mm } from './drawing.ts';
 import { EXISTING_LINE, FINE, INK, WHITE } from './ink.ts';
 import { line, rect, words } from './marks.ts';
@@ -21,8 +22,6 @@ export type ElevationMap = {
   readonly covered: Uint8Array | null;
 };
 
-/** Where the sun is up in the period and never on it: a grey of its own, so that dark blue always means a little sun. */
-export const NEVER = '#d9d5cc';
 /** Where there is no wall to the air. */
 export const BUILT_OVER = '#ffffff';
 

@@ -18,7 +18,8 @@ export function shadowMoments(
   return dates.flatMap((date) => times.map((time) => shadowMoment(scheme, model, date, time)));
 }
 
-function shadowMoment(scheme: Scheme, model: Model, date: string, time: string): ShadowMoment {
+/** One moment of a shadow study. */
+export function shadowMoment(scheme: Scheme, model: Model, date: string, time: string): ShadowMoment {
   const { instant_ms, note } = resolveCivil(date, time, scheme.site.zone);
   const { civil, sun, shadows, isLowSun, areas } = momentStudy(scheme, model, instant_ms);
   const names = new Map(model.receptors.map((r) => [r.id, r.name]));

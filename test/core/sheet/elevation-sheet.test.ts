@@ -3,7 +3,7 @@ import { solidWall } from '../../../core/shade/exposure-grid.ts';
 import { panelGrid } from '../../../core/shade/exposure-grid.ts';
 import { cividis } from '../../../core/sheet/cividis.ts';
 import type { Mark } from '../../../core/sheet/drawing.ts';
-import { NEVER } from '../../../core/sheet/elevation.ts';
+import { NEVER } from '../../../core/sheet/colour-key.ts';
 import { elevationSheet } from '../../../core/sheet/elevation-sheet.ts';
 import { EXISTING_LINE } from '../../../core/sheet/ink.ts';
 import { demoScheme, modelOf } from '../../helpers/demo-scheme.ts';

@@ -1,0 +1,256 @@
+import type { Model, Stage } from '../form/model.ts';
+import { stands } from '../form/stands.ts';
+import { contains } from '../plane/ring.ts';
+import type { Point } from '../plane/vec.ts';
+import type { Checked } from '../scheme/fault.ts';
+import type { Scheme } from '../scheme/schema.ts';
+import { colourKey, type Quantity, scaleEnd } from './colour-key.ts';
+import type { Document, Mark, Mm } from './drawing.ts';
+import { AREA_LINE, BOUNDARY_LINE, FRAME, INK, WHITE } from './ink.ts';
+import { cornerOf, type LevelMap, levelMapMarks, valuesByCell } from './level-map.ts';
+import { paragraph, rect, words } from './marks.ts';
+import { measure, READ, SMALL } from './measure.ts';
+import { fixed } from './numerals.ts';
+import { finishPages, type PaperName, type Rect } from './paper.ts';
+import { BLOCK_LOOK } from './plan.ts';
+import { inFrame, onPage, type PlanView } from './plan-view.ts';
+import { chooseScale, scaleWords } from './scale.ts';
+import { northPoint, scaleBar } from './scale-marks.ts';
+import { type Areas, DRAWING_CAUTIONS, pageAreas, placeNotes } from './side-panel.ts';
+import { shortHash, titleBlock } from './title-block.ts';
+
+/** The ground and the roofs that stand at one stage. */
+export type PlanStage = {
+  readonly stage: Stage;
+  readonly ground: LevelMap;
+  readonly roofs: readonly (LevelMap & { readonly block: string })[];
+};
+
+export type ExposurePlanInput = {
+  readonly scheme: Scheme;
+  readonly model: Model;
+  /** One page each. */
+  readonly stages: readonly PlanStage[];
+  readonly quantity: Quantity;
+  /** Such as `21 March, 21 June and 21 December 2025`. */
+  readonly period: string;
+  /** How the values were worked out, in sentences. */
+  readonly method: readonly string[];
+  readonly scale: number | null;
+  readonly paper: PaperName;
+  readonly landscape: boolean;
+  readonly number?: string;
+  readonly drawn: string;
+  readonly engine: string;
+  readonly hash: string;
+  readonly language?: string;
+};
+
+/** What the sheet is called. */
+export const PLAN_SUBJECT = 'Sun on roofs and ground';
+const CAPTION: Mm = 7;
+/** Figures on the map stand at least so far apart. */
+const FIGURE_SPACE: Mm = 13;
+const STAGE_WORDS: { readonly [S in Stage]: string } = { before: 'before', after: 'after, with the proposal' };
+
+/** The frame of the plan on a paper [mm]. */
+function planFrame(areas: Areas): Rect {
+  const { drawing } = areas;
+  return { ...drawing, y: drawing.y + CAPTION, height: drawing.height - CAPTION };
+}
+
+/** The scale that an exposure plan of a scheme will be drawn at, for choosing how far apart its points stand; or why it cannot be. */
+export function exposurePlanScale(
+  model: Model,
+  asked: number | null,
+  paper: PaperName,
+  landscape: boolean,
+): ReturnType<typeof chooseScale> {
+  const frame = planFrame(pageAreas(paper, landscape));
+  const size = [model.extent[2] - model.extent[0], model.extent[3] - model.extent[1]] as const;
+  return chooseScale(
+    asked,
+    size,
+    size,
+    [frame.width - 4, frame.height - 4],
+    `${paper} ${landscape ? 'landscape' : 'portrait'}`,
+  );
+}
+
+/** Maps over all roofs and the ground as a plan to scale, one page a stage, with the numbers of their colours beside them. */
+export function exposurePlan(input: ExposurePlanInput): Checked<Document> {
+  const { model, paper, landscape, stages } = input;
+  const scale = exposurePlanScale(model, input.scale, paper, landscape);
+  if (typeof scale !== 'number') return { ok: false, faults: [scale] };
+  const areas = pageAreas(paper, landscape);
+  const frame = planFrame(areas);
+  const [x0, y0, x1, y1] = model.extent;
+  const view: PlanView = { frame, scale, centre: [(x0 + x1) / 2, (y0 + y1) / 2] };
+  const most = scaleEnd(stages.flatMap((s) => [s.ground.value, ...s.roofs.map((r) => r.value)]));
+  const contents = stages.map((stage) => {
+    const title = stages.length > 1 ? `${PLAN_SUBJECT}, ${STAGE_WORDS[stage.stage]}` : PLAN_SUBJECT;
+    return {
+      title,
+      marks: [
+        ...paragraph(`${title}: ${input.quantity.name}`, frame.x, areas.drawing.y, frame.width, { face: 'semibold' }, 1)
+          .marks,
+        ...stageMarks(view, model, stage, most),
+        rect(frame.x, frame.y, frame.width, frame.height, { stroke: FRAME }),
+        ...panel(input, areas, scale, most),
+      ],
+    };
+  });
+  return {
+    ok: true,
+    notes: [],
+    value: {
+      title: [input.scheme.title, PLAN_SUBJECT].filter((t) => t !== '').join(' – '),
+      author: input.scheme.author,
+      language: input.language ?? 'en-GB',
+      pages: finishPages(contents, paper, landscape, `scheme ${shortHash(input.hash)}, drawn ${input.drawn}`),
+    },
+  };
+}
+
+function stageMarks(view: PlanView, model: Model, stage: PlanStage, most: number): readonly Mark[] {
+  const standing = model.solids
+    .filter((s) => stands(s.standing, stage.stage))
+    .toSorted((a, b) => a.top_m - b.top_m || (a.id < b.id ? -1 : 1));
+  const ring = (points: readonly Point[]): readonly (readonly [Mm, Mm])[] => points.map((p) => onPage(view, p));
+  const marks: Mark[] = [...levelMapMarks(view, stage.ground, most)];
+  for (const solid of standing) {
+    const roof = stage.roofs.find((r) => r.block === solid.id);
+    if (roof) marks.push(...levelMapMarks(view, roof, most));
+    const { stroke } = BLOCK_LOOK[solid.standing];
+    // An edge that holds on dark and on pale: white under ink.
+    const outline = { kind: 'path' as const, runs: [ring(solid.outline)], closed: true };
+    marks.push({ ...outline, stroke: { colour: WHITE, width: stroke.width + 0.4 } }, { ...outline, stroke });
+  }
+  if (model.boundary) marks.push({ kind: 'path', runs: [ring(model.boundary)], closed: true, stroke: BOUNDARY_LINE });
+  for (const r of model.receptors)
+    if (r.kind === 'area') marks.push({ kind: 'path', runs: [ring(r.outline)], closed: true, stroke: AREA_LINE });
+  const { x, y, width, height } = view.frame;
+  marks.push(...groundFigures(view, standing, stage.ground, most), ...roofFigures(view, standing, stage, most));
+  return [{ kind: 'group', label: `plan ${STAGE_WORDS[stage.stage]}`, clip: [x, y, width, height], marks }];
+}
+
+const figure = (value: number, most: number): string => fixed(value, most >= 20 ? 0 : 1);
+const inkOn = (value: number, most: number): string => (value > 0 && value / most < 0.5 ? WHITE : INK);
+
+/** Values on a coarser grid, where no building stands in the way: the map is to be read without its colours too. */
+function groundFigures(view: PlanView, standing: Model['solids'], map: LevelMap, most: number): readonly Mark[] {
+  const { grid } = map;
+  const value = valuesByCell(map);
+  const [left, bottom] = cornerOf(map.outline);
+  const k = 1000 / view.scale;
+  const [stepX, stepY] = grid.cell_m.map((c) => Math.max(1, Math.ceil(FIGURE_SPACE / (c * k)))) as [number, number];
+  const marks: Mark[] = [];
+  for (let row = Math.floor(stepY / 2); row < grid.up; row += stepY) {
+    for (let column = Math.floor(stepX / 2); column < grid.across; column += stepX) {
+      const v = value[row * grid.across + column] as number;
+      if (Number.isNaN(v)) continue;
+      const at: Point = [left + (column + 0.5) * grid.cell_m[0], bottom + (row + 0.5) * grid.cell_m[1]];
+      const text = figure(v, most);
+      const [half, up] = [(measure(text, SMALL) / 2 + 0.6) / k, (SMALL * 0.5) / k];
+      const corners = [-1, 0, 1].flatMap((i) => [-1, 1].map((j) => [at[0] + i * half, at[1] + j * up] as const));
+      const isFree = corners.every(
+        ([px, py]) => contains(map.outline, px, py) && !standing.some((s) => contains(s.outline, px, py)),
+      );
+      const [x, y] = onPage(view, at);
+      if (isFree) marks.push(words(text, x, y + SMALL * 0.35, { size: SMALL, anchor: 'middle', colour: inkOn(v, most) }));
+    }
+  }
+  return marks;
+}
+
+/** The mean of each roof, written on it where it is large enough and not under a higher block. */
+function roofFigures(view: PlanView, standing: Model['solids'], stage: PlanStage, most: number): readonly Mark[] {
+  const k = 1000 / view.scale;
+  return stage.roofs.flatMap((roof) => {
+    const solid = standing.find((s) => s.id === roof.block);
+    if (!solid) return [];
+    const values = [...roof.value].filter((_, i) => roof.covered[i] !== 1);
+    if (values.length === 0) return [];
+    const mean = values.reduce((a, b) => a + b, 0) / values.length;
+    const text = figure(mean, most);
+    const higher = standing.filter((s) => s.top_m > solid.top_m);
+    const at = middleOf(roof);
+    for (const size of [READ, SMALL]) {
+      const [half, up] = [(measure(text, size, 'semibold') / 2 + 0.5) / k, (size * 0.45) / k];
+      const fits = [-1, 0, 1]
+        .flatMap((i) => [-1, 1].map((j) => [at[0] + i * half, at[1] + j * up] as const))
+        .every(([px, py]) => contains(solid.outline, px, py) && !higher.some((s) => contains(s.outline, px, py)));
+      const [x, y] = onPage(view, at);
+      if (fits && inFrame(view, [x, y])) {
+        const colour = inkOn(nearest(roof, at), most);
+        return [words(text, x, y + size * 0.35, { size, anchor: 'middle', face: 'semibold' as const, colour })];
+      }
+    }
+    return [];
+  });
+}
+
+/** The receptor nearest to the middle of all that are not built over. */
+function middleOf(map: LevelMap): Point {
+  const { x, y } = map.grid.receptors;
+  let [sx, sy, n] = [0, 0, 0];
+  for (let i = 0; i < x.length; i++) {
+    if (map.covered[i] === 1) continue;
+    sx += x[i]!;
+    sy += y[i]!;
+    n++;
+  }
+  return [sx / n, sy / n];
+}
+
+function nearest(map: LevelMap, at: Point): number {
+  const { x, y } = map.grid.receptors;
+  let [best, value] = [Number.POSITIVE_INFINITY, 0];
+  for (let i = 0; i < x.length; i++) {
+    const away = Math.hypot(x[i]! - at[0], y[i]! - at[1]);
+    if (map.covered[i] === 1 || away >= best) continue;
+    [best, value] = [away, map.value[i] as number];
+  }
+  return value;
+}
+
+function panel(input: ExposurePlanInput, areas: Areas, scale: number, most: number): readonly Mark[] {
+  const first = areas.panel[0] as Rect;
+  const last = areas.panel.at(-1) as Rect;
+  const radius = 8;
+  const marks: Mark[] = [northPoint(first.x + radius, first.y + radius * 1.34 + 4, radius, input.scheme.site.north)];
+  const bar = scaleBar(first.x + radius * 2 + 8, first.y + 3, first.width - radius * 2 - 8, scale, input.paper);
+  const key = colourKey(first.x, first.y + radius * 2.7 + 6, first.width, most, input.quantity);
+  marks.push(...bar.marks, ...key.marks);
+  const facts = {
+    subject: PLAN_SUBJECT,
+    number: input.number ?? '',
+    date: input.drawn,
+    engine: input.engine,
+    hash: input.hash,
+    scale: `${scaleWords(scale)} on ${input.paper}`,
+  };
+  const height = titleBlock(last.x, 0, last.width, input.scheme, facts).height;
+  const foot = last.y + last.height - height;
+  const y = first.y + radius * 2.7 + 6 + key.height + 3;
+  const slots =
+    areas.panel.length === 1
+      ? [{ x: first.x, y, end: foot - 2 }]
+      : [
+          { x: first.x, y, end: first.y + first.height },
+          { x: last.x, y: last.y, end: foot - 2 },
+        ];
+  const notes = [
+    { heading: 'Period', lines: [input.period] },
+    {
+      heading: 'How it was worked out',
+      lines: [
+        ...input.method,
+        'Figures on the ground stand at the points that they are of; the figure on a roof is its mean.',
+      ],
+    },
+    DRAWING_CAUTIONS,
+  ];
+  const placed = placeNotes(notes, slots, first.width);
+  return [...marks, ...placed.marks, ...titleBlock(last.x, foot, last.width, input.scheme, facts).marks];
+}
