@@ -63,3 +63,13 @@ export function clock(text: string): number {
     throw new InvalidArgumentError('It must be a time of the clock from 00:00 to 24:00, such as 09:00.');
   return hours * 60 + minutes;
 }
+
+/** Times of the clock with commas between them, as HH:MM. */
+export const times = (text: string, before: readonly string[] | undefined): readonly string[] => [
+  ...(before ?? []),
+  ...text.split(',').map((part) => {
+    const minute = clock(part.trim());
+    if (minute >= 24 * 60) throw new InvalidArgumentError('It must be a time of the clock from 00:00 to 23:59.');
+    return `${String(Math.floor(minute / 60)).padStart(2, '0')}:${String(minute % 60).padStart(2, '0')}`;
+  }),
+];

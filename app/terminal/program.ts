@@ -7,6 +7,7 @@ import { declareExposure } from './exposure.ts';
 import { declareOpen } from './open.ts';
 import { declareSchema } from './schema.ts';
 import { declareShadows } from './shadows.ts';
+import { declareSheet } from './sheet.ts';
 import { declareSize } from './size.ts';
 import { declareSun } from './sun.ts';
 import { declareVerify } from './verify.ts';
@@ -23,6 +24,7 @@ Exit status:
 const DECLARED: readonly Declare[] = [
   declareCheck,
   declareShadows,
+  declareSheet,
   declareExposure,
   declareSun,
   declareSize,

@@ -4,21 +4,20 @@ import type { Scheme } from '../../core/scheme/schema.ts';
 import type { Document } from '../../core/sheet/drawing.ts';
 import type { ShadowMoment } from '../../core/sheet/shadow-moment.ts';
 import type { Declare } from './declare.ts';
-import { clock, dates, number, whole } from './option-values.ts';
+import { clock, dates, whole } from './option-values.ts';
 import { readScheme } from './read-input.ts';
 import { Refusal } from './refusal.ts';
+import { type SheetFiles, writeSheetFiles } from './sheet-files.ts';
+import { paperOptions } from './sheet.ts';
 import { shadowText } from './shadow-text.ts';
 import { today } from './today.ts';
 import { writeOutput } from './write-output.ts';
 
-type Options = {
+type Options = SheetFiles & {
   readonly on?: readonly string[];
   readonly from: number;
   readonly to: number;
   readonly every: number;
-  readonly pdf?: string;
-  readonly svg?: string;
-  readonly png?: string;
   readonly geojson?: string;
   readonly csv?: true;
   readonly json?: true;
@@ -26,7 +25,7 @@ type Options = {
   readonly paper: 'A4' | 'A3' | 'A2' | 'A1';
   readonly portrait?: true;
   readonly perPage?: number;
-  readonly dpi: number;
+  readonly number?: string;
 };
 
 /** Moments of one call: more would be days of drawing, and a mistake. */
@@ -52,9 +51,6 @@ function timesOf({ from, to, every }: Options): readonly string[] {
   return times;
 }
 
-/** Where page k of several goes: `study.svg`, or `study-2.svg` from the second on. */
-const pagePath = (path: string, k: number): string => (k === 0 ? path : path.replace(/(\.[^./\\]*)?$/, `-${k + 1}$1`));
-
 async function sheetOf(
   scheme: Scheme,
   model: Model,
@@ -75,6 +71,7 @@ async function sheetOf(
     paper: options.paper,
     landscape: options.portrait !== true,
     ...(options.perPage === undefined ? {} : { perPage: options.perPage }),
+    ...(options.number === undefined ? {} : { number: options.number }),
     drawn: today(),
     engine: ENGINE_VERSION,
     hash: contentHash(writeScheme(scheme)),
@@ -83,42 +80,9 @@ async function sheetOf(
   throw new Refusal(...drawn.faults.map((f) => `shadewright shadows: ${f.message}; ${f.cure}.`));
 }
 
-/** Every file is made before the first is written, so that a refusal leaves nothing half done. */
-async function writeSheets(document: Document, options: Options): Promise<readonly string[]> {
-  const files: [string, Uint8Array | string][] = [];
-  if (options.pdf !== undefined) {
-    const { printDocument } = await import('../files/print-document.ts');
-    files.push([options.pdf, await printDocument(document)]);
-  }
-  if (options.svg !== undefined) {
-    const [{ pageToSvg }, { fontFaceCss }] = await Promise.all([
-      import('../../core/sheet/svg.ts'),
-      import('../pdf/font-css.ts'),
-    ]);
-    for (const [k, page] of document.pages.entries())
-      files.push([pagePath(options.svg, k), pageToSvg(page, fontFaceCss(page))]);
-  }
-  if (options.png !== undefined) {
-    const { writePng } = await import('../pdf/write-png.ts');
-    for (const [k, page] of document.pages.entries())
-      files.push([pagePath(options.png, k), await imageOf(writePng(page, options.dpi))]);
-  }
-  for (const [path, bytes] of files) await writeOutput(path, bytes);
-  return files.map(([path]) => path);
-}
-
-async function imageOf(made: Promise<Uint8Array>): Promise<Uint8Array> {
-  try {
-    return await made;
-  } catch (error) {
-    if (error instanceof RangeError) throw new Refusal(`shadewright shadows: ${error.message}.`);
-    throw error;
-  }
-}
-
 /** `shadewright shadows`: the shadow study, as a table, as sheets to scale and as GeoJSON. */
 export const declareShadows: Declare = (program, screen) => {
-  program
+  const command = program
     .command('shadows')
     .description('work out where shadows fall before and after, and draw the study to scale')
     .argument('<SCHEME>', 'the scheme file')
@@ -126,17 +90,11 @@ export const declareShadows: Declare = (program, screen) => {
     .addOption(new Option('--from <TIME>', 'first time of the clock').argParser(clock).default(540, '09:00'))
     .addOption(new Option('--to <TIME>', 'last time of the clock').argParser(clock).default(1020, '17:00'))
     .addOption(new Option('--every <MIN>', 'between the times').argParser(whole(1, 720, 'minutes')).default(60))
-    .option('--pdf <FILE>', 'write the sheets as PDF')
-    .option('--svg <FILE>', 'write the sheets as SVG')
-    .option('--png <FILE>', 'write the sheets as PNG')
     .option('--geojson <FILE>', 'write the shadows as GeoJSON, in longitude and latitude')
     .option('--csv', 'print the table as CSV')
     .option('--json', 'print the table as JSON')
-    .option('--scale <N>', 'scale of the drawing, such as 500 for 1:500', number(1, 100_000, 'a scale'))
-    .addOption(new Option('--paper <SIZE>', 'paper').choices(['A4', 'A3', 'A2', 'A1']).default('A3'))
-    .option('--portrait', 'stand the paper upright')
-    .option('--per-page <N>', 'diagrams a page, at most', whole(1, 60, 'diagrams'))
-    .addOption(new Option('--dpi <N>', 'resolution of PNG').argParser(whole(36, 1200, 'dots per inch')).default(150))
+    .addOption(new Option('--paper <SIZE>', 'paper').choices(['A4', 'A3', 'A2', 'A1']).default('A3'));
+  paperOptions(command)
     .addHelpText('after', HELP)
     .action(async (path: string, options: Options) => {
       if (options.json && options.csv)
@@ -159,7 +117,7 @@ export const declareShadows: Declare = (program, screen) => {
       const moments = shadowMoments(scheme, model, on, times);
       const written: string[] = [];
       if (options.pdf !== undefined || options.svg !== undefined || options.png !== undefined) {
-        written.push(...(await writeSheets(await sheetOf(scheme, model, moments, options), options)));
+        written.push(...(await writeSheetFiles(await sheetOf(scheme, model, moments, options), options, 'shadows')));
       }
       if (options.geojson !== undefined) {
         const { shadowGeoJson } = await import('../../core/sheet/geojson.ts');

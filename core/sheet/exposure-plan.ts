@@ -157,7 +157,8 @@ function groundFigures(view: PlanView, standing: Model['solids'], map: LevelMap,
         ([px, py]) => contains(map.outline, px, py) && !standing.some((s) => contains(s.outline, px, py)),
       );
       const [x, y] = onPage(view, at);
-      if (isFree) marks.push(words(text, x, y + SMALL * 0.35, { size: SMALL, anchor: 'middle', colour: inkOn(v, most) }));
+      if (isFree)
+        marks.push(words(text, x, y + SMALL * 0.35, { size: SMALL, anchor: 'middle', colour: inkOn(v, most) }));
     }
   }
   return marks;

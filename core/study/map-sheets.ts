@@ -163,13 +163,7 @@ export async function exposurePlanSheet(
   return drawn.ok ? { ...drawn, notes: made.notes } : drawn;
 }
 
-function stageOf(
-  model: Model,
-  stage: Stage,
-  outline: Ring,
-  surfaces: readonly SurfaceMap[],
-  days: number,
-): PlanStage {
+function stageOf(model: Model, stage: Stage, outline: Ring, surfaces: readonly SurfaceMap[], days: number): PlanStage {
   const level = (map: SurfaceMap | undefined, ring: Ring) => {
     const at = map?.[stage];
     return map && at ? [{ outline: ring, grid: map.grid, value: hoursADay(at, days), covered: at.covered }] : [];
