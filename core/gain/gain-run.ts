@@ -16,6 +16,9 @@ import { roomDay } from './room-day.ts';
 import type { RoomDay, WindowDay, WindowSeen } from './series.ts';
 import { windowDay } from './window-day.ts';
 
+/** In place of a month, for trees: the mean of the year. */
+const YEAR_MEAN = 0;
+
 /** A room with its windows and what it takes in on each day that was run. */
 export type RoomGain = {
   readonly room: RoomForm;
@@ -30,6 +33,7 @@ export type GainRun = {
   readonly grids: readonly DayGrid[];
   readonly skyModel: SkyModel;
   readonly windowDays: (window: WindowForm) => readonly WindowDay[];
+  /** What a window sees; trees as in the mean of the year. */
   readonly windowSeen: (window: WindowForm) => WindowSeen;
   readonly roomGain: (room: RoomForm) => RoomGain;
 };
@@ -113,7 +117,11 @@ export function gainRun(
     return key;
   };
   const shadeOf = (w: WindowForm): WindowShade => memo.shades.get(keyOf(w), () => windowShade(w, solids, model.trees));
-  const windowSeen = (w: WindowForm): WindowSeen => memo.seen.get(keyOf(w), () => windowSky(shadeOf(w)));
+  const seenIn = (w: WindowForm, month: number): WindowSeen => {
+    // Without trees every month is the same.
+    const of = model.trees.length === 0 ? YEAR_MEAN : month;
+    return memo.seen.get(`${keyOf(w)} ${of}`, () => windowSky(shadeOf(w), of));
+  };
 
   const windowDays = (w: WindowForm): readonly WindowDay[] => {
     const key = keyOf(w);
@@ -128,7 +136,8 @@ export function gainRun(
         const sunlit = memo.sunlit.get(`${day.name} ${model.north_rad} ${key}`, () =>
           sunlitOver(shadeOf(w), day, cosIncidence),
         );
-        return windowDay(w, day.grid, open, { sunlit, cosIncidence }, viewOf(windowSeen(w), w.tilt_deg));
+        const seen = seenIn(w, day.month);
+        return { ...windowDay(w, day.grid, open, { sunlit, cosIncidence }, viewOf(seen, w.tilt_deg)), seen };
       });
     });
   };
@@ -146,5 +155,5 @@ export function gainRun(
     );
     return { room, windows, days: roomDays };
   };
-  return { grids, skyModel, windowDays, windowSeen, roomGain };
+  return { grids, skyModel, windowDays, windowSeen: (w) => seenIn(w, YEAR_MEAN), roomGain };
 }

@@ -1,3 +1,4 @@
+import type { Scheme } from '../scheme/schema.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
 import { planeIrradiance, type SkyModel } from '../sky/transpose.ts';
 import { DEG } from '../units/angle.ts';
@@ -9,6 +10,9 @@ import type { OpenLight } from './window-day.ts';
  * the unsafe side when heat is judged.
  */
 export const DEFAULT_SKY_MODEL: SkyModel = 'perez';
+
+/** The sky model that a scheme asks for. */
+export const skyModelOf = (scheme: Scheme): SkyModel => scheme.site.skyModel ?? DEFAULT_SKY_MODEL;
 
 /** A plane by where it faces: all that the light on it depends on while nothing stands in front. */
 export type Facing = { readonly bearing_deg: number; readonly tilt_deg: number };

@@ -12,6 +12,8 @@ export type WindowDay = {
   readonly day: string;
   readonly sunlit: Float64Array;
   readonly cosIncidence: Float64Array;
+  /** What the window sees in the day's month: crowns of trees let through more in one than in another. */
+  readonly seen: WindowSeen;
   /** What the closed blinds leave of the glass's gain at each step, 1 where they are open. */
   readonly blind: Float64Array;
   readonly parts: { readonly [P in Part]: Float64Array };

@@ -41,7 +41,7 @@ export function windowDay(
   open: OpenLight,
   light: WindowLight,
   view: WindowView,
-): WindowDay {
+): Omit<WindowDay, 'seen'> {
   const n = grid.instant_ms.length;
   const curve = glassCurve(window.glass);
   const rules = blindRules(window.blinds, window.glass);

@@ -25,8 +25,6 @@ export type WorkedWindow = {
   readonly opening_m2: number;
   readonly glass_m2: number;
   readonly skyShare: number;
-  readonly horizonShare: number;
-  readonly groundShare: number;
 };
 
 type Extra = { readonly formula?: string; readonly place?: string; readonly note?: string };

@@ -1,6 +1,6 @@
-import { glassCurve } from '../gain/window-day.ts';
 import { openLightAt, viewOf } from '../gain/open-light.ts';
 import { PARTS, type Part, type WindowDay } from '../gain/series.ts';
+import { glassCurve } from '../gain/window-day.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
 import { monthly, monthOf } from '../sky/monthly.ts';
@@ -62,9 +62,9 @@ function glassLines(source: Source, w: WorkedWindow, day: WindowDay, step: numbe
       note: 'Karlsson and Roos 2000, from panes and coating category',
     }),
     line(`${w.window}: g for light from all round`, glass.g * curve.hemispherical, '', { note: 'hemispherical mean' }),
-    line(`${w.window}: seen of the dome`, w.skyShare, '', { note: 'cosine-weighted; open vertical glass sees 0.5' }),
-    line(`${w.window}: seen of the horizon`, w.horizonShare, ''),
-    line(`${w.window}: seen of the ground`, w.groundShare, '', { note: 'open vertical glass sees 0.5' }),
+    line(`${w.window}: seen of the dome`, day.seen.sky, '', { note: 'cosine-weighted; open vertical glass sees 0.5' }),
+    line(`${w.window}: seen of the horizon`, day.seen.horizon, ''),
+    line(`${w.window}: seen of the ground`, day.seen.ground, '', { note: 'open vertical glass sees 0.5' }),
   ];
   if (entry.devices.some((id) => scheme.devices.find((d) => d.id === id)?.kind === 'blind'))
     lines.push(
@@ -81,7 +81,7 @@ function partLines(source: Source, w: WorkedWindow, day: WindowDay, step: number
   const { result, scheme, grid } = source;
   const reflectance = monthly(scheme.site.groundReflectance, monthOf(grid.date));
   const open = openLightAt(grid, step, w, result.skyModel, reflectance);
-  const view = viewOf({ sky: w.skyShare, horizon: w.horizonShare, ground: w.groundShare }, w.tilt_deg);
+  const view = viewOf(day.seen, w.tilt_deg);
   const lines: WorkingStep[] = [];
   for (const part of PARTS) {
     const direct = part === 'beam' || part === 'circumsolar';

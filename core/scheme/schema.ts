@@ -188,6 +188,10 @@ export const Site = z.looseObject({
   north: finite.min(-360).max(360).default(0).describe('true north, degrees clockwise from +y of the drawing'),
   groundReflectance: z.union([share, z.array(share).length(12)]).default(0.2),
   linkeTurbidity: z.union([finite.min(1).max(15), z.array(finite.min(1).max(15)).length(12)]).default(3),
+  skyModel: z
+    .enum(['isotropic', 'hay-davies', 'perez'])
+    .optional()
+    .describe('how the light of the sky is spread over the dome; the checks take perez where none is given'),
   boundary: outline.optional(),
   lowSun: finite.min(0).max(45).optional().describe('sun at or below this altitude is left out [°]'),
   hottest: z

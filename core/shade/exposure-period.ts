@@ -1,12 +1,13 @@
 import type { Vec3 } from '../plane/vec.ts';
 import type { Site } from '../scheme/schema.ts';
-import { relativeAirMass, standardPressure_hPa } from '../sky/air-mass.ts';
+import { relativeAirMass } from '../sky/air-mass.ts';
 import { designDay } from '../sky/design-day.ts';
 import { extraterrestrial } from '../sky/extraterrestrial.ts';
 import { ineichenPerez } from '../sky/ineichen.ts';
 import { monthly, monthOf } from '../sky/monthly.ts';
 import { civilOf, dayBounds } from '../sun/civil.ts';
 import type { Observer } from '../sun/position.ts';
+import { standardPressure_hPa } from '../sun/refraction.ts';
 import { sunTable } from '../sun/sun-table.ts';
 import { DEG } from '../units/angle.ts';
 import type { Light } from './exposure-light.ts';

@@ -3,7 +3,7 @@ import type { Model } from '../form/model.ts';
 import { checkDayList, type DayOf, monthKey, solsticeKeys, warmMonths } from '../gain/check-days.ts';
 import type { CheckMemo } from '../gain/gain-memo.ts';
 import { gainRun, type RoomGain } from '../gain/gain-run.ts';
-import { DEFAULT_SKY_MODEL } from '../gain/open-light.ts';
+import { skyModelOf } from '../gain/open-light.ts';
 import { energy_Wh } from '../gain/room-day.ts';
 import type { Finding } from '../limits/finding.ts';
 import { judgeRoom } from '../limits/judge.ts';
@@ -69,7 +69,7 @@ export function roomProbe(
   close: number,
   roomId: string,
   memo: CheckMemo,
-  skyModel: SkyModel = DEFAULT_SKY_MODEL,
+  skyModel: SkyModel = skyModelOf(scheme),
 ): RoomProbe {
   const small = onlyRoom(scheme, roomId);
   const own = small.blocks[0]?.id;

@@ -1,7 +1,7 @@
 import { buildModel } from '../form/build-model.ts';
 import type { CheckMemo } from '../gain/gain-memo.ts';
 import { gainRun } from '../gain/gain-run.ts';
-import { DEFAULT_SKY_MODEL } from '../gain/open-light.ts';
+import { skyModelOf } from '../gain/open-light.ts';
 import type { Finding } from '../limits/finding.ts';
 import { judgeRoom } from '../limits/judge.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
@@ -196,7 +196,7 @@ export function sensitivity(
   room: string,
   finding: Finding,
   memo: CheckMemo,
-  skyModel: SkyModel = DEFAULT_SKY_MODEL,
+  skyModel: SkyModel = skyModelOf(scheme),
 ): readonly Bar[] {
   const at = (s: Scheme): number => resultAt(s, limitSet, room, finding.limit, memo, skyModel);
   const bars = MOVES.map((move): Bar => {

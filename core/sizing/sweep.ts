@@ -3,13 +3,13 @@ import type { Model } from '../form/model.ts';
 import { checkDayList, type DayOf, solsticeKeys } from '../gain/check-days.ts';
 import type { CheckMemo } from '../gain/gain-memo.ts';
 import { gainRun } from '../gain/gain-run.ts';
-import { DEFAULT_SKY_MODEL } from '../gain/open-light.ts';
+import { skyModelOf } from '../gain/open-light.ts';
 import { energy_Wh } from '../gain/room-day.ts';
 import type { WindowDay } from '../gain/series.ts';
 import type { Scheme, Window } from '../scheme/schema.ts';
 import type { SkyModel } from '../sky/transpose.ts';
-import { keptOff, type Stretch, squareSuns } from './shaded-dates.ts';
 import { darker, freeId, NEW_OVERHANG } from './lever.ts';
+import { keptOff, type Stretch, squareSuns } from './shaded-dates.ts';
 
 /** What is swept: the depth of an overhang, of fins on both sides, of both together, or the g of the glass. */
 export type Swept = 'overhang' | 'fins' | 'both' | 'glass';
@@ -163,7 +163,7 @@ export function sweep(
 ): Sweep {
   const window = scheme.windows.find((w) => w.id === windowId);
   if (!window) throw new RangeError(`the scheme holds no window ${JSON.stringify(windowId)}`);
-  const at = probeOf(scheme, buildModel(scheme), window, swept, memo, options.skyModel ?? DEFAULT_SKY_MODEL);
+  const at = probeOf(scheme, buildModel(scheme), window, swept, memo, options.skyModel ?? skyModelOf(scheme));
   const points = (options.amounts ?? usualAmounts(swept)).map(at);
   return {
     window: windowId,

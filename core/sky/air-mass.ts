@@ -30,14 +30,3 @@ export function relativeAirMass1966(zenith_rad: number): number {
 /** Air mass for the thinner air of a high place: in proportion to the pressure. @param pressure_hPa station pressure [hPa] */
 export const absoluteAirMass = (relative: number, pressure_hPa: number): number =>
   (relative * pressure_hPa) / SEA_LEVEL_hPa;
-
-/**
- * Pressure of the standard atmosphere.
- * @param elevation_m  above the sea [m], −500 to 11 000 (the troposphere, where temperature falls evenly)
- * @returns  station pressure [hPa]
- * @see ISO 2533:1975 and U.S. Standard Atmosphere (1976), hydrostatic equation with a lapse of 6.5 K/km, in the closed form
- *      p = 100·[(44331.514 − z)/11880.516]^(1/0.1902632) Pa
- */
-export function standardPressure_hPa(elevation_m: number): number {
-  return ((44331.514 - elevation_m) / 11880.516) ** (1 / 0.1902632);
-}

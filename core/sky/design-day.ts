@@ -1,8 +1,9 @@
 import type { Fault } from '../scheme/fault.ts';
 import { addDays, daySamples, isDate, isZone } from '../sun/civil.ts';
 import type { Observer } from '../sun/position.ts';
+import { standardPressure_hPa } from '../sun/refraction.ts';
 import { sunTable } from '../sun/sun-table.ts';
-import { relativeAirMass, standardPressure_hPa } from './air-mass.ts';
+import { relativeAirMass } from './air-mass.ts';
 import { checkClearAir, checkClearSun } from './clear-sky.ts';
 import type { DayGrid } from './day-grid.ts';
 import { designTemperature_C } from './design-temperature.ts';

@@ -48,7 +48,7 @@ export type WindowResult = {
   readonly opening_m2: number;
   readonly glass_m2: number;
   readonly g: number;
-  /** Share of the sky dome's light that reaches the glass (cosine-weighted), open vertical glass 0.5. */
+  /** Share of the sky dome's light that reaches the glass (cosine-weighted), open vertical glass 0.5; trees as in the mean of the year. */
   readonly skyShare: number;
   /** Visible share of the horizon band in front, 0..1. */
   readonly horizonShare: number;

@@ -1,9 +1,9 @@
-import type { Model, RoomForm, WindowForm } from '../form/model.ts';
 import { buildModel } from '../form/build-model.ts';
+import type { Model, RoomForm, WindowForm } from '../form/model.ts';
 import { checkDayList } from '../gain/check-days.ts';
 import { type CheckMemo, createCheckMemo } from '../gain/gain-memo.ts';
 import { type GainRun, gainRun, type RoomGain } from '../gain/gain-run.ts';
-import { DEFAULT_SKY_MODEL } from '../gain/open-light.ts';
+import { skyModelOf } from '../gain/open-light.ts';
 import { CAUTIONS } from '../limits/cautions.ts';
 import { countRooms, findingsOf } from '../limits/judge.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
@@ -22,7 +22,7 @@ import type { Pulse } from './job.ts';
 export type CheckOptions = {
   /** Remembers earlier checks; absent: everything is worked out. */
   readonly memo?: CheckMemo;
-  /** Absent: `DEFAULT_SKY_MODEL`. */
+  /** Absent: that of the scheme. */
   readonly skyModel?: SkyModel;
 };
 
@@ -49,7 +49,7 @@ export async function checkScheme(
   const model = buildModel(scheme);
   const season = limitSet?.limits.some((limit) => limit.metric === 'season-gain') ?? false;
   const dayList = checkDayList(scheme, season);
-  const run = gainRun(scheme, model, dayList, memo, options.skyModel ?? DEFAULT_SKY_MODEL);
+  const run = gainRun(scheme, model, dayList, memo, options.skyModel ?? skyModelOf(scheme));
   const gains: RoomGain[] = [];
   let done = 0;
   let next = WINDOWS_A_SLICE;

@@ -29,9 +29,10 @@ export const USUAL_TEMPERATURE_C = 12;
 
 /**
  * Pressure of the standard atmosphere.
- * @param elevation_m above the sea, −500 to 11 000
- * @returns hPa
- * @see ISO 2533:1975, troposphere: 1013.25·(1 − 0.0065·h/288.15)^5.25588
+ * @param elevation_m  above the sea [m], −500 to 11 000 (the troposphere, where temperature falls evenly)
+ * @returns  station pressure [hPa]
+ * @see ISO 2533:1975 and U.S. Standard Atmosphere (1976), hydrostatic equation with a lapse of 6.5 K/km, in the closed form
+ *      p = 100·[(44331.514 − z)/11880.516]^(1/0.1902632) Pa
  */
 export const standardPressure_hPa = (elevation_m: number): number =>
-  1013.25 * ((288.15 - 0.0065 * elevation_m) / 288.15) ** 5.25588;
+  ((44331.514 - elevation_m) / 11880.516) ** (1 / 0.1902632);

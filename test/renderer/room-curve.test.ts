@@ -14,6 +14,7 @@ describe('the curve of a room', () => {
       day: 'june',
       sunlit: none,
       cosIncidence: none,
+      seen: { sky: 0.5, horizon: 1, ground: 0.5 },
       blind: column(1, 1, 1),
       parts: { beam, circumsolar: column(0, 10, 0), sky, horizon: column(0, 20, 0), ground: column(0, 40, 0) },
       total_W: none,

@@ -1,5 +1,5 @@
 import type { Fault } from '../../scheme/fault.ts';
-import { standardPressure_hPa } from '../air-mass.ts';
+import { standardPressure_hPa } from '../../sun/refraction.ts';
 import { dewPoint_C } from '../dew-point.ts';
 import { dayOfYear, extraterrestrial } from '../extraterrestrial.ts';
 import { dirint } from '../split.ts';

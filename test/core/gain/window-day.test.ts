@@ -150,7 +150,9 @@ describe('heat through one window', () => {
         };
         const a = windowDay(windowOf(), gridOf(steps.length), open, lit, { sky: seen, horizon: 1, ground: seen });
         const b = windowDay(windowOf({ id: 'W2', blinds: [blind] }), gridOf(steps.length), open, lit, OPEN_VIEW);
-        const room = roomDay('R1', 'hottest', [a, b], steps.length);
+        const seenOpen = { sky: 0.5, horizon: 1, ground: 0.5 };
+        const both = [a, b].map((day) => ({ ...day, seen: seenOpen }));
+        const room = roomDay('R1', 'hottest', both, steps.length);
         for (const day of [a, b])
           for (let i = 0; i < steps.length; i++) {
             const sum = PARTS.reduce((t, p) => t + day.parts[p][i]!, 0);

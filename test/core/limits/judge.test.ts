@@ -70,6 +70,7 @@ function dayOf(window: string, beam: readonly number[], sky: readonly number[]):
     day: 'hottest',
     sunlit: zeros().fill(0.5),
     cosIncidence: zeros(),
+    seen: { sky: 0.5, horizon: 1, ground: 0.5 },
     blind: zeros().fill(1),
     parts,
     total_W,

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { relativeAirMass, relativeAirMass1966, standardPressure_hPa } from '../../../core/sky/air-mass.ts';
+import { relativeAirMass, relativeAirMass1966 } from '../../../core/sky/air-mass.ts';
+import { standardPressure_hPa } from '../../../core/sun/refraction.ts';
 import { ashraeExponents } from '../../../core/sky/ashrae-tau.ts';
 import {
   CLEAR_SKY_MODELS,

@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { relativeAirMass, standardPressure_hPa } from '../../../core/sky/air-mass.ts';
+import { relativeAirMass } from '../../../core/sky/air-mass.ts';
+import { standardPressure_hPa } from '../../../core/sun/refraction.ts';
 import { checkDesignDay, type DesignDayInput, designDay, hotSpell } from '../../../core/sky/design-day.ts';
 import { designTemperature_C } from '../../../core/sky/design-temperature.ts';
 import { dewPoint_C } from '../../../core/sky/dew-point.ts';
