@@ -40,7 +40,13 @@ export default defineConfig({
     build: {
       outDir: 'out/main',
       externalizeDeps: { exclude: bundled },
-      rolldownOptions: { input: { main: at('app/desktop/main.ts'), cli: at('app/terminal/cli.ts') } },
+      rolldownOptions: {
+        input: {
+          main: at('app/desktop/main.ts'),
+          cli: at('app/terminal/cli.ts'),
+          'tile-worker': at('app/terminal/tile-worker.ts'),
+        },
+      },
     },
   },
   preload: {

@@ -1,3 +1,4 @@
+import { availableParallelism } from 'node:os';
 import { Option } from 'commander';
 import type { ExposureDates } from '../../core/study/exposure-dates.ts';
 import type { ExposureResult } from '../../core/study/exposure.ts';
@@ -15,6 +16,7 @@ type Options = {
   readonly year?: number;
   readonly step: number;
   readonly spacing: number;
+  readonly threads?: number;
   readonly before?: true;
   readonly json?: true;
   readonly csv?: true;
@@ -105,6 +107,7 @@ export const declareExposure: Declare = (program, screen) => {
     .addOption(
       new Option('--spacing <M>', 'between the points of areas').argParser(number(0.01, 1000, 'metres')).default(1),
     )
+    .option('--threads <N>', 'worker threads that share the work; all cores unless given', whole(1, 64, 'threads'))
     .option('--before', 'as it stands now, without the proposal')
     .option('--json', 'print JSON')
     .option('--csv', 'print CSV')
@@ -114,9 +117,10 @@ export const declareExposure: Declare = (program, screen) => {
         throw new Refusal('shadewright exposure: both --json and --csv were given; give one of the two.');
       const { scheme } = await readScheme(path, screen);
       const period = await periodOf(scheme, options);
-      const [{ exposureStudy }, { buildModel }] = await Promise.all([
+      const [{ exposureStudy }, { buildModel }, { withThreads }] = await Promise.all([
         import('../../core/study/exposure.ts'),
         import('../../core/form/build-model.ts'),
+        import('./tile-threads.ts'),
       ]);
       const ask = {
         ...period,
@@ -125,7 +129,9 @@ export const declareExposure: Declare = (program, screen) => {
         stage: options.before ? ('before' as const) : ('after' as const),
       };
       const { pulse, done } = progress(screen, 'adding up');
-      const study = await exposureStudy(scheme, buildModel(scheme), ask, pulse);
+      const study = await withThreads(options.threads ?? availableParallelism(), (run) =>
+        exposureStudy(scheme, buildModel(scheme), ask, pulse, run),
+      );
       done();
       if (study === null) throw new Error('the study was stopped');
       const result = accepted(study.ok ? path : 'shadewright exposure', study, screen);

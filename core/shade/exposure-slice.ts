@@ -3,7 +3,7 @@ import { sunOnReceptors } from './exposure.ts';
 import { columnsFor, type Light, type LightColumns, sortLight } from './exposure-light.ts';
 import { domeOnReceptors, groundOnReceptors, mirroredOccluders } from './sky-view.ts';
 import { makeSkyRays, RAYS_OF_A_MAP } from './sky-view-trace.ts';
-import type { Receptors } from './skyline-groups.ts';
+import { type Receptors, rowsOf } from './skyline-groups.ts';
 import { makeOccluders, type Occluders } from './skyline-occluders.ts';
 
 /** A map to be worked out, all plain columns: it goes to a worker as it is. */
@@ -16,6 +16,9 @@ export type ExposureJob = {
   readonly diffuse_Whm2: number;
   readonly reflected_Whm2: number;
 };
+
+/** A job without its receptors: what a worker is told once, before it is given tiles of receptors. */
+export type JobHead = Omit<ExposureJob, 'receptors'>;
 
 /** One row a receptor: sun time [min], and energy on its plane by part [Wh/m²]. */
 export type Exposure = {
@@ -51,23 +54,26 @@ export function exposureJob(
   };
 }
 
+/** Works out one slice: rows `slice · SLICE` on. The same numbers whoever works it out, in whatever order. */
+export const exposureSlice = (job: ExposureJob, slice: number): Exposure =>
+  exposureTile(job, rowsOf(job.receptors, slice * SLICE, (slice + 1) * SLICE));
+
 /**
- * Works out one slice: rows `slice · SLICE` on. The same numbers whoever works it out, in whatever order.
+ * Works out some receptors of a job. A receptor's numbers do not depend on which others are asked for with it.
  *
  * Beam: exact samples. Sky: the period's diffuse on the level times the share of an evenly bright dome. Ground: what level
  * ground in the open throws back times its share; that the ground itself may lie in shadow is left out.
  */
-export function exposureSlice(job: ExposureJob, slice: number): Exposure {
-  const from = slice * SLICE;
-  const to = Math.min(from + SLICE, job.receptors.x.length);
-  const sun = sunOnReceptors(job.occluders, job.light, job.receptors, from, to);
-  const sky = new Float64Array(to - from);
-  const ground = new Float64Array(to - from);
+export function exposureTile(job: JobHead, receptors: Receptors): Exposure {
+  const n = receptors.x.length;
+  const sun = sunOnReceptors(job.occluders, job.light, receptors);
+  const sky = new Float64Array(n);
+  const ground = new Float64Array(n);
   if (job.mirrored !== null) {
     const rays = makeSkyRays(RAYS_OF_A_MAP);
-    const dome = domeOnReceptors(job.occluders, rays, job.receptors, 'uniform', from, to);
-    const floor = groundOnReceptors(job.mirrored, rays, job.receptors, from, to);
-    for (let i = 0; i < to - from; i++) {
+    const dome = domeOnReceptors(job.occluders, rays, receptors, 'uniform');
+    const floor = groundOnReceptors(job.mirrored, rays, receptors);
+    for (let i = 0; i < n; i++) {
       sky[i] = job.diffuse_Whm2 * dome[i]!;
       ground[i] = sun.covered[i] === 1 ? 0 : job.reflected_Whm2 * floor[i]!;
     }

@@ -22,6 +22,12 @@ export type Receptors = {
   readonly nz: Float64Array;
 };
 
+/** Rows `from` to `to` (exclusive, or the last) of receptors, as columns of their own. */
+export function rowsOf(r: Receptors, from: number, to: number): Receptors {
+  const rows = (column: Float64Array): Float64Array => column.slice(from, to);
+  return { x: rows(r.x), y: rows(r.y), z: rows(r.z), nx: rows(r.nx), ny: rows(r.ny), nz: rows(r.nz) };
+}
+
 /** Receptors that share a shortlist at the end; and by how much a group must shrink before its list is shortened again. */
 const LEAF = 16;
 const SHRINK = 4;

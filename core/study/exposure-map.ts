@@ -12,11 +12,11 @@ import {
   panelGrid,
   solidWall,
 } from '../shade/exposure-grid.ts';
-import type { PeriodSky } from '../shade/exposure-period.ts';
-import { type Exposure, exposureJob } from '../shade/exposure-slice.ts';
-import { checkAsk, exposureNotes, fault, partOf, runSlices, shadersAt, skyOf, tooManyPoints } from './exposure.ts';
+import { type Exposure, type ExposureJob, exposureJob } from '../shade/exposure-slice.ts';
+import { checkAsk, exposureNotes, fault, partOf, shadersAt, skyOf, tooManyPoints } from './exposure.ts';
 import { type ExposureDates, exposureDates } from './exposure-dates.ts';
 import type { Pulse } from './job.ts';
+import { runHere, type RunJobs } from './run-jobs.ts';
 
 /** A surface that a map can cover. */
 export type Surface =
@@ -59,9 +59,78 @@ export const surfacesOf = (model: Model, stage: Stage): Surface[] =>
     { kind: 'roof' as const, block: s.id },
   ]);
 
+/** A surface with its grid, and whether it is there before and after. */
+export type MapPlace = {
+  readonly surface: Surface;
+  /** The rectangle of a wall, for drawing; null for what is level. */
+  readonly panel: Panel | null;
+  readonly grid: ExposureGrid;
+  readonly there: { readonly [S in Stage]: boolean };
+};
+
+/** A map that is yet to be worked out; plain data, which may go from worker to worker. */
+export type MapPlan = {
+  readonly dates: readonly string[];
+  readonly step_min: number;
+  readonly spacing_m: number;
+  readonly places: readonly MapPlace[];
+  /** Before and after, or one for both where the proposal changes nothing. */
+  readonly stages: readonly (readonly Stage[])[];
+  /** One for each entry of `stages`, over the points of the surfaces that are there. */
+  readonly jobs: readonly ExposureJob[];
+};
+
+/**
+ * Checks what is asked of a map, and lays out its points and jobs.
+ * @returns faults where the question cannot be answered
+ */
+export function planMap(scheme: Scheme, model: Model, ask: ExposureMapAsk): Checked<MapPlan> {
+  const step_min = ask.step_min ?? 5;
+  const spacing_m = ask.spacing_m ?? 1;
+  const dates = exposureDates(ask);
+  if (!dates.ok) return dates;
+  const faults = checkAsk(step_min, spacing_m, dates.value.length);
+  if (faults.length > 0) return { ok: false, faults };
+  const laid = placesOf(model, ask.surfaces, spacing_m);
+  if (!laid.ok) return laid;
+  const places = laid.value;
+  const sky = skyOf(scheme, model, ask, dates.value, step_min);
+  const same = model.solids.every((s) => stands(s.standing, 'before') === stands(s.standing, 'after'));
+  const stages: (readonly Stage[])[] = same ? [['before', 'after']] : [['before'], ['after']];
+  const jobs = stages.map(([stage]) => {
+    const at = stage as Stage;
+    const grids = places.filter((p) => p.there[at]).map((p) => p.grid.receptors);
+    return exposureJob(solidsAt(model.solids, at), shadersAt(model, at), sky.light, joined(grids), sky);
+  });
+  const value = { dates: dates.value, step_min, spacing_m, places, stages, jobs };
+  return { ok: true, value, notes: exposureNotes(scheme) };
+}
+
+/** The map of a plan whose jobs are done. @param values in the order of the jobs */
+export function finishMap(plan: MapPlan, values: readonly Exposure[]): ExposureMap {
+  const at = (stage: Stage): (Exposure | null)[] => {
+    const all = values[plan.stages.findIndex((stages) => stages.includes(stage))] as Exposure;
+    let row = 0;
+    return plan.places.map((p) => {
+      if (!p.there[stage]) return null;
+      row += p.grid.cell.length;
+      return partOf(all, row - p.grid.cell.length, row);
+    });
+  };
+  const was = at('before');
+  const is = at('after');
+  const surfaces = plan.places.map(({ surface, panel, grid }, i): SurfaceMap => {
+    const before = was[i] ?? null;
+    const after = is[i] ?? null;
+    return { surface, panel, grid, before, after, change: before && after ? changeOf(before, after) : null };
+  });
+  return { dates: plan.dates, step_min: plan.step_min, spacing_m: plan.spacing_m, surfaces };
+}
+
 /**
  * Exposure over facades, roofs and ground, before and after the proposal, with the difference.
  * @param pulse  called between slices of points, over both stages
+ * @param run    where the points are worked out; absent: in this thread
  * @returns null when `pulse` said stop; faults where the question cannot be answered
  */
 export async function exposureMap(
@@ -69,38 +138,15 @@ export async function exposureMap(
   model: Model,
   ask: ExposureMapAsk,
   pulse: Pulse,
+  run: RunJobs = runHere,
 ): Promise<Checked<ExposureMap> | null> {
-  const step_min = ask.step_min ?? 5;
-  const spacing_m = ask.spacing_m ?? 1;
-  const dates = exposureDates(ask);
-  if (!dates.ok) return dates;
-  const faults = checkAsk(step_min, spacing_m, dates.value.length);
-  if (faults.length > 0) return { ok: false, faults };
-  const places = placesOf(model, ask.surfaces, spacing_m);
-  if (!places.ok) return places;
-  const sky = skyOf(scheme, model, ask, dates.value, step_min);
-  const half: Pulse[] = [(done, total) => pulse(done, 2 * total), (done, total) => pulse(total + done, 2 * total)];
-  const before = await stageMap(model, 'before', places.value, sky, half[0] as Pulse);
-  if (before === null) return null;
-  const same = model.solids.every((s) => stands(s.standing, 'before') === stands(s.standing, 'after'));
-  const after = same ? before : await stageMap(model, 'after', places.value, sky, half[1] as Pulse);
-  if (after === null) return null;
-  const surfaces = places.value.map(({ surface, panel, grid }, i): SurfaceMap => {
-    const was = before[i] ?? null;
-    const is = after[i] ?? null;
-    return { surface, panel, grid, before: was, after: is, change: was && is ? changeOf(was, is) : null };
-  });
-  return { ok: true, value: { dates: dates.value, step_min, spacing_m, surfaces }, notes: exposureNotes(scheme) };
+  const plan = planMap(scheme, model, ask);
+  if (!plan.ok) return plan;
+  const values = await run(plan.value.jobs, pulse);
+  return values === null ? null : { ok: true, value: finishMap(plan.value, values), notes: plan.notes };
 }
 
-type Place = {
-  readonly surface: Surface;
-  readonly panel: Panel | null;
-  readonly grid: ExposureGrid;
-  readonly solid: Solid | null;
-};
-
-function placesOf(model: Model, surfaces: readonly Surface[], spacing_m: number): Checked<readonly Place[]> {
+function placesOf(model: Model, surfaces: readonly Surface[], spacing_m: number): Checked<readonly MapPlace[]> {
   const byId = new Map(model.solids.map((s) => [s.id, s]));
   const faults: Fault[] = [];
   const rough: { surface: Surface; solid: Solid | null; panel: Panel | null }[] = [];
@@ -132,37 +178,17 @@ function placesOf(model: Model, surfaces: readonly Surface[], spacing_m: number)
   });
   faults.push(...tooManyPoints(points));
   if (faults.length > 0) return { ok: false, faults };
-  const value = rough.map(({ surface, solid, panel }): Place => {
-    if (panel) return { surface, solid, panel, grid: panelGrid(panel, spacing_m) };
+  const value = rough.map(({ surface, solid, panel }): MapPlace => {
+    const stage = (at: Stage): boolean => solid === null || stands(solid.standing, at);
+    const there = { before: stage('before'), after: stage('after') };
+    if (panel) return { surface, panel, grid: panelGrid(panel, spacing_m), there };
     const [outline, level] =
       surface.kind === 'ground'
         ? [surface.outline, surface.level_m]
         : [(solid as Solid).outline, (solid as Solid).top_m];
-    return { surface, solid, panel, grid: levelGrid(outline, level, spacing_m) };
+    return { surface, panel, grid: levelGrid(outline, level, spacing_m), there };
   });
   return { ok: true, value, notes: [] };
-}
-
-/** The surfaces that are there at a stage, each by its number; null when told to stop. */
-async function stageMap(
-  model: Model,
-  stage: Stage,
-  places: readonly Place[],
-  sky: PeriodSky,
-  pulse: Pulse,
-): Promise<(Exposure | undefined)[] | null> {
-  const there = places.map((p) => p.solid === null || stands(p.solid.standing, stage));
-  const grids = places.filter((_, i) => there[i]).map((p) => p.grid.receptors);
-  const solids = solidsAt(model.solids, stage);
-  const values = await runSlices(exposureJob(solids, shadersAt(model, stage), sky.light, joined(grids), sky), pulse);
-  if (values === null) return null;
-  let at = 0;
-  return places.map((p, i) => {
-    if (!there[i]) return undefined;
-    const from = at;
-    at += p.grid.cell.length;
-    return partOf(values, from, at);
-  });
 }
 
 function changeOf(before: Exposure, after: Exposure): NonNullable<SurfaceMap['change']> {

@@ -13,16 +13,10 @@ import {
   panelGrid,
 } from '../shade/exposure-grid.ts';
 import { momentSky, type PeriodSky, periodSky } from '../shade/exposure-period.ts';
-import {
-  type Exposure,
-  type ExposureJob,
-  exposureJob,
-  exposureSlice,
-  joinSlices,
-  slicesOf,
-} from '../shade/exposure-slice.ts';
+import { type Exposure, exposureJob } from '../shade/exposure-slice.ts';
 import { type ExposureDates, exposureDates } from './exposure-dates.ts';
 import type { Pulse } from './job.ts';
+import { runHere, type RunJobs } from './run-jobs.ts';
 
 /** What is asked of an exposure study. */
 export type ExposureAsk = ExposureDates & {
@@ -71,6 +65,7 @@ export const EXPOSURE_METHOD =
  * Sun time and energy on every receptor of a scheme.
  * @param model  `buildModel(scheme)`
  * @param pulse  called between slices of points
+ * @param run    where the points are worked out; absent: in this thread
  * @returns null when `pulse` said stop; faults where the question cannot be answered
  */
 export async function exposureStudy(
@@ -78,6 +73,7 @@ export async function exposureStudy(
   model: Model,
   ask: ExposureAsk,
   pulse: Pulse,
+  run: RunJobs = runHere,
 ): Promise<Checked<ExposureResult> | null> {
   const step_min = ask.step_min ?? 5;
   const spacing_m = ask.spacing_m ?? 1;
@@ -95,8 +91,9 @@ export async function exposureStudy(
     joined(grids.map((g) => g.receptors)),
     sky,
   );
-  const values = await runSlices(job, pulse);
-  if (values === null) return null;
+  const done = await run([job], pulse);
+  if (done === null) return null;
+  const values = done[0] as Exposure;
   let at = 0;
   const receptors = model.receptors.map((receptor, i) => {
     const layout = grids[i] as ExposureGrid;
@@ -124,17 +121,6 @@ export const skyOf = (
 export function shadersAt(model: Model, stage: Stage): readonly Shader[] {
   const standing = new Set(solidsAt(model.solids, stage).map((s: Solid) => s.id));
   return model.windows.filter((w) => standing.has(w.block)).flatMap((w) => w.shaders);
-}
-
-/** Works a job out slice by slice, letting others in between. */
-export async function runSlices(job: ExposureJob, pulse: Pulse): Promise<Exposure | null> {
-  const total = slicesOf(job);
-  const slices: Exposure[] = [];
-  for (let i = 0; i < total; i++) {
-    slices.push(exposureSlice(job, i));
-    if ((await pulse(i + 1, total)) === 'stop') return null;
-  }
-  return joinSlices(slices);
 }
 
 function gridOf(r: ReceptorForm, spacing_m: number, windows: 'centre' | 'grid'): ExposureGrid {

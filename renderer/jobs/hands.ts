@@ -20,9 +20,10 @@ export const hands = {
   sensitivity: new WorkerHand(make),
   sizing: new WorkerHand(make),
   year: new WorkerHand(make),
-  map: new WorkerHand(make),
   /** The light of neighbours and amenity areas. */
   light: new WorkerHand(make),
+  /** Lays out exposure maps; the pool of tile workers then works them out. */
+  mapPlan: new WorkerHand(make),
   sunPath: new WorkerHand(make),
   weather: new WorkerHand(make),
   /** What is answered at once: a moment for a place in the sky, a zone for a place on Earth. */

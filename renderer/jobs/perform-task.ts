@@ -3,7 +3,7 @@ import { loadScheme } from '../../core/scheme/load.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import { writeScheme } from '../../core/scheme/write.ts';
 import { guessTable } from '../../core/sky/weather/guess-table.ts';
-import { exposureMap } from '../../core/study/exposure-map.ts';
+import { planMap } from '../../core/study/exposure-map.ts';
 import { neighbourLight } from '../../core/study/exposure-neighbours.ts';
 import type { Pulse } from '../../core/study/job.ts';
 import { momentStudy } from '../../core/study/moment.ts';
@@ -55,16 +55,13 @@ const performers = (): Performers => ({
     const { scheme, model } = held();
     return sunYear(scheme, model, subject, stage, year, YEAR_STEP_min, pulse);
   },
-  map: (ask, held, pulse) => {
-    const { scheme, model } = held();
-    return exposureMap(scheme, model, ask, pulse);
-  },
   light: ({ window }, held, pulse) => {
     const { scheme, model } = held();
     const asked = window === null ? model : askingWindow(model, window);
     if (asked === null) throw new Error(`the scheme has no window ${window}`);
     return neighbourLight(scheme, asked, {}, pulse);
   },
+  mapPlan: async (ask, held) => planMap(held().scheme, held().model, ask),
   sunPath: async ({ observer, zone, year, window }, held) => ({
     path: sunPath(observer, zone, year),
     mask: window === null ? null : windowMask(held().model, window),

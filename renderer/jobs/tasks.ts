@@ -14,7 +14,7 @@ import type { WeatherMapping } from '../../core/sky/weather/mapping.ts';
 import type { CheckResult } from '../../core/study/check-result.ts';
 import type { MomentResult } from '../../core/study/moment.ts';
 import type { SunYear } from '../../core/study/sun-year.ts';
-import type { ExposureMap, ExposureMapAsk } from '../../core/study/exposure-map.ts';
+import type { ExposureMapAsk, MapPlan } from '../../core/study/exposure-map.ts';
 import type { NeighbourLight } from '../../core/study/exposure-neighbours.ts';
 import type { YearSubject } from '../../core/study/year-subject.ts';
 import type { WeatherFacts } from '../../core/study/weather-facts.ts';
@@ -45,10 +45,10 @@ export type Tasks = {
   check: { ask: { notes: readonly Fault[] }; answer: CheckResult };
   /** Direct sun on something through a year. */
   year: { ask: { subject: YearSubject; stage: Stage; year: number }; answer: SunYear };
-  /** Exposure over facades, roofs and ground. */
-  map: { ask: ExposureMapAsk; answer: Checked<ExposureMap> };
   /** What receptors keep of their daylight and sun, or what a window of the proposal has of it. */
   light: { ask: { window: string | null }; answer: Checked<NeighbourLight> };
+  /** The points and jobs of an exposure map, for the pool. @see map-run.ts */
+  mapPlan: { ask: ExposureMapAsk; answer: Checked<MapPlan> };
   /** The lines of the sun path. `window`: what hides the sky from it is wanted too, and the scheme is needed. */
   sunPath: {
     ask: { observer: Observer; zone: string; year: number; window: string | null };
