@@ -166,7 +166,10 @@ export class TilePool {
     hand.isBusy = false;
     const run = this.#run;
     if (run !== null && message.job >= run.base) {
-      if (message.kind === 'failed') return this.#fail(message.message);
+      if (message.kind === 'failed') {
+        this.#fail(message.message);
+        return;
+      }
       const { job, from } = run.tiles[message.tile] as Tile;
       run.done[message.tile] = message.values;
       run.left--;
