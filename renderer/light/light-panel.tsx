@@ -67,7 +67,11 @@ type Row = {
 const share = (v: number): string => `${fixed(v * 100, 1)} %`;
 const hours = (minutes: number): string => words.light.hours(fixed(minutes / 60, 1));
 
-function rowsOf(light: PointLight | AreaLight, of: NeighbourLight, isUpright: boolean): readonly Row[] {
+function rowsOf(
+  light: PointLight | AreaLight,
+  of: NeighbourLight,
+  { isUpright, isPane }: { isUpright: boolean; isPane: boolean },
+): readonly Row[] {
   const date = dayAndMonth(of.date);
   if (light.kind === 'area')
     return [{ name: words.light.share(fixed(of.hours, 0), date), figure: light.share, write: share }];
@@ -80,7 +84,7 @@ function rowsOf(light: PointLight | AreaLight, of: NeighbourLight, isUpright: bo
       name: words.light.sunOn(date),
       figure: light.sunMinutes,
       write: hours,
-      note: words.light.level[light.level.after],
+      ...(isPane ? { note: words.light.level[light.level.after] } : {}),
     },
   ];
 }
@@ -117,7 +121,7 @@ function Figures({ light, of, isOwn }: FiguresProps) {
           </tr>
         </thead>
         <tbody>
-          {rowsOf(light, of, isUpright).map(({ name, figure, write, note }) => (
+          {rowsOf(light, of, { isUpright, isPane }).map(({ name, figure, write, note }) => (
             <tr key={name}>
               <th scope="row">
                 {name}

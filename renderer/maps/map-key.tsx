@@ -57,9 +57,10 @@ function Ramp({ scale }: { scale: MapScale }) {
   const stops = Array.from({ length: STOPS + 1 }, (_, i) => colour(i / STOPS));
   const x = (v: number): number => INSET + (isSigned ? (v + most) / (2 * most) : v / most) * (WIDTH - 2 * INSET);
   const write = (v: number): string => (isSigned ? signed(v, decimals) : fixed(v, decimals));
-  // On a signed scale every other number between the ends is left out where they would touch.
+  // Where they would touch every other number is left out, never the one in the middle of a signed scale.
   const isRoomy = ticks.length * (write(most).length + 2) * 7 < WIDTH;
-  const isShown = (i: number): boolean => isRoomy || i % 2 === ((ticks.length - 1) / 2) % 2 || i === 0;
+  const kept = isSigned ? ((ticks.length - 1) / 2) % 2 : 0;
+  const isShown = (i: number): boolean => isRoomy || i % 2 === kept;
   return (
     <div class="map-ramp">
       <div class="ramp" style={{ background: `linear-gradient(to right, ${stops.join(', ')})` }} aria-hidden="true" />

@@ -16,8 +16,8 @@ export function periodText(dates: ExposureDates): string {
   return dates.dates.length === 1 ? wholeDate(first) : words.maps.meanDay(first.slice(0, 4));
 }
 
-/** A number of the map as it is shown, with one decimal more than the scale's own numbers. */
+/** A number of the map as it is shown: two figures finer than the end of its scale, and never finer than a hundredth. */
 export const mapNumber = (scale: MapScale, value: number): string => {
-  const decimals = Math.min(2, scale.decimals + 1);
-  return (scale.isSigned ? signed : fixed)(value, scale.unit === 'Wh/m²' ? scale.decimals : decimals);
+  const decimals = scale.most >= 100 ? 0 : scale.most >= 2 ? 1 : 2;
+  return (scale.isSigned ? signed : fixed)(value, decimals);
 };

@@ -5,6 +5,8 @@ import { selection } from '../state/selection.ts';
 import { stage } from '../state/stage.ts';
 import { model, moment } from '../state/studies.ts';
 import { theme } from '../state/theme.ts';
+import { axesOf } from './camera.ts';
+import { crownOutline } from './crown.ts';
 import { driveMap } from './drive-map.ts';
 import { faceShadowLayer } from './face-shadow-layer.ts';
 import { Faces } from './faces.ts';
@@ -21,6 +23,14 @@ const hatchSpacing_m = computed(() => hatchSpacing(camera.value.scale));
 
 /** The ground that shadows are drawn on [m]. */
 const GROUND_m = 0;
+
+/** Outlines of crowns turn with the view: with more trees than this they would hold it up. */
+const MOST_OUTLINED = 400;
+
+const turn = computed(() => camera.value.turn_rad);
+const tilt = computed(() => camera.value.tilt_rad);
+/** Which way the view looks: it stays while the view only moves or zooms. */
+const direction = computed(() => axesOf({ ...camera.peek(), turn_rad: turn.value, tilt_rad: tilt.value }).into);
 
 /** The shadows of the moment on the ground; a map takes their place. */
 const shadowsShown = computed(() => (isMapOn.value ? null : (moment.value?.value.shadows ?? null)));
@@ -95,6 +105,15 @@ export function driveScene(scene: MassingScene): () => void {
         stage.value === 'after' &&
         moment.value?.scheme === model.value?.scheme;
       scene.setFaces('faceShadow', isShown ? faceShadowLayer(shadows, shapes, readPalette()) : new Faces());
+    }),
+    effect(() => {
+      theme.value;
+      const outlines = new Strokes();
+      const trees = model.value?.value.trees ?? [];
+      const colour = readPalette().edge;
+      if (trees.length <= MOST_OUTLINED)
+        for (const tree of trees) crownOutline(tree, direction.value, colour, outlines);
+      scene.setStrokes('crowns', outlines);
     }),
     driveMap(scene),
     effect(() => scene.setCamera(camera.value)),

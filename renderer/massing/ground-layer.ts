@@ -58,4 +58,4 @@ export function hatchRegions(
 }
 
 /** A hatch spacing on the ground that stays readable at a scale: a power of two of a metre, so that it changes seldom [m]. */
-export const hatchSpacing = (pixelsPerMetre: number): number => 2 ** Math.round(Math.log2(7 / pixelsPerMetre));
+export const hatchSpacing = (pixelsPerMetre: number): number => 2 ** Math.round(Math.log2(9 / pixelsPerMetre));

@@ -12,6 +12,7 @@ export const ORDER = [
   'faceShadow',
   'faceMap',
   'openings',
+  'crowns',
   'edges',
   'dashes',
 ] as const;
@@ -34,6 +35,7 @@ export const materials = (): { readonly [L in Layer]: Material } => ({
   groundMap: new MeshBasicMaterial({ side: DoubleSide, alphaTest: 0.5, ...ON_GROUND }),
   faceMap: new MeshBasicMaterial({ side: DoubleSide, alphaTest: 0.5, ...ON_FACES }),
   openings: new MeshBasicMaterial({ ...FLAT, polygonOffset: true, polygonOffsetFactor: 0.5, polygonOffsetUnits: 1 }),
+  crowns: new LineBasicMaterial({ vertexColors: true }),
   edges: new LineBasicMaterial({ vertexColors: true }),
   dashes: new LineDashedMaterial({ vertexColors: true }),
 });

@@ -214,7 +214,7 @@ type RuleProps = { from_min: number; to_min: number; x1: number; x2: number; y: 
 function HourRules({ from_min, to_min, x1, x2, y }: RuleProps) {
   const every = hourStep(Math.abs(y(60) - y(0)));
   const hours: number[] = [];
-  for (let h = Math.ceil(from_min / every) * every; h <= to_min; h += every) hours.push(h);
+  for (let h = (Math.floor(from_min / every) + 1) * every; h < to_min; h += every) hours.push(h);
   return (
     <>
       {hours.map((h) => (
