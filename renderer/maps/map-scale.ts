@@ -74,12 +74,13 @@ export function shadeOf(scale: MapScale, value: number | null): number {
 
 type Rgb8 = readonly [number, number, number];
 
-/** The colour table: red, green, blue and cover of each entry, 0..255. @param none the grey that says: none of it */
-export function colourTable(isSigned: boolean, none: Rgb8, isOnDark: boolean): Uint8Array {
+/** The colour table: red, green, blue and 255 of each entry. @param nothing of what has no number @param none the grey that says: none of it */
+export function colourTable(isSigned: boolean, nothing: Rgb8, none: Rgb8, isOnDark: boolean): Uint8Array {
   const table = new Uint8Array(256 * 4);
-  for (let i = NONE; i <= LAST; i++) {
+  for (let i = NOTHING; i <= LAST; i++) {
     const t = (i - FIRST) / (LAST - FIRST);
-    const rgb = i === NONE ? none : isSigned ? divergingRgb(2 * t - 1, isOnDark) : cividisRgb(t);
+    const scaled = isSigned ? divergingRgb(2 * t - 1, isOnDark) : cividisRgb(t);
+    const rgb = i === NOTHING ? nothing : i === NONE ? none : scaled;
     table.set([...rgb, 255], i * 4);
   }
   return table;

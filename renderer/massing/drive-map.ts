@@ -6,8 +6,11 @@ import { arrivals, quantity, side } from '../maps/map-state.ts';
 import { theme } from '../state/theme.ts';
 import { laidMap } from './laid-map.ts';
 import { paint } from './map-atlas.ts';
-import { readPalette } from './palette.ts';
+import { readPalette, type Rgb } from './palette.ts';
 import type { MassingScene } from './scene.ts';
+
+type Rgb8 = readonly [number, number, number];
+const bytesOf = (c: Rgb): Rgb8 => [Math.round(c[0] * 255), Math.round(c[1] * 255), Math.round(c[2] * 255)];
 
 /** Copies the map into the scene: what carries it when that changes, its colours whenever numbers arrive. @returns how to stop */
 export function driveMap(scene: MassingScene): () => void {
@@ -32,10 +35,11 @@ export function driveMap(scene: MassingScene): () => void {
         side.value,
       ];
       if (!laid?.atlas || shown === null || scale === null || of === 'off') return;
-      const [r, g, b] = readPalette()['up-grey'].map((v) => Math.round(v * 255)) as [number, number, number];
+      const palette = readPalette();
+      const [nothing, none] = [palette.plot, palette['up-grey']].map(bytesOf) as [Rgb8, Rgb8];
       const shade = (surface: number, row: number): number =>
         shadeOf(scale, valueAt(shown.picture, of, shownSide, surface, row));
-      const pixels = paint(laid.atlas, shade, colourTable(scale.isSigned, [r, g, b], isOnDark));
+      const pixels = paint(laid.atlas, shade, colourTable(scale.isSigned, nothing, none, isOnDark));
       scene.setPicture(pixels, laid.atlas.width, laid.atlas.height);
     }),
   ];

@@ -2,6 +2,7 @@ import { ShapeUtils, Vector2 } from 'three';
 import type { Ring, Vec3 } from '../../core/plane/vec.ts';
 import { type Cells, cellsOf } from '../maps/map-cells.ts';
 import { outlineOf } from '../maps/map-ask.ts';
+import type { Side } from '../maps/map-picture.ts';
 import type { ShownMap } from '../maps/map-state.ts';
 import { type Atlas, inAtlas, layOut } from './map-atlas.ts';
 
@@ -63,14 +64,15 @@ class Carrier {
 
 const EMPTY: Laid = { positions: new Float32Array(0), places: new Float32Array(0) };
 
-/** Lays a map out over its surfaces. */
-export function layMap({ model, picture }: ShownMap): LaidMap {
+/** Lays a map out over those of its surfaces that are there. */
+export function layMap({ model, picture }: ShownMap, side: Side): LaidMap {
   const outlines = picture.surfaces.map(({ surface }) => outlineOf(model, surface));
   const cells = picture.surfaces.map((surface, i) => cellsOf(surface, outlines[i] as Ring));
   const atlas = layOut(cells);
   if (atlas === null) return { cells, atlas, ground: EMPTY, faces: EMPTY };
   const [ground, faces] = [new Carrier(atlas), new Carrier(atlas)];
-  picture.surfaces.forEach(({ surface }, i) => {
+  picture.surfaces.forEach(({ surface, there }, i) => {
+    if (side === 'change' ? !(there.before && there.after) : !there[side]) return;
     if (surface.kind === 'wall') faces.upright(i, cells[i] as Cells);
     else (surface.kind === 'ground' ? ground : faces).level(i, cells[i] as Cells, outlines[i] as Ring);
   });

@@ -3,6 +3,7 @@ import {
   BufferGeometry,
   Color,
   DataTexture,
+  LinearSRGBColorSpace,
   LineDashedMaterial,
   LineSegments,
   Mesh,
@@ -10,7 +11,6 @@ import {
   OrthographicCamera,
   Raycaster,
   Scene,
-  SRGBColorSpace,
   Vector2,
   WebGLRenderer,
 } from 'three';
@@ -60,19 +60,22 @@ export class MassingScene {
   constructor(canvas: HTMLCanvasElement, above: HTMLCanvasElement) {
     const isSoftware = drawsInSoftware();
     this.#renderer = new WebGLRenderer({ canvas, antialias: !isSoftware, powerPreference: 'low-power' });
+    // Nothing is lit and nothing shows through: colours of the style sheet go to the screen as they are, which spares every
+    // pixel two powers.
+    this.#renderer.outputColorSpace = LinearSRGBColorSpace;
     this.#rest = isSoftware ? new StillPicture(above, (dx, dy) => this.#drawAside(dx, dy)) : null;
     above.hidden = true;
     this.#scene.matrixAutoUpdate = false;
   }
 
   setGround(colour: Rgb): void {
-    this.#scene.background = new Color().setRGB(...colour, 'srgb');
+    this.#scene.background = new Color().setRGB(...colour);
     this.invalidate();
   }
 
   setFaces(layer: Layer, faces: Faces): void {
     this.#owners.set(layer, faces.owners);
-    const colours = new BufferAttribute(linear(faces.colours), 3);
+    const colours = new BufferAttribute(faces.colours, 3);
     this.#put(layer, faces.positions, 'color', colours, (g) => new Mesh(g, this.#materials[layer]));
   }
 
@@ -88,14 +91,13 @@ export class MassingScene {
     }
   }
 
-  /** The cells of the map, a pixel each: red, green, blue and cover, from the lower left. */
+  /** The cells of the map, a pixel each: red, green, blue and 255, from the lower left. */
   setPicture(pixels: Uint8Array<ArrayBuffer>, width: number, height: number): void {
     if (this.#picture?.image.width === width && this.#picture.image.height === height) {
       this.#picture.image.data = pixels;
     } else {
       this.#picture?.dispose();
       this.#picture = new DataTexture(pixels, width, height);
-      this.#picture.colorSpace = SRGBColorSpace;
       for (const layer of ['groundMap', 'faceMap'] as const) {
         const material = this.#materials[layer] as MeshBasicMaterial;
         material.map = this.#picture;
@@ -107,7 +109,7 @@ export class MassingScene {
   }
 
   setStrokes(layer: Layer, strokes: Strokes): void {
-    const colours = new BufferAttribute(linear(strokes.colours), 3);
+    const colours = new BufferAttribute(strokes.colours, 3);
     this.#put(layer, strokes.positions, 'color', colours, (g) => {
       const lines = new LineSegments(g, this.#materials[layer]);
       if (this.#materials[layer] instanceof LineDashedMaterial) lines.computeLineDistances();
@@ -245,9 +247,4 @@ export class MassingScene {
     this.#rest?.dispose();
     this.#renderer.dispose();
   }
-}
-
-/** Style sheet colours are in sRGB; the card mixes and writes from linear light. */
-function linear(colours: Float32Array): Float32Array {
-  return colours.map((v) => (v <= 0.04045 ? v / 12.92 : ((v + 0.055) / 1.055) ** 2.4));
 }
