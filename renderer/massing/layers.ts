@@ -1,14 +1,17 @@
 import { DoubleSide, LineBasicMaterial, LineDashedMaterial, type Material, MeshBasicMaterial } from 'three';
 
-/** The layers of the drawing from the ground up. Ground layers are painted in this order; solids hide what lies behind them. */
+/**
+ * The layers of the drawing in the order in which they are painted. Solids come first, so that no pixel of the ground is painted
+ * that they hide; what lies on the ground is painted from the plot up, what lies on faces after those.
+ */
 export const ORDER = [
+  'solids',
   'plot',
   'groundMap',
   'shadow',
   'added',
   'hatch',
   'boundary',
-  'solids',
   'faceShadow',
   'faceMap',
   'openings',
@@ -19,7 +22,8 @@ export const ORDER = [
 export type Layer = (typeof ORDER)[number];
 
 const FLAT = { vertexColors: true, side: DoubleSide } as const;
-const ON_GROUND = { depthTest: false, depthWrite: false } as const;
+/** What lies on the ground has no thickness: later layers lie over earlier ones. */
+const ON_GROUND = { depthWrite: false } as const;
 /** What lies flat on faces: nearer than they are, farther than what stands proud of them. */
 const ON_FACES = { polygonOffset: true, polygonOffsetFactor: 1, polygonOffsetUnits: 2, depthWrite: false } as const;
 
