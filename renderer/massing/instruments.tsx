@@ -1,13 +1,16 @@
 import { computed } from '@preact/signals';
+import type { Model } from '../../core/form/model.ts';
 import type { Vec3 } from '../../core/plane/vec.ts';
 import { model, moment } from '../state/studies.ts';
 import { scheme } from '../state/document.ts';
+import { type Face, faceOf } from '../state/faces.ts';
+import { faceName, receptorName } from '../state/names.ts';
 import { selection } from '../state/selection.ts';
 import { stage } from '../state/stage.ts';
 import { fixed, percent } from '../ui/format.ts';
 import { words } from '../words/words.ts';
 import { axesOf, barLength, project } from './camera.ts';
-import { selectionEdges, windowCorners } from './solids-layer.ts';
+import { selectionEdges, wallCorners, windowCorners } from './solids-layer.ts';
 import { camera, size } from './view-state.ts';
 
 const BAR_MOST_px = 120;
@@ -124,6 +127,8 @@ const tag = computed<Tag | null>(() => {
       line: `${fixed(room.floor_m2, 1)} m²`,
     };
   }
+  if (chosen?.kind === 'face') return faceTag(shapes, faceOf(id));
+  if (chosen?.kind === 'receptor') return receptorTag(shapes, id);
   if (chosen?.kind === 'window') {
     const w = shapes.windows.find((other) => other.id === id);
     if (w === undefined) return null;
@@ -137,6 +142,35 @@ const tag = computed<Tag | null>(() => {
   }
   return null;
 });
+
+function faceTag(shapes: Model, face: Face): Tag | null {
+  const solid = shapes.solids.find((s) => s.id === face.block);
+  if (solid === undefined || (face.kind === 'wall' && face.wall >= solid.outline.length)) return null;
+  const [x, y] = middle(solid.outline);
+  const corners = face.kind === 'wall' ? wallCorners(solid, face.wall) : null;
+  const at: Vec3 = corners === null ? [x, y, solid.top_m] : between(corners[2] as Vec3, corners[3] as Vec3);
+  return { at, title: faceName(shapes, face), line: '' };
+}
+
+function receptorTag(shapes: Model, id: string): Tag | null {
+  const receptor = shapes.receptors.find((r) => r.id === id);
+  if (receptor === undefined) return null;
+  const sun = moment.value?.value;
+  const lit =
+    receptor.kind === 'area'
+      ? sun?.areas.find((a) => a.receptor === id)?.[stage.value].share
+      : sun?.neighbours.find((n) => n.receptor === id)?.[stage.value];
+  const line = lit === undefined ? '' : words.massing.inSun(percent(lit));
+  const title = receptorName(receptor);
+  if (receptor.kind === 'point') return { at: receptor.at, title, line };
+  if (receptor.kind === 'area') {
+    const [x, y] = middle(receptor.outline);
+    return { at: [x, y, receptor.level], title, line };
+  }
+  if (receptor.panel === undefined) return null;
+  const corners = windowCorners(receptor.panel);
+  return { at: between(corners[2] as Vec3, corners[3] as Vec3), title, line };
+}
 
 /** Halfway along the head of a window. */
 const between = (a: Vec3, b: Vec3): Vec3 => [(a[0] + b[0]) / 2, (a[1] + b[1]) / 2, (a[2] + b[2]) / 2];
