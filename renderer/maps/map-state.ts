@@ -103,6 +103,19 @@ let lastTook_ms = 0;
 let inHand: { readonly key: string; readonly scheme: Scheme } | null = null;
 let waiting: ReturnType<typeof setTimeout> | null = null;
 
+/** Drawings hear of what arrives so many times a second at most: each time they are coloured anew. */
+const ARRIVE_EVERY_ms = 150;
+let isArriving = false;
+
+function arrive(): void {
+  if (isArriving) return;
+  isArriving = true;
+  setTimeout(() => {
+    isArriving = false;
+    arrivals.value++;
+  }, ARRIVE_EVERY_ms);
+}
+
 /** Works out the map that is asked for, or takes it from memory. */
 export async function workOutMap(): Promise<void> {
   const [of, shapes] = [scheme.peek(), model.peek()];
@@ -137,15 +150,14 @@ export async function workOutMap(): Promise<void> {
       shown = { ...facts, picture, meanOf };
       map.value = shown;
     },
-    onTile: () => {
-      arrivals.value++;
-    },
+    onTile: arrive,
     onProgress: (done, total) => {
       mapJob.value = { kind: 'working', done, total };
     },
   });
   if (asked.peek() !== key || scheme.peek() !== of) return;
   inHand = null;
+  arrivals.value++;
   mapJob.value = outcome.kind === 'failed' ? outcome : { kind: outcome.kind === 'done' ? 'idle' : 'stopped' };
   if (outcome.kind !== 'done' || shown === null) return;
   lastTook_ms = performance.now() - began;
