@@ -1,4 +1,5 @@
 import { InvalidArgumentError } from 'commander';
+import { readScale } from '../../core/sheet/sheet-units.ts';
 
 /** Readers of option values. Each refuses with what it wants instead; the frame adds the name of the option. */
 
@@ -73,3 +74,13 @@ export const times = (text: string, before: readonly string[] | undefined): read
     return `${String(Math.floor(minute / 60)).padStart(2, '0')}:${String(minute % 60).padStart(2, '0')}`;
   }),
 ];
+
+/** A scale, as a ratio or as a foot rule says it. */
+export function scale(text: string): number {
+  const ratio = readScale(text);
+  if (!(ratio >= 1 && ratio <= 100_000))
+    throw new InvalidArgumentError(
+      `It must be a scale from 1:1 to 1:100000, such as 500, 1:500, 1"=40' or 1/16"=1'-0".`,
+    );
+  return ratio;
+}

@@ -26,6 +26,7 @@ type Options = SheetFiles & {
   readonly portrait?: true;
   readonly perPage?: number;
   readonly number?: string;
+  readonly units?: 'metric' | 'imperial';
 };
 
 /** Moments of one call: more would be days of drawing, and a mistake. */
@@ -71,6 +72,7 @@ async function sheetOf(
     paper: options.paper,
     landscape: options.portrait !== true,
     ...(options.perPage === undefined ? {} : { perPage: options.perPage }),
+    ...(options.units === undefined ? {} : { units: options.units }),
     ...(options.number === undefined ? {} : { number: options.number }),
     drawn: today(),
     engine: ENGINE_VERSION,

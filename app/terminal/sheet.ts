@@ -2,7 +2,7 @@ import { type Command, Option } from 'commander';
 import { faultLine } from '../../core/scheme/fault.ts';
 import type { Scheme, SheetSet } from '../../core/scheme/schema.ts';
 import type { Declare } from './declare.ts';
-import { dates, number, times, whole } from './option-values.ts';
+import { dates, scale, times, whole } from './option-values.ts';
 import { progress } from './progress.ts';
 import { accepted, readLimits, readScheme } from './read-input.ts';
 import { Refusal } from './refusal.ts';
@@ -20,6 +20,7 @@ type Options = SheetFiles & {
   readonly portrait?: true;
   readonly perPage?: number;
   readonly number?: string;
+  readonly units?: 'metric' | 'imperial';
 };
 
 const HELP = `
@@ -62,14 +63,15 @@ async function setOf(scheme: Scheme, what: string, options: Options): Promise<Sh
     );
   }
   const from: SheetSet = saved ?? blank(what);
-  const { on, at, window, block, scale, paper, portrait, perPage } = options;
+  const { on, at, window, block, paper, portrait, perPage } = options;
   return {
     ...from,
     ...(on === undefined ? {} : { dates: [...on] }),
     ...(at === undefined ? {} : { times: [...at] }),
     ...(window === undefined ? {} : { window }),
     ...(block === undefined ? {} : { block }),
-    ...(scale === undefined ? {} : { scale }),
+    ...(options.scale === undefined ? {} : { scale: options.scale }),
+    ...(options.units === undefined ? {} : { units: options.units }),
     ...(paper === undefined ? {} : { paper }),
     ...(portrait === undefined ? {} : { landscape: false }),
     ...(perPage === undefined ? {} : { perPage }),
@@ -83,7 +85,8 @@ export const paperOptions = (command: Command): Command =>
     .option('--pdf <FILE>', 'write the sheets as PDF')
     .option('--svg <FILE>', 'write the sheets as SVG')
     .option('--png <FILE>', 'write the sheets as PNG')
-    .option('--scale <N>', 'scale of the drawing, such as 500 for 1:500', number(1, 100_000, 'a scale'))
+    .option('--scale <SCALE>', `scale of the drawing, such as 500, 1:500 or 1"=40'`, scale)
+    .addOption(new Option('--units <UNITS>', 'units of the drawing').choices(['metric', 'imperial']))
     .option('--portrait', 'stand the paper upright')
     .option('--per-page <N>', 'diagrams a page, at most', whole(1, 60, 'diagrams'))
     .option('--number <TEXT>', 'drawing number for the title block')

@@ -12,7 +12,7 @@ export type Quantity = { readonly name: string; readonly unit: string };
 /** Where the sun is up in the period and never on it: a grey of its own, so that dark blue always means a little sun. */
 export const NEVER = '#d9d5cc';
 /** Parts of the colour scale, at most. */
-const TICKS = 6;
+const TICKS = 8;
 
 /** The end of the colour scale: the first tick at or above the highest value. @param values one list a map */
 export function scaleEnd(values: readonly Float64Array[]): number {

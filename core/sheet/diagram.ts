@@ -4,7 +4,8 @@ import type { Mark, Mm } from './drawing.ts';
 import { FRAME, OVER, SOFT, WHITE } from './ink.ts';
 import { leading, type Piece, paragraph, rect, words } from './marks.ts';
 import { measure, READ } from './measure.ts';
-import { area, fixed, percent } from './numerals.ts';
+import { fixed, percent } from './numerals.ts';
+import { areaText, type SheetUnits } from './sheet-units.ts';
 import { plan } from './plan.ts';
 import { inFrame, onPage, type PlanView } from './plan-view.ts';
 import { treeShadows } from './tree-shadow.ts';
@@ -21,7 +22,15 @@ export const STAR_NOTE = '* The added shadow runs on past the frame; its whole a
  * The lines under a diagram: when, where the sun stands, what the proposal adds, how much of each area is left in sun.
  * @param star  whether the added shadow runs on past the frame
  */
-export function caption(moment: ShadowMoment, zone: string, star: boolean, x: Mm, top: Mm, width: Mm): Piece {
+export function caption(
+  moment: ShadowMoment,
+  zone: string,
+  star: boolean,
+  x: Mm,
+  top: Mm,
+  width: Mm,
+  units: SheetUnits = 'metric',
+): Piece {
   const marks: Mark[] = [];
   let y = top;
   const put = (text: string, style: Parameters<typeof paragraph>[4] = {}): void => {
@@ -29,7 +38,7 @@ export function caption(moment: ShadowMoment, zone: string, star: boolean, x: Mm
     marks.push(...piece.marks);
     y += piece.height;
   };
-  const added = moment.change ? `added ${area(moment.change.added.area_m2)}` : '';
+  const added = moment.change ? `added ${areaText(moment.change.added.area_m2, units)}` : '';
   const bold = (text: string): Mm => measure(text, READ, 'semibold');
   put(moment.text, { face: 'semibold' });
   if (added !== '' && bold(moment.text) + bold(added) + 2 <= width) {
@@ -53,14 +62,20 @@ export function caption(moment: ShadowMoment, zone: string, star: boolean, x: Mm
 }
 
 /** One moment: its plan in a frame and its caption under it. */
-export function diagram(view: PlanView, model: Model, zone: string, moment: ShadowMoment): readonly Mark[] {
+export function diagram(
+  view: PlanView,
+  model: Model,
+  zone: string,
+  moment: ShadowMoment,
+  units: SheetUnits = 'metric',
+): readonly Mark[] {
   const { x, y, width, height } = view.frame;
   const crowns = moment.change ? treeShadows(model, moment.azimuth_deg, moment.altitude_deg) : [];
-  const marks: Mark[] = [...plan(view, model, moment.change, crowns)];
+  const marks: Mark[] = [...plan(view, model, moment.change, crowns, units)];
   if (!moment.change) marks.push(...tag('sun below the horizon', x, y + height));
   marks.push(rect(x, y, width, height, { stroke: FRAME }));
   const star = moment.change !== null && runsOn(view, moment.change.added);
-  marks.push(...caption(moment, zone, star, x, y + height + 2, width).marks);
+  marks.push(...caption(moment, zone, star, x, y + height + 2, width, units).marks);
   return [{ kind: 'group', label: moment.text, marks }];
 }
 

@@ -9,7 +9,8 @@ import { SOFT } from './ink.ts';
 import { paragraph } from './marks.ts';
 import { fixed } from './numerals.ts';
 import { finishPages, type PaperName, type Rect } from './paper.ts';
-import { SCALES, scaleWords } from './scale.ts';
+import { standardScales } from './scale.ts';
+import { type SheetUnits, scaleWords } from './sheet-units.ts';
 import { scaleBar } from './scale-marks.ts';
 import { DRAWING_CAUTIONS, pageAreas, placeNotes } from './side-panel.ts';
 import { shortHash, titleBlock } from './title-block.ts';
@@ -31,10 +32,14 @@ export type ElevationSheetInput = {
   readonly engine: string;
   readonly hash: string;
   readonly language?: string;
+  /** Absent: metric. */
+  readonly units?: SheetUnits;
 };
 
 const GAP: Mm = 10;
 const CAPTION: Mm = 13;
+/** A wall's name and numbers take so much at least. */
+const NAMED: Mm = 62;
 
 type Placed = { readonly map: ElevationMap; readonly page: number; readonly x: Mm; readonly bottom: Mm };
 
@@ -56,13 +61,14 @@ export function elevationSheet(input: ElevationSheetInput): Checked<Document> {
       ],
     };
   }
-  const wanted = input.scale === null ? SCALES : [input.scale];
+  const scales = standardScales(input.units ?? 'metric');
+  const wanted = input.scale === null ? scales : [input.scale];
   const packed = wanted.map((scale) => ({ scale, placed: pack(maps, areas.drawing, scale) }));
   const one = packed.find((p) => p.placed?.every((q) => q.page === 0)) ?? packed.find((p) => p.placed !== null);
   if (!one?.placed) {
-    const fitting = SCALES.find((s) => pack(maps, areas.drawing, s) !== null);
-    const message = `the widest or highest wall does not fit on ${paper} at ${wanted.map(scaleWords).join(', ')}`;
-    const cure = fitting ? `${scaleWords(fitting)} fits, or take larger paper` : 'take larger paper';
+    const fitting = scales.find((s) => pack(maps, areas.drawing, s) !== null);
+    const message = `the widest or highest wall does not fit on ${paper} at ${wanted.map((s) => scaleWords(s, input.units)).join(', ')}`;
+    const cure = fitting ? `${scaleWords(fitting, input.units)} fits, or take larger paper` : 'take larger paper';
     return { ok: false, faults: [{ level: 'error', code: 'scale-too-large', place: '', message, cure }] };
   }
   const { scale, placed } = one;
@@ -96,7 +102,8 @@ function pack(maps: readonly ElevationMap[], area: Rect, scale: number): readonl
   for (const map of maps) {
     const [width, height] = [map.panel.width_m * k, map.panel.height_m * k];
     if (width + 8 > area.width || height + CAPTION > area.height) return null;
-    if (x + width + 4 > area.x + area.width) {
+    const wide = Math.max(width, NAMED);
+    if (x + wide + 4 > area.x + area.width && x > area.x + 4) {
       x = area.x + 4;
       top += deepest + GAP;
       deepest = 0;
@@ -107,7 +114,7 @@ function pack(maps: readonly ElevationMap[], area: Rect, scale: number): readonl
     }
     placed.push({ map, page, x, bottom: top + height });
     deepest = Math.max(deepest, height + CAPTION);
-    x += Math.max(width, 62) + GAP;
+    x += wide + GAP;
   }
   return levelled(placed, k);
 }
@@ -121,7 +128,7 @@ function levelled(placed: readonly Placed[], k: number): readonly Placed[] {
 }
 
 function drawn(p: Placed, input: ElevationSheetInput, scale: number, most: number): readonly Mark[] {
-  const width = Math.max(62, (p.map.panel.width_m * 1000) / scale);
+  const width = Math.max(NAMED, (p.map.panel.width_m * 1000) / scale);
   const title = paragraph(p.map.title, p.x, p.bottom + 2, width, { face: 'semibold' }, 1);
   const values = [...p.map.value].filter((_, i) => p.map.covered?.[i] !== 1);
   const mean = values.reduce((a, b) => a + b, 0) / Math.max(1, values.length);
@@ -136,7 +143,7 @@ function drawn(p: Placed, input: ElevationSheetInput, scale: number, most: numbe
 }
 
 function panel(input: ElevationSheetInput, area: Rect, scale: number, most: number): readonly Mark[] {
-  const bar = scaleBar(area.x, area.y, area.width - 4, scale, input.paper);
+  const bar = scaleBar(area.x, area.y, area.width - 4, scale, input.paper, input.units);
   const key = colourKey(area.x, area.y + bar.height + 3, area.width, most, input.quantity);
   const facts = {
     subject: `Facades, ${input.quantity.name}`,
@@ -144,7 +151,7 @@ function panel(input: ElevationSheetInput, area: Rect, scale: number, most: numb
     date: input.drawn,
     engine: input.engine,
     hash: input.hash,
-    scale: `${scaleWords(scale)} on ${input.paper}`,
+    scale: `${scaleWords(scale, input.units)} on ${input.paper}`,
   };
   const height = titleBlock(area.x, 0, area.width, input.scheme, facts).height;
   const foot = area.y + area.height - height;
@@ -154,7 +161,7 @@ function panel(input: ElevationSheetInput, area: Rect, scale: number, most: numb
       heading: 'How it was worked out',
       lines: [
         ...input.method,
-        'Walls are seen from outside. Figures stand in the middle of the cells that they are of.',
+        'Walls are seen from outside. Figures stand in the middle of the cells that they are of. What is built against has no figure and a hatch.',
       ],
     },
     { heading: DRAWING_CAUTIONS.heading, lines: [CAUTIONS[0] as string] },

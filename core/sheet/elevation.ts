@@ -3,8 +3,8 @@ import { dot, minus } from '../plane/vec.ts';
 import type { ExposureGrid } from '../shade/exposure-grid.ts';
 import { cividis } from './cividis.ts';
 import { NEVER } from './colour-key.ts';
-import type { Mark, Mm } from './drawing.ts';
-import { EXISTING_LINE, FINE, INK, WHITE } from './ink.ts';
+import type { Hatch, Mark, Mm } from './drawing.ts';
+import { EXISTING_LINE, FINE, INK, SOFT, WHITE } from './ink.ts';
 import { line, rect, words } from './marks.ts';
 import { measure, READ, SMALL } from './measure.ts';
 import { fixed } from './numerals.ts';
@@ -23,7 +23,8 @@ export type ElevationMap = {
 };
 
 /** Where there is no wall to the air. */
-export const BUILT_OVER = '#ffffff';
+const BUILT_OVER = '#ffffff';
+const BUILT_OVER_HATCH: Hatch = { angle_deg: 45, spacing: 3, stroke: { colour: SOFT, width: 0.13 } };
 
 /** Cells reach this far under their neighbours, so that viewers show no seams between them. */
 const UNDER: Mm = 0.06;
@@ -46,19 +47,22 @@ export function elevation(
   grid.cell.forEach((cell, i) => {
     const [column, row] = [cell % grid.across, Math.floor(cell / grid.across)];
     const fill = cellColour(map, i, most);
-    marks.push(rect(x + column * cw, bottom - (row + 1) * ch, cw + UNDER, ch + UNDER, { fill }));
+    const hatch = map.covered?.[i] === 1 ? { hatch: BUILT_OVER_HATCH } : {};
+    marks.push(rect(x + column * cw, bottom - (row + 1) * ch, cw + UNDER, ch + UNDER, { fill, ...hatch }));
   });
   const [width, height] = [panel.width_m * k, panel.height_m * k];
   marks.push(
     rect(x + width, bottom - height - 1, 1, height + 2, { fill: WHITE }),
     rect(x, bottom, width + 1, 1, { fill: WHITE }),
   );
+  const frames: Frame[] = [];
   for (const w of windowsOn(panel, model.windows)) {
     const [wx, wy] = [x + w.x * k, bottom - (w.y + w.window.height_m) * k];
     const [ww, wh] = [w.window.width_m * k, w.window.height_m * k];
+    frames.push([wx, wy, wx + ww, wy + wh]);
     marks.push(rect(wx, wy, ww, wh, { stroke: { colour: WHITE, width: 0.5 } }), rect(wx, wy, ww, wh, { stroke: FINE }));
   }
-  marks.push(...figures(map, x, bottom, k, most));
+  marks.push(...figures(map, x, bottom, k, most, frames));
   marks.push(rect(x, bottom - height, width, height, { stroke: EXISTING_LINE }));
   marks.push(line(x - 3, bottom, x + width + 3, bottom, { colour: INK, width: 0.5 }));
   return [{ kind: 'group', label: map.title, marks }];
@@ -70,8 +74,25 @@ function cellColour(map: ElevationMap, i: number, most: number): string {
   return value > 0 ? cividis(value / most) : NEVER;
 }
 
+/** A window on the page: left, top, right, bottom. */
+type Frame = readonly [Mm, Mm, Mm, Mm];
+
+/** Whether a box crosses the outline of a frame: it neither lies wholly inside nor wholly outside. */
+function cutsLine([left, top, right, bottom]: Frame, x0: Mm, y0: Mm, x1: Mm, y1: Mm): boolean {
+  const isApart = x1 < left || x0 > right || y1 < top || y0 > bottom;
+  const isInside = x0 > left && x1 < right && y0 > top && y1 < bottom;
+  return !isApart && !isInside;
+}
+
 /** Values as figures on a coarser grid: the map is to be read without its colours too. */
-function figures(map: ElevationMap, x: Mm, bottom: Mm, k: number, most: number): readonly Mark[] {
+function figures(
+  map: ElevationMap,
+  x: Mm,
+  bottom: Mm,
+  k: number,
+  most: number,
+  frames: readonly Frame[],
+): readonly Mark[] {
   const { grid } = map;
   const [cw, ch] = [grid.cell_m[0] * k, grid.cell_m[1] * k];
   const [stepX, stepY] = [Math.max(1, Math.ceil(FIGURE_SPACE / cw)), Math.max(1, Math.ceil(FIGURE_SPACE / 1.6 / ch))];
@@ -86,9 +107,10 @@ function figures(map: ElevationMap, x: Mm, bottom: Mm, k: number, most: number):
     const half = measure(text, size) / 2 + 0.4;
     if ((column + 0.5) * cw < half || (grid.across - column - 0.5) * cw < half) return;
     if ((row + 0.5) * ch < size * 0.5 || (grid.up - row - 0.5) * ch < size * 0.5) return;
+    const [cx, cy] = [x + (column + 0.5) * cw, bottom - (row + 0.5) * ch];
+    if (frames.some((f) => cutsLine(f, cx - half, cy - size * 0.45, cx + half, cy + size * 0.45))) return;
     const dark = value > 0 && value / most < 0.5;
-    const at = [x + (column + 0.5) * cw, bottom - (row + 0.5) * ch + size * 0.35] as const;
-    marks.push(words(text, at[0], at[1], { size, anchor: 'middle', colour: dark ? WHITE : INK }));
+    marks.push(words(text, cx, cy + size * 0.35, { size, anchor: 'middle', colour: dark ? WHITE : INK }));
   });
   return marks;
 }

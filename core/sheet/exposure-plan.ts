@@ -1,7 +1,7 @@
 import type { Model, Stage } from '../form/model.ts';
 import { stands } from '../form/stands.ts';
 import { contains } from '../plane/ring.ts';
-import type { Point } from '../plane/vec.ts';
+import type { Point, Ring } from '../plane/vec.ts';
 import type { Checked } from '../scheme/fault.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import { colourKey, type Quantity, scaleEnd } from './colour-key.ts';
@@ -14,7 +14,8 @@ import { fixed } from './numerals.ts';
 import { finishPages, type PaperName, type Rect } from './paper.ts';
 import { BLOCK_LOOK } from './plan.ts';
 import { inFrame, onPage, type PlanView } from './plan-view.ts';
-import { chooseScale, scaleWords } from './scale.ts';
+import { chooseScale } from './scale.ts';
+import { type SheetUnits, scaleWords } from './sheet-units.ts';
 import { northPoint, scaleBar } from './scale-marks.ts';
 import { type Areas, DRAWING_CAUTIONS, pageAreas, placeNotes } from './side-panel.ts';
 import { shortHash, titleBlock } from './title-block.ts';
@@ -44,6 +45,8 @@ export type ExposurePlanInput = {
   readonly engine: string;
   readonly hash: string;
   readonly language?: string;
+  /** Absent: metric. */
+  readonly units?: SheetUnits;
 };
 
 /** What the sheet is called. */
@@ -65,6 +68,7 @@ export function exposurePlanScale(
   asked: number | null,
   paper: PaperName,
   landscape: boolean,
+  units: SheetUnits = 'metric',
 ): ReturnType<typeof chooseScale> {
   const frame = planFrame(pageAreas(paper, landscape));
   const size = [model.extent[2] - model.extent[0], model.extent[3] - model.extent[1]] as const;
@@ -74,13 +78,30 @@ export function exposurePlanScale(
     size,
     [frame.width - 4, frame.height - 4],
     `${paper} ${landscape ? 'landscape' : 'portrait'}`,
+    units,
   );
+}
+
+/** The ground that a plan shows at a scale: all round the scheme as far as its highest top, where the paper has room. */
+export function exposurePlanGround(model: Model, scale: number, paper: PaperName, landscape: boolean): Ring {
+  const frame = planFrame(pageAreas(paper, landscape));
+  const [x0, y0, x1, y1] = model.extent;
+  const reach = Math.max(0, ...model.solids.map((s) => s.top_m));
+  const along = (low: number, high: number, mm: Mm): number =>
+    Math.max(0, Math.min(reach, ((mm * scale) / 1000 - (high - low)) / 2));
+  const [dx, dy] = [along(x0, x1, frame.width), along(y0, y1, frame.height)];
+  return [
+    [x0 - dx, y0 - dy],
+    [x1 + dx, y0 - dy],
+    [x1 + dx, y1 + dy],
+    [x0 - dx, y1 + dy],
+  ];
 }
 
 /** Maps over all roofs and the ground as a plan to scale, one page a stage, with the numbers of their colours beside them. */
 export function exposurePlan(input: ExposurePlanInput): Checked<Document> {
   const { model, paper, landscape, stages } = input;
-  const scale = exposurePlanScale(model, input.scale, paper, landscape);
+  const scale = exposurePlanScale(model, input.scale, paper, landscape, input.units);
   if (typeof scale !== 'number') return { ok: false, faults: [scale] };
   const areas = pageAreas(paper, landscape);
   const frame = planFrame(areas);
@@ -220,7 +241,14 @@ function panel(input: ExposurePlanInput, areas: Areas, scale: number, most: numb
   const last = areas.panel.at(-1) as Rect;
   const radius = 8;
   const marks: Mark[] = [northPoint(first.x + radius, first.y + radius * 1.34 + 4, radius, input.scheme.site.north)];
-  const bar = scaleBar(first.x + radius * 2 + 8, first.y + 3, first.width - radius * 2 - 8, scale, input.paper);
+  const bar = scaleBar(
+    first.x + radius * 2 + 8,
+    first.y + 3,
+    first.width - radius * 2 - 8,
+    scale,
+    input.paper,
+    input.units,
+  );
   const key = colourKey(first.x, first.y + radius * 2.7 + 6, first.width, most, input.quantity);
   marks.push(...bar.marks, ...key.marks);
   const facts = {
@@ -229,7 +257,7 @@ function panel(input: ExposurePlanInput, areas: Areas, scale: number, most: numb
     date: input.drawn,
     engine: input.engine,
     hash: input.hash,
-    scale: `${scaleWords(scale)} on ${input.paper}`,
+    scale: `${scaleWords(scale, input.units)} on ${input.paper}`,
   };
   const height = titleBlock(last.x, 0, last.width, input.scheme, facts).height;
   const foot = last.y + last.height - height;

@@ -62,14 +62,22 @@ export function levelMapMarks(view: PlanView, map: LevelMap, most: number): read
     }
     close(grid.across);
   }
-  return [...patches].map(([fill, runs]) => ({
+  const ground = mapColour(meanOf(map), most);
+  const base: Mark = { kind: 'path', runs: [outline.map((p) => onPage(view, p))], closed: true, fill: ground };
+  const cells = [...patches].map(([fill, runs]) => ({
     kind: 'path' as const,
     runs: runs.filter((r) => r.length > 2),
     closed: true,
     fill,
-    // A hair of the same colour closes the seams that viewers leave between neighbours.
-    stroke: { colour: fill, width: 0.06 },
+    stroke: { colour: fill, width: 0.08 },
   }));
+  return [base, ...cells];
+}
+
+/** The mean of what is not built over; it lies under the cells, so that viewers show no white seams between them. */
+function meanOf(map: LevelMap): number {
+  const values = [...map.value].filter((_, i) => map.covered[i] !== 1);
+  return values.reduce((a, b) => a + b, 0) / Math.max(1, values.length);
 }
 
 const box = (x0: number, y0: number, x1: number, y1: number): Ring => [

@@ -7,6 +7,7 @@ import { measure, READ } from './measure.ts';
 import { percent, place } from './numerals.ts';
 import { contentRect, finishPages, type Rect } from './paper.ts';
 import { CAUTIONS } from '../limits/cautions.ts';
+import { dateText } from '../sun/civil.ts';
 import { type Column, table } from './table.ts';
 import { shortHash } from './title-block.ts';
 
@@ -57,7 +58,7 @@ export function lightReport(input: LightReportInput): Document {
     `Site ${place(scheme.site.latitude, scheme.site.longitude)}, ${scheme.site.zone}. Sun at its true altitude without refraction, a cloudless sky for sun time; sky light under the overcast sky of the CIE. Before: what stands now. After: with the proposal, without what is removed.`,
   );
   flow.say(
-    `Hours of probable sun are shares of the ${light.openHours.toFixed(0)} h that an open place has in ${light.year}. Sun on ground counts a place that has the sun for ${light.hours} h or more on ${light.date}.`,
+    `Hours of probable sun are shares of the ${light.openHours.toFixed(0)} h that an open place has in ${light.year}. Sun on ground counts a place that has the sun for ${light.hours} h or more on ${dateText(light.date)}.`,
   );
   if (light.receptors.some((r) => r.kind !== 'area')) {
     flow.say(
@@ -68,7 +69,7 @@ export function lightReport(input: LightReportInput): Document {
   flow.heading('Cautions', 30);
   for (const caution of CAUTIONS) {
     flow.say(caution);
-    flow.gap(1.5);
+    flow.gap(0.8);
   }
   return {
     title: [scheme.title, title].filter((t) => t !== '').join(' – '),
@@ -93,7 +94,7 @@ function groundTable(flow: Flow, light: LightResult, names: ReadonlyMap<string, 
       : [],
   );
   if (rows.length === 0) return;
-  flow.heading(`Open ground with ${light.hours} h of sun or more on ${light.date}`, 30);
+  flow.heading(`Open ground with ${light.hours} h of sun or more on ${dateText(light.date)}`, 30);
   table(flow, AREA_COLUMNS, rows);
   flow.say('Shares of the open ground of each area; ground under buildings is left out.', { colour: SOFT });
   flow.gap(3);
@@ -121,8 +122,8 @@ function windowTable(flow: Flow, light: LightResult, names: ReadonlyMap<string, 
       columns,
       places.map((r) => [r.id, names.get(r.id) ?? '', unit(of(r).before), unit(of(r).after), percent(of(r).kept)]),
     );
-    flow.say(note, { colour: SOFT });
-    flow.gap(2);
+    if (note !== '') flow.say(note, { colour: SOFT });
+    flow.gap(1.5);
   };
   const tenths = (v: number): string => `${(v * 100).toFixed(1)}\u00a0%`;
   put(
@@ -131,14 +132,14 @@ function windowTable(flow: Flow, light: LightResult, names: ReadonlyMap<string, 
     (r) => r.skyComponent,
     tenths,
   );
-  put('Probable sun of the year', 'Share of the hours of an open place.', (r) => r.annual, tenths);
+  put('Probable sun of the year, share of the hours of an open place', '', (r) => r.annual, tenths);
   put(
     'Probable sun of the winter half',
     'Share of the year’s hours of an open place that fall in the winter half.',
     (r) => r.winter,
     tenths,
   );
-  put(`Sun time on ${light.date}`, 'Cloudless sky.', (r) => r.sunMinutes, hoursAndMinutes);
+  put(`Sun time on ${dateText(light.date)}, cloudless sky`, '', (r) => r.sunMinutes, hoursAndMinutes);
 }
 
 const hoursAndMinutes = (minutes: number): string =>

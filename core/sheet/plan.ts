@@ -26,6 +26,7 @@ import {
 import { rect, words } from './marks.ts';
 import { measure, READ, SMALL } from './measure.ts';
 import { inFrame, onPage, type PlanView } from './plan-view.ts';
+import { planHeight, type SheetUnits } from './sheet-units.ts';
 
 type Look = { readonly fill?: string; readonly stroke: Stroke };
 
@@ -89,8 +90,8 @@ function blocks(view: PlanView, solids: readonly Solid[]): readonly Mark[] {
 }
 
 /** Height of a block in metres as it stands on a drawing: its top, and its underside where it floats. */
-export const heightWords = (s: Solid): string =>
-  s.base_m > 0.005 ? `${s.base_m.toFixed(1)}–${s.top_m.toFixed(1)}` : s.top_m.toFixed(1);
+export const heightWords = (s: Solid, units: SheetUnits = 'metric'): string =>
+  s.base_m > 0.005 ? `${planHeight(s.base_m, units)}–${planHeight(s.top_m, units)}` : planHeight(s.top_m, units);
 
 /** Whether a line of text centred on a place lies inside an outline on the page, with a little air. */
 function holds(ring: readonly (readonly [Mm, Mm])[], x: Mm, y: Mm, half: Mm, up: Mm, down: Mm): boolean {
@@ -106,6 +107,7 @@ function holds(ring: readonly (readonly [Mm, Mm])[], x: Mm, y: Mm, half: Mm, up:
 export function blockLabels(
   view: PlanView,
   solids: readonly Solid[],
+  units: SheetUnits = 'metric',
 ): { readonly marks: readonly Mark[]; readonly left: readonly Solid[] } {
   const marks: Mark[] = [];
   const left: Solid[] = [];
@@ -118,7 +120,7 @@ export function blockLabels(
     const mask = (half: Mm, up: Mm, down: Mm): readonly Mark[] =>
       gone ? [rect(x - half, y - up, 2 * half, up + down, { fill: BLOCK_LOOK[s.standing].fill ?? WHITE })] : [];
     if (!inFrame(view, [x, y])) continue;
-    const height = heightWords(s);
+    const height = heightWords(s, units);
     const alone = (size: Mm): boolean =>
       holds(ring, x, y, measure(height, size) / 2 + 0.3, size * 0.35 + 0.25, size * 0.35 + 0.25);
     const cap = READ * 0.7;
@@ -179,6 +181,7 @@ export function plan(
   model: Model,
   change: ShadowChange | null,
   crowns: readonly Ring[] = [],
+  units: SheetUnits = 'metric',
 ): readonly Mark[] {
   const { x, y, width, height } = view.frame;
   const marks: Mark[] = [...(change ? shadows(view, change) : [])];
@@ -189,6 +192,6 @@ export function plan(
   for (const t of model.trees) {
     marks.push({ kind: 'circle', at: onPage(view, t.at), radius: (t.spread * 500) / view.scale, stroke: TREE_LINE });
   }
-  marks.push(...blockLabels(view, model.solids).marks);
+  marks.push(...blockLabels(view, model.solids, units).marks);
   return [{ kind: 'group', label: 'plan', clip: [x, y, width, height], marks }];
 }

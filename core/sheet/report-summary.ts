@@ -14,6 +14,7 @@ import { choiceOfWays } from './way-words.ts';
 const MOST_BARS = 12;
 const FEWEST_BARS = 3;
 const MOST_TO_DO = 6;
+const FEWEST_TO_DO = 2;
 /** Height of a bar's row. */
 const ROW: Mm = leading(READ) + 2.4;
 
@@ -42,21 +43,50 @@ export function summaryPage(flow: Flow, report: Report): void {
   };
   const width = 110;
   const { height } = titleBlock(0, 0, width, scheme, facts);
-  // Heading and the two lines under the bars take 24 mm.
-  const bars = Math.floor((flow.left - height - heightOf(flow, (trial) => whatToDo(trial, report)) - 24) / ROW);
   const all = result.limitSet ? worstOfRooms(result.findings) : highest(result.findings);
-  const worst = all.slice(0, Math.max(FEWEST_BARS, Math.min(MOST_BARS, bars)));
+  const over = all.filter((f) => f.verdict === 'over').length;
+  const plan = shareOut(flow, report, all, over, flow.left - height - 4);
+  const worst = all.slice(0, plan.bars);
   if (worst.length > 0) {
     flow.heading(result.limitSet ? 'Rooms, worst first' : 'Rooms, highest first');
     drawBars(flow, worst);
-    const rooms = new Set(result.findings.map((f) => f.room)).size;
-    if (rooms > worst.length)
-      flow.say(`and ${counted(rooms - worst.length, 'more room', 'more rooms')} in the table`, { colour: SOFT });
+    if (all.length > worst.length) flow.say(restSentence(all.length, worst.length, over), { colour: SOFT });
   }
-  whatToDo(flow, report);
+  whatToDo(flow, report, plan.toDo);
   flow.need(height + 4);
   const x = flow.x + flow.width - width;
   flow.put(titleBlock(x, flow.y + flow.left - height, width, scheme, facts).marks, height);
+}
+
+/** What stands in the table only: how many rooms, and how many of them are over. */
+function restSentence(all: number, shown: number, over: number): string {
+  const rest = counted(all - shown, 'more room', 'more rooms');
+  const overRest = over - shown;
+  return overRest > 0
+    ? `and ${rest} in the table that follows, ${overRest} of them over too`
+    : `and ${rest} in the table that follows`;
+}
+
+/**
+ * How many rooms get a bar and how many a line of what to do, so that the first page holds both: all that are over where they
+ * fit, then fewer lines, then fewer bars.
+ */
+function shareOut(
+  flow: Flow,
+  report: Report,
+  all: readonly Finding[],
+  over: number,
+  room: Mm,
+): { readonly bars: number; readonly toDo: number } {
+  // Heading and the two lines under the bars take 24 mm.
+  const barsIn = (left: Mm): number => Math.floor((left - 24) / ROW);
+  const wanted = Math.max(FEWEST_BARS, Math.min(MOST_BARS, over));
+  for (const toDo of Array.from({ length: MOST_TO_DO }, (_, i) => MOST_TO_DO - i)) {
+    const bars = barsIn(room - heightOf(flow, (trial) => whatToDo(trial, report, toDo)));
+    const least = toDo > FEWEST_TO_DO ? wanted : FEWEST_BARS;
+    if (bars >= Math.min(least, all.length)) return { bars: Math.min(bars, MOST_BARS), toDo };
+  }
+  return { bars: FEWEST_BARS, toDo: 1 };
 }
 
 /** How high something stands that is drawn down a page of the same width. */
@@ -148,7 +178,7 @@ function drawBars(flow: Flow, findings: readonly Finding[]): void {
   });
 }
 
-function whatToDo(flow: Flow, report: Report): void {
+function whatToDo(flow: Flow, report: Report, most: number): void {
   const over = worstOfRooms(report.result.findings).filter((f) => f.verdict === 'over');
   if (over.length === 0) return;
   flow.heading('What to do');
@@ -156,12 +186,12 @@ function whatToDo(flow: Flow, report: Report): void {
     const way = choiceOfWays(report.ways, f);
     return way ? [{ f, way }] : [];
   });
-  for (const { f, way } of offered.slice(0, MOST_TO_DO)) {
+  for (const { f, way } of offered.slice(0, most)) {
     flow.say(`Room ${f.room} ${f.roomName}: ${way}`);
     flow.gap(1);
   }
-  if (offered.length > MOST_TO_DO)
-    flow.say(`and ${counted(offered.length - MOST_TO_DO, 'more room', 'more rooms')}, each on its own page`, {
+  if (offered.length > most)
+    flow.say(`and for ${counted(offered.length - most, 'more room', 'more rooms')}, each on its own page`, {
       colour: SOFT,
     });
   if (offered.length === 0) {

@@ -3,7 +3,7 @@ import type { Mark, Mm } from './drawing.ts';
 import { FINE, INK, WHITE } from './ink.ts';
 import { leading, type Piece, rect, words } from './marks.ts';
 import { READ } from './measure.ts';
-import { scaleWords } from './scale.ts';
+import { FOOT_m, type SheetUnits, scaleWords } from './sheet-units.ts';
 
 /**
  * North point: an arrow to true north, turned against the drawing as the site is.
@@ -29,18 +29,18 @@ export function northPoint(cx: Mm, cy: Mm, radius: Mm, north_deg: number): Mark 
   };
 }
 
-/** The longest round length of ground whose bar is no wider than a place, in metres. */
-export function barLength_m(width: Mm, scale: number): number {
-  const most = (width * scale) / 1000;
+/** The longest round length of ground whose bar is no wider than a place, in metres, or in feet. */
+export function barLength(width: Mm, scale: number, units: SheetUnits = 'metric'): number {
+  const most = (width * scale) / 1000 / (units === 'imperial' ? FOOT_m : 1);
   const ten = 10 ** Math.floor(Math.log10(most));
   for (const k of [5, 2, 1]) if (k * ten <= most) return k * ten;
   return ten;
 }
 
-/** Scale bar with its lengths in metres, and the scale in words under it. */
-export function scaleBar(x: Mm, top: Mm, width: Mm, scale: number, paper: string): Piece {
-  const whole = barLength_m(width - 12, scale);
-  const length = (whole * 1000) / scale;
+/** Scale bar with its lengths in metres or feet, and the scale in words under it. */
+export function scaleBar(x: Mm, top: Mm, width: Mm, scale: number, paper: string, units: SheetUnits = 'metric'): Piece {
+  const whole = barLength(width - 12, scale, units);
+  const length = (whole * (units === 'imperial' ? FOOT_m : 1) * 1000) / scale;
   const y = top + leading(READ);
   const marks: Mark[] = [];
   const parts = String(whole).startsWith('2') ? 4 : 5;
@@ -55,8 +55,10 @@ export function scaleBar(x: Mm, top: Mm, width: Mm, scale: number, paper: string
       { kind: 'group', label: 'scale bar', marks },
       words('0', x, y - 1.2, { anchor: 'start' }),
       words(label(whole / 2), x + length / 2, y - 1.2, { anchor: 'middle' }),
-      words(`${label(whole)} m`, x + length, y - 1.2, { anchor: length > width - 12 ? 'end' : 'middle' }),
-      words(`Scale ${scaleWords(scale)} on ${paper}`, x, y + 1.4 + leading(READ), { face: 'semibold' }),
+      words(`${label(whole)} ${units === 'imperial' ? 'ft' : 'm'}`, x + length, y - 1.2, {
+        anchor: length > width - 12 ? 'end' : 'middle',
+      }),
+      words(`Scale ${scaleWords(scale, units)} on ${paper}`, x, y + 1.4 + leading(READ), { face: 'semibold' }),
     ],
   };
 }

@@ -1,5 +1,6 @@
 import type { Fault } from '../scheme/fault.ts';
 import type { Mm } from './drawing.ts';
+import { IMPERIAL_SCALES, type SheetUnits, scaleWords } from './sheet-units.ts';
 
 /** Scales that a ruler knows: those of ISO 5455, with 1:25, 1:250, 1:1250 and 1:2500 of everyday use. */
 export const SCALES: readonly number[] = [10, 20, 25, 50, 100, 200, 250, 500, 1000, 1250, 2500, 5000, 10000];
@@ -11,9 +12,13 @@ type Size = readonly [width: number, height: number];
 export const fits = (size_m: Size, frame: Size, scale: number): boolean =>
   (size_m[0] * 1000) / scale <= frame[0] + 1e-9 && (size_m[1] * 1000) / scale <= frame[1] + 1e-9;
 
+/** The standard scales of a drawing's units. */
+export const standardScales = (units: SheetUnits): readonly number[] =>
+  units === 'imperial' ? IMPERIAL_SCALES : SCALES;
+
 /** The largest standard scale at which something fits into a frame; null when none does. */
-export const bestScale = (size_m: Size, frame: readonly [Mm, Mm]): number | null =>
-  SCALES.find((s) => fits(size_m, frame, s)) ?? null;
+export const bestScale = (size_m: Size, frame: readonly [Mm, Mm], units: SheetUnits = 'metric'): number | null =>
+  standardScales(units).find((s) => fits(size_m, frame, s)) ?? null;
 
 /**
  * The scale asked for, or the best that fits where none is asked for; a fault that says which would fit where it does not.
@@ -25,12 +30,14 @@ export function chooseScale(
   wanted_m: Size,
   frame: readonly [Mm, Mm],
   what: string,
+  units: SheetUnits = 'metric',
 ): number | Fault {
-  const fitting = bestScale(size_m, frame);
+  const scales = standardScales(units);
+  const fitting = bestScale(size_m, frame, units);
   if (asked === null) {
     // One step smaller than need be, at most: long shadows of low sun must not shrink the scheme to a stamp.
     if (fitting !== null)
-      return fits(wanted_m, frame, fitting) ? fitting : (SCALES[SCALES.indexOf(fitting) + 1] ?? fitting);
+      return fits(wanted_m, frame, fitting) ? fitting : (scales[scales.indexOf(fitting) + 1] ?? fitting);
   } else if (fits(size_m, frame, asked)) return asked;
   const large = `${size_m[0].toFixed(1)} m × ${size_m[1].toFixed(1)} m`;
   const room = `${frame[0].toFixed(0)} mm × ${frame[1].toFixed(0)} mm`;
@@ -38,13 +45,10 @@ export function chooseScale(
     level: 'error',
     code: 'scale-too-large',
     place: '',
-    message: `the scheme is ${large}, which at ${asked === null ? 'every standard scale' : scaleWords(asked)} is larger than the ${room} that ${what} leaves for each diagram`,
+    message: `the scheme is ${large}, which at ${asked === null ? 'every standard scale' : scaleWords(asked, units)} is larger than the ${room} that ${what} leaves for each diagram`,
     cure:
       fitting === null
         ? 'take larger paper or draw fewer diagrams on a page'
-        : `${scaleWords(fitting)} fits, or take larger paper or fewer diagrams on a page`,
+        : `${scaleWords(fitting, units)} fits, or take larger paper or fewer diagrams on a page`,
   };
 }
-
-/** A scale in words, such as `1:500`. */
-export const scaleWords = (scale: number): string => `1:${Number.isInteger(scale) ? scale : scale.toFixed(2)}`;

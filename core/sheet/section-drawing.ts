@@ -7,6 +7,7 @@ import { line, rect, words } from './marks.ts';
 import { measure, READ } from './measure.ts';
 import { fixed } from './numerals.ts';
 import type { Rect } from './paper.ts';
+import { dimension, type SheetUnits } from './sheet-units.ts';
 import type { SectionPoint, WindowSection } from './window-section.ts';
 
 /** Thickness that a wall is drawn with; the scheme has none [m]. */
@@ -74,6 +75,8 @@ export type SectionInput = {
   readonly profile_rad: number | null;
   /** Stretches of the glass in sun, above the sill [m]. */
   readonly lit: readonly (readonly [number, number])[];
+  /** Of the dimensions. */
+  readonly units: SheetUnits;
 };
 
 type Place = (p: SectionPoint) => readonly [Mm, Mm];
@@ -102,7 +105,7 @@ export function sectionDrawing(input: SectionInput): readonly Mark[] {
   for (const blade of section.blades)
     marks.push(line(...at(blade.ends[0]), ...at(blade.ends[1]), { ...PROPOSED_LINE, width: 0.9 }));
   marks.push(line(...at([-section.reveal_m, 0]), ...at([-section.reveal_m, section.height_m]), GLASS_LINE));
-  marks.push(...dimensions(section, sill, at));
+  marks.push(...dimensions(section, sill, at, input.units));
   if (input.profile_rad !== null) marks.push(...angleMark(input.profile_rad, section, reach, at));
   return [
     { kind: 'group', label: `section of ${window.id}`, clip: [frame.x, frame.y, frame.width, frame.height], marks },
@@ -166,13 +169,13 @@ function walls(section: WindowSection, room: RoomForm, reach: Reach, sill: numbe
 }
 
 /** Heights inside, and how far the devices project. */
-function dimensions(section: WindowSection, sill: number, at: Place): readonly Mark[] {
+function dimensions(section: WindowSection, sill: number, at: Place, units: SheetUnits): readonly Mark[] {
   const marks: Mark[] = [];
   const upright = (out: number, from: number, to: number): void => {
     if (to - from < 0.05) return;
     const [x, y1] = at([out, from]);
     const [, y2] = at([out, to]);
-    const text = fixed(to - from, 2);
+    const text = dimension(to - from, units);
     const middle = (y1 + y2) / 2;
     const said = y1 - y2 < 6 ? [words(text, x + 1.6, middle + READ * 0.35)] : boxed(text, x, middle);
     marks.push(line(x, y1, x, y2, THIN), tick(x, y1), tick(x, y2), ...said);
@@ -184,7 +187,12 @@ function dimensions(section: WindowSection, sill: number, at: Place): readonly M
     const up = Math.max(...section.blades.flatMap((b) => b.ends.map((e) => e[1]))) + 0.22;
     const [x1, y] = at([furthest[0], up]);
     const [x2] = at([0, up]);
-    marks.push(line(x1, y, x2, y, THIN), tick(x1, y), tick(x2, y), ...boxed(fixed(furthest[0], 2), (x1 + x2) / 2, y));
+    marks.push(
+      line(x1, y, x2, y, THIN),
+      tick(x1, y),
+      tick(x2, y),
+      ...boxed(dimension(furthest[0], units), (x1 + x2) / 2, y),
+    );
   }
   return marks;
 }

@@ -15,7 +15,8 @@ import { FRAME, SOFT } from './ink.ts';
 import { paragraph, rect } from './marks.ts';
 import { fixed, percent } from './numerals.ts';
 import { finishPages, type PaperName, type Rect } from './paper.ts';
-import { chooseScale, scaleWords } from './scale.ts';
+import { chooseScale } from './scale.ts';
+import { dimension, type SheetUnits, scaleWords } from './sheet-units.ts';
 import { scaleBar } from './scale-marks.ts';
 import { sectionDrawing, sectionReach } from './section-drawing.ts';
 import { DRAWING_CAUTIONS, type Note, pageAreas, placeNotes } from './side-panel.ts';
@@ -34,6 +35,8 @@ export type SectionSheetInput = {
   readonly engine: string;
   readonly hash: string;
   readonly language?: string;
+  /** Absent: metric. */
+  readonly units?: SheetUnits;
 };
 
 /** The sun at its highest on one day, as the section sees it. */
@@ -72,13 +75,30 @@ export function sectionSheet(input: SectionSheetInput): Checked<Document> {
   const frames = split(areas.drawing);
   const reach = sectionReach(section, window, room);
   const size = [reach.out + reach.in, reach.up + reach.down] as const;
-  const scale = chooseScale(input.scale, size, size, [frames[0].width, frames[0].height], `${paper} landscape`);
+  const scale = chooseScale(
+    input.scale,
+    size,
+    size,
+    [frames[0].width, frames[0].height],
+    `${paper} landscape`,
+    input.units,
+  );
   if (typeof scale !== 'number') return { ok: false, faults: [scale] };
   const marks: Mark[] = [];
   suns.forEach((sun, i) => {
     const frame = frames[i] as Rect;
     marks.push(
-      ...sectionDrawing({ frame, scale, section, window, room, reach, profile_rad: sun.profile_rad, lit: sun.lit }),
+      ...sectionDrawing({
+        frame,
+        scale,
+        section,
+        window,
+        room,
+        reach,
+        profile_rad: sun.profile_rad,
+        lit: sun.lit,
+        units: input.units ?? 'metric',
+      }),
     );
     marks.push(rect(frame.x, frame.y, frame.width, frame.height, { stroke: FRAME }));
     marks.push(...sunCaption(sun, scheme.site.zone, frame));
@@ -156,22 +176,24 @@ function panel(
   window: WindowForm,
   room: RoomForm,
 ): readonly Mark[] {
-  const bar = scaleBar(area.x, area.y, area.width - 4, scale, input.paper);
+  const bar = scaleBar(area.x, area.y, area.width - 4, scale, input.paper, input.units);
   const facts = {
     subject: `Section, window ${window.id}`,
     number: input.number ?? '',
     date: input.drawn,
     engine: input.engine,
     hash: input.hash,
-    scale: `${scaleWords(scale)} on ${input.paper}`,
+    scale: `${scaleWords(scale, input.units)} on ${input.paper}`,
   };
   const height = titleBlock(area.x, 0, area.width, input.scheme, facts).height;
   const foot = area.y + area.height - height;
+  const units = input.units ?? 'metric';
+  const long = (m: number): string => `${dimension(m, units)}${units === 'metric' ? ' m' : ''}`;
   const notes: readonly Note[] = [
     {
       heading: `Window ${window.id}, room ${room.id} ${room.name}`.trim(),
       lines: [
-        `Faces ${fixed(window.bearing_deg, 1)}° from true north. ${fixed(window.width_m, 2)} m wide, ${fixed(window.height_m, 2)} m high, glass ${fixed(window.reveal_m, 2)} m behind the face of the wall.`,
+        `Faces ${fixed(window.bearing_deg, 1)}° from true north. ${long(window.width_m)} wide, ${long(window.height_m)} high, glass ${long(window.reveal_m)} behind the face of the wall.`,
       ],
     },
     {
@@ -179,7 +201,7 @@ function panel(
       lines: [
         'Sun at its true altitude, without refraction. Profile angle: its altitude as seen along the wall, tan p = tan h / cos (azimuth less bearing).',
         'The cut takes devices to run on sideways; the share of the whole glass does not. Sun that goes past the sides, over neighbours or through trees is in that share only.',
-        'Walls are drawn 0.30 m and floors 0.25 m thick, as the scheme gives no thickness. Fins are left out of the cut; of a room deeper than 6 m the far part is not drawn.',
+        `Walls are drawn ${long(0.3)} and floors ${long(0.25)} thick, as the scheme gives no thickness. Fins are left out of the cut; of a room deeper than ${long(6)} the far part is not drawn.`,
       ],
     },
     DRAWING_CAUTIONS,

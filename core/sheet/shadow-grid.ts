@@ -1,6 +1,7 @@
 import { caption } from './diagram.ts';
 import type { Mm } from './drawing.ts';
 import type { Rect } from './paper.ts';
+import type { SheetUnits } from './sheet-units.ts';
 import type { ShadowMoment } from './shadow-moment.ts';
 
 /** Where the diagrams of one page stand. */
@@ -26,6 +27,7 @@ export function gridOf(
   most: number,
   area: Rect,
   extent: readonly [number, number],
+  units: SheetUnits = 'metric',
 ): Grid {
   const perDate = perDateCount(moments);
   const table = perDate !== null && most >= 2 * perDate;
@@ -34,7 +36,9 @@ export function gridOf(
   for (let columns = 1; columns <= onPage; columns++) {
     if (table && columns !== perDate) continue;
     const rows = table ? Math.floor(most / columns) : Math.ceil(onPage / columns);
-    choices.push(grid(moments, zone, columns, Math.min(rows, Math.ceil(moments.length / columns)), onPage, area));
+    choices.push(
+      grid(moments, zone, columns, Math.min(rows, Math.ceil(moments.length / columns)), onPage, area, units),
+    );
   }
   const roominess = (g: Grid): number => Math.min(g.frame[0] / extent[0], g.frame[1] / extent[1]);
   return choices.reduce((best, g) => (roominess(g) > roominess(best) ? g : best));
@@ -57,9 +61,10 @@ function grid(
   rows: number,
   onPage: number,
   area: Rect,
+  units: SheetUnits,
 ): Grid {
   const width = (area.width - GAP * (columns - 1)) / columns;
-  const under = Math.max(...moments.map((m) => caption(m, zone, true, 0, 0, width).height));
+  const under = Math.max(...moments.map((m) => caption(m, zone, true, 0, 0, width, units).height));
   const cell = area.height / rows;
   const height = Math.max(1, cell - 2 - under - (rows > 1 ? UNDER : 0));
   return {

@@ -1,6 +1,7 @@
 import type { Model } from '../form/model.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import type { PaperName } from './paper.ts';
+import type { SheetUnits } from './sheet-units.ts';
 import type { ShadowMoment } from './shadow-moment.ts';
 
 export type ShadowSheetInput = {
@@ -23,6 +24,8 @@ export type ShadowSheetInput = {
   readonly engine: string;
   readonly hash: string;
   readonly language?: string;
+  /** Absent: metric. */
+  readonly units?: SheetUnits;
 };
 
 /** What the sheet is called. */

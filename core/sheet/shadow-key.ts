@@ -16,6 +16,7 @@ import {
 import { leading, line, type Piece, rect, words } from './marks.ts';
 import { READ } from './measure.ts';
 import { BLOCK_LOOK } from './plan.ts';
+import type { SheetUnits } from './sheet-units.ts';
 
 const ROW: Mm = 6;
 const SWATCH: Mm = 11;
@@ -26,6 +27,7 @@ export function shadowKey(
   top: Mm,
   model: Model,
   shows: { readonly added: boolean; readonly gained: boolean },
+  units: SheetUnits = 'metric',
 ): Piece {
   const entries: { readonly text: string; readonly draw: (y: Mm) => readonly Mark[] }[] = [];
   const box = (look: Parameters<typeof rect>[4]) => (y: Mm) => [rect(x, y, SWATCH, 4, look)];
@@ -61,7 +63,10 @@ export function shadowKey(
       draw: (y) => [{ kind: 'circle', at: [x + SWATCH / 2, y + 2], radius: 2, stroke: TREE_LINE }],
     });
   }
-  const notes = ['Figures on blocks: height of the top in metres.', 'Sun: true altitude, without refraction.'];
+  const notes = [
+    `Figures on blocks: height of the top in ${units === 'imperial' ? 'feet' : 'metres'}.`,
+    'Sun: true altitude, without refraction.',
+  ];
   return {
     marks: [
       ...entries.flatMap((e, i) => [

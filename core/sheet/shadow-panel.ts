@@ -4,12 +4,15 @@ import type { Mark } from './drawing.ts';
 import { place } from './numerals.ts';
 import type { Rect } from './paper.ts';
 import { heightWords } from './plan.ts';
-import { scaleWords } from './scale.ts';
+import { dimension, type SheetUnits, scaleWords } from './sheet-units.ts';
 import { northPoint, scaleBar } from './scale-marks.ts';
 import { shadowKey } from './shadow-key.ts';
 import { type ShadowSheetInput, SUBJECT } from './shadow-input.ts';
 import { type Areas, DRAWING_CAUTIONS, type Note, placeNotes } from './side-panel.ts';
 import { titleBlock } from './title-block.ts';
+
+const levelText = ({ level_m = 0, units = 'metric' }: ShadowSheetInput): string =>
+  `${dimension(level_m, units)}${units === 'metric' ? ' m' : ''}`;
 
 /** What the drawing shows and leaves out, in words. */
 function methodNote(input: ShadowSheetInput): Note {
@@ -17,9 +20,8 @@ function methodNote(input: ShadowSheetInput): Note {
   return {
     heading: 'How it was worked out',
     lines: [
-      `Site ${place(site.latitude, site.longitude)}. Civil time, with its offset from UTC.`,
-      'Azimuth clockwise from true north.',
-      `Shadow of the blocks on level ground at ${(input.level_m ?? 0).toFixed(2)} m under a clear sky. Slopes, and shadow on roofs and walls, are not drawn.`,
+      `Site ${place(site.latitude, site.longitude)}. Civil time with its offset from UTC. Azimuth clockwise from true north.`,
+      `Shadow of the blocks on level ground at ${levelText(input)} under a clear sky. Slopes, and shadow on roofs and walls, are not drawn.`,
       'Added: in shadow after and in sun before. Areas leave out ground under buildings. Their shares in sun count tree crowns, which let through what the scheme says for the month; added shadow does not.',
       STAR_NOTE,
     ],
@@ -30,8 +32,8 @@ function methodNote(input: ShadowSheetInput): Note {
 const MOST_NAMED = 150;
 
 /** Heights of the blocks that are too small to carry a figure at this scale. */
-function unlabelled(left: readonly Solid[]): Note {
-  const named = left.slice(0, MOST_NAMED).map((s) => `${s.name || s.id} ${heightWords(s)}`);
+function unlabelled(left: readonly Solid[], units: SheetUnits | undefined): Note {
+  const named = left.slice(0, MOST_NAMED).map((s) => `${s.name || s.id} ${heightWords(s, units)}`);
   const more = left.length - named.length;
   return {
     heading: 'Blocks too small for a figure',
@@ -51,12 +53,19 @@ export function shadowPanel(
   const marks: Mark[] = [];
   const radius = 8;
   marks.push(northPoint(first.x + radius, first.y + radius * 1.34 + 4, radius, input.scheme.site.north));
-  const bar = scaleBar(first.x + radius * 2 + 8, first.y + 3, first.width - radius * 2 - 8, scale, input.paper);
+  const bar = scaleBar(
+    first.x + radius * 2 + 8,
+    first.y + 3,
+    first.width - radius * 2 - 8,
+    scale,
+    input.paper,
+    input.units,
+  );
   marks.push(...bar.marks);
   let y = first.y + radius * 2.7 + 6;
   const any = (kind: 'added' | 'gained'): boolean =>
     input.moments.some((m) => (m.change?.[kind].regions.length ?? 0) > 0);
-  const key = shadowKey(first.x, y, input.model, { added: any('added'), gained: any('gained') });
+  const key = shadowKey(first.x, y, input.model, { added: any('added'), gained: any('gained') }, input.units);
   marks.push(...key.marks);
   y += key.height + 3;
   const facts = {
@@ -65,7 +74,7 @@ export function shadowPanel(
     date: input.drawn,
     engine: input.engine,
     hash: input.hash,
-    scale: `${scaleWords(scale)} on ${input.paper}`,
+    scale: `${scaleWords(scale, input.units)} on ${input.paper}`,
   };
   const height = titleBlock(last.x, 0, last.width, input.scheme, facts).height;
   const foot = last.y + last.height - height;
@@ -77,7 +86,7 @@ export function shadowPanel(
           { x: first.x, y, end: first.y + first.height },
           { x: last.x, y: last.y, end: foot - 2 },
         ];
-  const notes = [methodNote(input), DRAWING_CAUTIONS, ...(left.length > 0 ? [unlabelled(left)] : [])];
+  const notes = [methodNote(input), DRAWING_CAUTIONS, ...(left.length > 0 ? [unlabelled(left, input.units)] : [])];
   const placed = placeNotes(notes, slots, first.width);
   return { marks: [...marks, ...placed.marks], spill: placed.spill };
 }

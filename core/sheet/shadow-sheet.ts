@@ -1,8 +1,8 @@
 import type { Model } from '../form/model.ts';
-import type { Checked } from '../scheme/fault.ts';
+import type { Checked, Fault } from '../scheme/fault.ts';
 import { diagram } from './diagram.ts';
 import type { Document, Mark, Mm } from './drawing.ts';
-import { contentRect, finishPages } from './paper.ts';
+import { contentRect, finishPages, type Rect } from './paper.ts';
 import { blockLabels } from './plan.ts';
 import type { PlanView } from './plan-view.ts';
 import { chooseScale } from './scale.ts';
@@ -28,23 +28,10 @@ export function shadowSheet(input: ShadowSheetInput): Checked<Document> {
     return { ok: false, faults: [{ level: 'error', code: 'nothing-to-draw', place: '', message: what, cure }] };
   }
   const areas = pageAreas(paper, landscape);
-  const extent = { size: sizeOf(model.extent) };
-  const grid = gridOf(
-    moments,
-    input.scheme.site.zone,
-    input.perPage ?? (paper === 'A4' ? 4 : 9),
-    areas.drawing,
-    extent.size,
-  );
   const wish = wantedBox(model, moments);
-  const scale = chooseScale(
-    input.scale,
-    extent.size,
-    sizeOf(wish),
-    grid.frame,
-    `${paper} ${landscape ? 'landscape' : 'portrait'}`,
-  );
-  if (typeof scale !== 'number') return { ok: false, faults: [scale] };
+  const laid = layOut(input, areas.drawing, wish);
+  if ('code' in laid) return { ok: false, faults: [laid] };
+  const { grid, scale } = laid;
   const contents = pages(input, areas, grid, scale, centreOf(model.extent, wish, grid.frame, scale));
   return {
     ok: true,
@@ -56,6 +43,37 @@ export function shadowSheet(input: ShadowSheetInput): Checked<Document> {
       pages: finishPages(contents, paper, landscape, `scheme ${shortHash(input.hash)}, drawn ${input.drawn}`),
     },
   };
+}
+
+/** Best fit takes fewer diagrams a page before it takes a smaller scale than this: block by block is no longer told below it. */
+const SMALL_SCALE = 2500;
+/** Diagrams a page that are tried where none are asked for, most first. */
+const PER_PAGE = [9, 6, 4, 3, 2, 1] as const;
+
+/**
+ * Grid and scale: the diagrams a page asked for, or as many as let the scale asked for fit and keep best fit from going small; a
+ * fault where not even one fits.
+ */
+function layOut(
+  input: ShadowSheetInput,
+  area: Rect,
+  wish: Box,
+): { readonly grid: Grid; readonly scale: number } | Fault {
+  const { model, moments, paper, landscape, units } = input;
+  const size = sizeOf(model.extent);
+  const tries = input.perPage === undefined ? PER_PAGE.filter((n) => paper !== 'A4' || n <= 4) : [input.perPage];
+  const what = `${paper} ${landscape ? 'landscape' : 'portrait'}`;
+  let best: { readonly grid: Grid; readonly scale: number } | null = null;
+  let why: Fault | null = null;
+  for (const most of tries) {
+    const grid = gridOf(moments, input.scheme.site.zone, most, area, size, units);
+    const scale = chooseScale(input.scale, size, sizeOf(wish), grid.frame, what, units);
+    if (typeof scale !== 'number') why = scale;
+    else if (best === null || scale < best.scale) best = { grid, scale };
+    if (best && (input.scale !== null || best.scale <= SMALL_SCALE)) break;
+  }
+  if (best === null && why === null) throw new Error('a layout was tried for no number of diagrams');
+  return best ?? (why as Fault);
 }
 
 type Box = Model['extent'];
@@ -99,13 +117,13 @@ function pages(
   centre: readonly [number, number],
 ): readonly Content[] {
   const view = { scale, centre, frame: grid.place(0) };
-  const panel = shadowPanel(input, areas, scale, blockLabels(view, input.model.solids).left);
+  const panel = shadowPanel(input, areas, scale, blockLabels(view, input.model.solids, input.units).left);
   const contents: Content[] = [];
   for (let start = 0; start < input.moments.length; start += grid.perPage) {
     const on = input.moments.slice(start, start + grid.perPage);
     const marks = on.flatMap((moment, i) => {
       const view: PlanView = { scale, centre, frame: grid.place(i) };
-      return diagram(view, input.model, input.scheme.site.zone, moment);
+      return diagram(view, input.model, input.scheme.site.zone, moment, input.units);
     });
     const days = [...new Set(on.map((m) => m.text.split(',')[0] as string))];
     contents.push({ title: `${SUBJECT}: ${days.join(', ')}`, marks: [...marks, ...panel.marks] });

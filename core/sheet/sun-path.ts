@@ -1,3 +1,4 @@
+import type { Scheme } from '../scheme/schema.ts';
 import type { SunPath } from '../sun/sun-path.ts';
 import { DEG, toDegrees } from '../units/angle.ts';
 import type { Document, Mark, Mm, Page } from './drawing.ts';
@@ -10,6 +11,7 @@ import { LabelRoom } from './sun-path-labels.ts';
 import { dateMarks, hourMarks } from './sun-path-lines.ts';
 import { maskMarks } from './sun-path-mask.ts';
 import { dateNames, hourNames, keepOffPath } from './sun-path-names.ts';
+import { type TitleFacts, titleBlock } from './title-block.ts';
 import { type SkyView, type SunPathProjection, skyOnPage } from './sun-path-view.ts';
 
 /** Room round the drawing for the names of bearings and altitudes. */
@@ -95,20 +97,48 @@ export const sunPathPage = (width: Mm, height: Mm, input: SunPathInput): Page =>
   marks: sunPathDrawing(sunPathBox(width, height), input),
 });
 
-/** Both drawings as printed pages, each with its caption and the foot that every sheet has. @param note repeated in the foot */
+/** Width of the title block, beside the drawing and under its caption. */
+const BLOCK: Mm = 66;
+
+/**
+ * Both drawings as printed pages, each with its caption and the foot that every sheet has.
+ * @param facts `note` is repeated in the foot; `block` puts a title block on every page
+ */
 export function sunPathDocument(
   inputs: readonly SunPathInput[],
   paper: PaperName,
   landscape: boolean,
-  facts: { readonly title: string; readonly author: string; readonly language: string; readonly note: string },
+  facts: {
+    readonly title: string;
+    readonly author: string;
+    readonly language: string;
+    readonly note: string;
+    readonly block?: { readonly scheme: Scheme; readonly facts: Omit<TitleFacts, 'subject' | 'scale'> };
+  },
 ): Document {
   const contents = inputs.map((input) => ({
     title: titleOf(input),
-    marks: sunPathDrawing(contentRect(paper, landscape), input),
+    marks: onSheet(contentRect(paper, landscape), landscape, input, facts.block),
   }));
   const title = [facts.title, TITLE].filter((t) => t !== '').join(' – ');
   const { author, language, note } = facts;
   return { title, author, language, pages: finishPages(contents, paper, landscape, note, false) };
+}
+
+/** A drawing and, where one is wanted, its title block: at the foot of the column beside it, or under it on an upright page. */
+function onSheet(
+  rect: Rect,
+  landscape: boolean,
+  input: SunPathInput,
+  block: Parameters<typeof sunPathDocument>[3]['block'],
+): readonly Mark[] {
+  if (!block) return sunPathDrawing(rect, input);
+  const facts = { ...block.facts, subject: titleOf(input), scale: '' };
+  const width = landscape ? BLOCK : rect.width / 2;
+  const { height } = titleBlock(0, 0, width, block.scheme, facts);
+  const box = landscape ? rect : { ...rect, height: rect.height - height - GAP };
+  const drawn = titleBlock(rect.x + rect.width - width, rect.y + rect.height - height, width, block.scheme, facts);
+  return [...sunPathDrawing(box, input), ...drawn.marks];
 }
 
 const PROJECTION_WORDS: { readonly [P in SunPathProjection]: string } = {

@@ -2,6 +2,7 @@ import type { Model, Solid, Stage } from '../form/model.ts';
 import { trueBearing_deg } from '../form/panel.ts';
 import { solidsAt, stands } from '../form/stands.ts';
 import { compassWord } from '../limits/reason.ts';
+import { contains } from '../plane/ring.ts';
 import type { Ring } from '../plane/vec.ts';
 import type { Checked, Fault } from '../scheme/fault.ts';
 import type { Scheme } from '../scheme/schema.ts';
@@ -10,8 +11,9 @@ import type { Exposure } from '../shade/exposure-slice.ts';
 import type { Document } from '../sheet/drawing.ts';
 import type { ElevationMap } from '../sheet/elevation.ts';
 import { elevationSheet } from '../sheet/elevation-sheet.ts';
-import { exposurePlan, exposurePlanScale, type PlanStage } from '../sheet/exposure-plan.ts';
+import { exposurePlan, exposurePlanGround, exposurePlanScale, type PlanStage } from '../sheet/exposure-plan.ts';
 import type { PaperName } from '../sheet/paper.ts';
+import type { SheetUnits } from '../sheet/sheet-units.ts';
 import { dateText } from '../sun/civil.ts';
 import { toDegrees } from '../units/angle.ts';
 import { EXPOSURE_METHOD } from './exposure.ts';
@@ -30,6 +32,7 @@ export type MapSheetAsk = {
   readonly engine: string;
   readonly hash: string;
   readonly language?: string;
+  readonly units?: SheetUnits;
 };
 
 /** Between points of the ground and of roofs on paper [mm]: as fine as a figure can be told from the next. */
@@ -87,6 +90,8 @@ export async function facadeSheet(
     const at = map.after ?? map.before;
     if (!map.panel || !at || map.surface.kind !== 'wall') return [];
     const { block, wall } = map.surface;
+    const covered = builtAgainst(map, at, solidsAt(model.solids, map.after ? 'after' : 'before'));
+    if (covered.every((c) => c === 1)) return [];
     const faces = compassWord(trueBearing_deg(map.panel.normal, toDegrees(model.north_rad)));
     return [
       {
@@ -94,7 +99,7 @@ export async function facadeSheet(
         panel: map.panel,
         grid: map.grid,
         value: hoursADay(at, made.value.dates.length),
-        covered: at.covered,
+        covered,
       },
     ];
   });
@@ -108,6 +113,19 @@ export async function facadeSheet(
     method: method(scheme, made.value.step_min),
   });
   return drawn.ok ? { ...drawn, notes: made.notes } : drawn;
+}
+
+/** Just outside a wall [m]: whether another block stands against it is asked there. */
+const OUTSIDE_m = 0.01;
+
+/** 1 where a point of a wall lies inside a block, or another block stands against it. */
+function builtAgainst(map: SurfaceMap, at: Exposure, standing: readonly Solid[]): Uint8Array {
+  const { x, y, z, nx, ny } = map.grid.receptors;
+  return at.covered.map((inside, i) => {
+    const [px, py, pz] = [x[i]! + nx[i]! * OUTSIDE_m, y[i]! + ny[i]! * OUTSIDE_m, z[i]!];
+    const isAgainst = standing.some((s) => pz > s.base_m && pz < s.top_m && contains(s.outline, px, py));
+    return inside === 1 || isAgainst ? 1 : 0;
+  });
 }
 
 /** The block named, else what is proposed, else what stands and is neither context nor removed. */
@@ -136,9 +154,9 @@ export async function exposurePlanSheet(
   pulse: Pulse,
 ): Promise<Checked<Document> | null> {
   if (model.solids.length === 0) return refuse('nothing-to-draw', 'the scheme has no blocks to draw', 'add a block');
-  const scale = exposurePlanScale(model, ask.scale, ask.paper, ask.landscape);
+  const scale = exposurePlanScale(model, ask.scale, ask.paper, ask.landscape, ask.units);
   if (typeof scale !== 'number') return { ok: false, faults: [scale] };
-  const outline = boxOf(model);
+  const outline = exposurePlanGround(model, scale, ask.paper, ask.landscape);
   const changes = model.solids.some((s) => s.standing === 'proposed' || s.standing === 'removed');
   const stages: readonly Stage[] = changes ? ['before', 'after'] : ['after'];
   const standing = model.solids.filter((s) => stages.some((stage) => stands(s.standing, stage)));
@@ -180,16 +198,6 @@ function stageOf(model: Model, stage: Stage, outline: Ring, surfaces: readonly S
     ).map((map) => ({ ...map, block: solid.id })),
   );
   return { stage, ground, roofs };
-}
-
-function boxOf(model: Model): Ring {
-  const [x0, y0, x1, y1] = model.extent;
-  return [
-    [x0, y0],
-    [x1, y0],
-    [x1, y1],
-    [x0, y1],
-  ];
 }
 
 const fault = (code: string, message: string, cure: string): Fault => ({

@@ -11,6 +11,7 @@ import { lightReport } from '../sheet/light-report.ts';
 import { worstOfRooms } from '../sheet/report-summary.ts';
 import { sectionSheet } from '../sheet/section-sheet.ts';
 import { shadowSheet } from '../sheet/shadow-sheet.ts';
+import type { SheetUnits } from '../sheet/sheet-units.ts';
 import { sunPathDocument } from '../sheet/sun-path.ts';
 import { shortHash } from '../sheet/title-block.ts';
 import { waysToPass } from '../sizing/ways-to-pass.ts';
@@ -112,6 +113,7 @@ type Facts = {
   readonly engine: string;
   readonly hash: string;
   readonly number?: string;
+  readonly units?: SheetUnits;
   readonly language?: string;
 };
 type SheetJob = {
@@ -132,6 +134,7 @@ function factsOf(scheme: Scheme, set: SheetSet, context: SheetContext): Pick<She
       engine: ENGINE_VERSION,
       hash: contentHash(writeScheme(scheme)),
       ...(set.number === undefined ? {} : { number: set.number }),
+      ...(set.units === undefined ? {} : { units: set.units }),
       ...(context.language === undefined ? {} : { language: context.language }),
     },
   };
@@ -192,7 +195,11 @@ async function sunPathSheets({ scheme, model, set, facts }: SheetJob): Promise<C
     title: scheme.title,
     author: scheme.author,
     language: facts.language ?? 'en-GB',
-    note: `scheme ${shortHash(facts.hash)}, Shadewright ${facts.engine}, drawn ${facts.drawn}`,
+    note: `scheme ${shortHash(facts.hash)}, drawn ${facts.drawn}`,
+    block: {
+      scheme,
+      facts: { number: facts.number ?? '', date: facts.drawn, engine: facts.engine, hash: facts.hash },
+    },
   });
   return { ok: true, value, notes: [] };
 }

@@ -63,3 +63,28 @@ test.each([
   const made = await sheetDocument(scheme, modelOf(scheme), set, context, go);
   expect(made).toMatchObject({ ok: false, faults: [{ code, cure: expect.stringMatching(cure) }] });
 });
+
+test('best fit takes fewer diagrams a page before it draws a town like a stamp', async () => {
+  const scheme = demoScheme('two-hundred-blocks');
+  const set = asked('shadow-study', { dates: ['2025-03-21', '2025-06-21'], times: ['09:00', '12:00'] });
+  const made = await sheetDocument(scheme, modelOf(scheme), set, context, go);
+  if (!made?.ok) throw new Error(JSON.stringify(made));
+  const scale = Number(/Scale 1:(\d+)/u.exec(textOf(made.value.pages[0]?.marks ?? []))?.[1]);
+  expect(scale).toBeLessThanOrEqual(2500);
+  const named = made.value.pages.flatMap((p) => [...textOf(p.marks).matchAll(/2025, \d\d:00 \(UTC/gu)]);
+  expect(named).toHaveLength(4);
+});
+
+test('a scale that fits with fewer diagrams a page is taken, not refused', async () => {
+  const scheme = demoScheme('two-hundred-blocks');
+  const made = await sheetDocument(scheme, modelOf(scheme), asked('shadow-study', { scale: 2500 }), context, go);
+  expect(made).toMatchObject({ ok: true });
+});
+
+test('every sheet set of the demos draws as it stands', async () => {
+  for (const name of ['tannery-yard', 'jacaranda-clinic', 'two-hundred-blocks']) {
+    const scheme = demoScheme(name);
+    for (const set of scheme.sheets)
+      expect(await sheetDocument(scheme, modelOf(scheme), set, context, go)).toMatchObject({ ok: true });
+  }
+});
