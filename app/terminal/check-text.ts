@@ -1,3 +1,7 @@
+import { warmMonths } from '../../core/gain/check-days.ts';
+import { yearSums } from '../../core/gain/room-year.ts';
+import { PARTS } from '../../core/gain/series.ts';
+import { civilOf } from '../../core/sun/civil.ts';
 import type { Finding } from '../../core/limits/finding.ts';
 import type { CheckResult } from '../../core/study/check-result.ts';
 import { table } from './table.ts';
@@ -40,6 +44,50 @@ function roomTable(findings: readonly Finding[]): string {
   );
 }
 
+/** What each room takes in over the year of weather. */
+function yearTable(result: CheckResult): string {
+  const warm = warmMonths(result.latitude_deg);
+  return table(
+    [
+      { head: 'room', align: 'left' },
+      { head: 'name', align: 'left' },
+      { head: 'year kWh/m²', align: 'right' },
+      { head: 'warm half kWh/m²', align: 'right' },
+      { head: 'highest W/m²', align: 'right' },
+      { head: 'when', align: 'left' },
+    ],
+    result.rooms.flatMap((room) => {
+      const { year, floor_m2 } = room;
+      if (year === null || room.windows.length === 0 || !(floor_m2 > 0)) return [];
+      const sum = (months?: readonly number[]): string =>
+        number(yearSums(year, months).reduce((t, w) => t + PARTS.reduce((u, p) => u + w.parts[p], 0), 0) / floor_m2);
+      const { peak } = year;
+      return [
+        [
+          room.room,
+          room.name,
+          sum(),
+          sum(warm),
+          peak === null ? '–' : number(peak.day.total_W[0]! / floor_m2),
+          peak === null ? '–' : civilOf(peak.grid.instant_ms[0]!, result.zone).text,
+        ],
+      ];
+    }),
+  );
+}
+
+/** The weather year, where one was looked at. */
+function weatherLines(result: CheckResult): readonly string[] {
+  const { weather } = result;
+  if (weather === null) return [];
+  const { place, kind, file, rows, step_min } = weather;
+  return [
+    `Weather year: ${file}, ${kind}${place.name === '' ? '' : `, ${place.name}`}, ${rows} rows of ${step_min} min`,
+    '',
+    yearTable(result),
+  ];
+}
+
 /** A check as text for people: what it rests on, every room by its worst finding, why rooms are over, and the cautions. */
 export function checkText(result: CheckResult): string {
   const { over, close, within } = result.counts;
@@ -57,6 +105,7 @@ export function checkText(result: CheckResult): string {
     ...head,
     '',
     roomTable(worstOfRooms(result.findings)),
+    ...weatherLines(result),
     ...(why.length > 0 ? ['Why rooms are over:', ...why, ''] : []),
     ...(notes.length > 0 ? ['Notes:', ...notes, ''] : []),
     ...result.cautions,

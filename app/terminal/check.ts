@@ -16,6 +16,7 @@ type Options = {
   readonly csv?: true;
   readonly pdf?: string;
   readonly working?: string;
+  readonly weather?: string;
 };
 
 const HELP = `
@@ -25,7 +26,8 @@ Examples:
   shadewright check scheme.json
   shadewright check scheme.json --pdf report.pdf
   shadewright check scheme.json --limits our-brief.limits.json --json > report.json
-  shadewright check scheme.json --working 2.4`;
+  shadewright check scheme.json --working 2.4
+  shadewright check scheme.json --weather greensboro.csv`;
 
 async function limitsFor(path: string, scheme: Scheme, options: Options, screen: Screen): Promise<LimitSet | null> {
   if (options.limits !== undefined) return readLimits(options.limits, screen);
@@ -33,15 +35,25 @@ async function limitsFor(path: string, scheme: Scheme, options: Options, screen:
   return accepted(path, limitsOfScheme(scheme), screen);
 }
 
+/** The year of weather to look at: the file named, or the one that the scheme goes by, where it is there. */
+async function weatherFor(path: string, scheme: Scheme, { weather }: Options, screen: Screen) {
+  if (weather === undefined && (scheme.weather ?? null) === null) return null;
+  const { readWeatherFile, weatherBeside } = await import('./read-weather.ts');
+  return weather === undefined ? weatherBeside(path, scheme, screen) : readWeatherFile(weather, scheme, screen);
+}
+
+/** @throws {Refusal} when the scheme has no such room, naming those it has */
+function refuseRoom(scheme: Scheme, room: string): void {
+  if (scheme.rooms.some((r) => r.id === room)) return;
+  const known = scheme.rooms.map((r) => r.id).slice(0, 12);
+  throw new Refusal(
+    `shadewright check: --working: the scheme has no room ${JSON.stringify(room)}; it has ${known.join(', ')}${scheme.rooms.length > 12 ? ' …' : ''}.`,
+  );
+}
+
 /** The working of every finding of a room, as text. */
 async function workingOfRoom(result: CheckResult, scheme: Scheme, room: string): Promise<string> {
   const findings = result.findings.filter((f) => f.room === room);
-  if (!result.rooms.some((r) => r.room === room)) {
-    const known = result.rooms.map((r) => r.room).slice(0, 12);
-    throw new Refusal(
-      `shadewright check: the scheme has no room ${JSON.stringify(room)}; it has ${known.join(', ')}${result.rooms.length > 12 ? ' …' : ''}.`,
-    );
-  }
   const [{ workingOf }, { workingText }] = await Promise.all([
     import('../../core/limits/working.ts'),
     import('./working-text.ts'),
@@ -72,6 +84,7 @@ export const declareCheck: Declare = (program, screen, end) => {
     .option('--json', 'print the whole report as JSON, which `verify` can recompute')
     .option('--csv', 'print the findings as CSV')
     .option('--pdf <FILE>', 'write the report as PDF')
+    .option('--weather <FILE>', 'look at a year of weather besides: TMY3, JRC typical year, or as the scheme maps it')
     .option('--working <ROOM>', 'show how the numbers of a room were reached')
     .addHelpText('after', HELP)
     .action(async (path: string, options: Options) => {
@@ -79,9 +92,11 @@ export const declareCheck: Declare = (program, screen, end) => {
         throw new Refusal('shadewright check: both --json and --csv were given; give one of the two.');
       const { scheme, notes } = await readScheme(path, screen);
       const limitSet = await limitsFor(path, scheme, options, screen);
+      const weather = await weatherFor(path, scheme, options, screen);
+      if (options.working !== undefined) refuseRoom(scheme, options.working);
       const { checkScheme } = await import('../../core/study/check.ts');
       const { pulse, done } = progress(screen, 'checking');
-      const result = await checkScheme(scheme, limitSet, notes, pulse);
+      const result = await checkScheme(scheme, limitSet, notes, pulse, { weather });
       done();
       if (result === null) throw new Error('the check was stopped');
       if (options.pdf !== undefined) {

@@ -1,9 +1,12 @@
 import { nestsTooDeep } from '../../core/scheme/nesting.ts';
+import type { Scheme } from '../../core/scheme/schema.ts';
+import type { WeatherInput } from '../../core/study/weather-input.ts';
 import type { Difference, ReportFile } from '../../core/study/report-json.ts';
 import type { Declare } from './declare.ts';
 import { progress } from './progress.ts';
 import { accepted, readText } from './read-input.ts';
 import { EXIT, Refusal } from './refusal.ts';
+import type { Screen } from './screen.ts';
 
 /** Differences that are named; one is enough for the report not to hold. */
 const MOST_NAMED = 10;
@@ -49,6 +52,29 @@ async function readReport(path: string): Promise<Partial<ReportFile>> {
   return report;
 }
 
+/** The year of weather that a report rests on: its content is checked against the hash that the report names. */
+async function weatherOf(
+  said: Partial<ReportFile>,
+  path: string,
+  file: string | undefined,
+  scheme: Scheme,
+  screen: Screen,
+): Promise<WeatherInput | null> {
+  const named = said.weather ?? null;
+  if (named === null) return null;
+  if (file === undefined)
+    throw new Refusal(
+      `${path}: weather: the report rests on the weather file ${shown(named.file)}, which is not in it; give it with --weather.`,
+    );
+  const { readWeatherFile } = await import('./read-weather.ts');
+  const read = await readWeatherFile(file, scheme, screen);
+  if (read.used.hash !== named.hash)
+    throw new Refusal(
+      `${file}: this is not the weather that the report rests on: its content differs from that of ${shown(named.file)}; give the same file.`,
+    );
+  return read;
+}
+
 /** `shadewright verify`: works a report out again and says whether it holds. */
 export const declareVerify: Declare = (program, screen, end) => {
   program
@@ -56,7 +82,8 @@ export const declareVerify: Declare = (program, screen, end) => {
     .description('work a JSON report out again and say whether its numbers hold')
     .argument('<REPORT>', 'what check --json printed')
     .addHelpText('after', HELP)
-    .action(async (path: string) => {
+    .option('--weather <FILE>', 'the weather file that the report names, where it names one')
+    .action(async (path: string, options: { weather?: string }) => {
       const said = await readReport(path);
       const [{ loadScheme }, { checkLimitSet }, { checkScheme }, { SAME_SHARE, reportDifferences, reportJson }] =
         await Promise.all([
@@ -68,8 +95,9 @@ export const declareVerify: Declare = (program, screen, end) => {
       const loaded = loadScheme(JSON.stringify(said.scheme ?? null));
       const scheme = accepted(`${path}: scheme`, loaded, screen);
       const limitSet = said.limitSet === null ? null : accepted(path, checkLimitSet(said.limitSet, 'limitSet'), screen);
+      const weather = await weatherOf(said, path, options.weather, scheme, screen);
       const { pulse, done } = progress(screen, 'verifying');
-      const result = await checkScheme(scheme, limitSet, loaded.ok ? loaded.notes : [], pulse);
+      const result = await checkScheme(scheme, limitSet, loaded.ok ? loaded.notes : [], pulse, { weather });
       done();
       if (result === null) throw new Error('the check was stopped');
       // By way of JSON, so that what it cannot say (such as infinity) reads alike on both sides.

@@ -4,6 +4,7 @@ import type { WindowShade } from '../shade/sunlit-fraction.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
 import { ContentMemo } from './content-memo.ts';
 import type { FacingLight } from './open-light.ts';
+import type { RoomYear } from './room-year.ts';
 import type { WindowDay, WindowSeen } from './series.ts';
 
 /**
@@ -21,6 +22,8 @@ export type CheckMemo = {
   /** Sunlit share of a window over a day: the costly part. */
   readonly sunlit: ContentMemo<Float64Array>;
   readonly gains: ContentMemo<WindowDay>;
+  /** Years of weather by room: a room that an edit leaves alone is not worked out again. */
+  readonly years: ContentMemo<RoomYear>;
   /** Hashes of what stands around, by the list of solids. */
   readonly surroundings: WeakMap<readonly Solid[], { readonly trees: readonly Tree[]; readonly key: string }>;
 };
@@ -37,5 +40,18 @@ export const createCheckMemo = (windows = 600): CheckMemo => ({
   seen: new ContentMemo(windows * 2),
   sunlit: new ContentMemo(windows * 6),
   gains: new ContentMemo(windows * 6),
+  years: new ContentMemo(200),
   surroundings: new WeakMap(),
+});
+
+/**
+ * A memory for one pass over a year of weather: it shares what a window's shade is with the checks' memory, and soon forgets the
+ * hours, which would push everything else out.
+ */
+export const yearMemo = (memo: CheckMemo): CheckMemo => ({
+  ...createCheckMemo(16),
+  names: memo.names,
+  shades: memo.shades,
+  seen: memo.seen,
+  surroundings: memo.surroundings,
 });

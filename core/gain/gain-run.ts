@@ -14,6 +14,7 @@ import { type CheckMemo, nameOf } from './gain-memo.ts';
 import { openLight, viewOf } from './open-light.ts';
 import { roomDay } from './room-day.ts';
 import type { RoomDay, WindowDay, WindowSeen } from './series.ts';
+import type { WeatherMonths } from './weather-run.ts';
 import { windowDay } from './window-day.ts';
 
 /** In place of a month, for trees: the mean of the year. */
@@ -36,6 +37,8 @@ export type GainRun = {
   /** What a window sees; trees as in the mean of the year. */
   readonly windowSeen: (window: WindowForm) => WindowSeen;
   readonly roomGain: (room: RoomForm) => RoomGain;
+  /** Names all that a room's gain depends on besides the days. */
+  readonly roomContent: (room: RoomForm) => string;
 };
 
 /** A day with the sun's direction in drawing axes at every step above the horizon. */
@@ -75,11 +78,14 @@ function sunnyDay(scheme: Scheme, day: DayOf, north_rad: number, memo: CheckMemo
   const key = JSON.stringify(content);
   const found = memo.days.get(`${day.key} ${key}`, () => checkDay(scheme, day));
   const grid = found.name === day.name ? found : { ...found, name: day.name };
-  const suns = Array.from(grid.altitude_rad, (altitude, i) =>
+  return { grid, name: nameOf(memo, key), month: monthOf(day.date), suns: sunsOf(grid, north_rad) };
+}
+
+/** The sun's direction in drawing axes at every step; null below the horizon. */
+const sunsOf = (grid: DayGrid, north_rad: number): readonly (Vec3 | null)[] =>
+  Array.from(grid.altitude_rad, (altitude, i) =>
     altitude > 0 ? sunVector(grid.azimuth_rad[i]!, altitude, north_rad) : null,
   );
-  return { grid, name: nameOf(memo, key), month: monthOf(day.date), suns };
-}
 
 /** Share of a window's glass in direct sun at every step of a day; 0 with the sun down or behind it. */
 function sunlitOver(shade: WindowShade, day: SunnyDay, cosIncidence: Float64Array): Float64Array {
@@ -96,16 +102,54 @@ function sunlitOver(shade: WindowShade, day: SunnyDay, cosIncidence: Float64Arra
  * @param model    of the scheme; its solids may be those of a larger one that it is part of
  * @param dayList  from `checkDayList`
  */
-export function gainRun(
+export const gainRun = (
   scheme: Scheme,
   model: Model,
   dayList: readonly DayOf[],
   memo: CheckMemo,
   skyModel: SkyModel,
+): GainRun =>
+  runOver(
+    scheme,
+    model,
+    dayList.map((day) => sunnyDay(scheme, day, model.north_rad, memo)),
+    memo,
+    skyModel,
+  );
+
+/**
+ * The gain stage over a year of weather, month by month.
+ * @param memo  what a year leaves in it is large: the caller gives one that forgets soon, or none of the check's
+ */
+export const weatherRun = (
+  scheme: Scheme,
+  model: Model,
+  weather: WeatherMonths,
+  memo: CheckMemo,
+  skyModel: SkyModel,
+): GainRun =>
+  runOver(
+    scheme,
+    model,
+    weather.months.map((grid) => ({
+      grid,
+      name: nameOf(memo, `${weather.key} ${grid.key}`),
+      month: monthOf(grid.date),
+      suns: sunsOf(grid, model.north_rad),
+    })),
+    memo,
+    skyModel,
+  );
+
+function runOver(
+  scheme: Scheme,
+  model: Model,
+  days: readonly SunnyDay[],
+  memo: CheckMemo,
+  skyModel: SkyModel,
 ): GainRun {
   const solids = solidsAt(model.solids, 'after');
   const surroundings = surroundingsKey(model, solids, memo);
-  const days = dayList.map((day) => sunnyDay(scheme, day, model.north_rad, memo));
   const grids = days.map((d) => d.grid);
   const byId = new Map(model.windows.map((w) => [w.id, w]));
   const keys = new Map<string, string>();
@@ -123,10 +167,12 @@ export function gainRun(
     return memo.seen.get(`${keyOf(w)} ${of}`, () => windowSky(shadeOf(w), of));
   };
 
+  const ownOf = (w: WindowForm): number =>
+    nameOf(memo, JSON.stringify([w.id, w.bearing_deg, w.glass_m2, w.glass, w.blinds]));
   const windowDays = (w: WindowForm): readonly WindowDay[] => {
     const key = keyOf(w);
     const facing = { bearing_deg: w.bearing_deg, tilt_deg: w.tilt_deg };
-    const own = nameOf(memo, JSON.stringify([w.id, w.bearing_deg, w.glass_m2, w.glass, w.blinds]));
+    const own = ownOf(w);
     return days.map((day) => {
       const ground = monthly(scheme.site.groundReflectance, day.month);
       const sky = `${day.name} ${skyModel} ${ground}`;
@@ -155,5 +201,16 @@ export function gainRun(
     );
     return { room, windows, days: roomDays };
   };
-  return { grids, skyModel, windowDays, windowSeen: (w) => seenIn(w, YEAR_MEAN), roomGain };
+  const roomContent = (room: RoomForm): string =>
+    JSON.stringify([
+      room.id,
+      room.windows.map((id) => {
+        const w = byId.get(id);
+        return w === undefined ? id : [ownOf(w), keyOf(w)];
+      }),
+      skyModel,
+      model.north_rad,
+      scheme.site.groundReflectance,
+    ]);
+  return { grids, skyModel, windowDays, windowSeen: (w) => seenIn(w, YEAR_MEAN), roomGain, roomContent };
 }

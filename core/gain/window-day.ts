@@ -18,8 +18,12 @@ export type WindowView = { readonly sky: number; readonly horizon: number; reado
 /** Irradiance on the plane of the glass with nothing in front of it, part by part [W/m²], one row a step. */
 export type OpenLight = { readonly [P in Part]: Float64Array };
 
+/** An opening without a pane lets light in alike from all sides. */
+const OPEN: AngleCurve = { at: () => 1, hemispherical: 1 };
+
 /** The angle curve of a glass of the scheme: Karlsson and Roos, since a scheme knows g, panes and coating. */
-export const glassCurve = (glass: WindowForm['glass']): AngleCurve => karlssonRoosCurve(glass.panes, glass.coating);
+export const glassCurve = (glass: WindowForm['glass']): AngleCurve =>
+  glass.panes === 0 ? OPEN : karlssonRoosCurve(glass.panes, glass.coating);
 
 /** Share of the open irradiance of a part that reaches the glass at a step. */
 const reach = (part: Part, sunlit: number, view: WindowView): number =>

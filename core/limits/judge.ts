@@ -14,6 +14,9 @@ export const SHOWN_CLOCK: readonly [string, string] = ['07:30', '17:30'];
 /** What is shown of every room when the scheme has chosen no limit set. */
 const SHOWN: readonly MetricId[] = ['peak-gain', 'mean-gain', 'day-gain', 'glazing-to-floor'];
 
+/** And of every room where there is a year of weather. */
+const SHOWN_OF_YEAR: readonly MetricId[] = ['year-gain', 'warm-gain', 'year-peak'];
+
 /**
  * The value a limit sets for a room: by bearing of its most glazed wall where the limit says so, the strictest of equals; the
  * plain value for a room with rooflights alone.
@@ -91,7 +94,7 @@ export const worstFirst = (a: Finding, b: Finding): number =>
 export function judgeRoom(limit: Limit, close: number, facts: RoomFacts, days: DayFacts): Finding | null {
   if (!appliesTo(limit, facts)) return null;
   const clock = limit.metric === 'mean-gain' ? (limit.clock ?? SHOWN_CLOCK) : null;
-  const question = { metric: limit.metric, days: limit.days, clock: clock ?? undefined };
+  const question = { metric: limit.metric, days: limit.days, clock: clock ?? undefined, above: limit.above };
   const reading = readMetric(question, facts, days, limit.comparison === 'at-most' ? 'highest' : 'lowest');
   if (!reading) return null;
   return findingOf(facts, days, reading, limit.metric, clock, { limit, value: limitValueFor(limit, facts), close });
@@ -109,7 +112,7 @@ export function findingsOf(rooms: readonly RoomFacts[], days: DayFacts, set: Lim
       if (finding) findings.push(finding);
     }
     if (set) continue;
-    for (const metric of SHOWN) {
+    for (const metric of facts.year ? [...SHOWN, ...SHOWN_OF_YEAR] : SHOWN) {
       const clock = metric === 'mean-gain' ? SHOWN_CLOCK : null;
       const reading = readMetric({ metric, clock: clock ?? undefined }, facts, days);
       if (reading) findings.push(findingOf(facts, days, reading, metric, clock, null));

@@ -16,6 +16,8 @@ export type Limit = {
   readonly days?: readonly string[];
   /** Civil clock window for means, such as ["07:30", "17:30"]. */
   readonly clock?: readonly [string, string];
+  /** Threshold of hours-above [W per m² of floor]. */
+  readonly above?: number;
   readonly source: string;
   /** When someone last compared it with its source, YYYY-MM-DD; null: never. */
   readonly checked: string | null;

@@ -96,6 +96,13 @@ function entryFaults(set: LimitSetFile): Fault[] {
         'a mean needs the clock hours it is taken over',
         'add "clock": ["07:30", "17:30"] or your own hours',
       );
+    if (limit.metric === 'hours-above' && limit.above === undefined)
+      say(
+        place,
+        'missing',
+        'hours-above needs the gain that is to be stayed under',
+        'add "above": 25, in W per m² of floor',
+      );
     if (limit.clock && clockMinutes(limit.clock[0]) === clockMinutes(limit.clock[1]))
       say(`${place}.clock`, 'empty-stretch', 'the clock hours begin and end together', 'write two different times');
     if (limit.days && !metric.byDay)

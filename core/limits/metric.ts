@@ -1,4 +1,4 @@
-import type { MetricId } from './metric-id.ts';
+import type { MetricId, YearMetricId } from './metric-id.ts';
 
 /** What may be measured and limited: its name as it stands in findings, its unit, and how it is reached. */
 export type Metric = {
@@ -42,6 +42,34 @@ export const METRICS: { readonly [M in MetricId]: Metric } = {
     method: `${GAIN}. The clear 21st of each of the six warm months times the days of the month, over the floor area: what a season without cloud would bring.`,
     byDay: false,
   },
+  'year-gain': {
+    id: 'year-gain',
+    name: 'solar gain of the weather year per m² of floor',
+    unit: 'kWh/m²',
+    method: `${GAIN}. Summed over every row of the weather file, over the floor area.`,
+    byDay: false,
+  },
+  'warm-gain': {
+    id: 'warm-gain',
+    name: 'solar gain of the warm half of the weather year per m² of floor',
+    unit: 'kWh/m²',
+    method: `${GAIN}. Summed over the rows of April to September (October to March south of the equator), over the floor area.`,
+    byDay: false,
+  },
+  'year-peak': {
+    id: 'year-peak',
+    name: 'highest solar gain of the weather year per m² of floor',
+    unit: 'W/m²',
+    method: `${GAIN}. The highest row of the weather file, a mean over its interval, over the floor area.`,
+    byDay: false,
+  },
+  'hours-above': {
+    id: 'hours-above',
+    name: 'hours of the weather year with more solar gain than a threshold',
+    unit: 'h',
+    method: `${GAIN}. The rows of the weather file in which the gain over the floor area is above the threshold, times their length.`,
+    byDay: false,
+  },
   'glazing-to-floor': {
     id: 'glazing-to-floor',
     name: 'window openings as a share of the floor',
@@ -55,3 +83,13 @@ export const METRIC_IDS = Object.keys(METRICS) as readonly MetricId[];
 
 /** Whether a text names a metric. */
 export const isMetric = (id: string): id is MetricId => Object.hasOwn(METRICS, id);
+
+const YEAR_METRICS: readonly MetricId[] = [
+  'year-gain',
+  'warm-gain',
+  'year-peak',
+  'hours-above',
+] satisfies YearMetricId[];
+
+/** Whether a metric can only be read with a year of weather. */
+export const needsWeather = (id: MetricId): id is YearMetricId => YEAR_METRICS.includes(id);

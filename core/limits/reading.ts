@@ -1,7 +1,9 @@
 import { daysInMonth, monthKey, warmMonths } from '../gain/check-days.ts';
 import { clockMinutes, inClockWindow } from '../gain/clock-window.ts';
 import { PARTS, type Part, type RoomDay } from '../gain/series.ts';
+import { type RoomYear, yearSums } from '../gain/room-year.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
+import { needsWeather } from './metric.ts';
 import type { MetricId } from './metric-id.ts';
 import type { DayFacts, RoomFacts } from './room-facts.ts';
 
@@ -10,6 +12,8 @@ export type Question = {
   readonly metric: MetricId;
   readonly days?: readonly string[] | undefined;
   readonly clock?: readonly [string, string] | undefined;
+  /** Threshold of hours-above [W/m²]. */
+  readonly above?: number | undefined;
 };
 
 /** A metric of a room, and what it came from. */
@@ -111,6 +115,34 @@ function seasonReading(facts: RoomFacts, days: DayFacts): Reading | null {
   return { value: totalOf(sums) / facts.room.floor_m2, day: null, step: null, ...shares(sums) };
 }
 
+/** A year of weather: its sum, that of its warm half, its highest row, or its rows above a threshold. */
+function yearReading(question: Question, facts: RoomFacts, year: RoomYear, days: DayFacts): Reading {
+  const floor = facts.room.floor_m2;
+  if (question.metric === 'year-peak') {
+    const { peak } = year;
+    if (peak === null) return { value: 0, day: null, step: null, ...shares([]) };
+    const grid = days.grids.find((g) => g.key === peak.grid.key);
+    const step = grid?.instant_ms.indexOf(peak.grid.instant_ms[0]!) ?? -1;
+    return {
+      value: peak.day.total_W[0]! / floor,
+      day: peak.grid.key,
+      step: step < 0 ? null : step,
+      ...shares(sumsOver(peak.day, [0], 1)),
+    };
+  }
+  const months = question.metric === 'warm-gain' ? warmMonths(days.latitude_deg) : undefined;
+  const sums = yearSums(year, months).map(({ window, parts }): Sums => {
+    return { window, parts: { ...parts }, total: PARTS.reduce((sum, p) => sum + parts[p], 0) };
+  });
+  if (question.metric === 'hours-above') {
+    const above_W = (question.above ?? 0) * floor;
+    let rows = 0;
+    for (const watts of year.total_W) if (watts > above_W) rows++;
+    return { value: (rows * year.step_min) / 60, day: null, step: null, ...shares(sums) };
+  }
+  return { value: totalOf(sums) / floor, day: null, step: null, ...shares(sums) };
+}
+
 function glazingReading(facts: RoomFacts): Reading {
   const openings = facts.windows.map((w) => w.opening_m2);
   const total = openings.reduce((a, b) => a + b, 0);
@@ -134,6 +166,7 @@ export function readMetric(
   if (!(facts.room.floor_m2 > 0)) return null;
   if (question.metric === 'glazing-to-floor') return glazingReading(facts);
   if (question.metric === 'season-gain') return seasonReading(facts, days);
+  if (needsWeather(question.metric)) return facts.year ? yearReading(question, facts, facts.year, days) : null;
   let found: Reading | null = null;
   for (const key of daysOf(question)) {
     const at = days.grids.findIndex((g) => g.key === key);

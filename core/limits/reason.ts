@@ -38,6 +38,14 @@ export function shown(value: number): string {
   return value.toFixed(size >= 100 ? 0 : size >= 10 ? 1 : 2);
 }
 
+/** How a period that is no day stands in a sentence. */
+const OF_NO_DAY: { readonly [M in MetricId]?: string } = {
+  'season-gain': ' over the warm half-year, every day clear',
+  'year-gain': ' over the weather year',
+  'warm-gain': ' over the warm half of the weather year',
+  'hours-above': ' over the weather year',
+};
+
 function againstLimit({ reading, metric, judged }: ReasonInput): string {
   const { unit } = METRICS[metric];
   if (!judged) return `${shown(reading.value)} ${unit}`;
@@ -52,7 +60,9 @@ const dayWords = (name: string): string => (/^\d/.test(name) ? name : `the ${nam
 
 function whenWords({ reading, days, metric, clock }: ReasonInput): string {
   const grid = days.grids.find((g) => g.key === reading.day);
-  if (!grid) return metric === 'season-gain' ? ' over the warm half-year, every day clear' : '';
+  if (!grid) return OF_NO_DAY[metric] ?? '';
+  if (metric === 'year-peak' && reading.step !== null)
+    return `, in the hour about ${civilOf(grid.instant_ms[reading.step]!, days.zone).text} of the weather year`;
   if (reading.step !== null) {
     if (reading.value === 0) return ` on ${dayWords(grid.name)}`;
     return ` at ${civilOf(grid.instant_ms[reading.step]!, days.zone).time} on ${dayWords(grid.name)}`;

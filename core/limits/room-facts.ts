@@ -1,11 +1,12 @@
 import type { WindowForm } from '../form/model.ts';
 import type { RoomGain } from '../gain/gain-run.ts';
+import type { RoomYear } from '../gain/room-year.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
 
-/** A room with everything that a limit may look at. */
-export type RoomFacts = RoomGain;
+/** A room with everything that a limit may look at. `year` is there where the check was given a year of weather. */
+export type RoomFacts = RoomGain & { readonly year?: RoomYear | null };
 
-/** The site's side of it: the days that were run and where they were. */
+/** The site's side of it: the days that were run (those of the rooms first, then the months of a weather year) and where they were. */
 export type DayFacts = {
   readonly grids: readonly DayGrid[];
   readonly zone: string;

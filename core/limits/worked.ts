@@ -1,3 +1,4 @@
+import type { RoomYear } from '../gain/room-year.ts';
 import type { RoomDay } from '../gain/series.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
 import type { SkyModel } from '../sky/transpose.ts';
@@ -15,7 +16,9 @@ export type Worked = {
     readonly floor_m2: number;
     readonly windows: readonly WorkedWindow[];
     readonly days: readonly RoomDay[];
+    readonly year?: RoomYear | null;
   }[];
+  readonly weather?: { readonly file: string; readonly kind: string } | null;
 };
 
 export type WorkedWindow = {

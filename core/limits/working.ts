@@ -1,4 +1,5 @@
 import { daysInMonth, monthKey, warmMonths } from '../gain/check-days.ts';
+import { yearSums } from '../gain/room-year.ts';
 import { energy_Wh } from '../gain/room-day.ts';
 import { PARTS, type RoomDay } from '../gain/series.ts';
 import type { Scheme } from '../scheme/schema.ts';
@@ -6,7 +7,7 @@ import type { DayGrid } from '../sky/day-grid.ts';
 import { DESIGN_DAY_METHOD } from '../sky/design-day.ts';
 import { SKY_MODELS } from '../sky/transpose.ts';
 import type { Finding, Working, WorkingStep } from './finding.ts';
-import { METRICS } from './metric.ts';
+import { METRICS, needsWeather } from './metric.ts';
 import { peakStep, stepsCounted } from './reading.ts';
 import { line, placeOfId, type Worked } from './worked.ts';
 import { sunLines, windowLines } from './working-moment.ts';
@@ -114,6 +115,53 @@ function seasonLines(result: Worked, scheme: Scheme, room: WorkedRoom): WorkingS
   });
 }
 
+const MONTHS = 'January February March April May June July August September October November December'.split(' ');
+
+/** A year of weather: which file, what each window brings month by month, and the highest row in full. */
+function yearLines(result: Worked, scheme: Scheme, room: WorkedRoom, finding: Finding): WorkingStep[] {
+  const { year } = room;
+  if (!year) return [];
+  const lines = [
+    line('weather file', result.weather?.file ?? '', '', { note: result.weather?.kind ?? '', place: 'weather' }),
+  ];
+  const { peak } = year;
+  const peakLines =
+    peak === null
+      ? []
+      : [
+          ...sunLines(result, peak.grid, 0),
+          ...peak.day.windows.flatMap((w) => {
+            const window = room.windows.find((x) => x.window === w.window);
+            return window ? windowLines({ result, scheme, grid: peak.grid }, window, w, 0) : [];
+          }),
+          line('room, all windows', peak.day.total_W[0]!, 'W', { formula: 'sum of its windows' }),
+        ];
+  if (finding.metric === 'year-peak') return [...lines, ...peakLines];
+  if (finding.metric === 'hours-above') {
+    const above = result.limitSet?.limits.find((l) => l.id === finding.limit)?.above ?? 0;
+    lines.push(
+      line('threshold', above, 'W/m²', { place: `limit set ${result.limitSet?.id ?? ''}, ${finding.limit}` }),
+      line('threshold for the room', above * room.floor_m2, 'W', { formula: 'threshold × floor' }),
+      line('rows above it', (finding.value * 60) / year.step_min, '', { note: `rows of ${year.step_min} minutes` }),
+      line('the highest of them, in full:', '', ''),
+      ...peakLines,
+    );
+    return lines;
+  }
+  const counted = finding.metric === 'warm-gain' ? warmMonths(scheme.site.latitude) : MONTHS.map((_, i) => i + 1);
+  for (const { window, months } of year.windows) {
+    for (const month of counted) {
+      const parts = months[month - 1];
+      if (!parts) continue;
+      const sum = PARTS.reduce((total, part) => total + parts[part], 0);
+      lines.push(line(`${window}: ${MONTHS[month - 1]}`, sum, 'kWh', { note: 'Σ W × row' }));
+    }
+  }
+  const total = yearSums(year, counted).reduce((sum, w) => sum + PARTS.reduce((t, p) => t + w.parts[p], 0), 0);
+  lines.push(line('room, all windows', total, 'kWh', { formula: 'sum of its windows and months' }));
+  return lines;
+}
+
 const glazingLines = (scheme: Scheme, room: WorkedRoom): WorkingStep[] =>
   room.windows.map((w) => {
     const place = placeOfId(scheme.windows, w.window, 'windows');
@@ -136,6 +184,12 @@ function limitLines(result: Worked, finding: Finding): WorkingStep[] {
   ];
 }
 
+/** How a metric follows from what stands above it, where that is not a division by the floor. */
+const FORMULAS: { readonly [M in Finding['metric']]?: string } = {
+  'glazing-to-floor': '100 × openings / floor',
+  'hours-above': 'rows above the threshold × length of a row',
+};
+
 /**
  * How a finding's number was reached, down to the moment, the window, the split and the five-minute step, with the places in the
  * scheme that its inputs come from.
@@ -149,13 +203,14 @@ export function workingOf(result: Worked, scheme: Scheme, finding: Finding): Wor
   const at = result.days.findIndex((g) => g.key === finding.day);
   if (finding.metric === 'glazing-to-floor') lines.push(...glazingLines(scheme, room));
   else if (finding.metric === 'season-gain') lines.push(...seasonLines(result, scheme, room));
+  else if (needsWeather(finding.metric)) lines.push(...yearLines(result, scheme, room, finding));
   else if (finding.metric === 'peak-gain')
     lines.push(...stepLines(result, scheme, room, at, peakStep(room.days[at] as RoomDay)));
   else lines.push(...periodLines(result, scheme, room, finding));
   lines.push(
     floorLine(room, scheme),
     line(metric.name, finding.value, metric.unit, {
-      formula: finding.metric === 'glazing-to-floor' ? '100 × openings / floor' : 'the above / floor',
+      formula: FORMULAS[finding.metric] ?? 'the above / floor',
     }),
     ...limitLines(result, finding),
   );

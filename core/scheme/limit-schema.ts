@@ -27,6 +27,7 @@ export const LimitEntry = z.looseObject({
     .optional()
     .describe('design days it looks at; absent: the hottest design day'),
   clock: z.tuple([clock, clock]).optional().describe('stretch of the civil day, for means'),
+  above: z.number().min(0).max(2000).optional().describe('threshold of hours-above [W per m² of floor]'),
   source: text.describe('where the value comes from'),
   checked: z
     .string()

@@ -82,7 +82,7 @@ export const Glass = z.looseObject({
   g: share.gt(0).describe('total solar energy transmittance at normal incidence, centre of pane'),
   u: finite.gt(0).max(10).describe('U-value of the pane [W/m²K]'),
   light: share.describe('light transmittance'),
-  panes: z.int().min(1).max(4).default(2),
+  panes: z.int().min(0).max(4).default(2).describe('0 for an opening without glass'),
   coating: finite.min(1).max(10).default(4).describe('category q of Karlsson and Roos (2000); 4 is clear float'),
   frame: share.lt(1).default(0.2).describe('share of the opening taken by the frame'),
   source: text.optional(),

@@ -1,6 +1,7 @@
 import type { Model } from '../form/model.ts';
 import { stands } from '../form/stands.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
+import { needsWeather } from '../limits/metric.ts';
 import type { Fault } from '../scheme/fault.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import { SLIVER_m2 } from '../units/tolerance.ts';
@@ -17,12 +18,18 @@ const warning = (code: string, place: string, message: string, cure: string): Fa
  * What the reader of a check should know about it: rooms that no gain can be worked out for, limits that apply to nothing,
  * glass outside the fit, a hottest day that was assumed. Faults of the scheme's own making are the loader's to find.
  */
-export function checkNotes(scheme: Scheme, model: Model, limitSet: LimitSet | null): readonly Fault[] {
+export function checkNotes(
+  scheme: Scheme,
+  model: Model,
+  limitSet: LimitSet | null,
+  hasWeather: boolean,
+): readonly Fault[] {
   return [
     ...model.rooms.flatMap((room) => roomNotes(room, scheme)),
     ...scheme.glass.flatMap((glass, i) => glassNotes(glass, `glass[${i}]`)),
     ...scheme.devices.flatMap((device, i) => deviceNotes(device, `devices[${i}]`)),
     ...(limitSet ? limitNotes(limitSet, model) : []),
+    ...(limitSet && !hasWeather ? weatherNotes(limitSet) : []),
     ...siteNotes(scheme),
   ];
 }
@@ -111,6 +118,22 @@ function limitNotes(set: LimitSet, model: Model): Fault[] {
     );
   }
   return notes;
+}
+
+/** Limits that could not be looked at for want of a year of weather: a room is not within what was never read. */
+function weatherNotes(set: LimitSet): Fault[] {
+  return set.limits.flatMap((limit, i) =>
+    needsWeather(limit.metric)
+      ? [
+          warning(
+            'needs-weather',
+            `limits[${i}].metric`,
+            `limit ${limit.id} looks at a year of weather and was left out: no weather file was given`,
+            'give the weather file, or take the limit out of the set',
+          ),
+        ]
+      : [],
+  );
 }
 
 function siteNotes(scheme: Scheme): Fault[] {

@@ -1,9 +1,11 @@
+import type { RoomYear } from '../gain/room-year.ts';
 import type { RoomDay } from '../gain/series.ts';
 import type { Finding } from '../limits/finding.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
 import type { Fault } from '../scheme/fault.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
 import type { SkyModel } from '../sky/transpose.ts';
+import type { WeatherUsed } from './weather-input.ts';
 
 /** Everything that a check of a scheme gives: findings, and the columns that they were read from. */
 export type CheckResult = {
@@ -13,11 +15,14 @@ export type CheckResult = {
   readonly schemeHash: string;
   readonly title: string;
   readonly zone: string;
+  readonly latitude_deg: number;
   /** How the sky's light is spread over the dome. */
   readonly skyModel: SkyModel;
   /** Null when the scheme has chosen no set: metrics, and no verdict. */
   readonly limitSet: LimitSet | null;
   readonly days: readonly DayGrid[];
+  /** The year of weather that was looked at besides; null: none. */
+  readonly weather: WeatherUsed | null;
   readonly rooms: readonly RoomResult[];
   /** Worst first: by margin as a share of the limit, then room id. */
   readonly findings: readonly Finding[];
@@ -38,6 +43,8 @@ export type RoomResult = {
   /** Opening area of its windows over floor area. */
   readonly glazingToFloor: number;
   readonly windows: readonly WindowResult[];
+  /** What it takes in over the weather year; null where the check had none. */
+  readonly year: RoomYear | null;
   readonly days: readonly RoomDay[];
 };
 

@@ -1,13 +1,14 @@
 import { buildModel } from '../form/build-model.ts';
 import type { Model, RoomForm, WindowForm } from '../form/model.ts';
 import { checkDayList } from '../gain/check-days.ts';
-import { type CheckMemo, createCheckMemo } from '../gain/gain-memo.ts';
-import { type GainRun, gainRun, type RoomGain } from '../gain/gain-run.ts';
+import { type CheckMemo, createCheckMemo, nameOf, yearMemo } from '../gain/gain-memo.ts';
+import { type GainRun, gainRun, weatherRun } from '../gain/gain-run.ts';
+import { type RoomYear, roomYear } from '../gain/room-year.ts';
 import { skyModelOf } from '../gain/open-light.ts';
 import { CAUTIONS } from '../limits/cautions.ts';
 import { countRooms, findingsOf } from '../limits/judge.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
-import type { DayFacts } from '../limits/room-facts.ts';
+import type { DayFacts, RoomFacts } from '../limits/room-facts.ts';
 import type { Fault } from '../scheme/fault.ts';
 import { contentHash } from '../scheme/hash.ts';
 import type { Scheme } from '../scheme/schema.ts';
@@ -17,11 +18,14 @@ import { checkNotes } from './check-notes.ts';
 import type { CheckResult, RoomResult, WindowResult } from './check-result.ts';
 import { ENGINE_VERSION } from './engine.ts';
 import type { Pulse } from './job.ts';
+import type { WeatherInput } from './weather-input.ts';
 
 /** What a check may be told beyond scheme and limits. */
 export type CheckOptions = {
   /** Remembers earlier checks; absent: everything is worked out. */
   readonly memo?: CheckMemo;
+  /** A year of weather to look at besides the design days. */
+  readonly weather?: WeatherInput | null;
   /** Absent: that of the scheme. */
   readonly skyModel?: SkyModel;
 };
@@ -49,18 +53,29 @@ export async function checkScheme(
   const model = buildModel(scheme);
   const season = limitSet?.limits.some((limit) => limit.metric === 'season-gain') ?? false;
   const dayList = checkDayList(scheme, season);
-  const run = gainRun(scheme, model, dayList, memo, options.skyModel ?? skyModelOf(scheme));
-  const gains: RoomGain[] = [];
+  const skyModel = options.skyModel ?? skyModelOf(scheme);
+  const run = gainRun(scheme, model, dayList, memo, skyModel);
+  const weather = options.weather ?? null;
+  const yearOf = weather === null ? null : yearsOf(scheme, model, weather, memo, skyModel);
+  const total = model.windows.length * (yearOf === null ? 1 : 2);
+  const gains: RoomFacts[] = [];
   let done = 0;
   let next = WINDOWS_A_SLICE;
   for (const room of model.rooms) {
-    gains.push(run.roomGain(room));
-    done += room.windows.length;
+    gains.push({ ...run.roomGain(room), year: yearOf === null ? null : yearOf(room) });
+    done += room.windows.length * (yearOf === null ? 1 : 2);
     if (done < next) continue;
-    next = done + WINDOWS_A_SLICE;
-    if ((await pulse(done, model.windows.length)) === 'stop') return null;
+    next = done + (yearOf === null ? WINDOWS_A_SLICE : 1);
+    if ((await pulse(done, total)) === 'stop') return null;
   }
-  return resultOf(scheme, model, limitSet, notes, run, gains);
+  return resultOf(scheme, model, limitSet, notes, run, gains, weather);
+}
+
+/** The year of a room, remembered by all that it depends on. */
+function yearsOf(scheme: Scheme, model: Model, weather: WeatherInput, memo: CheckMemo, skyModel: SkyModel) {
+  const run = weatherRun(scheme, model, weather.months, yearMemo(memo), skyModel);
+  return (room: RoomForm): RoomYear =>
+    memo.years.get(`${nameOf(memo, weather.months.key)} ${run.roomContent(room)}`, () => roomYear(run, room));
 }
 
 function resultOf(
@@ -69,27 +84,31 @@ function resultOf(
   limitSet: LimitSet | null,
   notes: readonly Fault[],
   run: GainRun,
-  gains: readonly RoomGain[],
+  gains: readonly RoomFacts[],
+  weather: WeatherInput | null,
 ): CheckResult {
-  const days: DayFacts = { grids: run.grids, zone: scheme.site.zone, latitude_deg: scheme.site.latitude };
+  const grids = weather === null ? run.grids : [...run.grids, ...weather.months.months];
+  const days: DayFacts = { grids, zone: scheme.site.zone, latitude_deg: scheme.site.latitude };
   const findings = findingsOf(gains, days, limitSet);
   return {
     engine: ENGINE_VERSION,
     schemeHash: contentHash(writeScheme(scheme)),
     title: scheme.title,
     zone: scheme.site.zone,
+    latitude_deg: scheme.site.latitude,
     skyModel: run.skyModel,
     limitSet,
     days: run.grids,
+    weather: weather?.used ?? null,
     rooms: gains.map((g) => roomResult(g.room, g, run)),
     findings,
     counts: countRooms(findings),
-    notes: [...notes, ...checkNotes(scheme, model, limitSet)],
+    notes: [...notes, ...(weather?.notes ?? []), ...checkNotes(scheme, model, limitSet, weather !== null)],
     cautions: CAUTIONS,
   };
 }
 
-function roomResult(room: RoomForm, gain: RoomGain, run: GainRun): RoomResult {
+function roomResult(room: RoomForm, gain: RoomFacts, run: GainRun): RoomResult {
   const openings = gain.windows.reduce((sum, w) => sum + w.opening_m2, 0);
   return {
     room: room.id,
@@ -101,6 +120,7 @@ function roomResult(room: RoomForm, gain: RoomGain, run: GainRun): RoomResult {
     glazingToFloor: room.floor_m2 > 0 ? openings / room.floor_m2 : 0,
     windows: gain.windows.map((w) => windowResult(w, run)),
     days: gain.days,
+    year: gain.year ?? null,
   };
 }
 

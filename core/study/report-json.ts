@@ -16,7 +16,9 @@ export type ReportFile = {
   readonly counts: CheckResult['counts'];
   readonly findings: readonly Finding[];
   /** Areas [m²] and shares; the day's curves are left out, because they follow from the scheme. */
-  readonly rooms: readonly Omit<RoomResult, 'days'>[];
+  readonly rooms: readonly Omit<RoomResult, 'days' | 'year'>[];
+  /** The weather file that was looked at besides, by name and content: it is not in the report. */
+  readonly weather: CheckResult['weather'];
   readonly days: readonly {
     readonly key: string;
     readonly name: string;
@@ -43,7 +45,8 @@ export function reportJson(result: CheckResult, scheme: Scheme, limitSet: LimitS
     skyModel,
     counts,
     findings,
-    rooms: result.rooms.map(({ days: _, ...room }) => room),
+    rooms: result.rooms.map(({ days: _, year: __, ...room }) => room),
+    weather: result.weather,
     days: result.days.map(({ key, name, date, step_min }) => ({ key, name, date, step_min })),
     notes,
     cautions,

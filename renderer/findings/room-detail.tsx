@@ -1,5 +1,6 @@
 import { useMemo, useState } from 'preact/hooks';
 import type { Finding } from '../../core/limits/finding.ts';
+import { needsWeather } from '../../core/limits/metric.ts';
 import { workingOf } from '../../core/limits/working.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import type { CheckResult, RoomResult } from '../../core/study/check-result.ts';
@@ -92,7 +93,7 @@ function CurveOf({ finding, result }: { finding: Finding; result: CheckResult })
     () => (grid === undefined || day === undefined || room === undefined ? null : roomCurve(grid, day, room.floor_m2)),
     [grid, day, room],
   );
-  if (curve === null || finding.metric === 'glazing-to-floor') return null;
+  if (curve === null || finding.metric === 'glazing-to-floor' || needsWeather(finding.metric)) return null;
   const over =
     finding.clock === null ? WHOLE_DAY : { from_min: minutesOf(finding.clock[0]), to_min: minutesOf(finding.clock[1]) };
   const isPower = finding.metric === 'peak-gain' || finding.metric === 'mean-gain';

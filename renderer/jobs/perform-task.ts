@@ -1,3 +1,4 @@
+import { fileText } from '../../app/contract/file-text.ts';
 import { bytesHash } from '../../core/scheme/hash.ts';
 import { loadScheme } from '../../core/scheme/load.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
@@ -28,15 +29,6 @@ function dayEnds(scheme: Scheme, date: string): DayEnds {
   const observer = { latitude_deg: site.latitude, longitude_deg: site.longitude, elevation_m: site.elevation };
   const { sunrise_ms, sunset_ms, transit_ms, state } = sunEvents(date, site.zone, observer);
   return { date, sunrise_ms, sunset_ms, transit_ms, state };
-}
-
-/** A file's text: UTF-8 where it is that, else Latin 1, in which older weather files spell their stations. */
-function textOf(bytes: Uint8Array): string {
-  try {
-    return new TextDecoder('utf-8', { fatal: true }).decode(bytes);
-  } catch {
-    return new TextDecoder('latin1').decode(bytes);
-  }
 }
 
 const performers = (): Performers => ({
@@ -73,7 +65,7 @@ const performers = (): Performers => ({
     isOdd: isZone(zone) && zoneDisagrees(zone, longitude, instant_ms),
   }),
   weather: async ({ bytes, mapping, observer, zone }) => {
-    const text = textOf(bytes);
+    const text = fileText(bytes);
     const facts = weatherFacts(text, mapping, observer, zone);
     return { hash: bytesHash(bytes), facts, guess: facts.ok ? null : guessTable(text) };
   },

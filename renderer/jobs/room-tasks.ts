@@ -1,4 +1,7 @@
+import { fileText } from '../../app/contract/file-text.ts';
 import { createCheckMemo } from '../../core/gain/gain-memo.ts';
+import { faultLine } from '../../core/scheme/fault.ts';
+import type { Scheme } from '../../core/scheme/schema.ts';
 import { writeCsv } from '../../core/sheet/csv.ts';
 import { findingsTable } from '../../core/sheet/data-tables.ts';
 import { findingsReport } from '../../core/sheet/findings-report.ts';
@@ -7,20 +10,41 @@ import { sweep } from '../../core/sizing/sweep.ts';
 import { waysToPass } from '../../core/sizing/ways-to-pass.ts';
 import { checkScheme } from '../../core/study/check.ts';
 import { reportJson } from '../../core/study/report-json.ts';
+import { type WeatherInput, weatherInput } from '../../core/study/weather-input.ts';
 import { waysOfOver } from '../../core/study/ways-of-over.ts';
 import { limitSetOf } from './limit-set.ts';
 import type { Performers } from './performer.ts';
+import type { WeatherAtHand } from './tasks.ts';
 
 /** Windows of which a worker remembers the days: an edit then works out that window again and nothing else. */
 const REMEMBERED = 2000;
 
+/** The year of weather read last: a check after an edit need not read the file again. */
+class Years {
+  #key = '';
+  #input: WeatherInput | null = null;
+
+  /** @throws {Error} when the file has faults, which choosing it would have told */
+  of(scheme: Scheme, { name, bytes, hash, mapping }: WeatherAtHand): WeatherInput {
+    const key = JSON.stringify([hash, mapping, scheme.site]);
+    if (this.#input !== null && key === this.#key) return this.#input;
+    const read = weatherInput(scheme, name, bytes, fileText(bytes), mapping);
+    if (!read.ok) throw new Error(read.faults.map(faultLine).join(' · '));
+    this.#key = key;
+    this.#input = read.value;
+    return read.value;
+  }
+}
+
 /** What is done for rooms: the check, why, and what can be done about it. Each worker has a memory of its own. */
 export function roomTasks(): Pick<Performers, 'check' | 'ways' | 'sensitivity' | 'sweep' | 'findingsFile' | 'report'> {
   const memo = createCheckMemo(REMEMBERED);
+  const years = new Years();
   return {
-    check: ({ notes }, held, pulse) => {
+    check: ({ notes, weather }, held, pulse) => {
       const { scheme } = held();
-      return checkScheme(scheme, limitSetOf(scheme), notes, pulse, { memo });
+      const year = weather === null ? null : years.of(scheme, weather);
+      return checkScheme(scheme, limitSetOf(scheme), notes, pulse, { memo, weather: year });
     },
     ways: async ({ limitSet, skyModel, finding }, held) =>
       waysToPass(held().scheme, limitSet, finding.room, finding, memo, skyModel),

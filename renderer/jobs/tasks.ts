@@ -31,6 +31,14 @@ export type DayEnds = {
   readonly state: 'rises' | 'never-rises' | 'never-sets';
 };
 
+/** The weather file that the scheme goes by, as it was chosen in this session. */
+export type WeatherAtHand = {
+  readonly name: string;
+  readonly bytes: Uint8Array;
+  readonly hash: string;
+  readonly mapping: WeatherMapping | null;
+};
+
 /** Everything that workers do for the desk: what is asked, and what comes back. Tasks that need the scheme are sent it once. */
 export type Tasks = {
   /** Read a scheme file. */
@@ -42,7 +50,8 @@ export type Tasks = {
     ask: { instant_ms: number; date: string; wantModel: boolean };
     answer: { model: Model | null; moment: MomentResult; day: DayEnds };
   };
-  check: { ask: { notes: readonly Fault[] }; answer: CheckResult };
+  /** `weather`: the year at hand, which the scheme goes by. */
+  check: { ask: { notes: readonly Fault[]; weather: WeatherAtHand | null }; answer: CheckResult };
   /** Direct sun on something through a year. */
   year: { ask: { subject: YearSubject; stage: Stage; year: number }; answer: SunYear };
   /** What receptors keep of their daylight and sun, or what a window of the proposal has of it. */

@@ -8,6 +8,7 @@ import { hands } from '../jobs/hands.ts';
 import type { DayEnds } from '../jobs/tasks.ts';
 import { committed, notes, scheme } from './document.ts';
 import { civil, instant } from './moment.ts';
+import { weatherAtHand } from './weather-at-hand.ts';
 import { type YearSubject, yearSubjectOf } from './year-subject.ts';
 
 /** How a piece of work stands. The last result stays where it was until a newer one takes its place. */
@@ -57,17 +58,19 @@ const PATIENCE_ms = 400;
 /** The check has run long enough for its progress to be shown. */
 export const isCheckSlow = signal(false);
 let checked: Scheme | null = null;
+let checkedWeather: string | undefined;
 
 export async function runCheck(): Promise<void> {
   const of = committed.peek();
   if (of === null) return;
   checked = of;
+  checkedWeather = weatherAtHand.peek()?.hash;
   checkJob.value = working();
   isCheckSlow.value = false;
   const patience = setTimeout(() => {
     isCheckSlow.value = checkJob.peek().kind === 'working';
   }, PATIENCE_ms);
-  const ask = { notes: notes.peek() };
+  const ask = { notes: notes.peek(), weather: weatherAtHand.peek() };
   const outcome = await hands.check.run('check', ask, of, (done, total) => {
     checkJob.value = working(done, total);
   });
@@ -137,7 +140,8 @@ export function followScheme(): void {
 
   effect(() => {
     const of = committed.value;
-    if (of === null || of === checked || of === check.peek()?.scheme) return;
+    const isOtherWeather = weatherAtHand.value?.hash !== checkedWeather;
+    if (of === null || ((of === checked || of === check.peek()?.scheme) && !isOtherWeather)) return;
     const rest = setTimeout(() => void runCheck(), REST_ms);
     return () => clearTimeout(rest);
   });

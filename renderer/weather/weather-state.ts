@@ -9,6 +9,7 @@ import { host } from '../bridge/host.ts';
 import { hands } from '../jobs/hands.ts';
 import { committed, edit, file as schemeFile, scheme } from '../state/document.ts';
 import { tell } from '../state/messages.ts';
+import { weatherAtHand } from '../state/weather-at-hand.ts';
 import { words } from '../words/words.ts';
 
 /** A file that was chosen in this session: its data stay here and never go into the scheme. */
@@ -44,6 +45,14 @@ const isSameMapping = (a: WeatherMapping | null, b: WeatherMapping | null): bool
 // Faults of a file belong to the scheme that it was chosen for.
 effect(() => {
   if (schemeFile.value === null || reading.peek()?.outcome.kind === 'faults') reading.value = null;
+});
+
+effect(() => {
+  const now = reading.value;
+  weatherAtHand.value =
+    isAtHand.value && now !== null
+      ? { name: now.file.name, bytes: now.file.bytes, hash: now.hash, mapping: now.mapping }
+      : null;
 });
 
 /** Whether the file does not say itself what its columns are. */

@@ -1,4 +1,4 @@
-import { readFileSync } from 'node:fs';
+import { existsSync, readFileSync } from 'node:fs';
 import { resolve } from 'node:path';
 import { createCheckMemo } from '../../core/gain/gain-memo.ts';
 import { parseLimitSet } from '../../core/limits/load-limits.ts';
@@ -6,6 +6,7 @@ import { loadScheme } from '../../core/scheme/load.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import { waysToPass } from '../../core/sizing/ways-to-pass.ts';
 import { checkScheme } from '../../core/study/check.ts';
+import { weatherInput } from '../../core/study/weather-input.ts';
 import type { Row } from './row.ts';
 
 const read = (path: string): string => readFileSync(resolve(process.cwd(), path), 'utf8');
@@ -62,6 +63,19 @@ export async function benchCheck(): Promise<Row[]> {
   }
   const p95 = sorted(drag)[57] as number;
   row('the same checked again after one overhang is dragged', drag, `p95 ${p95.toFixed(0)} ms, bar 50 ms`);
+  const weatherFile = resolve(process.cwd(), '../shared/checks/weather/723170TYA.CSV');
+  if (existsSync(weatherFile)) {
+    const bytes = readFileSync(weatherFile);
+    const years: number[] = [];
+    for (let k = 0; k < 3; k++) {
+      const start = performance.now();
+      const weather = weatherInput(blocks, '723170TYA.CSV', bytes, bytes.toString('latin1'), null);
+      if (!weather.ok) throw new Error('the weather file does not read');
+      await checkScheme(blocks, set, [], go, { weather: weather.value });
+      years.push(performance.now() - start);
+    }
+    row('the same over a weather year of 8 760 hours, file read included', sorted(years), 'bar 10 000 ms on one core');
+  }
   const result = await checkScheme(yard, set, [], go, { memo });
   const over = result?.findings.filter((f) => f.verdict === 'over') ?? [];
   const ways: number[] = [];

@@ -104,7 +104,7 @@ describe('a hand and its worker', () => {
   it('says that a worker died, and sends the scheme again to the next one', async () => {
     const { hand, workers, last } = handWith();
     const one = scheme('one');
-    const ask = { notes: [] };
+    const ask = { notes: [], weather: null };
     const outcome = hand.run('check', ask, one);
     last().die('out of memory');
     expect(await outcome).toEqual({ kind: 'failed', message: 'out of memory' });
