@@ -18,7 +18,7 @@ import {
   step_min,
   when,
 } from './map-state.ts';
-import { wholeDate } from './map-words.ts';
+import { cellSize, wholeDate } from './map-words.ts';
 
 const STEPS_min = [1, 2, 5, 10, 15, 30, 60];
 const SPACINGS_m = [0.25, 0.5, 1, 2, 5, 10];
@@ -122,7 +122,7 @@ function Asked() {
         <Pick
           label={words.maps.spacing}
           value={`${spacing_m.value}`}
-          options={SPACINGS_m.map((n) => [`${n}`, words.maps.metres(fixed(n, n < 1 ? 2 : 0))])}
+          options={SPACINGS_m.map((n) => [`${n}`, words.maps.metres(cellSize(n))])}
           onPick={(value) => {
             spacing_m.value = Number(value);
           }}

@@ -16,6 +16,9 @@ export function periodText(dates: ExposureDates): string {
   return dates.dates.length === 1 ? wholeDate(first) : words.maps.meanDay(first.slice(0, 4));
 }
 
+/** A cell's size, with no more decimals than it has [m]. */
+export const cellSize = (m: number): string => fixed(m, m >= 1 ? 0 : m * 10 === Math.round(m * 10) ? 1 : 2);
+
 /** A number of the map as it is shown: two figures finer than the end of its scale, and never finer than a hundredth. */
 export const mapNumber = (scale: MapScale, value: number): string => {
   const decimals = scale.most >= 100 ? 0 : scale.most >= 2 ? 1 : 2;

@@ -1,11 +1,11 @@
 import { civilOf } from '../../core/sun/civil.ts';
 import { shownMap } from '../maps/map-shown.ts';
 import { isMapOn, quantity } from '../maps/map-state.ts';
-import { periodText } from '../maps/map-words.ts';
+import { cellSize, periodText } from '../maps/map-words.ts';
 import { scheme } from '../state/document.ts';
 import { instant } from '../state/moment.ts';
 import { moment } from '../state/studies.ts';
-import { degrees, fixed } from '../ui/format.ts';
+import { degrees } from '../ui/format.ts';
 import { words } from '../words/words.ts';
 
 /** What the drawing shows: the moment in civil time, and where the sun stands. */
@@ -33,7 +33,7 @@ export function Caption() {
 function MapCaption() {
   const shown = shownMap.value;
   if (shown === null) return null;
-  const made = words.maps.made(`${shown.step_min}`, fixed(shown.spacing_m, shown.spacing_m < 1 ? 2 : 0));
+  const made = words.maps.made(`${shown.step_min}`, cellSize(shown.spacing_m));
   const left = [
     quantity.value === 'energy' ? words.maps.clear : '',
     shown.scheme.trees.length > 0 ? words.maps.noTrees : '',

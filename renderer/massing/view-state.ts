@@ -8,6 +8,10 @@ import { AXONOMETRIC, type Camera, framed, type Margins, PLAN, type Size } from 
 /** Room kept for the instruments when all of the drawing is shown [px]. */
 const ROOM: Margins = { top: 48, right: 28, bottom: 44, left: 28 };
 
+/** In a plan nothing tapers away under the key: room is kept for it, where there is enough. */
+const roomFor = (direction: 'massing' | 'plan', width: number): Margins =>
+  direction === 'plan' && width > 720 ? { ...ROOM, right: 276 } : ROOM;
+
 export const camera = signal<Camera>({ centre: [0, 0, 0], ...AXONOMETRIC, scale: 8 });
 export const size = signal<Size>({ width: 1, height: 1 });
 export const isPlan = computed(() => camera.value.tilt_rad > (Math.PI / 2) * 0.999);
@@ -52,5 +56,6 @@ export function lookAs(direction: 'massing' | 'plan'): void {
   const from = isSouthern ? { ...AXONOMETRIC, turn_rad: AXONOMETRIC.turn_rad + Math.PI } : AXONOMETRIC;
   const view = { ...camera.peek(), ...(direction === 'plan' ? PLAN : from) };
   const shapes = model.peek()?.value;
-  camera.value = shapes === undefined ? view : framed(view, size.peek(), nearCorners(shapes), ROOM);
+  camera.value =
+    shapes === undefined ? view : framed(view, size.peek(), nearCorners(shapes), roomFor(direction, size.peek().width));
 }
