@@ -13,6 +13,7 @@ import { Caption } from './caption.tsx';
 import { CellMark, CellReader } from './cell-mark.tsx';
 import { zoomBy } from './gestures.ts';
 import { Key, NorthPoint, ScaleBar, SelectionOutline, SelectionTag } from './instruments.tsx';
+import { laidMap } from './laid-map.ts';
 import { MassingCanvas } from './massing-canvas.tsx';
 import { PlanDrawing } from './plan-drawing.tsx';
 import { ReceptorMarks } from './receptor-marks.tsx';
@@ -113,9 +114,11 @@ function MassingNote({ graphics }: { graphics: 'here' | 'none' | 'lost' }) {
         ? words.massing.noGraphics
         : graphics === 'lost'
           ? words.massing.lostToPlan
-          : isDown
-            ? words.massing.sunDown
-            : '';
+          : laidMap.value?.atlas === null
+            ? words.maps.tooWide
+            : isDown
+              ? words.massing.sunDown
+              : '';
   return (
     <p class="massing-note" role="status">
       {text}

@@ -3,7 +3,6 @@ export const mapsWords = {
   maps: {
     button: 'Sun map',
     panel: 'Sun map',
-    close: 'Close the settings of the sun map',
     show: 'Colour by',
     off: 'nothing',
     quantity: { sun: 'sun hours', energy: 'solar energy' },
@@ -42,7 +41,6 @@ export const mapsWords = {
       energyChange: 'Solar energy, after less before',
     },
     none: 'no direct sun',
-    same: 'no change',
     less: 'less',
     more: 'more',
     spread: (least: string, mean: string, most: string) => `least ${least}, mean ${mean}, most ${most}`,

@@ -3,7 +3,7 @@ export const massingWords = {
   massing: {
     label: 'Massing',
     canvas:
-      'Massing of the scheme. Arrow keys turn it, with shift they move it, plus and minus zoom, F shows all of it.',
+      'Massing of the scheme. Arrow keys turn it, with shift they move it, plus and minus zoom, F shows all of it, P turns to the plan and back. Brackets step from one thing to the next, Enter goes into the faces of a block, Escape back out. R reads a sun map cell by cell.',
     view: 'View',
     axonometric: 'Massing',
     plan: 'Plan',
