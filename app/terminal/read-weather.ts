@@ -20,7 +20,12 @@ async function read(path: string, bytes: Uint8Array, scheme: Scheme, screen: Scr
   const isKept = kept !== null && (kept.file === name || kept.hash === bytesHash(bytes));
   if (kept !== null && kept.file === name && kept.hash !== bytesHash(bytes))
     screen.note(`note: ${path}: this file has other content than the ${kept.file} that the scheme went by.\n`);
-  return accepted(path, weatherInput(scheme, name, bytes, fileText(bytes), isKept ? kept.mapping : null), {
+  const text = fileText(bytes);
+  let input = weatherInput(scheme, name, bytes, text, isKept ? kept.mapping : null);
+  // Another file that does not say what its columns are is most likely laid out as the scheme's own.
+  if (!input.ok && !isKept && kept !== null && input.faults.some((fault) => fault.code === 'unknown-form'))
+    input = weatherInput(scheme, name, bytes, text, kept.mapping);
+  return accepted(path, input, {
     ...screen,
     // What the weather is warned of stands in the report.
     note: () => undefined,
