@@ -30,6 +30,8 @@ export type ExposureMapAsk = ExposureDates & {
   readonly step_min?: number;
   /** Between points [m]; absent: 1. */
   readonly spacing_m?: number;
+  /** Whether the light of sky and ground is wanted too; absent: it is. Without it a map takes a fraction of the time. */
+  readonly hasDiffuse?: boolean;
 };
 
 /** The map of one surface. Rows run together: grid, before, after and change. */
@@ -97,10 +99,11 @@ export function planMap(scheme: Scheme, model: Model, ask: ExposureMapAsk): Chec
   const sky = skyOf(scheme, model, ask, dates.value, step_min);
   const same = model.solids.every((s) => stands(s.standing, 'before') === stands(s.standing, 'after'));
   const stages: (readonly Stage[])[] = same ? [['before', 'after']] : [['before'], ['after']];
+  const energy = ask.hasDiffuse === false ? null : sky;
   const jobs = stages.map(([stage]) => {
     const at = stage as Stage;
     const grids = places.filter((p) => p.there[at]).map((p) => p.grid.receptors);
-    return exposureJob(solidsAt(model.solids, at), shadersAt(model, at), sky.light, joined(grids), sky);
+    return exposureJob(solidsAt(model.solids, at), shadersAt(model, at), sky.light, joined(grids), energy);
   });
   const value = { dates: dates.value, step_min, spacing_m, places, stages, jobs };
   return { ok: true, value, notes: exposureNotes(scheme) };

@@ -2,10 +2,13 @@ import { computed, signal } from '@preact/signals';
 import { type Cells, rowAt } from './map-cells.ts';
 import { isBuiltOver, type Side, spreadOf, valueAt } from './map-picture.ts';
 import { type MapScale, scaleFor } from './map-scale.ts';
-import { arrivals, isMapOn, map, quantity, side } from './map-state.ts';
+import { arrivals, map, quantity, side } from './map-state.ts';
 
 /** The map that is drawn, when one is. */
-export const shownMap = computed(() => (isMapOn.value ? map.value : null));
+export const shownMap = computed(() => {
+  const shown = map.value;
+  return quantity.value === 'sun' || (quantity.value === 'energy' && shown?.hasEnergy) ? shown : null;
+});
 
 /** The scale of the numbers that are shown. Before and after have one in common, so that they can be compared. */
 export const mapScale = computed<MapScale | null>(() => {

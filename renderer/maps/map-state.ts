@@ -80,6 +80,8 @@ export type ShownMap = {
   readonly spacing_m: number;
   /** Days whose mean is shown; 1 where the whole is. */
   readonly meanOf: number;
+  /** Whether the light of sky and ground is in it: without it there are only sun hours to show. */
+  readonly hasEnergy: boolean;
 };
 
 export const map = signal<ShownMap | null>(null);
@@ -100,7 +102,7 @@ const QUICK_ms = 1500;
 const PAUSE_ms = 250;
 let lastTook_ms = 0;
 /** The question that is being worked out. */
-let inHand: { readonly key: string; readonly scheme: Scheme } | null = null;
+let inHand: { readonly key: string; readonly scheme: Scheme; readonly hasEnergy: boolean } | null = null;
 let waiting: ReturnType<typeof setTimeout> | null = null;
 
 /** Drawings hear of what arrives so many times a second at most: each time they are coloured anew. */
@@ -122,7 +124,8 @@ export async function workOutMap(): Promise<void> {
   if (of === null || shapes === null || shapes.scheme !== of || surfaces.peek().length === 0) return;
   const key = asked.peek();
   remembered = remembered.filter((m) => m.scheme === of);
-  const known = remembered.find((m) => m.key === key);
+  const hasEnergy = quantity.peek() === 'energy';
+  const known = remembered.find((m) => m.key === key && (m.hasEnergy || !hasEnergy));
   if (known !== undefined) {
     stopMap();
     inHand = null;
@@ -130,9 +133,16 @@ export async function workOutMap(): Promise<void> {
     mapJob.value = { kind: 'idle' };
     return;
   }
-  if (inHand?.key === key && inHand.scheme === of) return;
-  inHand = { key, scheme: of };
-  const ask = { ...mapDates.peek(), surfaces: surfaces.peek(), step_min: step_min.peek(), spacing_m: spacing_m.peek() };
+  if (inHand?.key === key && inHand.scheme === of && (inHand.hasEnergy || !hasEnergy)) return;
+  const mine = { key, scheme: of, hasEnergy };
+  inHand = mine;
+  const ask = {
+    ...mapDates.peek(),
+    surfaces: surfaces.peek(),
+    step_min: step_min.peek(),
+    spacing_m: spacing_m.peek(),
+    hasDiffuse: hasEnergy,
+  };
   const facts = {
     key,
     scheme: of,
@@ -147,7 +157,7 @@ export async function workOutMap(): Promise<void> {
   let shown: ShownMap | null = null;
   const outcome = await runMap(of, ask, {
     onBegin: (picture) => {
-      shown = { ...facts, picture, meanOf };
+      shown = { ...facts, picture, meanOf, hasEnergy };
       map.value = shown;
     },
     onTile: arrive,
@@ -155,7 +165,7 @@ export async function workOutMap(): Promise<void> {
       mapJob.value = { kind: 'working', done, total };
     },
   });
-  if (asked.peek() !== key || scheme.peek() !== of) return;
+  if (inHand !== mine) return;
   inHand = null;
   arrivals.value++;
   mapJob.value = outcome.kind === 'failed' ? outcome : { kind: outcome.kind === 'done' ? 'idle' : 'stopped' };
@@ -174,8 +184,10 @@ export function followMaps(): void {
   effect(() => {
     const shapes = model.value;
     const of = scheme.value;
+    if (!isMapOn.value) untracked(stopMap);
     if (!isMapOn.value || of === null || shapes?.scheme !== of) return;
     const key = asked.value;
+    quantity.value;
     untracked(() => {
       const isEdit = last !== null && last !== of && map.peek()?.key === key;
       last = of;

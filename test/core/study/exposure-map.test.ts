@@ -92,6 +92,20 @@ describe('the map of surfaces', () => {
     }
   });
 
+  it('has the same sun without the light of sky and ground, and none of that light', async () => {
+    const ask = { dates: ['2025-03-21'], surfaces: surfacesOf(model, 'after'), step_min: 20 };
+    const all = await exposureMap(scheme, model, ask, go);
+    const sun = await exposureMap(scheme, model, { ...ask, hasDiffuse: false }, go);
+    if (!all?.ok || !sun?.ok) throw new Error('refused');
+    all.value.surfaces.forEach(({ after }, i) => {
+      const other = sun.value.surfaces[i]!.after!;
+      expect(other.minutes).toEqual(after!.minutes);
+      expect(other.beam).toEqual(after!.beam);
+      expect(Math.max(...other.sky, ...other.ground)).toBe(0);
+      expect(Math.max(...after!.sky)).toBeGreaterThan(0);
+    });
+  });
+
   it('lists every wall and roof of a stage', () => {
     expect(surfacesOf(model, 'before')).toHaveLength(10);
     expect(
