@@ -46,6 +46,7 @@ const group = z.object({
   kind: z.literal('group'),
   clip: z.tuple([mm, mm, mm, mm]).optional(),
   label: z.string().max(2000).optional(),
+  role: z.enum(['text', 'head', 'row', 'cell']).optional(),
   get marks() {
     return z.array(mark).max(500_000);
   },
@@ -61,7 +62,7 @@ const document = z.object({
   title: z.string().max(2000),
   author: z.string().max(2000),
   language: z.string().max(40),
-  pages: z.array(page).min(1).max(500),
+  pages: z.array(page).min(1).max(5000),
 });
 
 /** How deep groups may stand in groups. */

@@ -8,6 +8,11 @@ declare module 'pdfkit' {
     readonly features?: { readonly [tag: string]: boolean };
   };
 
+  export class Struct {
+    add(child: Struct | (() => void)): this;
+    end(): void;
+  }
+
   export default class PDFDocument {
     constructor(options: {
       readonly autoFirstPage: false;
@@ -27,6 +32,12 @@ declare module 'pdfkit' {
     widthOfString(text: string, options?: { readonly features?: { readonly [tag: string]: boolean } }): number;
     text(text: string, x: number, y: number, options: TextOptions): this;
     markContent(tag: 'Span', options: { readonly actual: string }): this;
+    markContent(tag: 'Artifact', options: { readonly type: 'Layout' }): this;
+    struct(
+      type: string,
+      options?: { readonly title?: string; readonly alt?: string; readonly scope?: 'Column' },
+    ): Struct;
+    addStructure(structure: Struct): this;
     endMarkedContent(): this;
     save(): this;
     restore(): this;

@@ -1,8 +1,9 @@
-import PDFDocument from 'pdfkit';
+import PDFDocument, { type Struct } from 'pdfkit';
 import type { Document, Mark, Page, Stroke } from '../../core/sheet/drawing.ts';
 import { hatchLines } from '../../core/sheet/hatch.ts';
 import { type TextRun, visualRuns } from '../../core/sheet/text-runs.ts';
 import { type FontName, fontBytes } from './fonts.ts';
+import { type Part, pageParts } from './tag-page.ts';
 
 /** Points of a PDF in one millimetre. */
 const POINTS = 72 / 25.4;
@@ -18,7 +19,9 @@ type Options = {
 
 /**
  * A drawing document as a PDF: vectors true to scale, text as text in embedded subset fonts, one bookmark a page, title and
- * language stated. Page contents are written in millimetres under one scale, so that they can be checked by eye.
+ * language stated, and tagged: headings, paragraphs, tables and figures with their words, in reading order. It is not checked
+ * against PDF/UA and does not claim it. Page contents are written in millimetres under one scale, so that they can be checked by
+ * eye.
  */
 export function writePdf(document: Document, options: Options): Promise<Uint8Array> {
   const pdf = new PDFDocument({
@@ -27,6 +30,7 @@ export function writePdf(document: Document, options: Options): Promise<Uint8Arr
     pdfVersion: '1.7',
     lang: document.language,
     displayTitle: true,
+    tagged: true,
     compress: options.compress ?? true,
     info: {
       Title: document.title,
@@ -42,8 +46,11 @@ export function writePdf(document: Document, options: Options): Promise<Uint8Arr
     pdf.on('error', reject);
     pdf.on('end', () => resolve(new Uint8Array(Buffer.concat(chunks))));
   });
-  const pen = new Pen(pdf);
+  const whole = pdf.struct('Document', { title: document.title });
+  pdf.addStructure(whole);
+  const pen = new Pen(pdf, whole);
   for (const page of document.pages) pen.page(page);
+  whole.end();
   pdf.end();
   return done;
 }
@@ -61,16 +68,42 @@ class Pen {
   readonly #pdf: PDFDocument;
   readonly #known = new Set<FontName>();
 
-  constructor(pdf: PDFDocument) {
+  readonly #whole: Struct;
+
+  constructor(pdf: PDFDocument, whole: Struct) {
     this.#pdf = pdf;
+    this.#whole = whole;
   }
 
   page(page: Page): void {
     this.#pdf.addPage({ size: [page.width * POINTS, page.height * POINTS], margin: 0 });
     this.#pdf.outline.addItem(page.title);
     this.#pdf.save().scale(POINTS).lineJoin('miter').lineCap('butt');
-    for (const mark of page.marks) this.#mark(mark);
+    this.#part(pageParts(page), this.#whole);
     this.#pdf.restore();
+  }
+
+  /** Draws a part inside the element that it is of. */
+  #part(part: Part, parent: Struct): void {
+    const marks = part.marks ?? [];
+    if (part.tag === 'Artifact') {
+      this.#pdf.markContent('Artifact', { type: 'Layout' });
+      for (const mark of marks) this.#mark(mark);
+      this.#pdf.endMarkedContent();
+      return;
+    }
+    const element = this.#pdf.struct(part.tag, {
+      ...(part.title === undefined ? {} : { title: part.title }),
+      ...(part.alt === undefined ? {} : { alt: part.alt }),
+      ...(part.tag === 'TH' ? { scope: 'Column' as const } : {}),
+    });
+    parent.add(element);
+    if (marks.length > 0)
+      element.add(() => {
+        for (const mark of marks) this.#mark(mark);
+      });
+    for (const inner of part.parts ?? []) this.#part(inner, element);
+    element.end();
   }
 
   #mark(mark: Mark): void {

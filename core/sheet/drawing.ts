@@ -48,7 +48,10 @@ export type Mark =
   | {
       readonly kind: 'group';
       readonly clip?: readonly [Mm, Mm, Mm, Mm];
+      /** What the group shows: its words for those who do not see it. */
       readonly label?: string;
+      /** What it is where it is no figure: lines of text, or a table's head, row or cell. */
+      readonly role?: 'text' | 'head' | 'row' | 'cell';
       readonly marks: readonly Mark[];
     };
 

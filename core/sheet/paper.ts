@@ -79,6 +79,9 @@ export function finishPages(
     width: size[0],
     height: size[1],
     title: c.title,
-    marks: [...c.marks, { kind: 'group', label: 'foot', marks: foot(size, i + 1, contents.length, note, bar) }],
+    marks: [
+      ...c.marks,
+      { kind: 'group', label: 'foot', role: 'text', marks: foot(size, i + 1, contents.length, note, bar) },
+    ],
   }));
 }

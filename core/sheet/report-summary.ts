@@ -154,23 +154,28 @@ function drawBars(flow: Flow, findings: readonly Finding[]): void {
     const share = f.limitValue ? f.value / f.limitValue / most : f.value / top;
     const x = flow.x + name;
     const colour = verdictColour(f.verdict);
+    const cell = (...marks: readonly Mark[]): Mark => ({ kind: 'group', role: 'cell', marks });
     const marks: Mark[] = [
-      ...verdictDisc(f.verdict, flow.x + 2, y - READ * 0.35),
-      field(`${f.room} ${f.roomName}`.trim(), flow.x + 6, y, name - 9),
+      cell(
+        ...verdictDisc(f.verdict, flow.x + 2, y - READ * 0.35),
+        field(`${f.room} ${f.roomName}`.trim(), flow.x + 6, y, name - 9),
+      ),
       rect(x, y - 2.4, width, 2.4, { fill: HAIR }),
       rect(x, y - 2.4, width * Math.min(1, share), 2.4, { fill: colour }),
-      words(quantity(f.value, f.unit), x + width + 26, y, { anchor: 'end', colour }),
-      words(f.limitValue === null ? '' : margin(f), x + width + 42, y, { anchor: 'end', colour }),
-      words(
-        f.limitValue === null ? '' : (quantity(f.limitValue, f.unit).split('\u00a0')[0] ?? ''),
-        x + width + numbers + 6,
-        y,
-        { anchor: 'end', colour: SOFT },
+      cell(words(quantity(f.value, f.unit), x + width + 26, y, { anchor: 'end', colour })),
+      cell(words(f.limitValue === null ? '' : margin(f), x + width + 42, y, { anchor: 'end', colour })),
+      cell(
+        words(
+          f.limitValue === null ? '' : (quantity(f.limitValue, f.unit).split('\u00a0')[0] ?? ''),
+          x + width + numbers + 6,
+          y,
+          { anchor: 'end', colour: SOFT },
+        ),
       ),
     ];
     if (f.limitValue)
       marks.push(line(x + width / most, y - 3.3, x + width / most, y + 0.8, { colour: INK, width: 0.35 }));
-    flow.put(marks, ROW);
+    flow.put([{ kind: 'group', role: 'row', marks }], ROW);
   }
   const said = 'Bar: value as a share of the room’s own limit, which is the tick. Columns: value, margin, limit.';
   flow.say(findings.some((f) => f.limitValue !== null) ? said : 'Bar: value as a share of the highest.', {

@@ -64,7 +64,7 @@ export function sunPathMoment({ view, caption }: SunPathLayout, input: SunPathIn
     ...(moment && moment.altitude_deg > 0
       ? [{ kind: 'group' as const, label: 'moment', marks: sunMark(view, moment) }]
       : []),
-    { kind: 'group', label: 'caption', marks: sunPathCaption(input, x, y, width, amount).marks },
+    { kind: 'group', label: 'caption', role: 'text', marks: sunPathCaption(input, x, y, width, amount).marks },
   ];
 }
 

@@ -30,9 +30,10 @@ function drawRow(
   let deepest = 1;
   columns.forEach((column, i) => {
     const cell = cells[i] ?? '';
+    const inside: Mark[] = [];
     const baseline = top + PAD + READ * 0.75 + 0.5;
     if (typeof cell === 'object' && 'disc' in cell)
-      marks.push(...verdictDisc(cell.disc, left + 2, baseline - READ * 0.35));
+      inside.push(...verdictDisc(cell.disc, left + 2, baseline - READ * 0.35));
     else {
       const text = typeof cell === 'string' ? cell : cell.text;
       const stands = typeof cell === 'object' && cell.verdict !== null && cell.verdict !== 'within';
@@ -43,15 +44,17 @@ function drawRow(
       const end = column.align === 'end';
       lines.forEach((l, n) => {
         const y = baseline + n * leading(READ);
-        marks.push(
+        inside.push(
           words(l, end ? left + column.width - GUTTER : left, y, { face, colour, anchor: end ? 'end' : 'start' }),
         );
       });
     }
+    marks.push({ kind: 'group', role: 'cell', marks: inside });
     left += column.width;
   });
   const height = deepest * leading(READ) + 2 * PAD - 0.6;
-  return { marks: [...marks, line(x, top + height, left, top + height, RULE)], height };
+  const rule = line(x, top + height, left, top + height, RULE);
+  return { marks: [{ kind: 'group', role: bold ? 'head' : 'row', marks: [...marks, rule] }], height };
 }
 
 /** A table down the pages; its head stands again at the top of every page that it runs on to. */

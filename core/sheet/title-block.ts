@@ -73,5 +73,5 @@ export function titleBlock(x: Mm, top: Mm, width: Mm, scheme: Scheme, facts: Tit
     });
     y += 10;
   }
-  return { marks: [{ kind: 'group', label: 'title block', marks }], height: y - top };
+  return { marks: [{ kind: 'group', label: 'title block', role: 'text', marks }], height: y - top };
 }
