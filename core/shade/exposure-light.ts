@@ -12,6 +12,8 @@ export type Light = {
   readonly minutes: Float64Array;
   /** What a sample adds on a plane square to it [Wh/m²]. */
   readonly beam: Float64Array;
+  /** Civil month of each sample, 1..12, for what comes through trees; absent, or 0: the mean of the year. */
+  readonly month?: Uint8Array;
 };
 
 /** Light sorted into azimuth columns, within a column by altitude. */
@@ -23,6 +25,8 @@ export type LightColumns = Light & {
   readonly tan: Float64Array;
   /** Row of each sample in the light that it came from. */
   readonly source: Uint32Array;
+  /** Civil month of each sample; 0: the mean of the year. */
+  readonly month: Uint8Array;
 };
 
 /** Light on one plane: the samples in front of it, with running sums so that a run of samples costs one subtraction. */
@@ -34,6 +38,7 @@ export type PlaneLight = {
   readonly sy: Float64Array;
   readonly sz: Float64Array;
   readonly source: Uint32Array;
+  readonly month: Uint8Array;
   /** `minutesBefore[i]`: minutes of the samples before i; one entry more than samples. */
   readonly minutesBefore: Float64Array;
   /** The same for the beam on the plane, cosine of incidence included [Wh/m²]. */
@@ -88,6 +93,7 @@ export function sortLight(light: Light, count: number): LightColumns {
     count,
     start,
     source: order,
+    month: Uint8Array.from(order, (row) => light.month?.[row] ?? 0),
     tan: by(rise),
     sx: by(light.sx),
     sy: by(light.sy),
@@ -136,6 +142,7 @@ export function lightOnPlane(light: LightColumns, normal: readonly [number, numb
   const sy = new Float64Array(n);
   const sz = new Float64Array(n);
   const source = new Uint32Array(n);
+  const month = new Uint8Array(n);
   const minutesBefore = new Float64Array(n + 1);
   const beamBefore = new Float64Array(n + 1);
   const level = new Uint32Array(count * (LEVELS + 1));
@@ -152,6 +159,7 @@ export function lightOnPlane(light: LightColumns, normal: readonly [number, numb
       sy[k] = light.sy[i]!;
       sz[k] = light.sz[i]!;
       source[k] = light.source[i]!;
+      month[k] = light.month[i]!;
       minutesBefore[k + 1] = minutesBefore[k]! + light.minutes[i]!;
       beamBefore[k + 1] = beamBefore[k]! + light.beam[i]! * cosine[i]!;
       const l = levelOf(tan[k]!);
@@ -162,5 +170,5 @@ export function lightOnPlane(light: LightColumns, normal: readonly [number, numb
     if (k > start[c]!) lowest[c] = tan[start[c]!]!;
   }
   start[count] = k;
-  return { count, start, tan, sx, sy, sz, source, minutesBefore, beamBefore, level, lowest };
+  return { count, start, tan, sx, sy, sz, source, month, minutesBefore, beamBefore, level, lowest };
 }

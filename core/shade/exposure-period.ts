@@ -10,6 +10,7 @@ import type { Observer } from '../sun/position.ts';
 import { standardPressure_hPa } from '../sun/refraction.ts';
 import { sunTable } from '../sun/sun-table.ts';
 import { DEG } from '../units/angle.ts';
+import type { MonthShares } from './crown-sky.ts';
 import type { Light } from './exposure-light.ts';
 import { sunVector } from './sun-vector.ts';
 
@@ -25,6 +26,9 @@ export type PeriodSky = {
   readonly diffuse_Whm2: number;
   /** What level ground throws back over all steps: global on the level times its reflectance of the month [Wh/m²]. */
   readonly reflected_Whm2: number;
+  /** How both fall to the months: shares, entry m for month m. */
+  readonly diffuseMonths: MonthShares;
+  readonly reflectedMonths: MonthShares;
 };
 
 /** The observer of a scheme's site. */
@@ -43,16 +47,24 @@ class Samples {
   readonly beam: number[] = [];
   readonly day: number[] = [];
   readonly instant: number[] = [];
-  diffuse_Whm2 = 0;
-  reflected_Whm2 = 0;
+  readonly month: number[] = [];
+  readonly diffuse_Whm2 = new Float64Array(13);
+  readonly reflected_Whm2 = new Float64Array(13);
 
-  add(day: number, instant_ms: number, span_min: number, s: Vec3, beam_Wm2: number): void {
+  /** Adds what the sky and the ground send over a step [Wh/m²]. @param month 1..12 */
+  addSky(month: number, diffuse_Whm2: number, reflected_Whm2: number): void {
+    this.diffuse_Whm2[month]! += diffuse_Whm2;
+    this.reflected_Whm2[month]! += reflected_Whm2;
+  }
+
+  add(day: number, month: number, instant_ms: number, span_min: number, s: Vec3, beam_Wm2: number): void {
     this.sx.push(s[0]);
     this.sy.push(s[1]);
     this.sz.push(s[2]);
     this.minutes.push(span_min);
     this.beam.push((beam_Wm2 * span_min) / 60);
     this.day.push(day);
+    this.month.push(month);
     this.instant.push(instant_ms);
   }
 
@@ -64,13 +76,23 @@ class Samples {
         sz: Float64Array.from(this.sz),
         minutes: Float64Array.from(this.minutes),
         beam: Float64Array.from(this.beam),
+        month: Uint8Array.from(this.month),
       },
       day: Uint16Array.from(this.day),
       instant_ms: Float64Array.from(this.instant),
-      diffuse_Whm2: this.diffuse_Whm2,
-      reflected_Whm2: this.reflected_Whm2,
+      diffuse_Whm2: total(this.diffuse_Whm2),
+      reflected_Whm2: total(this.reflected_Whm2),
+      diffuseMonths: shares(this.diffuse_Whm2),
+      reflectedMonths: shares(this.reflected_Whm2),
     };
   }
+}
+
+const total = (months: Float64Array): number => months.reduce((sum, v) => sum + v, 0);
+
+function shares(months: Float64Array): MonthShares {
+  const all = total(months);
+  return months.map((v, m) => (all > 0 ? v / all : m === 0 ? 1 : 0));
 }
 
 /** Altitude at or below which the sun does not count [rad]. */
@@ -98,19 +120,19 @@ export function periodSky(site: Site, north_rad: number, dates: readonly string[
       maximum_C: 20,
       range_K: 0,
     });
-    const reflectance = monthly(site.groundReflectance, monthOf(date));
+    const month = monthOf(date);
+    const reflectance = monthly(site.groundReflectance, month);
     const n = sky.instant_ms.length;
     const { end_ms } = dayBounds(date, site.zone);
     for (let i = 0; i < n; i++) {
       // A day that is no whole number of steps ends in a shorter one, sampled at its own middle.
       const span_min = i < n - 1 ? step_min : (2 * (end_ms - sky.instant_ms[i]!)) / 60_000;
       const hours = span_min / 60;
-      samples.diffuse_Whm2 += sky.diffuse_Wm2[i]! * hours;
-      samples.reflected_Whm2 += sky.global_Wm2[i]! * reflectance * hours;
+      samples.addSky(month, sky.diffuse_Wm2[i]! * hours, sky.global_Wm2[i]! * reflectance * hours);
       const altitude = sky.altitude_rad[i]!;
       if (!(altitude > least)) continue;
       const s = sunVector(sky.azimuth_rad[i]!, altitude, north_rad);
-      samples.add(d, sky.instant_ms[i]!, span_min, s, sky.beamNormal_Wm2[i]!);
+      samples.add(d, month, sky.instant_ms[i]!, span_min, s, sky.beamNormal_Wm2[i]!);
     }
   });
   return samples.done();
@@ -141,10 +163,17 @@ export function momentSky(site: Site, north_rad: number, instants_ms: readonly n
       },
       monthly(site.linkeTurbidity, month),
     );
-    samples.diffuse_Whm2 += (sky.diffuse_Wm2 * span_min) / 60;
-    samples.reflected_Whm2 += (sky.global_Wm2 * monthly(site.groundReflectance, month) * span_min) / 60;
+    const hours = span_min / 60;
+    samples.addSky(month, sky.diffuse_Wm2 * hours, sky.global_Wm2 * monthly(site.groundReflectance, month) * hours);
     if (altitude > least)
-      samples.add(i, instant_ms, span_min, sunVector(sun.azimuth_rad[i]!, altitude, north_rad), sky.beamNormal_Wm2);
+      samples.add(
+        i,
+        month,
+        instant_ms,
+        span_min,
+        sunVector(sun.azimuth_rad[i]!, altitude, north_rad),
+        sky.beamNormal_Wm2,
+      );
   });
   return samples.done();
 }

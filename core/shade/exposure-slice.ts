@@ -1,4 +1,6 @@
 import type { Shader, Solid } from '../form/model.ts';
+import type { Tree } from '../scheme/schema.ts';
+import { ANY_MONTH, type MonthShares } from './crown-sky.ts';
 import { sunOnReceptors } from './exposure.ts';
 import { columnsFor, type Light, type LightColumns, sortLight } from './exposure-light.ts';
 import { domeOnReceptors, groundOnReceptors, mirroredOccluders } from './sky-view.ts';
@@ -15,6 +17,9 @@ export type ExposureJob = {
   readonly receptors: Receptors;
   readonly diffuse_Whm2: number;
   readonly reflected_Whm2: number;
+  /** When that light falls, for the crowns of trees. */
+  readonly diffuseMonths: MonthShares;
+  readonly reflectedMonths: MonthShares;
 };
 
 /** A job without its receptors: what a worker is told once, before it is given tiles of receptors. */
@@ -36,21 +41,32 @@ export const SLICE = 2048;
 /** How many slices a job has. */
 export const slicesOf = (job: ExposureJob): number => Math.ceil(job.receptors.x.length / SLICE);
 
+/** Sky and ground light of a period (see `PeriodSky`); without months, crowns let through the mean of the year. */
+export type PeriodEnergy = {
+  readonly diffuse_Whm2: number;
+  readonly reflected_Whm2: number;
+  readonly diffuseMonths?: MonthShares;
+  readonly reflectedMonths?: MonthShares;
+};
+
 /** The job of a map: what stands, the light of a period, the receptors. */
 export function exposureJob(
   solids: readonly Solid[],
   shaders: readonly Shader[],
   light: Light,
   receptors: Receptors,
-  energy: { readonly diffuse_Whm2: number; readonly reflected_Whm2: number } | null,
+  energy: PeriodEnergy | null,
+  trees: readonly Tree[] = [],
 ): ExposureJob {
   return {
-    occluders: makeOccluders(solids, shaders),
-    mirrored: energy === null ? null : mirroredOccluders(solids, shaders),
+    occluders: makeOccluders(solids, shaders, trees),
+    mirrored: energy === null ? null : mirroredOccluders(solids, shaders, trees),
     light: sortLight(light, columnsFor(light.sx.length)),
     receptors,
     diffuse_Whm2: energy?.diffuse_Whm2 ?? 0,
     reflected_Whm2: energy?.reflected_Whm2 ?? 0,
+    diffuseMonths: energy?.diffuseMonths ?? ANY_MONTH,
+    reflectedMonths: energy?.reflectedMonths ?? ANY_MONTH,
   };
 }
 
@@ -61,7 +77,7 @@ export const exposureSlice = (job: ExposureJob, slice: number): Exposure =>
 /**
  * Works out some receptors of a job. A receptor's numbers do not depend on which others are asked for with it.
  *
- * Beam: exact samples. Sky: the period's diffuse on the level times the share of an evenly bright dome. Ground: what level
+ * Beam: exact samples, weakened by the crowns that they pass. Sky: the period's diffuse on the level times the share of an evenly bright dome. Ground: what level
  * ground in the open throws back times its share; that the ground itself may lie in shadow is left out.
  */
 export function exposureTile(job: JobHead, receptors: Receptors): Exposure {
@@ -71,8 +87,8 @@ export function exposureTile(job: JobHead, receptors: Receptors): Exposure {
   const ground = new Float64Array(n);
   if (job.mirrored !== null) {
     const rays = makeSkyRays(RAYS_OF_A_MAP);
-    const dome = domeOnReceptors(job.occluders, rays, receptors, 'uniform');
-    const floor = groundOnReceptors(job.mirrored, rays, receptors);
+    const dome = domeOnReceptors(job.occluders, rays, receptors, 'uniform', job.diffuseMonths);
+    const floor = groundOnReceptors(job.mirrored, rays, receptors, job.reflectedMonths);
     for (let i = 0; i < n; i++) {
       sky[i] = job.diffuse_Whm2 * dome[i]!;
       ground[i] = sun.covered[i] === 1 ? 0 : job.reflected_Whm2 * floor[i]!;

@@ -1,3 +1,4 @@
+import { dimSeen, makeDimming } from './crown-light.ts';
 import { type LightColumns, lightOnPlane } from './exposure-light.ts';
 import { hideSeen, listSeen, makeSkyline, raiseWalls, type Skyline, sumSeen } from './skyline.ts';
 import { makeColumns } from './skyline-columns.ts';
@@ -21,7 +22,8 @@ export type SunOnReceptors = {
 export type Hider = (x: number, y: number, z: number, sx: number, sy: number, sz: number) => boolean;
 
 /**
- * Sun time and beam on receptors, each sample exactly hidden or seen (see `skyline.ts`). The result of a receptor does not
+ * Sun time and beam on receptors, each sample exactly hidden or seen (see `skyline.ts`), and where it passes crowns of trees
+ * counted with what comes through in its month. The result of a receptor does not
  * depend on which others are asked for, so any cut of a long list gives the same numbers.
  * @param from, to  rows to work out, `to` exclusive
  * @param hider     what the occluders do not hold
@@ -41,10 +43,15 @@ export function sunOnReceptors(
   };
   const sums = new Float64Array(2);
   for (const rows of byNormal(r, from, to)) {
+    const dimming = o.crowns.count > 0 ? makeDimming(light.sx.length) : null;
     eachSkyline(o, light, r, rows, hider, (row, s) => {
       if (s === null) out.covered[row - from] = 1;
       else {
         sumSeen(s, sums, 0);
+        if (dimming !== null) {
+          const normal = [r.nx[row]!, r.ny[row]!, r.nz[row]!] as const;
+          dimSeen(s, dimming, o.crowns, normal, r.x[row]!, r.y[row]!, r.z[row]!, sums);
+        }
         out.minutes[row - from] = sums[0]!;
         out.beam[row - from] = sums[1]!;
       }
@@ -53,7 +60,7 @@ export function sunOnReceptors(
   return out;
 }
 
-/** Which samples of the light one receptor sees: 1 or 0 for each row of the light before it was sorted. */
+/** Which samples of the light no solid and no device hides from one receptor: 1 or 0 for each row of the light before it was sorted. */
 export function seenSamples(
   o: Occluders,
   light: LightColumns,

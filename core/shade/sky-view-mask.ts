@@ -1,6 +1,8 @@
 import { visitReceptors } from './skyline-groups.ts';
 import type { Occluders } from './skyline-occluders.ts';
 import { facing } from './exposure-grid.ts';
+import { ANY_MONTH, crownLoss } from './crown-sky.ts';
+import type { Dome } from './dome-light.ts';
 import { domeShare } from './sky-view.ts';
 import {
   makeSkyRays,
@@ -35,7 +37,9 @@ export type PointSky = {
 export function pointSky(o: Occluders, at: Vec3, normal: Vec3): PointSky {
   let sky: PointSky = { skyView: 0, skyComponent: 0 };
   trace(o, at, normal, RAYS_OF_A_POINT, (t) => {
-    sky = { skyView: domeShare(t, normal, 'uniform'), skyComponent: domeShare(t, normal, 'overcast') };
+    const seen = (dome: Dome): number =>
+      Math.max(0, domeShare(t, normal, dome) - crownLoss(t, o.crowns, ANY_MONTH, at, normal, dome));
+    sky = { skyView: seen('uniform'), skyComponent: seen('overcast') };
   });
   return sky;
 }

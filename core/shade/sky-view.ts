@@ -1,10 +1,11 @@
 import type { Shader, Solid } from '../form/model.ts';
+import type { Tree } from '../scheme/schema.ts';
+import { CROWN } from './crown-light.ts';
+import { type Dome, lightBelow } from './dome-light.ts';
+import { ANY_MONTH, crownLoss, type MonthShares } from './crown-sky.ts';
 import { byNormal, type Receptors, visitReceptors } from './skyline-groups.ts';
 import { makeOccluders, type Occluders } from './skyline-occluders.ts';
 import { makeSkyTrace, openStretches, type SkyRays, type SkyTrace, traceSky } from './sky-view-trace.ts';
-
-/** How bright the dome is taken to be: alike all over, or the traditional CIE overcast sky, (1 + 2 sin γ)/3 of its zenith. */
-export type Dome = 'uniform' | 'overcast';
 
 /**
  * Light of the dome on a plane that reaches it past what stands before it, as a share of the light that an open level plane
@@ -34,7 +35,7 @@ export function domeShare(t: SkyTrace, normal: readonly [number, number, number]
     for (let i = 0; i < n; i++) {
       const low = Math.max(from, t.open[2 * i]!);
       const high = Math.min(to, t.open[2 * i + 1]!);
-      if (high > low) ray += below(high, a, nz, dome) - below(low, a, nz, dome);
+      if (high > low) ray += lightBelow(high, a, nz, dome) - lightBelow(low, a, nz, dome);
     }
     sum += ray * width_rad[c]!;
   }
@@ -42,35 +43,30 @@ export function domeShare(t: SkyTrace, normal: readonly [number, number, number]
   return Math.min(1, Math.max(0, share));
 }
 
-/** Light of one ray from the horizon up to an altitude of tangent t. */
-function below(t: number, a: number, b: number, dome: Dome): number {
-  if (t <= 0) return 0;
-  const cos = 1 / Math.sqrt(1 + t * t);
-  const sin = t === Infinity ? 1 : t * cos;
-  const uniform = (a * (Math.atan(t) + sin * cos) + b * sin * sin) / 2;
-  return dome === 'uniform' ? uniform : uniform + (2 / 3) * (a * (1 - cos * cos * cos) + b * sin * sin * sin);
-}
-
 /**
- * The dome's share for each receptor (see `domeShare`); 0 for one inside a solid.
- * @param from, to  rows to work out, `to` exclusive
+ * The dome's share for each receptor (see `domeShare`), less what crowns of trees keep off; 0 for one inside a solid.
+ * @param months  when the light falls, for the crowns
  */
 export function domeOnReceptors(
   o: Occluders,
   rays: SkyRays,
   r: Receptors,
   dome: Dome,
-  from = 0,
-  to = r.x.length,
+  months: MonthShares = ANY_MONTH,
 ): Float64Array {
-  const share = new Float64Array(to - from);
+  const n = r.x.length;
+  const share = new Float64Array(n);
   const trace = makeSkyTrace(rays);
   const lowest = new Float64Array(rays.columns.count);
-  for (const rows of byNormal(r, from, to)) {
+  for (const rows of byNormal(r, 0, n)) {
     visitReceptors(o, rays.columns, lowest, r, rows, (row, list) => {
       if (list === null) return;
       traceSky(trace, o, list, r.x[row]!, r.y[row]!, r.z[row]!);
-      share[row - from] = domeShare(trace, [r.nx[row]!, r.ny[row]!, r.nz[row]!], dome);
+      const normal = [r.nx[row]!, r.ny[row]!, r.nz[row]!] as const;
+      const open = domeShare(trace, normal, dome);
+      const at = [r.x[row]!, r.y[row]!, r.z[row]!] as const;
+      const lost = o.crowns.count > 0 ? crownLoss(trace, o.crowns, months, at, normal, dome) : 0;
+      share[row] = Math.max(0, open - lost);
     });
   }
   return share;
@@ -80,11 +76,18 @@ export function domeOnReceptors(
  * The world upside down: what hides the ground from a receptor is what hides the dome from its mirror image. The ground is
  * taken to lie at level 0 below whatever reaches deeper, and everything below the horizon that no solid hides is ground.
  */
-export function mirroredOccluders(solids: readonly Solid[], shaders: readonly Shader[]): Occluders {
-  return makeOccluders(
+export function mirroredOccluders(
+  solids: readonly Solid[],
+  shaders: readonly Shader[],
+  trees: readonly Tree[] = [],
+): Occluders {
+  const mirrored = makeOccluders(
     solids.map((s) => ({ ...s, base_m: -s.top_m, top_m: -(s.base_m < 0 ? Math.min(0, s.top_m) : s.base_m) })),
     shaders.map((s) => ({ ...s, corners: s.corners.map((p) => [p[0], p[1], -p[2]] as const) })),
+    trees,
   );
+  const shape = mirrored.crowns.shape.map((v, i) => (i % CROWN === 2 ? -v : v));
+  return { ...mirrored, crowns: { ...mirrored.crowns, shape } };
 }
 
 /**
@@ -96,9 +99,8 @@ export function groundOnReceptors(
   mirrored: Occluders,
   rays: SkyRays,
   r: Receptors,
-  from = 0,
-  to = r.x.length,
+  months: MonthShares = ANY_MONTH,
 ): Float64Array {
   const flip = (column: Float64Array): Float64Array => column.map((v) => -v);
-  return domeOnReceptors(mirrored, rays, { ...r, z: flip(r.z), nz: flip(r.nz) }, 'uniform', from, to);
+  return domeOnReceptors(mirrored, rays, { ...r, z: flip(r.z), nz: flip(r.nz) }, 'uniform', months);
 }

@@ -1,6 +1,8 @@
 import type { Shader, Solid } from '../form/model.ts';
 import { signedArea } from '../plane/ring.ts';
 import type { Point } from '../plane/vec.ts';
+import type { Tree } from '../scheme/schema.ts';
+import { crownColumns, type Crowns } from './crown-light.ts';
 
 /** Numbers of one wall in `Occluders.walls`: x and y of its two corners, base, top. */
 export const WALL = 6;
@@ -28,15 +30,21 @@ export type Occluders = {
   readonly corners: Float64Array;
   /** An upright cylinder round each patch, `DISC` numbers: x and y of its axis, radius, top. */
   readonly patchDisc: Float64Array;
+  /** What weakens the sun without hiding it. */
+  readonly crowns: Crowns;
 };
 
 export const DISC = 4;
 
 /**
- * The occluders of solids and flat shaders. The order of either changes nothing but the order of the columns.
+ * The occluders of solids and flat shaders, and the crowns of trees. The order of any changes nothing but the order of the columns.
  * @throws {RangeError} for a corner that is not finite
  */
-export function makeOccluders(solids: readonly Solid[], shaders: readonly Pick<Shader, 'corners'>[]): Occluders {
+export function makeOccluders(
+  solids: readonly Solid[],
+  shaders: readonly Pick<Shader, 'corners'>[],
+  trees: readonly Tree[] = [],
+): Occluders {
   const walls: number[] = [];
   const wallSolid: number[] = [];
   const wallPatch: number[] = [];
@@ -78,6 +86,7 @@ export function makeOccluders(solids: readonly Solid[], shaders: readonly Pick<S
     patchCorner: Uint32Array.from(patchCorner),
     corners: Float64Array.from(corners),
     patchDisc: discsOf(corners, patchCorner),
+    crowns: crownColumns(trees),
   };
   if (![...result.walls, ...result.corners].every(Number.isFinite))
     throw new RangeError('a corner is not a finite number');

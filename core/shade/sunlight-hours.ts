@@ -66,6 +66,7 @@ export function rowsWhere(light: Light, keep: (row: number) => boolean): Light {
     sz: pick(light.sz),
     minutes: pick(light.minutes),
     beam: pick(light.beam),
+    ...(light.month === undefined ? {} : { month: Uint8Array.from(rows, (i) => light.month?.[i] ?? 0) }),
   };
 }
 

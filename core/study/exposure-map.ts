@@ -13,7 +13,7 @@ import {
   solidWall,
 } from '../shade/exposure-grid.ts';
 import { type Exposure, type ExposureJob, exposureJob } from '../shade/exposure-slice.ts';
-import { checkAsk, exposureNotes, fault, partOf, shadersAt, skyOf, tooManyPoints } from './exposure.ts';
+import { checkAsk, fault, partOf, shadersAt, skyOf, tooManyPoints } from './exposure.ts';
 import { type ExposureDates, exposureDates } from './exposure-dates.ts';
 import type { Pulse } from './job.ts';
 import { runHere, type RunJobs } from './run-jobs.ts';
@@ -103,10 +103,10 @@ export function planMap(scheme: Scheme, model: Model, ask: ExposureMapAsk): Chec
   const jobs = stages.map(([stage]) => {
     const at = stage as Stage;
     const grids = places.filter((p) => p.there[at]).map((p) => p.grid.receptors);
-    return exposureJob(solidsAt(model.solids, at), shadersAt(model, at), sky.light, joined(grids), energy);
+    return exposureJob(solidsAt(model.solids, at), shadersAt(model, at), sky.light, joined(grids), energy, model.trees);
   });
   const value = { dates: dates.value, step_min, spacing_m, places, stages, jobs };
-  return { ok: true, value, notes: exposureNotes(scheme) };
+  return { ok: true, value, notes: [] };
 }
 
 /** The map of a plan whose jobs are done. @param values in the order of the jobs */

@@ -22,7 +22,7 @@ import {
   sunlitShare,
   weighted,
 } from '../shade/sunlight-hours.ts';
-import { checkAsk, exposureNotes, shadersAt, tooManyPoints } from './exposure.ts';
+import { checkAsk, shadersAt, tooManyPoints } from './exposure.ts';
 import { exposureDates } from './exposure-dates.ts';
 import type { Pulse } from './job.ts';
 
@@ -40,6 +40,8 @@ export type NeighbourAsk = {
   readonly spacing_m?: number;
   /** Long-run share of possible sunshine, January to December, 0..1; absent: every hour of sun above the horizon counts. */
   readonly sunshine?: readonly number[];
+  /** Whether crowns of trees count; absent: they are left out, as guidance on neighbours' light leaves them out. */
+  readonly trees?: boolean;
 };
 
 /** A number before, after, and after as a share of before. */
@@ -103,8 +105,8 @@ export async function neighbourLight(
     day: periodSky(scheme.site, model.north_rad, day.value, step_min),
     hours,
     spacing_m,
-    before: occludersAt(model, 'before'),
-    after: occludersAt(model, 'after'),
+    before: occludersAt(model, 'before', ask.trees ?? false),
+    after: occludersAt(model, 'after', ask.trees ?? false),
   };
   const receptors: (PointLight | AreaLight)[] = [];
   for (const [i, receptor] of model.receptors.entries()) {
@@ -112,7 +114,7 @@ export async function neighbourLight(
     if ((await pulse(i + 1, model.receptors.length)) === 'stop') return null;
   }
   const openHours = run.year.open_min / 60;
-  return { ok: true, value: { year, date, hours, openHours, receptors }, notes: exposureNotes(scheme) };
+  return { ok: true, value: { year, date, hours, openHours, receptors }, notes: treeNotes(scheme, ask) };
 }
 
 type Run = {
@@ -125,8 +127,22 @@ type Run = {
   readonly after: Occluders;
 };
 
-const occludersAt = (model: Model, stage: Stage): Occluders =>
-  makeOccluders(solidsAt(model.solids, stage), shadersAt(model, stage));
+const occludersAt = (model: Model, stage: Stage, trees: boolean): Occluders =>
+  makeOccluders(solidsAt(model.solids, stage), shadersAt(model, stage), trees ? model.trees : []);
+
+/** Trees are commonly left out of such figures (common practice; guidance from memory, no source at hand). */
+function treeNotes(scheme: Scheme, ask: NeighbourAsk): Fault[] {
+  if (scheme.trees.length === 0 || ask.trees === true) return [];
+  return [
+    {
+      level: 'warning',
+      code: 'trees-left-out',
+      place: 'trees',
+      message: 'the light of neighbours is worked out without the trees',
+      cure: 'ask for it with trees where they belong in the comparison, such as a dense belt of evergreens',
+    },
+  ];
+}
 
 function yearOf(
   scheme: Scheme,

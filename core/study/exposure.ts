@@ -59,7 +59,7 @@ export const MOST_SAMPLES = 600_000;
 
 /** How the numbers come about, for the working. */
 export const EXPOSURE_METHOD =
-  'sun sampled at the middle of each step, hidden or not exactly by the solids and devices that stand; clear sky by Ineichen–Perez 2002; sky light from an even dome past what hides it; ground light from open level ground; trees left out';
+  'sun sampled at the middle of each step, hidden or not exactly by the solids and devices that stand; clear sky by Ineichen–Perez 2002; sky light from an even dome past what hides it; ground light from open level ground; crowns of trees let through what each month says';
 
 /**
  * Sun time and energy on every receptor of a scheme.
@@ -90,6 +90,7 @@ export async function exposureStudy(
     sky.light,
     joined(grids.map((g) => g.receptors)),
     sky,
+    model.trees,
   );
   const done = await run([job], pulse);
   if (done === null) return null;
@@ -102,7 +103,7 @@ export async function exposureStudy(
     return summary(receptor, layout, own);
   });
   const value = { stage, dates: dates.value, step_min, spacing_m, sunSamples: sky.light.sx.length, receptors };
-  return { ok: true, value, notes: notesOf(scheme, model) };
+  return { ok: true, value, notes: notesOf(model) };
 }
 
 /** The sun and sky of what is asked. @param dates from `exposureDates` */
@@ -223,22 +224,8 @@ export const tooManyPoints = (points: number): Fault[] =>
       ]
     : [];
 
-/** What must be said of every exposure of a scheme. */
-export function exposureNotes(scheme: Scheme): Fault[] {
-  if (scheme.trees.length === 0) return [];
-  return [
-    {
-      level: 'warning',
-      code: 'trees-left-out',
-      place: 'trees',
-      message: 'exposure is worked out without the trees',
-      cure: 'draw a tree that should count as a block that floats on its trunk',
-    },
-  ];
-}
-
-function notesOf(scheme: Scheme, model: Model): Fault[] {
-  const notes = exposureNotes(scheme);
+function notesOf(model: Model): Fault[] {
+  const notes: Fault[] = [];
   if (model.receptors.length === 0)
     notes.push({
       level: 'warning',

@@ -1,0 +1,131 @@
+import { CROWN, type Crowns, isInFront, THROUGH } from './crown-light.ts';
+import { type Dome, lightBelow } from './dome-light.ts';
+import { openStretches, type SkyTrace } from './sky-view-trace.ts';
+
+/** How much of a light falls in each month: shares that add up to 1, entry 0 for light of no month, which takes the mean of the year. */
+export type MonthShares = Float64Array;
+
+/** Light of no month. */
+export const ANY_MONTH: MonthShares = Float64Array.of(1, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0, 0);
+
+/**
+ * What crowns take of the dome's light on a plane, in the units of `domeShare`. On each ray a crown spans one stretch of
+ * altitude, cut out by the two tangents to the ellipse in which the ray's upright plane cuts it: exact. Where several stand
+ * one behind the other their transmittances multiply month by month.
+ */
+export function crownLoss(
+  t: SkyTrace,
+  crowns: Crowns,
+  months: MonthShares,
+  at: readonly [number, number, number],
+  normal: readonly [number, number, number],
+  dome: Dome,
+): number {
+  const near: number[] = [];
+  for (let k = 0; k < crowns.count; k++) if (isInFront(crowns, k, ...at, normal)) near.push(k);
+  if (near.length === 0) return 0;
+  const { columns, width_rad } = t.rays;
+  const stretch = new Float64Array(2);
+  let sum = 0;
+  for (let c = 0; c < columns.count; c++) {
+    const ux = columns.ux[c]!;
+    const uy = columns.uy[c]!;
+    const met: Met[] = [];
+    for (const k of near)
+      if (crownOnRay(crowns, k, at, ux, uy, stretch)) met.push({ crown: k, low: stretch[0]!, high: stretch[1]! });
+    if (met.length > 0)
+      sum += lossOnRay(t, c, crowns, months, met, normal[0] * ux + normal[1] * uy, normal[2], dome) * width_rad[c]!;
+  }
+  return dome === 'uniform' ? sum / Math.PI : (3 * sum) / (7 * Math.PI);
+}
+
+type Met = { readonly crown: number; readonly low: number; readonly high: number };
+
+/** The light that crowns keep off on one ray: between any two of their ends, what is open is dimmed alike. */
+function lossOnRay(
+  t: SkyTrace,
+  c: number,
+  crowns: Crowns,
+  months: MonthShares,
+  met: readonly Met[],
+  a: number,
+  nz: number,
+  dome: Dome,
+): number {
+  if (a <= 0 && nz <= 0) return 0;
+  const front = a <= 0 ? -a / nz : 0;
+  const back = a > 0 && nz < 0 ? -a / nz : Infinity;
+  const ends = [...new Set(met.flatMap(({ low, high }) => [low, high]))].sort((p, q) => p - q);
+  const n = openStretches(t, c);
+  let loss = 0;
+  for (let e = 0; e + 1 < ends.length; e++) {
+    const from = Math.max(front, ends[e]!);
+    const to = Math.min(back, ends[e + 1]!);
+    const dim =
+      1 -
+      throughAll(
+        crowns,
+        months,
+        met.filter((m) => m.low < ends[e + 1]! && m.high > ends[e]!),
+      );
+    for (let i = 0; i < n; i++) {
+      const low = Math.max(from, t.open[2 * i]!);
+      const high = Math.min(to, t.open[2 * i + 1]!);
+      if (high > low) loss += dim * (lightBelow(high, a, nz, dome) - lightBelow(low, a, nz, dome));
+    }
+  }
+  return loss;
+}
+
+function throughAll({ through }: Crowns, months: MonthShares, met: readonly Met[]): number {
+  let all = 0;
+  for (let m = 0; m < THROUGH; m++) {
+    if (months[m] === 0) continue;
+    all += met.reduce((share, { crown }) => share * through[crown * THROUGH + m]!, months[m]!);
+  }
+  return all;
+}
+
+/**
+ * The stretch of altitude, as tangents, that a crown spans on the ray of a unit direction in plan. In the ray's upright plane
+ * the crown is an ellipse about (p, h) with half axes a and b, and a line of slope t through the point touches it where
+ * t²(p² − a²) − 2tph + h² − b² = 0.
+ * @param stretch  filled with the lower and the upper end  @returns whether it is met above the horizon
+ */
+export function crownOnRay(
+  { shape }: Crowns,
+  crown: number,
+  at: readonly [number, number, number],
+  ux: number,
+  uy: number,
+  stretch: Float64Array,
+): boolean {
+  const o = crown * CROWN;
+  const dx = shape[o]! - at[0];
+  const dy = shape[o + 1]! - at[1];
+  const h = shape[o + 2]! - at[2];
+  const radius = shape[o + 3]!;
+  const p = dx * ux + dy * uy;
+  const aside = (ux * dy - uy * dx) / radius;
+  const k2 = 1 - aside * aside;
+  if (!(k2 > 0)) return false;
+  const a2 = radius * radius * k2;
+  const b2 = shape[o + 4]! ** 2 * k2;
+  stretch[0] = -Infinity;
+  stretch[1] = Infinity;
+  if ((p * p) / a2 + (h * h) / b2 < 1) return true;
+  // Straight below its rim the tangent stands upright; a hair's breadth aside it does not.
+  const beyond = p * p - a2 || -1e-12 * a2;
+  if (beyond > 0 && p < 0) return false;
+  const root = Math.sqrt(Math.max(0, p * p * h * h - beyond * (h * h - b2)));
+  const one = (p * h - root) / beyond;
+  const other = (p * h + root) / beyond;
+  const low = Math.min(one, other);
+  const high = Math.max(one, other);
+  if (beyond > 0) {
+    stretch[0] = low;
+    stretch[1] = high;
+  } else if (h > 0) stretch[0] = high;
+  else stretch[1] = low;
+  return stretch[1] > 0 && stretch[1] > stretch[0];
+}
