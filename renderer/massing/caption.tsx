@@ -36,7 +36,7 @@ function MapCaption() {
   const made = words.maps.made(`${shown.step_min}`, cellSize(shown.spacing_m));
   const left = [
     quantity.value === 'energy' ? words.maps.clear : '',
-    shown.scheme.trees.length > 0 ? words.maps.noTrees : '',
+    shown.scheme.trees.length > 0 ? words.maps.crowns : '',
   ].filter(Boolean);
   return (
     <p class="caption">

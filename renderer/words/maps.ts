@@ -61,6 +61,6 @@ export const mapsWords = {
     meanDay: (year: string) => `Mean of the solstice and equinox days of ${year}`,
     made: (step: string, spacing: string) => `sun every ${step} min, cells of about ${spacing} m`,
     clear: 'clear sky',
-    noTrees: 'trees left out',
+    crowns: 'crowns of trees let light through by the month',
   },
 } as const;
