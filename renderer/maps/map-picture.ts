@@ -80,6 +80,17 @@ function stageValue(values: Values | null | undefined, quantity: Quantity, cell:
   return Number.isNaN(value) ? null : value;
 }
 
+/** Whether any number of a surface is there for what is shown, judged by its first, middle and last cell. */
+export function hasArrived(picture: MapPicture, side: Side, surface: number): boolean {
+  const stages: readonly Stage[] = side === 'change' ? ['before', 'after'] : [side];
+  return stages.every((stage) => {
+    const minutes = picture.values[stage][surface]?.minutes;
+    if (!minutes) return false;
+    const last = minutes.length - 1;
+    return [0, last >> 1, last].some((i) => !Number.isNaN(minutes[i]!));
+  });
+}
+
 /** Whether a cell is inside a solid at what is shown. */
 export function isBuiltOver(picture: MapPicture, side: Side, surface: number, cell: number): boolean {
   const covered = (stage: Stage): boolean => picture.values[stage][surface]?.covered[cell] === 1;

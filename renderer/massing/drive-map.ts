@@ -4,7 +4,7 @@ import { colourTable, shadeOf } from '../maps/map-scale.ts';
 import { cursor, mapScale, pointed, shownMap } from '../maps/map-shown.ts';
 import { arrivals, quantity, side } from '../maps/map-state.ts';
 import { theme } from '../state/theme.ts';
-import { laidMap } from './laid-map.ts';
+import { carriedMap, laidMap } from './laid-map.ts';
 import { paint } from './map-atlas.ts';
 import { readPalette, type Rgb } from './palette.ts';
 import type { MassingScene } from './scene.ts';
@@ -23,7 +23,7 @@ export function driveMap(scene: MassingScene): () => void {
         if (cursor.value !== null && cursor.value.surface >= count) cursor.value = null;
       });
     }),
-    effect(() => scene.setMap(laidMap.value?.atlas ? laidMap.value : null)),
+    effect(() => scene.setMap(carriedMap.value)),
     effect(() => {
       const isOnDark = theme.value === 'dark';
       arrivals.value;

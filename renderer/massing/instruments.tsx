@@ -3,6 +3,7 @@ import type { Model } from '../../core/form/model.ts';
 import type { Vec3 } from '../../core/plane/vec.ts';
 import { model, moment } from '../state/studies.ts';
 import { scheme } from '../state/document.ts';
+import { isMapOn } from '../maps/map-state.ts';
 import { type Face, faceOf } from '../state/faces.ts';
 import { faceName, receptorName } from '../state/names.ts';
 import { selection } from '../state/selection.ts';
@@ -201,7 +202,8 @@ export function SelectionOutline() {
 /** A small label above what is selected. */
 export function SelectionTag() {
   const shown = tag.value;
-  if (shown === null || scheme.value === null) return null;
+  // A map names what is selected in its key, and its cells where they are read.
+  if (shown === null || scheme.value === null || isMapOn.value) return null;
   const [x, y] = project(camera.value, size.value, shown.at);
   const { width, height } = size.value;
   if (x < 0 || y < 0 || x > width || y > height) return null;

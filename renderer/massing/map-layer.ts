@@ -2,21 +2,23 @@ import { ShapeUtils, Vector2 } from 'three';
 import type { Ring, Vec3 } from '../../core/plane/vec.ts';
 import { type Cells, cellsOf } from '../maps/map-cells.ts';
 import { outlineOf } from '../maps/map-ask.ts';
-import type { Side } from '../maps/map-picture.ts';
+import { hasArrived, type Side } from '../maps/map-picture.ts';
 import type { ShownMap } from '../maps/map-state.ts';
 import { type Atlas, inAtlas, layOut } from './map-atlas.ts';
 
 /** Triangles that carry a piece of the map's picture, with their places in it. */
 export type Laid = { readonly positions: Float32Array; readonly places: Float32Array };
 
-/** A map ready to be drawn: where its cells lie, the picture they are painted in, and what carries it. */
+/** Where the cells of a map lie, and the picture that they are painted in. */
 export type LaidMap = {
   readonly cells: readonly Cells[];
   /** Null where the map has more cells in a row than a graphics card takes. */
   readonly atlas: Atlas | null;
-  readonly ground: Laid;
-  readonly faces: Laid;
+  readonly outlines: readonly Ring[];
 };
+
+/** What carries a map: triangles on the ground, and on walls and roofs. */
+export type CarriedMap = { readonly ground: Laid; readonly faces: Laid };
 
 class Carrier {
   readonly #positions: number[] = [];
@@ -62,19 +64,21 @@ class Carrier {
   }
 }
 
-const EMPTY: Laid = { positions: new Float32Array(0), places: new Float32Array(0) };
-
-/** Lays a map out over those of its surfaces that are there. */
-export function layMap({ model, picture }: ShownMap, side: Side): LaidMap {
+/** Lays a map out over its surfaces. */
+export function layMap({ model, picture }: ShownMap): LaidMap {
   const outlines = picture.surfaces.map(({ surface }) => outlineOf(model, surface));
   const cells = picture.surfaces.map((surface, i) => cellsOf(surface, outlines[i] as Ring));
-  const atlas = layOut(cells);
-  if (atlas === null) return { cells, atlas, ground: EMPTY, faces: EMPTY };
+  return { cells, atlas: layOut(cells), outlines };
+}
+
+/** The surfaces of a map that have anything to show; the others keep the tints that they have without it. */
+export function carryMap({ cells, atlas, outlines }: LaidMap, { picture }: ShownMap, side: Side): CarriedMap | null {
+  if (atlas === null) return null;
   const [ground, faces] = [new Carrier(atlas), new Carrier(atlas)];
-  picture.surfaces.forEach(({ surface, there }, i) => {
-    if (side === 'change' ? !(there.before && there.after) : !there[side]) return;
+  picture.surfaces.forEach(({ surface }, i) => {
+    if (!hasArrived(picture, side, i)) return;
     if (surface.kind === 'wall') faces.upright(i, cells[i] as Cells);
     else (surface.kind === 'ground' ? ground : faces).level(i, cells[i] as Cells, outlines[i] as Ring);
   });
-  return { cells, atlas, ground: ground.laid(), faces: faces.laid() };
+  return { ground: ground.laid(), faces: faces.laid() };
 }

@@ -18,7 +18,7 @@ import { axesOf, type Camera, type Size } from './camera.ts';
 import { drawsInSoftware } from './draws-in-software.ts';
 import type { Vec3 } from '../../core/plane/vec.ts';
 import type { Faces, Owner } from './faces.ts';
-import type { Laid } from './map-layer.ts';
+import type { CarriedMap } from './map-layer.ts';
 import { type Layer, materials, ORDER } from './layers.ts';
 import type { Rgb } from './palette.ts';
 import { StillPicture } from './still-picture.ts';
@@ -80,10 +80,10 @@ export class MassingScene {
   }
 
   /** Surfaces that carry a map; none, and they carry none. The picture comes by `setPicture`. */
-  setMap(laid: { readonly ground: Laid; readonly faces: Laid } | null): void {
+  setMap(carried: CarriedMap | null): void {
     for (const [layer, part] of [
-      ['groundMap', laid?.ground],
-      ['faceMap', laid?.faces],
+      ['groundMap', carried?.ground],
+      ['faceMap', carried?.faces],
     ] as const) {
       const places = new BufferAttribute(part?.places ?? new Float32Array(0), 2);
       const positions = part?.positions ?? new Float32Array(0);

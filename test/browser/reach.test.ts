@@ -60,6 +60,15 @@ describe.skipIf(executable === null).each([
     }
   });
 
+  test('a sun map with its settings and its key', async () => {
+    await page.getByRole('button', { name: 'Sun map' }).click();
+    await page.getByText('sun hours', { exact: true }).click();
+    await page.locator('.map-spread').waitFor();
+    expect(await barriers(page)).toEqual([]);
+    await page.getByText('nothing', { exact: true }).click();
+    await page.getByRole('button', { name: 'Sun map' }).click();
+  });
+
   test('the dialogs', async () => {
     await page.locator('.facts-button').click();
     await page.getByRole('dialog').waitFor();
