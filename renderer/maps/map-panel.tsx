@@ -7,6 +7,7 @@ import { words } from '../words/words.ts';
 import type { MapFaces, MapGround } from './map-ask.ts';
 import type { Quantity } from './map-picture.ts';
 import {
+  askForSpan,
   cells,
   faces,
   ground,
@@ -90,7 +91,8 @@ function Asked() {
           ['year', words.maps.year(year)],
         ]}
         onPick={(value) => {
-          when.value = value;
+          if (value === 'span') askForSpan();
+          else when.value = value;
         }}
       />
       {when.value === 'span' ? <Span /> : null}

@@ -25,6 +25,13 @@ export const span = signal<{ readonly first: string; readonly last: string }>({
   first: '2025-06-01',
   last: '2025-08-31',
 });
+/** Turns to a span of dates: the last one asked for, or the summer months of the clock's year where that was of another year. */
+export function askForSpan(): void {
+  const year = date.peek().slice(0, 4);
+  if (!span.peek().last.startsWith(year)) span.value = { first: `${year}-06-01`, last: `${year}-08-31` };
+  when.value = 'span';
+}
+
 export const step_min = signal(5);
 export const spacing_m = signal(1);
 export const isChangeWanted = signal(false);

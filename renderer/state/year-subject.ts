@@ -1,4 +1,5 @@
 import type { Model, Stage } from '../../core/form/model.ts';
+import { stands } from '../../core/form/stands.ts';
 import type { YearSubject as Asked } from '../../core/study/year-subject.ts';
 import type { CheckResult } from '../../core/study/check-result.ts';
 import { faceOf } from './faces.ts';
@@ -43,7 +44,11 @@ function subjectOfSelection(model: Model, selected: Selection | null, shown: Sta
   if (selected.kind === 'receptor') return receptorSubject(model, id, shown);
   if (selected.kind !== 'face') return null;
   const face = faceOf(id);
-  return model.solids.some((s) => s.id === face.block) ? { kind: face.kind, id, asked: face, stage: shown } : null;
+  const solid = model.solids.find((s) => s.id === face.block);
+  if (solid === undefined) return null;
+  // The faces of a block that is not there at the stage are asked at the one at which it is.
+  const other = shown === 'after' ? 'before' : 'after';
+  return { kind: face.kind, id, asked: face, stage: stands(solid.standing, shown) ? shown : other };
 }
 
 function receptorSubject(model: Model, id: string, shown: Stage): YearSubject | null {

@@ -94,11 +94,15 @@ describe.skipIf(executable === null)('maps, receptors and their year', () => {
     await page.getByText('After', { exact: true }).click();
   });
 
-  test('a long map can be stopped, and begun again', async () => {
+  test('a long map comes piece by piece, can be stopped, and begun again', async () => {
     await page.getByLabel('For', { exact: true }).selectOption('year');
     await page.getByLabel('Walls and roofs').selectOption('all');
     await page.getByLabel('Ground').selectOption('around');
     await page.getByLabel('Cells of').selectOption('0.25');
+    // The numbers of the pieces that are there stand in the key while the work goes on.
+    await page.getByText('All of 2025', { exact: true }).waitFor();
+    await page.locator('.map-spread').waitFor();
+    expect(await page.locator('.map-key progress').count()).toBe(1);
     await page.locator('.map-key').getByRole('button', { name: 'Stop' }).click();
     await key().getByText('Stopped before it was done.').waitFor();
     await page.getByLabel('For', { exact: true }).selectOption('day');
