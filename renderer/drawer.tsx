@@ -1,5 +1,6 @@
 import { signal } from '@preact/signals';
 import { useLayoutEffect } from 'preact/hooks';
+import { ComparePanel } from './compare/compare-panel.tsx';
 import { LightPanel } from './light/light-panel.tsx';
 import { countOf, KINDS, ScheduleOf } from './schedule/schedules.tsx';
 import { SunPathPanel } from './sun-path/sun-path-panel.tsx';
@@ -14,6 +15,7 @@ import { YearStrip } from './year-strip/year-strip.tsx';
 const ASIDES = [
   { page: 'light', tab: words.light.tab, label: words.light.label, Panel: LightPanel },
   { page: 'sizing', tab: words.sizing.tab, label: words.sizing.label, Panel: SizingPanel },
+  { page: 'compare', tab: words.compare.tab, label: words.compare.label, Panel: ComparePanel },
   { page: 'sun-path', tab: words.sunPath.tab, label: words.sunPath.label, Panel: SunPathPanel },
   { page: 'weather', tab: words.weather.tab, label: words.weather.label, Panel: WeatherPanel },
 ] as const;

@@ -2,6 +2,7 @@ import { readFileSync } from 'node:fs';
 import { Command, CommanderError } from 'commander';
 import { shipped } from '../files/shipped.ts';
 import { declareCheck } from './check.ts';
+import { declareCompare } from './compare.ts';
 import type { Declare } from './declare.ts';
 import { declareExposure } from './exposure.ts';
 import { declareOpen } from './open.ts';
@@ -28,6 +29,7 @@ const DECLARED: readonly Declare[] = [
   declareExposure,
   declareSun,
   declareSize,
+  declareCompare,
   declareVerify,
   declareSchema,
   declareOpen,

@@ -44,7 +44,8 @@ export type SheetContext = {
 
 /** Moments of one set of sheets: more would be days of drawing, and a mistake. */
 export const MOST_MOMENTS = 2000;
-const TIMES = ['09:00', '12:00', '15:00'] as const;
+/** The times of a set that names none. */
+export const USUAL_TIMES = ['09:00', '12:00', '15:00'] as const;
 
 /** The dates of a set that names none. */
 export function usualDates(scheme: Scheme): readonly string[] {
@@ -151,7 +152,7 @@ const mapAsk = ({ set, dates, facts }: SheetJob) => ({
 
 async function shadowStudy(job: SheetJob): Promise<Checked<Document> | null> {
   const { scheme, model, set, dates, facts, pulse } = job;
-  const times = set.times.length > 0 ? set.times : TIMES;
+  const times = set.times.length > 0 ? set.times : USUAL_TIMES;
   const count = dates.length * times.length;
   if (count > MOST_MOMENTS)
     return refuse(

@@ -8,10 +8,12 @@ import { check, checkJob, isCheckSlow, isCheckStale, runCheck, stopCheck } from 
 import { Button } from '../ui/button.tsx';
 import { Choice } from '../ui/choice.tsx';
 import { Disc } from '../ui/disc.tsx';
-import { decimalsFor, fixed, signed } from '../ui/format.ts';
+import { decimalsFor, fixed, percent, signed } from '../ui/format.ts';
 import { Progress } from '../ui/progress.tsx';
 import { words } from '../words/words.ts';
 import { byRoom, type Group, inGroup, type RoomFindings } from './by-room.ts';
+import { FilterBar } from './filter-bar.tsx';
+import { ANY, narrowed, type RoomFilter, type RoomTraits, traitsOf } from './room-filter.ts';
 import { RoomDetail } from './room-detail.tsx';
 import './findings.css';
 
@@ -24,6 +26,12 @@ const group = signal<Group>('all');
 const open = signal<string | null>(null);
 
 const rooms = computed(() => byRoom(check.value?.value.findings ?? []));
+
+const filter = signal<RoomFilter>(ANY);
+const traits = computed(() => {
+  const found = check.value;
+  return found === null ? new Map<string, RoomTraits>() : traitsOf(found.value, found.scheme);
+});
 
 /** As far right as the highest value allows. */
 const limitAt = computed(() => {
@@ -108,10 +116,28 @@ function Empty() {
   );
 }
 
+/** How many of the rooms that are shown are not over: those that no limit applies to are not counted. */
+function ShareLine({ of }: { of: readonly RoomFindings[] }) {
+  const judged = of.filter((room) => room.worst.verdict !== null);
+  if (judged.length === 0) return null;
+  const good = judged.filter((room) => room.worst.verdict !== 'over').length;
+  return <p class="share-line soft">{words.findings.share(good, judged.length, percent(good / judged.length))}</p>;
+}
+
 function RoomList({ result, scheme }: { result: CheckResult; scheme: Scheme }) {
-  const shown = inGroup(rooms.value, group.value);
+  const known = traits.value;
+  const some = narrowed(rooms.value, known, filter.value);
+  const shown = inGroup(some, group.value);
   return (
     <div class="findings-scroller">
+      <FilterBar
+        traits={known}
+        filter={filter.value}
+        onFilter={(next) => {
+          filter.value = next;
+        }}
+      />
+      <ShareLine of={some} />
       {result.findings.length === 0 ? <p class="empty-line soft">{words.findings.noRooms}</p> : null}
       {result.findings.length > 0 && shown.length === 0 ? (
         <p class="empty-line soft">{words.findings.noneLeft}</p>

@@ -19,6 +19,7 @@ export const hands = {
   ways: new WorkerHand(make),
   sensitivity: new WorkerHand(make),
   sizing: new WorkerHand(make),
+  compare: new WorkerHand(make),
   year: new WorkerHand(make),
   /** The light of neighbours and amenity areas. */
   light: new WorkerHand(make),

@@ -9,6 +9,8 @@ import { sensitivity } from '../../core/sizing/sensitivity.ts';
 import { sweep } from '../../core/sizing/sweep.ts';
 import { waysToPass } from '../../core/sizing/ways-to-pass.ts';
 import { checkScheme } from '../../core/study/check.ts';
+import { compareSchemes } from '../../core/study/compare-schemes.ts';
+import { USUAL_TIMES, usualDates } from '../../core/study/sheet-document.ts';
 import { reportJson } from '../../core/study/report-json.ts';
 import { type WeatherInput, weatherInput } from '../../core/study/weather-input.ts';
 import { waysOfOver } from '../../core/study/ways-of-over.ts';
@@ -37,7 +39,10 @@ class Years {
 }
 
 /** What is done for rooms: the check, why, and what can be done about it. Each worker has a memory of its own. */
-export function roomTasks(): Pick<Performers, 'check' | 'ways' | 'sensitivity' | 'sweep' | 'findingsFile' | 'report'> {
+export function roomTasks(): Pick<
+  Performers,
+  'check' | 'ways' | 'sensitivity' | 'sweep' | 'compare' | 'findingsFile' | 'report'
+> {
   const memo = createCheckMemo(REMEMBERED);
   const years = new Years();
   return {
@@ -52,6 +57,13 @@ export function roomTasks(): Pick<Performers, 'check' | 'ways' | 'sensitivity' |
       sensitivity(held().scheme, limitSet, finding.room, finding, memo, skyModel),
     sweep: async ({ window, swept, target_Wh }, held) =>
       sweep(held().scheme, window, swept, memo, target_Wh === null ? {} : { target_Wh }),
+    compare: ({ variants }, held, pulse) =>
+      compareSchemes(
+        variants.map((variant) => ({ ...variant, limitSet: limitSetOf(variant.scheme) })),
+        { dates: usualDates(held().scheme), times: USUAL_TIMES },
+        memo,
+        pulse,
+      ),
     findingsFile: async ({ result, form }, held) =>
       form === 'csv'
         ? writeCsv(findingsTable(result))

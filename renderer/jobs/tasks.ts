@@ -11,6 +11,7 @@ import type { Ways } from '../../core/sizing/ways.ts';
 import type { Document } from '../../core/sheet/drawing.ts';
 import type { TableGuess } from '../../core/sky/weather/guess-table.ts';
 import type { WeatherMapping } from '../../core/sky/weather/mapping.ts';
+import type { Comparison } from '../../core/study/compare.ts';
 import type { CheckResult } from '../../core/study/check-result.ts';
 import type { MomentResult } from '../../core/study/moment.ts';
 import type { SunYear } from '../../core/study/sun-year.ts';
@@ -84,6 +85,11 @@ export type Tasks = {
   sensitivity: { ask: { limitSet: LimitSet; skyModel: SkyModel; finding: Finding }; answer: readonly Bar[] };
   /** What a window takes in over the depths of a device, or the g of its glass. `target_Wh`: summer gain to come down to. */
   sweep: { ask: { window: string; swept: Swept; target_Wh: number | null }; answer: Sweep };
+  /** Variants of the scheme side by side; the first is what the others are compared with. */
+  compare: {
+    ask: { variants: readonly { readonly name: string; readonly scheme: Scheme }[] };
+    answer: Comparison;
+  };
   /** The findings as a file: a table, or the report that can be recomputed. */
   findingsFile: { ask: { result: CheckResult; form: 'csv' | 'json' }; answer: string };
   /** The findings on paper. `drawn`: the date of the drawing, YYYY-MM-DD. */

@@ -1,3 +1,4 @@
+import { compareWords } from './compare.ts';
 import { findingsWords } from './findings.ts';
 import { frameWords } from './frame.ts';
 import { lightWords } from './light.ts';
@@ -29,6 +30,7 @@ export const words = {
   ...placeWords,
   ...weatherWords,
   ...findingsWords,
+  ...compareWords,
   ...sheetsWords,
   ...sizingWords,
 } as const;

@@ -75,6 +75,38 @@ describe.skipIf(executable === null)('from what is over to what cures it, withou
     }
   });
 
+  test('rooms are narrowed to a storey and a side, and the share that is not over goes with them', async () => {
+    const narrow = page.getByRole('group', { name: 'Narrow the rooms down' });
+    const storey = narrow.getByLabel('Storey');
+    await storey.selectOption({ label: 'floor at 6.50 m' });
+    await expect.poll(() => page.locator('li.room').count(), PATIENT).toBe(5);
+    await page.getByText('3 of 5 rooms not over, 60 %').waitFor();
+    await narrow.getByLabel('Facing').selectOption({ label: 'facing west' });
+    await expect.poll(() => page.locator('li.room').count(), PATIENT).toBe(2);
+    await narrow.getByRole('button', { name: 'all rooms' }).click();
+    await expect.poll(() => page.locator('li.room').count(), PATIENT).toBe(16);
+  });
+
+  test('a variant is kept, and stands beside the scheme after a way was applied', async () => {
+    await page.getByRole('tab', { name: 'Variants' }).click();
+    await page.getByLabel('Name of what is kept').fill('as drawn');
+    await page.getByRole('button', { name: 'Keep as it is now' }).click();
+    await office.getByRole('button', { name: /^Apply: glass/ }).click();
+    const heads = page.locator('.compare thead th.variant');
+    await expect
+      .poll(() => heads.allTextContents(), PATIENT)
+      .toEqual([
+        expect.stringContaining('as drawn6 over, 2 close, 8 within'),
+        expect.stringContaining('on the desk5 over, 3 close, 8 within'),
+      ]);
+    const row = page.locator('.compare tbody tr', { hasText: '1.3 Office' }).first();
+    expect(await row.textContent()).toMatch(/over 111.*close 60\.0−51\.\d/);
+    await page.getByRole('button', { name: 'Put as drawn on the desk' }).click();
+    await page.getByText('6 over', { exact: true }).waitFor();
+    await page.getByRole('button', { name: 'Let go of as drawn' }).click();
+    await page.locator('.compare').getByText('Keep the scheme as it is now').waitFor();
+  });
+
   test('what moves the result most is shown with its figures, longest first', async () => {
     await office.getByText('What moves it most').click();
     const first = office.locator('.tornado li').first();

@@ -16,11 +16,22 @@ describe('help', () => {
   test('names every subcommand and every exit status', async () => {
     const { status, out } = await runCommand(['--help'], tempFolder());
     expect(status).toBe(0);
-    for (const word of ['check', 'shadows', 'exposure', 'sun', 'size', 'verify', 'schema', 'open', 'Exit status'])
+    for (const word of [
+      'check',
+      'shadows',
+      'exposure',
+      'sun',
+      'size',
+      'compare',
+      'verify',
+      'schema',
+      'open',
+      'Exit status',
+    ])
       expect(out).toContain(word);
   });
 
-  test.each(['check', 'shadows', 'exposure', 'sun', 'size', 'verify', 'schema', 'open'])(
+  test.each(['check', 'shadows', 'exposure', 'sun', 'size', 'compare', 'verify', 'schema', 'open'])(
     '%s has examples',
     async (name) => {
       const { status, out } = await runCommand([name, '--help'], tempFolder());

@@ -1,0 +1,27 @@
+/** Words of the comparison of variants. */
+export const compareWords = {
+  compare: {
+    tab: 'Variants',
+    label: 'Variants side by side',
+    line: 'Keep the scheme as it is now, go on changing it, and see here what the change brings.',
+    keep: 'Keep as it is now',
+    name: 'Name of what is kept',
+    usual: (n: number) => `Variant ${n}`,
+    add: 'Add a scheme file…',
+    now: 'on the desk',
+    remove: (name: string) => `Let go of ${name}`,
+    back: (name: string) => `Put ${name} on the desk`,
+    put: 'Put on the desk',
+    edit: (name: string) => `variant ${name}`,
+    counts: (over: number, close: number, within: number) => `${over} over, ${close} close, ${within} within`,
+    room: 'room',
+    what: 'of',
+    shadow: 'shadow added, m²',
+    working: 'Comparing…',
+    failed: (why: string) => `The variants could not be compared: ${why}`,
+    notAdded: (name: string, why: string) => `${name} was not added: ${why}`,
+    same: 'No room is over, and nothing differs in any room.',
+    full: 'Eight variants fit side by side; let go of one first.',
+    none: '–',
+  },
+} as const;
