@@ -31,6 +31,16 @@ export const whole =
     return value;
   };
 
+/** Twelve shares from 0 to 1 with commas between them, January to December. */
+export function shares(text: string): readonly number[] {
+  const values = text.split(',').map((part) => (DECIMAL.test(part.trim()) ? Number(part) : Number.NaN));
+  if (values.length !== 12 || !values.every((v) => v >= 0 && v <= 1))
+    throw new InvalidArgumentError(
+      'It must be twelve shares from 0 to 1 with commas between them, January to December.',
+    );
+  return values;
+}
+
 const daysIn = (year: number, month: number): number => new Date(Date.UTC(year, month, 0)).getUTCDate();
 
 /** A civil date that the calendar has, from 1900 to 2100. */
