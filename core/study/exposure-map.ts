@@ -76,7 +76,7 @@ export type MapPlan = {
   readonly step_min: number;
   readonly spacing_m: number;
   readonly places: readonly MapPlace[];
-  /** Before and after, or one for both where the proposal changes nothing. */
+  /** After, which is looked at first, and before; or one for both where the proposal changes nothing. */
   readonly stages: readonly (readonly Stage[])[];
   /** One for each entry of `stages`, over the points of the surfaces that are there. */
   readonly jobs: readonly ExposureJob[];
@@ -98,7 +98,7 @@ export function planMap(scheme: Scheme, model: Model, ask: ExposureMapAsk): Chec
   const places = laid.value;
   const sky = skyOf(scheme, model, ask, dates.value, step_min);
   const same = model.solids.every((s) => stands(s.standing, 'before') === stands(s.standing, 'after'));
-  const stages: (readonly Stage[])[] = same ? [['before', 'after']] : [['before'], ['after']];
+  const stages: (readonly Stage[])[] = same ? [['before', 'after']] : [['after'], ['before']];
   const energy = ask.hasDiffuse === false ? null : sky;
   const jobs = stages.map(([stage]) => {
     const at = stage as Stage;

@@ -56,15 +56,25 @@ function Ramp({ scale }: { scale: MapScale }) {
     `rgb(${(isSigned ? divergingRgb(2 * t - 1, isOnDark) : cividisRgb(t)).join(' ')})`;
   const stops = Array.from({ length: STOPS + 1 }, (_, i) => colour(i / STOPS));
   const x = (v: number): number => INSET + (isSigned ? (v + most) / (2 * most) : v / most) * (WIDTH - 2 * INSET);
-  const write = (v: number): string => (isSigned ? signed(v, decimals) : fixed(v, decimals));
+  const writeTo = (places: number, v: number): string => (isSigned ? signed(v, places) : fixed(v, places));
   // Where they would touch every other number is left out, never the one in the middle of a signed scale.
-  const isRoomy = ticks.length * (write(most).length + 2) * 7 < WIDTH;
+  const isRoomy = ticks.length * (writeTo(decimals, most).length + 2) * 7 < WIDTH;
   const kept = isSigned ? ((ticks.length - 1) / 2) % 2 : 0;
   const isShown = (i: number): boolean => isRoomy || i % 2 === kept;
+  const isWhole = ticks.every((v, i) => !isShown(i) || Math.abs(v - Math.round(v)) < 1e-9);
+  const write = (v: number): string => writeTo(isWhole ? 0 : decimals, v);
   return (
     <div class="map-ramp">
       <div class="ramp" style={{ background: `linear-gradient(to right, ${stops.join(', ')})` }} aria-hidden="true" />
-      <svg width={WIDTH} height="24" role="img" aria-label={`${ticks.map(write).join(', ')} ${unit}`}>
+      <svg
+        width={WIDTH}
+        height="24"
+        role="img"
+        aria-label={`${ticks
+          .filter((_, i) => isShown(i))
+          .map(write)
+          .join(', ')} ${unit}`}
+      >
         {ticks.map((v, i) => (
           <g key={v}>
             <path d={`M${x(v)} 0v${isSigned && v === 0 ? 7 : 5}`} />

@@ -1,8 +1,8 @@
-import type { Solid } from '../../core/form/model.ts';
 import { stands } from '../../core/form/stands.ts';
 import type { Region } from '../../core/plane/region.ts';
 import type { Ring } from '../../core/plane/vec.ts';
-import { isSelected, select } from '../state/selection.ts';
+import { receptorName } from '../state/names.ts';
+import { isSelected, type Picked, select } from '../state/selection.ts';
 import { stage } from '../state/stage.ts';
 import { model, moment } from '../state/studies.ts';
 import { words } from '../words/words.ts';
@@ -36,25 +36,55 @@ export function PlanDrawing() {
           {isAfter ? <path class="added-lines" d={regionsPath(change.added.regions)} fill="url(#added-hatch)" /> : null}
         </>
       )}
+      {shapes.receptors.map((r) =>
+        r.kind === 'area' ? (
+          <Thing key={r.id} kind="receptor" id={r.id} d={pathOf(r.outline)} name={receptorName(r)} look="area" />
+        ) : null,
+      )}
       {shapes.solids.map((solid) => (
-        <BlockOutline key={solid.id} solid={solid} />
+        <Thing
+          key={solid.id}
+          kind="block"
+          id={solid.id}
+          d={pathOf(solid.outline)}
+          name={`${solid.name || solid.id}, ${words.massing.standing[solid.standing]}`}
+          look={`block ${solid.standing} ${stands(solid.standing, stage.value) ? '' : 'gone'}`}
+        />
       ))}
+      {shapes.receptors.map((r) =>
+        r.kind === 'point' ? (
+          <Thing key={r.id} kind="receptor" id={r.id} d={ringPath(r.at)} name={receptorName(r)} look="point" />
+        ) : null,
+      )}
     </svg>
   );
 }
 
-function BlockOutline({ solid }: { solid: Solid }) {
-  const isStanding = stands(solid.standing, stage.value);
-  const classes = ['block', solid.standing, isStanding ? '' : 'gone', isSelected('block', solid.id) ? 'chosen' : ''];
-  const pick = (): void => select('block', solid.id);
+const POINT_m = 0.7;
+
+/** A small ring round a point. */
+const ringPath = ([x, y]: readonly [number, number, number]): string =>
+  `M${x - POINT_m} ${-y}a${POINT_m} ${POINT_m} 0 1 0 ${2 * POINT_m} 0a${POINT_m} ${POINT_m} 0 1 0 ${-2 * POINT_m} 0Z`;
+
+type ThingProps = {
+  readonly kind: Picked;
+  readonly id: string;
+  readonly d: string;
+  readonly name: string;
+  readonly look: string;
+};
+
+/** Something of the plan that can be picked. */
+function Thing({ kind, id, d, name, look }: ThingProps) {
+  const pick = (): void => select(kind, id);
   return (
     // biome-ignore lint/a11y/useSemanticElements: a button cannot stand inside a drawing
     <path
-      class={classes.join(' ')}
-      d={pathOf(solid.outline)}
+      class={`${look} ${isSelected(kind, id) ? 'chosen' : ''}`}
+      d={d}
       role="button"
       tabIndex={0}
-      aria-label={`${solid.name || solid.id}, ${words.massing.standing[solid.standing]}`}
+      aria-label={name}
       onClick={pick}
       onKeyDown={(event) => {
         if (event.key === 'Enter' || event.key === ' ') pick();
