@@ -57,10 +57,11 @@ function Ramp({ scale }: { scale: MapScale }) {
   const stops = Array.from({ length: STOPS + 1 }, (_, i) => colour(i / STOPS));
   const x = (v: number): number => INSET + (isSigned ? (v + most) / (2 * most) : v / most) * (WIDTH - 2 * INSET);
   const writeTo = (places: number, v: number): string => (isSigned ? signed(v, places) : fixed(v, places));
-  // Where they would touch every other number is left out, never the one in the middle of a signed scale.
+  // Where they would touch, every other number is left out; of a signed scale never an end nor the middle.
   const isRoomy = ticks.length * (writeTo(decimals, most).length + 2) * 7 < WIDTH;
-  const kept = isSigned ? ((ticks.length - 1) / 2) % 2 : 0;
-  const isShown = (i: number): boolean => isRoomy || i % 2 === kept;
+  const last = ticks.length - 1;
+  const isShown = (i: number): boolean =>
+    isRoomy || (isSigned && last % 4 !== 0 ? i === 0 || i === last / 2 || i === last : i % 2 === 0);
   const isWhole = ticks.every((v, i) => !isShown(i) || Math.abs(v - Math.round(v)) < 1e-9);
   const write = (v: number): string => writeTo(isWhole ? 0 : decimals, v);
   return (

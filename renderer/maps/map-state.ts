@@ -103,11 +103,15 @@ export const isMapStale = computed(
 /** Maps of the scheme on the desk, the latest last. */
 let remembered: ShownMap[] = [];
 const MOST_REMEMBERED = 6;
-/** A map that took less than this is worked out again by itself when the scheme changes [ms]. */
-const QUICK_ms = 1500;
+/** A map of no more cells and days than these takes a moment: it is worked out again by itself when the scheme changes. */
+const QUICK_CELLS = 10_000;
+const QUICK_DAYS = 4;
+const isQuick = (): boolean => {
+  const dates = mapDates.peek();
+  return cells.peek() <= QUICK_CELLS && 'dates' in dates && dates.dates.length <= QUICK_DAYS;
+};
 /** How long the desk waits for more changes before it begins a map [ms]. */
 const PAUSE_ms = 250;
-let lastTook_ms = 0;
 /** The question that is being worked out. */
 let inHand: { readonly key: string; readonly scheme: Scheme; readonly hasEnergy: boolean } | null = null;
 let waiting: ReturnType<typeof setTimeout> | null = null;
@@ -160,7 +164,6 @@ export async function workOutMap(): Promise<void> {
   };
   const meanOf = when.peek() === 'turns' ? turningDays.peek().length : 1;
   mapJob.value = { kind: 'working', done: 0, total: 0 };
-  const began = performance.now();
   let shown: ShownMap | null = null;
   const outcome = await runMap(of, ask, {
     onBegin: (picture) => {
@@ -177,7 +180,6 @@ export async function workOutMap(): Promise<void> {
   arrivals.value++;
   mapJob.value = outcome.kind === 'failed' ? outcome : { kind: outcome.kind === 'done' ? 'idle' : 'stopped' };
   if (outcome.kind !== 'done' || shown === null) return;
-  lastTook_ms = performance.now() - began;
   remembered = [...remembered, shown].slice(-MOST_REMEMBERED);
 }
 
@@ -199,7 +201,7 @@ export function followMaps(): void {
       const isEdit = last !== null && last !== of && map.peek()?.key === key;
       last = of;
       if (waiting !== null) clearTimeout(waiting);
-      if (isEdit && lastTook_ms > QUICK_ms) return;
+      if (isEdit && !isQuick()) return;
       waiting = setTimeout(() => void workOutMap(), PAUSE_ms);
     });
   });

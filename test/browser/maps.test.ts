@@ -120,6 +120,28 @@ describe.skipIf(executable === null)('maps, receptors and their year', () => {
     expect(await page.locator('.map-key .progress').count()).toBe(0);
   });
 
+  test('a map that took long is marked out of date by an edit, and made anew when it is asked for', async () => {
+    await page.getByText('solar energy', { exact: true }).click();
+    await page.getByLabel('Cells of').selectOption('0.5');
+    await page.getByText('cells of about 0.5 m').waitFor();
+    await settled();
+    const place = page.locator('.top-bar').getByRole('button', { name: /Europe\/London/ });
+    await place.click();
+    await page.getByLabel('Latitude').fill('50');
+    await button(page, 'Set place').click();
+    await key().getByText('The scheme has changed since.').waitFor();
+    await page.keyboard.press('Control+z');
+    await expect.poll(() => key().getByText('The scheme has changed since.').count(), PATIENT).toBe(0);
+    await page.keyboard.press('Control+Shift+z');
+    await key().getByRole('button', { name: 'Work it out again' }).click();
+    await page.locator('.map-key progress').waitFor();
+    await page.getByText('sun hours', { exact: true }).click();
+    await page.getByLabel('Cells of').selectOption('2');
+    await page.keyboard.press('Control+z');
+    await page.getByText('cells of about 2 m').waitFor();
+    await settled();
+  });
+
   test('an edit works a quick map out again: at 60° north the June day is longer', async () => {
     const most = async (): Promise<number> =>
       Number(/most ([\d.]+) h/.exec((await page.locator('.map-spread').textContent()) ?? '')?.[1]);
