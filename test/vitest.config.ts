@@ -1,7 +1,17 @@
+import { readdirSync, readFileSync } from 'node:fs';
 import { resolve } from 'node:path';
 import { defineConfig } from 'vitest/config';
 
 const root = resolve(import.meta.dirname, '..');
+const seeds = resolve(root, 'test/helpers/property-seed.ts');
+
+/** Files of core that hold property tests: they run once with their fixed seeds, and once with a seed of this run's own. */
+const properties = readdirSync(resolve(root, 'test/core'), { recursive: true, encoding: 'utf8' })
+  .map((file) => `test/core/${file.replaceAll('\\', '/')}`)
+  .filter(
+    (file) => file.endsWith('.test.ts') && readFileSync(resolve(root, file), 'utf8').includes("from 'fast-check'"),
+  );
+const freshSeed = process.env['SHADEWRIGHT_SEED'] || String(Date.now() % 2 ** 31);
 
 /** One config, one project a folder; `npm test` runs them all. Browser tests share one built program and one Chromium. */
 export default defineConfig({
@@ -11,7 +21,23 @@ export default defineConfig({
     projects: [
       {
         root,
-        test: { name: 'core', include: ['test/core/**/*.test.ts', 'test/repro/**/*.test.ts'], testTimeout: 60_000 },
+        test: {
+          name: 'core',
+          include: ['test/core/**/*.test.ts', 'test/repro/**/*.test.ts'],
+          setupFiles: [seeds],
+          env: { SHADEWRIGHT_SEED: '' },
+          testTimeout: 60_000,
+        },
+      },
+      {
+        root,
+        test: {
+          name: 'fresh',
+          include: properties,
+          setupFiles: [seeds],
+          env: { SHADEWRIGHT_SEED: freshSeed },
+          testTimeout: 60_000,
+        },
       },
       {
         root,

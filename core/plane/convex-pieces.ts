@@ -47,18 +47,24 @@ function withoutIdleCorners(ring: Ring): Ring {
 /** Ear clipping over corner numbers. Of the ears at hand the best shaped goes first, to avoid needles. */
 function triangles(corners: Ring): [number, number, number][] {
   const left = corners.map((_, i) => i);
-  const shapes = left.map((_, k) => earShape(corners, left, k));
+  let near = FLAT;
+  let shapes = left.map((_, k) => earShape(corners, left, k, near));
   const out: [number, number, number][] = [];
   while (left.length > 3) {
     let best = 0;
     for (let k = 1; k < left.length; k++) if ((shapes[k] as number) > (shapes[best] as number)) best = k;
-    if ((shapes[best] as number) < 0) break; // a self-crossing outline cannot be cut further; the loader refuses those
+    if ((shapes[best] as number) < 0) {
+      if (near === 0) break; // a self-crossing outline cannot be cut further; the loader refuses those
+      near = 0;
+      shapes = left.map((_, k) => earShape(corners, left, k, near));
+      continue;
+    }
     out.push(around(left, best));
     left.splice(best, 1);
     shapes.splice(best, 1);
     // Cutting off an ear changes the angle at its two neighbours and nowhere else.
     for (const k of [best % left.length, (best + left.length - 1) % left.length])
-      shapes[k] = earShape(corners, left, k);
+      shapes[k] = earShape(corners, left, k, near);
   }
   if (left.length === 3) out.push(around(left, 1));
   return out.filter(([a, b, c]) => shapeOf(corners[a] as Point, corners[b] as Point, corners[c] as Point) > FLAT);
@@ -70,15 +76,20 @@ const around = (left: readonly number[], k: number): [number, number, number] =>
   left[(k + 1) % left.length] as number,
 ];
 
-/** The shape of the triangle at place k, or −1 when it is no ear. */
-function earShape(corners: Ring, left: readonly number[], k: number): number {
+/**
+ * The shape of the triangle at place k, or −1 when it is no ear. A corner on the cut, up to rounding, forbids it: what is left
+ * would touch itself there, and in the end could not be cut.
+ * @param near  how far outside a corner still counts as on the triangle, as a share of its squared longest side
+ */
+function earShape(corners: Ring, left: readonly number[], k: number, near: number): number {
   const [a, b, c] = around(left, k);
   const [pa, pb, pc] = [corners[a], corners[b], corners[c]] as [Point, Point, Point];
   if (turn(pa, pb, pc) < 0) return -1;
+  const least = -near * Math.max(square(pa, pb), square(pb, pc), square(pc, pa));
   for (const i of left) {
     if (i === a || i === b || i === c) continue;
     const p = corners[i] as Point;
-    if (turn(pa, pb, p) >= 0 && turn(pb, pc, p) >= 0 && turn(pc, pa, p) >= 0) return -1;
+    if (turn(pa, pb, p) >= least && turn(pb, pc, p) >= least && turn(pc, pa, p) >= least) return -1;
   }
   return shapeOf(pa, pb, pc);
 }

@@ -6,6 +6,7 @@ import { loadScheme } from '../../../core/scheme/load.ts';
 import { migrate } from '../../../core/scheme/migrate.ts';
 import type { Scheme } from '../../../core/scheme/schema.ts';
 import { writeScheme } from '../../../core/scheme/write.ts';
+import { seedOf } from '../../helpers/property-seed.ts';
 
 const demo = (name: string) =>
   readFileSync(resolve(import.meta.dirname, `../../../assets/demo/${name}.scheme.json`), 'utf8');
@@ -53,7 +54,7 @@ describe('a sound file', () => {
   test('the order of keys in the file does not matter to the text written', () => {
     const shuffled = fc.sample(
       fc.shuffledSubarray(Object.keys(tannery()), { minLength: Object.keys(tannery()).length }),
-      { numRuns: 5, seed: 1 },
+      { numRuns: 5, seed: seedOf(1) },
     );
     const plain = loadScheme(demo('tannery-yard'));
     for (const order of shuffled) {

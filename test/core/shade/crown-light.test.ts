@@ -92,6 +92,30 @@ describe('crowns before the sun', () => {
     expect(minutes(dated(1), [over, { ...over, id: 'U' }])).toBeCloseTo(0.64 * free, 6);
   });
 
+  it('give no number that is not one from places in, on, under and at the rim of a crown', () => {
+    const trees = [tree('T', [0, 0, 6], 4, 4, 0.5), tree('U', [0, 0, 6], 4, 4, 0), tree('V', [4, 0, 0], 2, 1, 0.2)];
+    const places: Vec3[] = [
+      [0, 0, 6],
+      [0, 0, 2],
+      [0, 0, 10],
+      [4, 0, 6],
+      [4, 0, 0],
+      [0, -4, 1],
+      [6, 0, 0],
+      [4, 0, 1],
+    ];
+    for (const normal of [UP, SOUTH, [0, 0, -1], [1, 0, 0]] as Vec3[]) {
+      const o = makeOccluders([], [], trees);
+      const r = facing(places, normal);
+      const { minutes, beam } = sunOnReceptors(o, sortLight(base, columnsFor(suns.length)), r);
+      const sky = domeOnReceptors(o, rays, r, 'overcast');
+      const ground = groundOnReceptors(mirroredOccluders([], [], trees), rays, r);
+      for (const column of [minutes, beam, sky, ground])
+        expect(column.every((v) => v >= 0 && Number.isFinite(v))).toBe(true);
+      expect(minutes[0]).toBe(0);
+    }
+  });
+
   it('give the same bytes in whatever order the trees stand in the scheme', () => {
     const trees = [0.3, 0.7, 0.1].map((t, i) => tree(`T${i}`, [3 * i, -6, 5], 4, 4, t));
     const run = (order: readonly Tree[]): number =>

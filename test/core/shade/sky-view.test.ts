@@ -96,6 +96,20 @@ describe('under an overhang (closed forms, methods dossier 5)', () => {
 });
 
 describe('level points in the open middle of things', () => {
+  it('on the middle line of a long street the sky view factor is cos Θ, tan Θ = height over half the width', () => {
+    // An infinite canyon, two parallel walls: e.g. Johnson & Watson 1984, J. Climate Appl. Meteor. 23, 329 (from memory).
+    for (const [height, width] of [
+      [5, 20],
+      [10, 20],
+      [20, 20],
+      [30, 12],
+    ] as const) {
+      const side = (s: number) => box(`S${s}`, 0, s * (width / 2 + 5), 40_000, 10, 0, height);
+      const { skyView } = pointSky(makeOccluders([side(1), side(-1)], []), [0, 0, 0], UP);
+      expect(skyView).toBeCloseTo(Math.cos(Math.atan2(height, width / 2)), 4);
+    }
+  });
+
   it('a round court of 40 walls at 30° keeps cos² 30° = 0.75 of an even dome', () => {
     // Level: ∫ over altitudes above γ of sin γ cos γ, doubled: cos²γ. Walls tangent to the circle, so a little more is hidden at the corners.
     const sides = 40;
