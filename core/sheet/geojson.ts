@@ -1,18 +1,17 @@
 import type { Model } from '../form/model.ts';
 import type { Region } from '../plane/region.ts';
-import type { Point, Ring } from '../plane/vec.ts';
+import type { Point } from '../plane/vec.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import type { GroundShadow } from '../shade/shadow.ts';
 import { DEG } from '../units/angle.ts';
 import { utc } from './data-tables.ts';
+import { cutAtDateLine, type DateLine, type Lonlat } from './date-line.ts';
 import type { ShadowMoment } from './shadow-moment.ts';
 
 /** World Geodetic System 1984: half the equator's diameter [m] and the flattening. NGA.STND.0036, 2014, table 3.1. */
 const A = 6378137;
 const F = 1 / 298.257223563;
 const E2 = F * (2 - F);
-
-type Lonlat = readonly [longitude: number, latitude: number];
 
 /**
  * From the drawing to longitude and latitude: the plane that touches the WGS84 ellipsoid at the site, where the drawing's
@@ -40,7 +39,7 @@ export function toLonlat(site: Scheme['site']): (p: Point) => Lonlat {
     const r = Math.hypot(x, y);
     const beta = Math.atan2(z * A, r * b);
     const latitude = Math.atan2(z + (E2 / (1 - E2)) * b * Math.sin(beta) ** 3, r - E2 * A * Math.cos(beta) ** 3);
-    // Longitude runs on past 180° rather than jump, so that a shape by the date line stays whole.
+    // Longitude runs on past 180° rather than jump; `cutAtDateLine` parts what crosses it.
     const dLambda = Math.atan2(y * cl - x * sl, x * cl + y * sl);
     return [round(site.longitude + dLambda / DEG), round(latitude / DEG)];
   };
@@ -57,16 +56,32 @@ type Feature = {
 };
 export type FeatureCollection = { readonly type: 'FeatureCollection'; readonly features: readonly Feature[] };
 
-/** A ring closed by its first corner. Outer rings run anticlockwise and holes clockwise, as RFC 7946 wants them, already in the drawing. */
-const closed = (ring: Ring, lonlat: (p: Point) => Lonlat): readonly Lonlat[] => {
-  const out = ring.map(lonlat);
-  const [first] = out;
-  return first ? [...out, first] : out;
-};
+/** Sites further from ±180° than this [°] cannot reach it: coordinates of a drawing end at 100 km. */
+const FAR_deg = 30;
 
-const multi = (regions: readonly Region[], lonlat: (p: Point) => Lonlat): Geometry => ({
+/**
+ * Where the meridian of 180° runs through the drawing; null where it is far away. In the plane that touches the globe at the site
+ * a point e east and n north has tan Δλ = e / (R − n sin φ), R being the site's distance from the axis: a straight line for one Δλ.
+ */
+function dateLineOf(site: Scheme['site']): DateLine | null {
+  const at = site.longitude >= 0 ? 180 : -180;
+  const away = at - site.longitude;
+  if (Math.abs(away) > FAR_deg) return null;
+  const phi = site.latitude * DEG;
+  const turn = site.north * DEG;
+  const radius = (A / Math.sqrt(1 - E2 * Math.sin(phi) ** 2) + site.elevation) * Math.cos(phi);
+  const point = (north: number): Point => {
+    const east = Math.tan(away * DEG) * (radius - north * Math.sin(phi));
+    return [east * Math.cos(turn) + north * Math.sin(turn), north * Math.cos(turn) - east * Math.sin(turn)];
+  };
+  // Run so that what lies past the line is on its right.
+  return { at, along: at === 180 ? [point(-1000), point(1000)] : [point(1000), point(-1000)] };
+}
+
+/** Outer rings run anticlockwise and holes clockwise, as RFC 7946 wants them, already in the drawing. */
+const multi = (regions: readonly Region[], lonlat: (p: Point) => Lonlat, line: DateLine | null): Geometry => ({
   type: 'MultiPolygon',
-  coordinates: regions.map((r) => [closed(r.outer, lonlat), ...r.holes.map((h) => closed(h, lonlat))]),
+  coordinates: cutAtDateLine(regions, lonlat, line),
 });
 
 /**
@@ -75,10 +90,11 @@ const multi = (regions: readonly Region[], lonlat: (p: Point) => Lonlat): Geomet
  */
 export function shadowGeoJson(scheme: Scheme, model: Model, moments: readonly ShadowMoment[]): FeatureCollection {
   const lonlat = toLonlat(scheme.site);
+  const line = dateLineOf(scheme.site);
   const features: Feature[] = model.solids.map((s) => ({
     type: 'Feature',
     properties: { kind: 'block', id: s.id, name: s.name, standing: s.standing, base_m: s.base_m, top_m: s.top_m },
-    geometry: multi([{ outer: s.outline, holes: [] }], lonlat),
+    geometry: multi([{ outer: s.outline, holes: [] }], lonlat, line),
   }));
   for (const m of moments) {
     if (!m.change) continue;
@@ -94,7 +110,7 @@ export function shadowGeoJson(scheme: Scheme, model: Model, moments: readonly Sh
           sunAltitude_deg: Number(m.altitude_deg.toFixed(4)),
           area_m2: Number(shadow.area_m2.toFixed(3)),
         },
-        geometry: multi(shadow.regions, lonlat),
+        geometry: multi(shadow.regions, lonlat, line),
       });
     }
   }

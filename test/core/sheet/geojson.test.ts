@@ -47,6 +47,41 @@ describe('longitude and latitude', () => {
   });
 });
 
+describe('at the date line', () => {
+  const yard = demoScheme('tannery-yard');
+  // Sites whose middle lies some metres on this side of 180° or on the other, north and south, with the drawing turned.
+  test.each([
+    [179.99995, -17, 0],
+    [-179.99995, -17, 0],
+    [179.9999, 66, 40],
+    [-179.9999, 51.6, -120],
+    [180, 0, 12],
+  ])('what crosses 180° at %d°, %d° is cut there and loses nothing (RFC 7946, 3.1.9)', (longitude, latitude, north) => {
+    const scheme = { ...yard, site: { ...yard.site, longitude, latitude, north, zone: 'UTC' } };
+    const times = longitude > 0 ? ['00:00', '22:00'] : ['23:00', '01:00'];
+    const json = shadowGeoJson(scheme, modelOf(scheme), shadowMoments(scheme, modelOf(scheme), ['2025-03-21'], times));
+    expect(check(JSON.stringify(json)).type).toBe('FeatureCollection');
+    let sides = 0;
+    for (const f of json.features) {
+      const rings = f.geometry.coordinates.flat();
+      const longitudes = rings.flat().map((p) => p[0]);
+      for (const lon of longitudes) expect(Math.abs(lon)).toBeLessThanOrEqual(180);
+      for (const polygon of f.geometry.coordinates) {
+        const signs = new Set(polygon.flat().flatMap((p) => (Math.abs(p[0]) === 180 ? [] : [Math.sign(p[0])])));
+        expect(signs.size).toBeLessThanOrEqual(1);
+        for (const p of polygon.flat()) if (signs.size > 0) expect(signs).toContain(Math.sign(p[0]));
+        for (const ring of polygon) expect(ring.at(-1)).toEqual(ring[0]);
+      }
+      if (new Set(longitudes.map(Math.sign)).size > 1) sides++;
+      const stated = f.properties['area_m2'];
+      if (typeof stated !== 'number' || stated < 1) continue;
+      const area = rings.reduce((s, r) => s + areaOnEllipsoid(r), 0);
+      expect(Math.abs(area / stated - 1)).toBeLessThan(0.001);
+    }
+    expect(sides).toBeGreaterThan(0);
+  });
+});
+
 describe('shadows as GeoJSON', () => {
   const scheme = demoScheme('tannery-yard');
   const moments = shadowMoments(scheme, modelOf(scheme), ['2025-03-21', '2025-12-21'], ['10:00', '12:00', '20:00']);
