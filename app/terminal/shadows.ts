@@ -8,13 +8,14 @@ import { clock, dates, whole } from './option-values.ts';
 import { readScheme } from './read-input.ts';
 import { Refusal } from './refusal.ts';
 import { type SheetFiles, writeSheetFiles } from './sheet-files.ts';
-import { paperOptions } from './sheet.ts';
+import { paperOptions, seasonsOption } from './sheet.ts';
 import { shadowText } from './shadow-text.ts';
 import { today } from './today.ts';
 import { writeOutput } from './write-output.ts';
 
 type Options = SheetFiles & {
   readonly on?: readonly string[];
+  readonly seasons?: true;
   readonly from: number;
   readonly to: number;
   readonly every: number;
@@ -38,7 +39,9 @@ Without --scale: the largest standard scale that fits. Several pages in SVG or P
 
 Examples:
   shadewright shadows scheme.json --pdf study.pdf --from 09:00 --to 15:00 --every 180
+  shadewright shadows scheme.json --seasons --paper A2 --pdf year.pdf
   shadewright shadows scheme.json --on 2025-06-21 --every 60 --pdf june.pdf --scale 500 --paper A2
+  shadewright shadows scheme.json --on 2025-06-21 --scale '1"=40 ft' --units imperial --pdf june.pdf
   shadewright shadows scheme.json --on 2025-03-21,2025-12-21 --geojson shadows.geojson --csv`;
 
 const timeOf = (minute: number): string =>
@@ -89,6 +92,7 @@ export const declareShadows: Declare = (program, screen) => {
     .description('work out where shadows fall before and after, and draw the study to scale')
     .argument('<SCHEME>', 'the scheme file')
     .option('--on <DATES>', 'civil dates with commas between them', dates)
+    .addOption(seasonsOption())
     .addOption(new Option('--from <TIME>', 'first time of the clock').argParser(clock).default(540, '09:00'))
     .addOption(new Option('--to <TIME>', 'last time of the clock').argParser(clock).default(1020, '17:00'))
     .addOption(new Option('--every <MIN>', 'between the times').argParser(whole(1, 720, 'minutes')).default(60))
@@ -102,13 +106,12 @@ export const declareShadows: Declare = (program, screen) => {
       if (options.json && options.csv)
         throw new Refusal('shadewright shadows: both --json and --csv were given; give one of the two.');
       const { scheme } = await readScheme(path, screen);
-      const [{ buildModel }, { shadowMoments }, { DEFAULT_YEAR }] = await Promise.all([
+      const [{ buildModel }, { shadowMoments }, { seasonDates, usualDates }] = await Promise.all([
         import('../../core/form/build-model.ts'),
         import('../../core/study/shadow-moments.ts'),
-        import('../../core/scheme/schema.ts'),
+        import('../../core/study/sheet-document.ts'),
       ]);
-      const year = scheme.year ?? DEFAULT_YEAR;
-      const on = options.on ?? [`${year}-03-21`, `${year}-06-21`, `${year}-12-21`];
+      const on = options.on ?? (options.seasons ? seasonDates(scheme) : usualDates(scheme));
       const times = timesOf(options);
       if (on.length * times.length > MOST_MOMENTS) {
         throw new Refusal(

@@ -11,6 +11,7 @@ import { today } from './today.ts';
 
 type Options = SheetFiles & {
   readonly on?: readonly string[];
+  readonly seasons?: true;
   readonly at?: readonly string[];
   readonly window?: string;
   readonly block?: string;
@@ -54,7 +55,10 @@ const blank = (kind: string): SheetSet => ({
 
 /** The sheet set that is meant: one of the scheme's by its id, or a blank one of a kind; then what the options say. */
 async function setOf(scheme: Scheme, what: string, options: Options): Promise<SheetSet> {
-  const { isSheetKind, SHEET_KINDS } = await import('../../core/study/sheet-kinds.ts');
+  const [{ isSheetKind, SHEET_KINDS }, { seasonDates }] = await Promise.all([
+    import('../../core/study/sheet-kinds.ts'),
+    import('../../core/study/sheet-document.ts'),
+  ]);
   const saved = scheme.sheets.find((s) => s.id === what);
   if (saved === undefined && !isSheetKind(what)) {
     const ids = scheme.sheets.map((s) => s.id);
@@ -66,7 +70,7 @@ async function setOf(scheme: Scheme, what: string, options: Options): Promise<Sh
   const { on, at, window, block, paper, portrait, perPage } = options;
   return {
     ...from,
-    ...(on === undefined ? {} : { dates: [...on] }),
+    ...(options.seasons ? { dates: [...seasonDates(scheme)] } : on === undefined ? {} : { dates: [...on] }),
     ...(at === undefined ? {} : { times: [...at] }),
     ...(window === undefined ? {} : { window }),
     ...(block === undefined ? {} : { block }),
@@ -78,6 +82,10 @@ async function setOf(scheme: Scheme, what: string, options: Options): Promise<Sh
     ...(options.number === undefined ? {} : { number: options.number }),
   };
 }
+
+/** The dates of the year that a shadow study is most often asked for. */
+export const seasonsOption = (): Option =>
+  new Option('--seasons', 'both solstices and both equinoxes of the scheme’s year').conflicts('on');
 
 /** Options that say how a drawing lies on paper, shared by the commands that draw. */
 export const paperOptions = (command: Command): Command =>
@@ -102,6 +110,7 @@ export const declareSheet: Declare = (program, screen) => {
     .argument('<WHAT>', 'kind of sheet, or id of a sheet set of the scheme')
     .argument('<SCHEME>', 'the scheme file')
     .option('--on <DATES>', 'civil dates with commas between them', dates)
+    .addOption(seasonsOption())
     .option('--at <TIMES>', 'times of the clock with commas between them', times)
     .option('--window <ID>', 'window of a section or of a shading mask')
     .option('--block <ID>', 'block whose facades are drawn')

@@ -14,9 +14,10 @@ export const NEVER = '#d9d5cc';
 /** Parts of the colour scale, at most. */
 const TICKS = 8;
 
-/** The end of the colour scale: the first tick at or above the highest value. @param values one list a map */
+/** The end of the colour scale: the first tick at or above the highest value; 0 where there is no sun at all. @param values one list a map */
 export function scaleEnd(values: readonly Float64Array[]): number {
-  const highest = Math.max(1e-6, ...values.map((v) => v.reduce((a, b) => Math.max(a, b), 0)));
+  const highest = Math.max(0, ...values.map((v) => v.reduce((a, b) => Math.max(a, b), 0)));
+  if (highest === 0) return 0;
   const step = niceStep(highest, TICKS);
   return Math.ceil(highest / step - 1e-9) * step;
 }
@@ -25,6 +26,11 @@ export function scaleEnd(values: readonly Float64Array[]): number {
 export function colourKey(x: Mm, top: Mm, width: Mm, most: number, quantity: Quantity): Piece {
   const marks: Mark[] = [words(`${quantity.name} [${quantity.unit}]`, x, top + READ * 0.75, { face: 'semibold' })];
   const y = top + leading(READ) + 0.6;
+  const none = (at: Mm): readonly Mark[] => [
+    rect(x, at, 11, 4, { fill: NEVER, stroke: FINE }),
+    words('none in the period', x + 14, at + 3.3),
+  ];
+  if (most === 0) return { marks: [...marks, ...none(y)], height: leading(READ) + 7 };
   const n = 50;
   for (let i = 0; i < n; i++)
     marks.push(rect(x + (width * i) / n, y, width / n + (i < n - 1 ? 0.06 : 0), 5, { fill: cividis((i + 0.5) / n) }));
@@ -36,6 +42,6 @@ export function colourKey(x: Mm, top: Mm, width: Mm, most: number, quantity: Qua
     const anchor = v === 0 ? 'start' : v > most - step / 2 ? 'end' : 'middle';
     marks.push(words(fixed(v, step >= 1 ? 0 : step >= 0.1 ? 1 : 2), at, y + 10, { anchor }));
   }
-  marks.push(rect(x, y + 13, 11, 4, { fill: NEVER, stroke: FINE }), words('none in the period', x + 14, y + 16.3));
+  marks.push(...none(y + 13));
   return { marks, height: leading(READ) + 20 };
 }

@@ -32,10 +32,10 @@ const row = (f: Finding, moments: boolean): readonly Cell[] => [
 
 /** Every room under every limit, one table a limit, worst first. */
 export function roomsPages(flow: Flow, report: Report): void {
-  const { findings, limitSet } = report.result;
+  const { findings, limitSet, rooms } = report.result;
   flow.turn('All rooms');
   if (findings.length === 0) {
-    flow.say('No room has a window whose sun could be worked out.');
+    flow.say(rooms.length === 0 ? 'The scheme has no rooms.' : 'No room has a window whose sun could be worked out.');
     return;
   }
   for (const [id, name] of limitsOf(findings, limitSet)) {

@@ -134,6 +134,7 @@ function counts(flow: Flow, report: Report): void {
 
 function verdictSentence(report: Report): string {
   const { findings, limitSet } = report.result;
+  if (report.result.rooms.length === 0) return 'The scheme has no rooms, so that there is nothing to check.';
   const [first] = limitSet ? findings : highest(findings);
   if (!first) return 'No room has a window whose sun could be worked out.';
   if (!limitSet) return `Highest: room ${first.room} ${first.roomName}. ${first.reason}`;

@@ -45,10 +45,7 @@ export function chooseScale(
     level: 'error',
     code: 'scale-too-large',
     place: '',
-    message: `the scheme is ${large}, which at ${asked === null ? 'every standard scale' : scaleWords(asked, units)} is larger than the ${room} that ${what} leaves for each diagram`,
-    cure:
-      fitting === null
-        ? 'take larger paper or draw fewer diagrams on a page'
-        : `${scaleWords(fitting, units)} fits, or take larger paper or fewer diagrams on a page`,
+    message: `the scheme is ${large}, which at ${asked === null ? 'every standard scale' : scaleWords(asked, units)} is larger than the ${room} that ${what} leaves for a drawing`,
+    cure: fitting === null ? 'take larger paper' : `${scaleWords(fitting, units)} fits, or take larger paper`,
   };
 }

@@ -72,8 +72,8 @@ function layOut(
     else if (best === null || scale < best.scale) best = { grid, scale };
     if (best && (input.scale !== null || best.scale <= SMALL_SCALE)) break;
   }
-  if (best === null && why === null) throw new Error('a layout was tried for no number of diagrams');
-  return best ?? (why as Fault);
+  if (best !== null || why === null) return best as NonNullable<typeof best>;
+  return (input.perPage ?? 1) > 1 ? { ...why, cure: `${why.cure} or fewer diagrams on a page` } : why;
 }
 
 type Box = Model['extent'];

@@ -16,7 +16,8 @@ import { sunPathDocument } from '../sheet/sun-path.ts';
 import { shortHash } from '../sheet/title-block.ts';
 import { waysToPass } from '../sizing/ways-to-pass.ts';
 import type { Ways } from '../sizing/ways.ts';
-import { isDate } from '../sun/civil.ts';
+import { civilOf, isDate } from '../sun/civil.ts';
+import { seasons } from '../sun/seasons.ts';
 import { sunPath } from '../sun/sun-path.ts';
 import { checkScheme } from './check.ts';
 import type { CheckResult } from './check-result.ts';
@@ -51,6 +52,14 @@ export const USUAL_TIMES = ['09:00', '12:00', '15:00'] as const;
 export function usualDates(scheme: Scheme): readonly string[] {
   const year = scheme.year ?? DEFAULT_YEAR;
   return [`${year}-03-21`, `${year}-06-21`, `${year}-12-21`];
+}
+
+/** Solstices and equinoxes of the scheme's year, each on the date that the site's calendar shows at that instant. */
+export function seasonDates(scheme: Scheme): readonly string[] {
+  const at = seasons(scheme.year ?? DEFAULT_YEAR);
+  return [at.marchEquinox_ms, at.juneSolstice_ms, at.septemberEquinox_ms, at.decemberSolstice_ms].map(
+    (instant_ms) => civilOf(instant_ms, scheme.site.zone).date,
+  );
 }
 
 /**
