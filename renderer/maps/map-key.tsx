@@ -13,17 +13,7 @@ import { words } from '../words/words.ts';
 import { spreadOf } from './map-picture.ts';
 import type { MapScale } from './map-scale.ts';
 import { mapScale, shownMap } from './map-shown.ts';
-import {
-  arrivals,
-  isMapStale,
-  map,
-  mapJob,
-  quantity,
-  side,
-  stopWorkingOut,
-  surfaces,
-  workOutMap,
-} from './map-state.ts';
+import { arrivals, isMapStale, mapJob, quantity, side, stopWorkingOut, surfaces, workOutMap } from './map-state.ts';
 import { mapNumber } from './map-words.ts';
 
 const WIDTH = 232;
@@ -164,6 +154,6 @@ function MapWork() {
     </p>
   );
   if (job.kind === 'stopped') return again(words.maps.stopped, words.maps.goOn);
-  if (isMapStale.value && map.value?.scheme !== scheme.value) return again(words.maps.stale, words.maps.again);
+  if (isMapStale.value) return again(words.maps.stale, words.maps.again);
   return <p class="soft">{words.maps.hint}</p>;
 }

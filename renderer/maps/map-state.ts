@@ -95,21 +95,20 @@ export const map = signal<ShownMap | null>(null);
 export const mapJob = signal<JobState>({ kind: 'idle' });
 /** Counts what arrives, so that drawings know that the numbers of the map have grown. */
 export const arrivals = signal(0);
-/** Whether the map on the drawing belongs to a scheme or a question that is no longer the one on the desk. */
-export const isMapStale = computed(
-  () => map.value !== null && (map.value.scheme !== scheme.value || map.value.key !== asked.value),
-);
+/** A map of no more cells and days than these takes a moment: it is worked out again by itself when the scheme changes. */
+const QUICK_CELLS = 10_000;
+const QUICK_DAYS = 4;
+const isQuick = computed(() => {
+  const dates = mapDates.value;
+  return cells.value <= QUICK_CELLS && 'dates' in dates && dates.dates.length <= QUICK_DAYS;
+});
+
+/** Whether the map on the drawing is one of an earlier scheme, and stays so until it is asked for again. */
+export const isMapStale = computed(() => map.value !== null && map.value.scheme !== scheme.value && !isQuick.value);
 
 /** Maps of the scheme on the desk, the latest last. */
 let remembered: ShownMap[] = [];
 const MOST_REMEMBERED = 6;
-/** A map of no more cells and days than these takes a moment: it is worked out again by itself when the scheme changes. */
-const QUICK_CELLS = 10_000;
-const QUICK_DAYS = 4;
-const isQuick = (): boolean => {
-  const dates = mapDates.peek();
-  return cells.peek() <= QUICK_CELLS && 'dates' in dates && dates.dates.length <= QUICK_DAYS;
-};
 /** How long the desk waits for more changes before it begins a map [ms]. */
 const PAUSE_ms = 250;
 /** The question that is being worked out. */
@@ -201,7 +200,7 @@ export function followMaps(): void {
       const isEdit = last !== null && last !== of && map.peek()?.key === key;
       last = of;
       if (waiting !== null) clearTimeout(waiting);
-      if (isEdit && !isQuick()) return;
+      if (isEdit && !isQuick.peek()) return;
       waiting = setTimeout(() => void workOutMap(), PAUSE_ms);
     });
   });

@@ -207,6 +207,39 @@ describe.skipIf(executable === null)('maps, receptors and their year', () => {
     await expect.poll(() => page.locator('.tag:not(.reading)').textContent(), PATIENT).toMatch(/No\. 14, ground floor/);
   });
 
+  test('the smooth picture at rest gives way to a new size and a new theme, and takes them on', async () => {
+    const still = page.locator('canvas.at-rest');
+    // Where the graphics card smooths edges itself there is no such picture.
+    const isUsed = (): Promise<boolean> => still.evaluate((canvas) => !(canvas as HTMLCanvasElement).hidden);
+    await page.waitForTimeout(1500);
+    if (!(await isUsed())) return;
+    const corner = (): Promise<readonly number[]> =>
+      still.evaluate((element) => {
+        const from = element as HTMLCanvasElement;
+        const one = Object.assign(document.createElement('canvas'), { width: 1, height: 1 });
+        const context = one.getContext('2d', { willReadFrequently: true });
+        context?.drawImage(from, 4, from.height >> 1, 1, 1, 0, 0, 1, 1);
+        return [...(context?.getImageData(0, 0, 1, 1).data ?? [])].slice(0, 3);
+      });
+    const width = (): Promise<number> => still.evaluate((canvas) => (canvas as HTMLCanvasElement).width);
+    const shown = await width();
+    await page.setViewportSize({ width: 1100, height: 720 });
+    await expect.poll(width, PATIENT).toBe(shown - 180);
+    const ground = (): Promise<string> =>
+      page.evaluate(() => getComputedStyle(document.documentElement).getPropertyValue('--ground').trim());
+    const hex = async (): Promise<string> =>
+      `#${(await corner()).map((v) => v.toString(16).padStart(2, '0')).join('')}`;
+    await expect.poll(hex, PATIENT).toBe(await ground());
+    await button(page, /dark theme/).click();
+    expect(await ground()).toBe('#292c30');
+    await expect.poll(hex, PATIENT).toBe('#292c30');
+    expect(await isUsed()).toBe(true);
+    // The drawing under it is still the one that is picked from.
+    const { x, y } = await bench();
+    await page.mouse.click(x, y);
+    await page.locator('.tag', { hasText: 'bench by the lime' }).waitFor();
+  });
+
   test('nothing was complained of: no error, no warning, no refusal by the content policy', () => {
     expect(desk.complaints).toEqual([]);
   });
