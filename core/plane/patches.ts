@@ -30,6 +30,8 @@ export class Patches {
   #box = new Float64Array(4 * 64);
   /** Five an edge of the outline to cut with: start x, y, run x, y, and how near counts as on it. */
   #edge = new Float64Array(5 * MOST_CUT_CORNERS);
+  /** Corners of the part inside, of the patch last split. */
+  #inner = 0;
   /** Signed distances of the corners of one patch from one cutting line, times the line's length. */
   #side = new Float64Array(256);
 
@@ -93,7 +95,7 @@ export class Patches {
     for (let i = this.count - 1; i >= 0; i--) {
       const box = this.#box;
       const k = 4 * i;
-      if (box[k]! >= x1 || box[k + 2]! <= x0 || box[k + 1]! >= y1 || box[k + 3]! <= y0) continue;
+      if (box[k + 1]! >= y1 || box[k + 3]! <= y0 || box[k]! >= x1 || box[k + 2]! <= x0) continue;
       if (!(this.#weight[i]! > 0)) continue;
       if (edges < 0) edges = this.#readEdges(corners, (x1 - x0 + y1 - y0) / 2);
       if (edges < 3) return;
@@ -181,12 +183,18 @@ export class Patches {
     const weight = this.#weight[i]!;
     let first = this.#first[i]!;
     let size = this.#size[i]!;
+    const x0 = this.#box[4 * i]!;
+    const y0 = this.#box[4 * i + 1]!;
+    const x1 = this.#box[4 * i + 2]!;
+    const y1 = this.#box[4 * i + 3]!;
     for (let e = 0; e < 5 * edges; e += 5) {
       const ax = edge[e]!;
       const ay = edge[e + 1]!;
       const ex = edge[e + 2]!;
       const ey = edge[e + 3]!;
       const near = edge[e + 4]!;
+      // The corner of the patch's box that lies furthest out: where even that is inside, so is the patch.
+      if (ex * ((ex > 0 ? y0 : y1) - ay) - ey * ((ey > 0 ? x1 : x0) - ax) >= -near) continue;
       const x = this.#x;
       const y = this.#y;
       const side = this.#side;
@@ -205,47 +213,72 @@ export class Patches {
         return;
       }
       this.#reserve(2 * size + 4);
-      const start = this.#used;
-      const middle = this.#split(first, size, near, -1);
-      this.#add(start, middle - start, weight);
-      size = this.#split(first, size, near, 1) - middle;
-      first = middle;
+      const split = this.#split(first, size, near);
+      this.#add(this.#used, split, weight);
+      first = this.#used + size + 2;
+      size = this.#inner;
+      this.#used = first + size;
     }
     this.#settle(i, first, size, weight * factor, keep);
   }
 
   /**
-   * Write the part of a patch on one side of the line that `#side` was measured from, and return where it ends.
-   * @param sense  1 for the part inside (left of the line), −1 for the part outside; corners on the line go to both
+   * Write both parts of a patch that the line crosses from which `#side` was measured: the part outside (right of it) from the
+   * end of what is used on, the part inside (left of it) from `size + 2` places further on. Corners on the line go to both.
+   * @returns how many corners the part outside has; `#inner` says how many the part inside has
    */
-  #split(first: number, size: number, near: number, sense: 1 | -1): number {
+  #split(first: number, size: number, near: number): number {
     const x = this.#x;
     const y = this.#y;
     const side = this.#side;
-    let end = this.#used;
-    let previous = size - 1;
-    let before = sense * side[previous]!;
+    const outStart = this.#used;
+    const inStart = outStart + size + 2;
+    let out = outStart;
+    let inn = inStart;
+    let px = x[first + size - 1]!;
+    let py = y[first + size - 1]!;
+    let before = side[size - 1]!;
     for (let k = 0; k < size; k++) {
-      const here = sense * side[k]!;
-      if ((here > near && before < -near) || (here < -near && before > near)) {
-        // Always from the inner corner to the outer one, so that both parts get the very same crossing.
-        const inner = side[k]! > 0 ? k : previous;
-        const outer = inner === k ? previous : k;
-        const t = side[inner]! / (side[inner]! - side[outer]!);
-        x[end] = x[first + inner]! + t * (x[first + outer]! - x[first + inner]!);
-        y[end] = y[first + inner]! + t * (y[first + outer]! - y[first + inner]!);
-        end++;
+      const here = side[k]!;
+      const cx = x[first + k]!;
+      const cy = y[first + k]!;
+      if (here > near) {
+        if (before < -near) {
+          // Always from the inner corner to the outer one, whichever way round.
+          const t = here / (here - before);
+          const qx = cx + t * (px - cx);
+          const qy = cy + t * (py - cy);
+          x[out] = qx;
+          y[out++] = qy;
+          x[inn] = qx;
+          y[inn++] = qy;
+        }
+        x[inn] = cx;
+        y[inn++] = cy;
+      } else if (here < -near) {
+        if (before > near) {
+          const t = before / (before - here);
+          const qx = px + t * (cx - px);
+          const qy = py + t * (cy - py);
+          x[out] = qx;
+          y[out++] = qy;
+          x[inn] = qx;
+          y[inn++] = qy;
+        }
+        x[out] = cx;
+        y[out++] = cy;
+      } else {
+        x[out] = cx;
+        y[out++] = cy;
+        x[inn] = cx;
+        y[inn++] = cy;
       }
-      if (here >= -near) {
-        x[end] = x[first + k]!;
-        y[end] = y[first + k]!;
-        end++;
-      }
-      previous = k;
+      px = cx;
+      py = cy;
       before = here;
     }
-    this.#used = end;
-    return end;
+    this.#inner = inn - inStart;
+    return out - outStart;
   }
 
   /** Patch i becomes what the cut left of it, or goes; the last patch then takes its place. */
