@@ -6,6 +6,8 @@ import { Drawer } from './drawer.tsx';
 import { Findings } from './findings/findings.tsx';
 import { Massing } from './massing/massing.tsx';
 import { PlaceDialog } from './place/place-dialog.tsx';
+import { isSheetsShown } from './sheets/sheet-state.ts';
+import { PrintRoot, SheetsView } from './sheets/sheets-view.tsx';
 import { AboutButton, AboutDialog } from './start/about-dialog.tsx';
 import { FaultsDialog } from './start/faults-dialog.tsx';
 import { Start } from './start/start.tsx';
@@ -60,7 +62,7 @@ export function Desk() {
     <>
       <div class="desk">
         <TopBar />
-        {scheme.value === null ? <Start /> : <OpenDesk />}
+        {scheme.value === null ? <Start /> : isSheetsShown.value ? <SheetsView /> : <OpenDesk />}
         <Cautions>
           <AboutButton />
         </Cautions>
@@ -70,6 +72,7 @@ export function Desk() {
       <UnsavedDialog />
       <PlaceDialog />
       <AboutDialog />
+      <PrintRoot />
       {isOver.value ? <div class="drop-cover">{words.drop}</div> : null}
     </>
   );

@@ -14,6 +14,7 @@ export const CHANNELS = [
   'scheme:discard',
   'export:write',
   'sheet:pdf',
+  'sheet:png',
   'weather:open',
   'place:search',
 ] as const satisfies readonly Channel[];

@@ -104,6 +104,11 @@ export const contract = {
   },
   /** PDF pages from a drawing document (core/sheet): fonts and pdfkit live with the host. */
   'sheet:pdf': { ask: z.object({ document: z.unknown() }), reply: z.object({ bytes: Bytes }) },
+  /** The first page of a drawing document as an image, with the fonts of the PDF. */
+  'sheet:png': {
+    ask: z.object({ document: z.unknown(), dpi: z.number().min(36).max(1200) }),
+    reply: z.object({ bytes: Bytes }),
+  },
 } as const;
 
 export type Channel = keyof typeof contract;

@@ -5,6 +5,7 @@ import { listDemos, readDemo } from './demos.ts';
 import { findPlaces } from './find-places.ts';
 import { GrantedFiles } from './granted-files.ts';
 import { readBounded } from './read-bounded.ts';
+import { imageDocument } from './print-document.ts';
 import { RecentFiles } from './recent-files.ts';
 import { Recovery } from './recovery.ts';
 import { saveAtomic } from './save-atomic.ts';
@@ -135,6 +136,7 @@ export function fileHost({ kind, version, dataDir, startWith, example, dialogs, 
     },
     'place:search': ({ text }) => findPlaces(text),
     'sheet:pdf': async ({ document }) => ({ bytes: await pdf(document) }),
+    'sheet:png': async ({ document, dpi }) => ({ bytes: await imageDocument(document, dpi) }),
   };
   return { handlers, openChosen };
 }

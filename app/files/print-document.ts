@@ -11,3 +11,16 @@ export async function printDocument(value: unknown): Promise<Uint8Array> {
   const { writePdf } = await import('../pdf/write-pdf.ts');
   return writePdf(document, { created: CREATED });
 }
+
+/** The first page of a drawing that a page sent, as PNG. @throws {HostFault} when it has not the form of one, or is too large */
+export async function imageDocument(value: unknown, dpi: number): Promise<Uint8Array> {
+  const [page] = checkedDocument(value)?.pages ?? [];
+  if (!page) throw new HostFault('bad-request', 'this is not a drawing that can be made an image');
+  const { writePng } = await import('../pdf/write-png.ts');
+  try {
+    return await writePng(page, dpi);
+  } catch (error) {
+    if (error instanceof RangeError) throw new HostFault('bad-request', error.message);
+    throw error;
+  }
+}

@@ -8,14 +8,11 @@ import { writeScheme } from '../scheme/write.ts';
 import type { Document } from '../sheet/drawing.ts';
 import { findingsReport } from '../sheet/findings-report.ts';
 import { lightReport } from '../sheet/light-report.ts';
-import { worstOfRooms } from '../sheet/report-summary.ts';
 import { sectionSheet } from '../sheet/section-sheet.ts';
 import { shadowSheet } from '../sheet/shadow-sheet.ts';
 import type { SheetUnits } from '../sheet/sheet-units.ts';
 import { sunPathDocument } from '../sheet/sun-path.ts';
 import { shortHash } from '../sheet/title-block.ts';
-import { waysToPass } from '../sizing/ways-to-pass.ts';
-import type { Ways } from '../sizing/ways.ts';
 import { civilOf, isDate } from '../sun/civil.ts';
 import { seasons } from '../sun/seasons.ts';
 import { sunPath } from '../sun/sun-path.ts';
@@ -27,6 +24,7 @@ import type { Pulse } from './job.ts';
 import { exposurePlanSheet, facadeSheet } from './map-sheets.ts';
 import { isSheetKind, SHEET_KINDS } from './sheet-kinds.ts';
 import { shadowMoment } from './shadow-moments.ts';
+import { waysOfOver } from './ways-of-over.ts';
 import { windowMask } from './window-mask.ts';
 
 /** What a sheet is told beyond the scheme and its own settings. */
@@ -250,12 +248,8 @@ async function findings({ scheme, context, facts, pulse }: SheetJob): Promise<Ch
   const memo = createCheckMemo(Math.max(600, scheme.windows.length));
   const result = context.check ?? (await checkScheme(scheme, limitSet, context.notes ?? [], pulse, { memo }));
   if (result === null) return null;
-  const over = worstOfRooms(result.findings).filter((f) => f.verdict === 'over');
-  const ways: Ways[] = [];
-  for (const finding of limitSet === null ? [] : over) {
-    if (limitSet !== null) ways.push(waysToPass(scheme, limitSet, finding.room, finding, memo));
-    if ((await pulse(ways.length, over.length)) === 'stop') return null;
-  }
+  const ways = await waysOfOver(result, scheme, memo, pulse);
+  if (ways === null) return null;
   const { drawn, language } = facts;
   const value = findingsReport(result, scheme, { drawn, ways, ...(language === undefined ? {} : { language }) });
   return { ok: true, value, notes: [] };

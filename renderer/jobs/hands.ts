@@ -20,6 +20,7 @@ export const hands = {
   sensitivity: new WorkerHand(make),
   sizing: new WorkerHand(make),
   compare: new WorkerHand(make),
+  sheets: new WorkerHand(make),
   year: new WorkerHand(make),
   /** The light of neighbours and amenity areas. */
   light: new WorkerHand(make),

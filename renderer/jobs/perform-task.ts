@@ -19,6 +19,7 @@ import { isZone } from '../../core/sun/civil.ts';
 import { zoneDisagrees, zoneOfPlace } from '../../core/sun/zone-of-place.ts';
 import { Held, type Performer, type Performers } from './performer.ts';
 import { roomTasks } from './room-tasks.ts';
+import { sheetTasks } from './sheet-tasks.ts';
 import type { DayEnds, Task, Work } from './tasks.ts';
 
 /** Step of the year strip's clock [min]. */
@@ -33,6 +34,7 @@ function dayEnds(scheme: Scheme, date: string): DayEnds {
 
 const performers = (): Performers => ({
   ...roomTasks(),
+  ...sheetTasks(),
   read: async ({ text }) => loadScheme(text),
   write: async ({ scheme }) => writeScheme(scheme),
   moment: async ({ instant_ms, date, wantModel }, held) => {
@@ -68,9 +70,6 @@ const performers = (): Performers => ({
     const text = fileText(bytes);
     const facts = weatherFacts(text, mapping, observer, zone);
     return { hash: bytesHash(bytes), facts, guess: facts.ok ? null : guessTable(text) };
-  },
-  shadowSheet: async () => {
-    throw new Error('not here yet');
   },
 });
 

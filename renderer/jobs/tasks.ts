@@ -1,7 +1,7 @@
 import type { Model, Stage } from '../../core/form/model.ts';
 import type { Checked, Fault } from '../../core/scheme/fault.ts';
 import type { ShadingMask } from '../../core/shade/sky-view-mask.ts';
-import type { Scheme } from '../../core/scheme/schema.ts';
+import type { Scheme, SheetSet } from '../../core/scheme/schema.ts';
 import type { LimitSet } from '../../core/limits/limit-set.ts';
 import type { SkyModel } from '../../core/sky/transpose.ts';
 import type { Finding } from '../../core/limits/finding.ts';
@@ -94,8 +94,10 @@ export type Tasks = {
   findingsFile: { ask: { result: CheckResult; form: 'csv' | 'json' }; answer: string };
   /** The findings on paper. `drawn`: the date of the drawing, YYYY-MM-DD. */
   report: { ask: { result: CheckResult; drawn: string }; answer: Checked<Document> };
-  /** The shadows of a date on paper, hour by hour while the sun is up. */
-  shadowSheet: { ask: { date: string; drawn: string }; answer: Checked<Document> };
+  /** Any sheet, from its settings. `drawn`: the date of the drawing, YYYY-MM-DD. */
+  sheet: { ask: { set: SheetSet; drawn: string; notes: readonly Fault[] }; answer: Checked<Document> };
+  /** The shadows of a study as a table, or as shapes in longitude and latitude. */
+  shadowFile: { ask: { set: SheetSet; form: 'csv' | 'geojson' }; answer: string };
 };
 
 export type Task = keyof Tasks;

@@ -5,12 +5,13 @@ import type { Document } from '../../core/sheet/drawing.ts';
 import { host } from '../bridge/host.ts';
 import { hands } from '../jobs/hands.ts';
 import type { Outcome } from '../jobs/worker-hand.ts';
-import { file, scheme } from '../state/document.ts';
 import { tell } from '../state/messages.ts';
-import { civil } from '../state/moment.ts';
 import { check, isCheckStale } from '../state/studies.ts';
 import { Menu } from '../ui/menu.tsx';
 import { words } from '../words/words.ts';
+import { openSheets } from './sheet-state.ts';
+import { today } from './today.ts';
+import { stem } from './write-sheets.ts';
 
 const isSetting = signal(false);
 
@@ -22,6 +23,7 @@ export function Exports() {
       text={words.bar.print}
       off={isSetting.value}
       items={[
+        { text: words.sheets.open, onPress: openSheets },
         {
           text: words.sheets.report,
           off: !canReport,
@@ -40,19 +42,10 @@ export function Exports() {
           tip: canReport ? undefined : words.sheets.needsCheck,
           onPress: () => void writeFindings('json'),
         },
-        { text: words.sheets.shadow, onPress: () => void printShadowSheet() },
       ]}
     />
   );
 }
-
-/** Today on the reader's calendar: the date of the drawing. */
-const today = (): string => {
-  const now = new Date();
-  return new Date(now.getTime() - now.getTimezoneOffset() * 60_000).toISOString().slice(0, 10);
-};
-
-const stem = (): string => (file.peek()?.name ?? words.bar.untitled).replace(/(\.scheme)?\.json$/i, '');
 
 async function printReport(): Promise<void> {
   const found = check.peek();
@@ -73,15 +66,6 @@ async function writeFindings(form: 'csv' | 'json'): Promise<void> {
   const written = await host['export:write']({ name: `${stem()} findings.${form}`, bytes });
   if (!written.ok) return tell('failure', words.sheets.failed(what, written.message));
   if (written.value !== null) tell('news', words.sheets.written(written.value.name));
-}
-
-async function printShadowSheet(): Promise<void> {
-  const ask = { date: civil.peek().date, drawn: today() };
-  await print(
-    words.sheets.shadow,
-    `${stem()} shadows ${ask.date}.pdf`,
-    hands.clerk.run('shadowSheet', ask, scheme.peek()),
-  );
 }
 
 async function print(what: string, name: string, work: Promise<Outcome<Checked<Document>>>): Promise<void> {

@@ -16,12 +16,15 @@ type Props = {
   readonly paint?: Paint;
   /** Width on the screen [px]; absent: as wide as there is room. */
   readonly width?: number;
+  /** At true size instead: for the printer. */
+  readonly millimetres?: boolean;
 };
 
 /** One page of the drawing description as live elements, so that it needs no style of its own and its text is text. */
-export function DrawingView({ page, label, paint = asPrinted, width }: Props) {
+export function DrawingView({ page, label, paint = asPrinted, width, millimetres = false }: Props) {
   const { width: wide, height: high, marks } = page;
-  const size = width === undefined ? {} : { width, height: (width * high) / wide };
+  const onScreen = width === undefined ? {} : { width, height: (width * high) / wide };
+  const size = millimetres ? { width: `${wide}mm`, height: `${high}mm` } : onScreen;
   const drawn = useMemo(() => <Marks marks={marks} paint={paint} />, [marks, paint]);
   return (
     <svg class="drawing" viewBox={`0 0 ${wide} ${high}`} role="img" aria-label={label} {...size}>

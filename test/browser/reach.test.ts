@@ -69,6 +69,14 @@ describe.skipIf(executable === null).each([
     await page.getByRole('button', { name: 'Sun map' }).click();
   });
 
+  test('the sheets', async () => {
+    await page.getByRole('button', { name: 'Sheets' }).click();
+    await page.getByRole('menuitem', { name: 'Draw and print sheets…' }).click();
+    await page.locator('.sheets-scroller:not(.stale) .sheet-page svg text').first().waitFor();
+    expect(await barriers(page)).toEqual([]);
+    await page.getByRole('button', { name: 'Back to the scheme' }).click();
+  });
+
   test('the dialogs', async () => {
     await page.locator('.facts-button').click();
     await page.getByRole('dialog').waitFor();

@@ -1,6 +1,7 @@
 import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, test } from 'vitest';
+import { CHANNELS } from '../../../app/contract/channels.ts';
 import { contract } from '../../../app/contract/host.ts';
 import { browserClient, desktopClient } from '../../helpers/host-client.ts';
 import { tempFolder } from '../../helpers/temp-folder.ts';
@@ -131,4 +132,26 @@ describe.each([
     for (const key of ['', '../up', 'a/b', 'x'.repeat(81)])
       expect(await ask('scheme:autosave', { key, name: 'n', bytes: bytes('x') })).toMatchObject({ ok: false });
   });
+
+  test('makes an image of a page at the resolution asked for, and refuses what is no drawing or too large', async () => {
+    const { dataDir } = folderWithScheme();
+    const ask = await client({ dataDir });
+    const page = { width: 50.8, height: 25.4, title: 'a page', marks: [] };
+    const document = { title: '', author: '', language: 'en-GB', pages: [page] };
+    const { bytes: png } = (await ask('sheet:png', { document, dpi: 100 })).value as { bytes: Uint8Array };
+    const view = new DataView(png.buffer, png.byteOffset);
+    expect([view.getUint32(16), view.getUint32(20)]).toEqual([200, 100]);
+    const huge = { ...document, pages: [{ ...page, width: 4000, height: 4000 }] };
+    for (const [not, dpi] of [
+      [{}, 100],
+      [{ ...document, pages: [] }, 100],
+      [huge, 600],
+    ] as const)
+      expect(await ask('sheet:png', { document: not, dpi })).toMatchObject({ ok: false, code: 'bad-request' });
+    expect(await ask('sheet:png', { document, dpi: 10 })).toMatchObject({ ok: false, code: 'bad-request' });
+  });
+});
+
+test('the page and the preload know every channel there is', () => {
+  expect([...CHANNELS].toSorted()).toEqual(Object.keys(contract).toSorted());
 });
