@@ -1,11 +1,10 @@
 import { useId, useState } from 'preact/hooks';
-import { DEFAULT_YEAR, type Scheme, type SheetSet } from '../../core/scheme/schema.ts';
+import type { Scheme, SheetSet } from '../../core/scheme/schema.ts';
 import { standardScales } from '../../core/sheet/scale.ts';
 import { scaleWords } from '../../core/sheet/sheet-units.ts';
 import { needsWindow, SHEET_KINDS, type SheetKind } from '../../core/study/sheet-kinds.ts';
-import { usualDates, USUAL_TIMES } from '../../core/study/sheet-document.ts';
-import { civilOf, isDate } from '../../core/sun/civil.ts';
-import { seasons } from '../../core/sun/seasons.ts';
+import { seasonDates, USUAL_TIMES, usualDates } from '../../core/study/sheet-document.ts';
+import { isDate } from '../../core/sun/civil.ts';
 import { words } from '../words/words.ts';
 import { change, draft } from './sheet-state.ts';
 
@@ -126,14 +125,6 @@ const listed = (typed: string): readonly string[] =>
     .split(/[,;\s]+/)
     .map((part) => part.trim())
     .filter((part) => part !== '');
-
-/** The solstice and equinox days of the scheme's year, on the calendar of its site. */
-function seasonDates(scheme: Scheme): readonly string[] {
-  const s = seasons(scheme.year ?? DEFAULT_YEAR);
-  return [s.marchEquinox_ms, s.juneSolstice_ms, s.septemberEquinox_ms, s.decemberSolstice_ms].map(
-    (ms) => civilOf(ms, scheme.site.zone).date,
-  );
-}
 
 function Dates({ scheme, set }: SetProps & { scheme: Scheme }) {
   const given = set.dates.length > 0 ? set.dates : usualDates(scheme);
