@@ -33,7 +33,7 @@ export function colourKey(x: Mm, top: Mm, width: Mm, most: number, quantity: Qua
   if (most === 0) return { marks: [...marks, ...none(y)], height: leading(READ) + 7 };
   const n = 50;
   for (let i = 0; i < n; i++)
-    marks.push(rect(x + (width * i) / n, y, width / n + (i < n - 1 ? 0.06 : 0), 5, { fill: cividis((i + 0.5) / n) }));
+    marks.push(rect(x + (width * i) / n, y, width / n + (i < n - 1 ? 0.5 : 0), 5, { fill: cividis((i + 0.5) / n) }));
   marks.push(rect(x, y, width, 5, { stroke: FINE }));
   const step = niceStep(most, TICKS);
   for (let v = 0; v <= most + 1e-9; v += step) {

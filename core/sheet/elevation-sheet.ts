@@ -12,7 +12,7 @@ import { finishPages, type PaperName, type Rect } from './paper.ts';
 import { standardScales } from './scale.ts';
 import { type SheetUnits, scaleWords } from './sheet-units.ts';
 import { scaleBar } from './scale-marks.ts';
-import { DRAWING_CAUTIONS, pageAreas, placeNotes } from './side-panel.ts';
+import { DRAWING_CAUTIONS, type Note, pageAreas, placeNotes, withNotes } from './side-panel.ts';
 import { shortHash, titleBlock } from './title-block.ts';
 
 export type ElevationSheetInput = {
@@ -75,12 +75,10 @@ export function elevationSheet(input: ElevationSheetInput): Checked<Document> {
   const most = scaleEnd(maps.map((m) => m.value));
   const count = 1 + Math.max(...placed.map((p) => p.page));
   const title = `Facades, ${input.quantity.name}`;
+  const beside = panel(input, areas.panel[0] as Rect, scale, most);
   const contents = Array.from({ length: count }, (_, page) => ({
     title,
-    marks: [
-      ...placed.filter((p) => p.page === page).flatMap((p) => drawn(p, input, scale, most)),
-      ...panel(input, areas.panel[0] as Rect, scale, most),
-    ],
+    marks: [...placed.filter((p) => p.page === page).flatMap((p) => drawn(p, input, scale, most)), ...beside.marks],
   }));
   return {
     ok: true,
@@ -89,7 +87,12 @@ export function elevationSheet(input: ElevationSheetInput): Checked<Document> {
       title: [scheme.title, title].filter((t) => t !== '').join(' – '),
       author: scheme.author,
       language: input.language ?? 'en-GB',
-      pages: finishPages(contents, paper, true, `scheme ${shortHash(input.hash)}, drawn ${input.drawn}`),
+      pages: finishPages(
+        withNotes(contents, beside.spill, paper, true),
+        paper,
+        true,
+        `scheme ${shortHash(input.hash)}, drawn ${input.drawn}`,
+      ),
     },
   };
 }
@@ -142,7 +145,12 @@ function drawn(p: Placed, input: ElevationSheetInput, scale: number, most: numbe
   ];
 }
 
-function panel(input: ElevationSheetInput, area: Rect, scale: number, most: number): readonly Mark[] {
+function panel(
+  input: ElevationSheetInput,
+  area: Rect,
+  scale: number,
+  most: number,
+): { readonly marks: readonly Mark[]; readonly spill: readonly Note[] } {
   const bar = scaleBar(area.x, area.y, area.width - 4, scale, input.paper, input.units);
   const key = colourKey(area.x, area.y + bar.height + 3, area.width, most, input.quantity);
   const facts = {
@@ -167,10 +175,6 @@ function panel(input: ElevationSheetInput, area: Rect, scale: number, most: numb
     { heading: DRAWING_CAUTIONS.heading, lines: [CAUTIONS[0] as string] },
   ];
   const placed = placeNotes(notes, [{ x: area.x, y: area.y + bar.height + key.height + 6, end: foot - 2 }], area.width);
-  return [
-    ...bar.marks,
-    ...key.marks,
-    ...placed.marks,
-    ...titleBlock(area.x, foot, area.width, input.scheme, facts).marks,
-  ];
+  const block = titleBlock(area.x, foot, area.width, input.scheme, facts);
+  return { marks: [...bar.marks, ...key.marks, ...placed.marks, ...block.marks], spill: placed.spill };
 }

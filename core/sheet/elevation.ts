@@ -26,8 +26,8 @@ export type ElevationMap = {
 const BUILT_OVER = '#ffffff';
 const BUILT_OVER_HATCH: Hatch = { angle_deg: 45, spacing: 3, stroke: { colour: SOFT, width: 0.13 } };
 
-/** Cells reach this far under their neighbours, so that viewers show no seams between them. */
-const UNDER: Mm = 0.06;
+/** Cells reach this far under their neighbours, more than a dot of a screen, so that viewers show no seams between them. */
+const UNDER: Mm = 0.5;
 /** Figures on the map stand at least so far apart. */
 const FIGURE_SPACE: Mm = 11;
 

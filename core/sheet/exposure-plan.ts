@@ -17,7 +17,7 @@ import { inFrame, onPage, type PlanView } from './plan-view.ts';
 import { chooseScale } from './scale.ts';
 import { type SheetUnits, scaleWords } from './sheet-units.ts';
 import { northPoint, scaleBar } from './scale-marks.ts';
-import { type Areas, DRAWING_CAUTIONS, pageAreas, placeNotes } from './side-panel.ts';
+import { type Areas, DRAWING_CAUTIONS, type Note, pageAreas, placeNotes, withNotes } from './side-panel.ts';
 import { shortHash, titleBlock } from './title-block.ts';
 
 /** The ground and the roofs that stand at one stage. */
@@ -108,6 +108,7 @@ export function exposurePlan(input: ExposurePlanInput): Checked<Document> {
   const [x0, y0, x1, y1] = model.extent;
   const view: PlanView = { frame, scale, centre: [(x0 + x1) / 2, (y0 + y1) / 2] };
   const most = scaleEnd(stages.flatMap((s) => [s.ground.value, ...s.roofs.map((r) => r.value)]));
+  const beside = panel(input, areas, scale, most);
   const contents = stages.map((stage) => {
     const title = stages.length > 1 ? `${PLAN_SUBJECT}, ${STAGE_WORDS[stage.stage]}` : PLAN_SUBJECT;
     return {
@@ -117,7 +118,7 @@ export function exposurePlan(input: ExposurePlanInput): Checked<Document> {
           .marks,
         ...stageMarks(view, model, stage, most),
         rect(frame.x, frame.y, frame.width, frame.height, { stroke: FRAME }),
-        ...panel(input, areas, scale, most),
+        ...beside.marks,
       ],
     };
   });
@@ -128,7 +129,12 @@ export function exposurePlan(input: ExposurePlanInput): Checked<Document> {
       title: [input.scheme.title, PLAN_SUBJECT].filter((t) => t !== '').join(' – '),
       author: input.scheme.author,
       language: input.language ?? 'en-GB',
-      pages: finishPages(contents, paper, landscape, `scheme ${shortHash(input.hash)}, drawn ${input.drawn}`),
+      pages: finishPages(
+        withNotes(contents, beside.spill, paper, landscape),
+        paper,
+        landscape,
+        `scheme ${shortHash(input.hash)}, drawn ${input.drawn}`,
+      ),
     },
   };
 }
@@ -178,7 +184,14 @@ function groundFigures(view: PlanView, standing: Model['solids'], map: LevelMap,
         ([px, py]) => contains(map.outline, px, py) && !standing.some((s) => contains(s.outline, px, py)),
       );
       const [x, y] = onPage(view, at);
-      if (isFree)
+      // A figure that would lie half on dark and half on pale is left out: in neither ink could all of it be read.
+      const reach = Math.ceil(half / grid.cell_m[0]);
+      const across = value.subarray(
+        row * grid.across + Math.max(0, column - reach),
+        row * grid.across + column + reach + 1,
+      );
+      const inks = new Set([...across].filter((n) => !Number.isNaN(n)).map((n) => inkOn(n, most)));
+      if (isFree && inks.size === 1)
         marks.push(words(text, x, y + SMALL * 0.35, { size: SMALL, anchor: 'middle', colour: inkOn(v, most) }));
     }
   }
@@ -236,7 +249,12 @@ function nearest(map: LevelMap, at: Point): number {
   return value;
 }
 
-function panel(input: ExposurePlanInput, areas: Areas, scale: number, most: number): readonly Mark[] {
+function panel(
+  input: ExposurePlanInput,
+  areas: Areas,
+  scale: number,
+  most: number,
+): { readonly marks: readonly Mark[]; readonly spill: readonly Note[] } {
   const first = areas.panel[0] as Rect;
   const last = areas.panel.at(-1) as Rect;
   const radius = 8;
@@ -281,5 +299,6 @@ function panel(input: ExposurePlanInput, areas: Areas, scale: number, most: numb
     DRAWING_CAUTIONS,
   ];
   const placed = placeNotes(notes, slots, first.width);
-  return [...marks, ...placed.marks, ...titleBlock(last.x, foot, last.width, input.scheme, facts).marks];
+  const block = titleBlock(last.x, foot, last.width, input.scheme, facts);
+  return { marks: [...marks, ...placed.marks, ...block.marks], spill: placed.spill };
 }

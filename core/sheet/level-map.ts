@@ -69,7 +69,7 @@ export function levelMapMarks(view: PlanView, map: LevelMap, most: number): read
     runs: runs.filter((r) => r.length > 2),
     closed: true,
     fill,
-    stroke: { colour: fill, width: 0.08 },
+    stroke: { colour: fill, width: 0.3 },
   }));
   return [base, ...cells];
 }

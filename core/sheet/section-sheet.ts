@@ -19,7 +19,7 @@ import { chooseScale } from './scale.ts';
 import { dimension, type SheetUnits, scaleWords } from './sheet-units.ts';
 import { scaleBar } from './scale-marks.ts';
 import { sectionDrawing, sectionReach } from './section-drawing.ts';
-import { DRAWING_CAUTIONS, type Note, pageAreas, placeNotes } from './side-panel.ts';
+import { DRAWING_CAUTIONS, type Note, pageAreas, placeNotes, withNotes } from './side-panel.ts';
 import { shortHash, titleBlock } from './title-block.ts';
 import { litOnGlass, type WindowSection, windowSection } from './window-section.ts';
 
@@ -103,7 +103,8 @@ export function sectionSheet(input: SectionSheetInput): Checked<Document> {
     marks.push(rect(frame.x, frame.y, frame.width, frame.height, { stroke: FRAME }));
     marks.push(...sunCaption(sun, scheme.site.zone, frame));
   });
-  marks.push(...panel(input, areas.panel[0] as Rect, scale, window, room));
+  const beside = panel(input, areas.panel[0] as Rect, scale, window, room);
+  marks.push(...beside.marks);
   const title = `Section through window ${window.id}`;
   return {
     ok: true,
@@ -112,7 +113,12 @@ export function sectionSheet(input: SectionSheetInput): Checked<Document> {
       title: [scheme.title, title].filter((t) => t !== '').join(' – '),
       author: scheme.author,
       language: input.language ?? 'en-GB',
-      pages: finishPages([{ title, marks }], paper, true, `scheme ${shortHash(input.hash)}, drawn ${input.drawn}`),
+      pages: finishPages(
+        withNotes([{ title, marks }], beside.spill, paper, true),
+        paper,
+        true,
+        `scheme ${shortHash(input.hash)}, drawn ${input.drawn}`,
+      ),
     },
   };
 }
@@ -175,7 +181,7 @@ function panel(
   scale: number,
   window: WindowForm,
   room: RoomForm,
-): readonly Mark[] {
+): { readonly marks: readonly Mark[]; readonly spill: readonly Note[] } {
   const bar = scaleBar(area.x, area.y, area.width - 4, scale, input.paper, input.units);
   const facts = {
     subject: `Section, window ${window.id}`,
@@ -211,5 +217,6 @@ function panel(
     },
   ];
   const placed = placeNotes(notes, [{ x: area.x, y: area.y + bar.height + 4, end: foot - 2 }], area.width);
-  return [...bar.marks, ...placed.marks, ...titleBlock(area.x, foot, area.width, input.scheme, facts).marks];
+  const block = titleBlock(area.x, foot, area.width, input.scheme, facts);
+  return { marks: [...bar.marks, ...placed.marks, ...block.marks], spill: placed.spill };
 }

@@ -2,7 +2,7 @@ import type { Model } from '../form/model.ts';
 import type { Checked, Fault } from '../scheme/fault.ts';
 import { diagram } from './diagram.ts';
 import type { Document, Mark, Mm } from './drawing.ts';
-import { contentRect, finishPages, type Rect } from './paper.ts';
+import { finishPages, type Rect } from './paper.ts';
 import { blockLabels } from './plan.ts';
 import type { PlanView } from './plan-view.ts';
 import { chooseScale } from './scale.ts';
@@ -10,7 +10,7 @@ import { type Grid, gridOf } from './shadow-grid.ts';
 import { type ShadowSheetInput, SUBJECT } from './shadow-input.ts';
 import type { ShadowMoment } from './shadow-moment.ts';
 import { shadowPanel } from './shadow-panel.ts';
-import { type Areas, notesPage, pageAreas } from './side-panel.ts';
+import { type Areas, pageAreas, withNotes } from './side-panel.ts';
 import { shortHash } from './title-block.ts';
 
 /**
@@ -128,10 +128,5 @@ function pages(
     const days = [...new Set(on.map((m) => m.text.split(',')[0] as string))];
     contents.push({ title: `${SUBJECT}: ${days.join(', ')}`, marks: [...marks, ...panel.marks] });
   }
-  if (panel.spill.length > 0)
-    contents.push({
-      title: 'Method and cautions',
-      marks: notesPage(contentRect(input.paper, input.landscape), panel.spill),
-    });
-  return contents;
+  return withNotes(contents, panel.spill, input.paper, input.landscape);
 }

@@ -78,8 +78,19 @@ export function placeNotes(
   return { marks, spill };
 }
 
+/** The pages of a sheet, and one more for the notes that found no room beside the drawing: none is ever dropped. */
+export const withNotes = (
+  pages: readonly { readonly title: string; readonly marks: readonly Mark[] }[],
+  spill: readonly Note[],
+  paper: PaperName,
+  landscape: boolean,
+): readonly { readonly title: string; readonly marks: readonly Mark[] }[] =>
+  spill.length === 0
+    ? pages
+    : [...pages, { title: 'Method and cautions', marks: notesPage(contentRect(paper, landscape), spill) }];
+
 /** Notes on a page of their own. */
-export function notesPage(rect: Rect, notes: readonly Note[]): readonly Mark[] {
+function notesPage(rect: Rect, notes: readonly Note[]): readonly Mark[] {
   const width = Math.min(rect.width, 150);
   const marks: Mark[] = [];
   let y = rect.y;

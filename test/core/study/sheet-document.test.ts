@@ -47,6 +47,20 @@ for (const name of ['tannery-yard', 'jacaranda-clinic']) {
   }
 }
 
+test.each(['facades', 'exposure-plan', 'section', 'shadow-study'])(
+  '%s says on small paper too how it was worked out, on a page of its own where it must',
+  async (kind) => {
+    const scheme = demoScheme('tannery-yard');
+    for (const landscape of [true, false]) {
+      const set = asked(kind, { paper: 'A4', landscape, window: 'W10' });
+      const made = await sheetDocument(scheme, modelOf(scheme), set, context, go);
+      if (!made?.ok) throw new Error(JSON.stringify(made));
+      const text = made.value.pages.map((p) => textOf(p.marks)).join(' ');
+      for (const needed of ['How it was worked out', 'Cautions', 'Scale 1:']) expect(text).toContain(needed);
+    }
+  },
+);
+
 test.each([
   ['a kind that is not known', asked('axonometric'), 'unknown-sheet', /known: shadow-study/u],
   ['a date that does not exist', asked('shadow-study', { dates: ['2025-02-30'] }), 'bad-date', /2025-06-21/u],
