@@ -29,7 +29,10 @@ export type LightColumns = Light & {
   readonly month: Uint8Array;
 };
 
-/** Light on one plane: the samples in front of it, with running sums so that a run of samples costs one subtraction. */
+/**
+ * Light on one plane: the samples in front of it (`start[count]` of them; the columns may be longer), with running sums so that a run of
+ * samples costs one subtraction.
+ */
 export type PlaneLight = {
   readonly count: number;
   readonly start: Uint32Array;
@@ -121,39 +124,44 @@ function sortByRise(order: Uint32Array, rise: Float64Array, from: number, to: nu
   }
 }
 
-/**
- * The part of the light that stands in front of a plane.
- * @param normal unit normal of the plane in drawing axes
- */
-export function lightOnPlane(light: LightColumns, normal: readonly [number, number, number]): PlaneLight {
-  const [nx, ny, nz] = normal;
-  const all = light.sx.length;
-  const cosine = new Float64Array(all);
-  let n = 0;
-  for (let i = 0; i < all; i++) {
-    const cos = nx * light.sx[i]! + ny * light.sy[i]! + nz * light.sz[i]!;
-    cosine[i] = cos;
-    if (cos > 0) n++;
-  }
+/** Room for the part of a light that stands in front of any one plane. */
+export function makePlaneLight(light: LightColumns): PlaneLight {
   const { count } = light;
-  const start = new Uint32Array(count + 1);
-  const tan = new Float64Array(n);
-  const sx = new Float64Array(n);
-  const sy = new Float64Array(n);
-  const sz = new Float64Array(n);
-  const source = new Uint32Array(n);
-  const month = new Uint8Array(n);
-  const minutesBefore = new Float64Array(n + 1);
-  const beamBefore = new Float64Array(n + 1);
-  const level = new Uint32Array(count * (LEVELS + 1));
-  const lowest = new Float64Array(count).fill(Infinity);
+  const all = light.sx.length;
+  return {
+    count,
+    start: new Uint32Array(count + 1),
+    tan: new Float64Array(all),
+    sx: new Float64Array(all),
+    sy: new Float64Array(all),
+    sz: new Float64Array(all),
+    source: new Uint32Array(all),
+    month: new Uint8Array(all),
+    minutesBefore: new Float64Array(all + 1),
+    beamBefore: new Float64Array(all + 1),
+    level: new Uint32Array(count * (LEVELS + 1)),
+    lowest: new Float64Array(count),
+  };
+}
+
+/**
+ * Writes the part of the light that stands in front of a plane. A town has a plane a wall, so the room is used again.
+ * @param into    room for it; rows past its last sample keep what they hold
+ * @param normal  unit normal of the plane in drawing axes
+ */
+export function lightOnPlane(into: PlaneLight, light: LightColumns, normal: readonly [number, number, number]): void {
+  const [nx, ny, nz] = normal;
+  const { count } = light;
+  const { start, tan, sx, sy, sz, source, month, minutesBefore, beamBefore, level, lowest } = into;
+  lowest.fill(Infinity);
   let k = 0;
   for (let c = 0; c < count; c++) {
     start[c] = k;
     let filled = 0;
     const row = c * (LEVELS + 1);
     for (let i = light.start[c]!; i < light.start[c + 1]!; i++) {
-      if (!(cosine[i]! > 0)) continue;
+      const cosine = nx * light.sx[i]! + ny * light.sy[i]! + nz * light.sz[i]!;
+      if (!(cosine > 0)) continue;
       tan[k] = light.tan[i]!;
       sx[k] = light.sx[i]!;
       sy[k] = light.sy[i]!;
@@ -161,7 +169,7 @@ export function lightOnPlane(light: LightColumns, normal: readonly [number, numb
       source[k] = light.source[i]!;
       month[k] = light.month[i]!;
       minutesBefore[k + 1] = minutesBefore[k]! + light.minutes[i]!;
-      beamBefore[k + 1] = beamBefore[k]! + light.beam[i]! * cosine[i]!;
+      beamBefore[k + 1] = beamBefore[k]! + light.beam[i]! * cosine;
       const l = levelOf(tan[k]!);
       while (filled <= l) level[row + filled++] = k;
       k++;
@@ -170,5 +178,4 @@ export function lightOnPlane(light: LightColumns, normal: readonly [number, numb
     if (k > start[c]!) lowest[c] = tan[start[c]!]!;
   }
   start[count] = k;
-  return { count, start, tan, sx, sy, sz, source, month, minutesBefore, beamBefore, level, lowest };
 }

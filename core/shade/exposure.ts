@@ -1,12 +1,12 @@
 import { dimSeen, makeDimming } from './crown-light.ts';
-import { type LightColumns, lightOnPlane } from './exposure-light.ts';
+import { type LightColumns, lightOnPlane, makePlaneLight, type PlaneLight } from './exposure-light.ts';
 import { hideSeen, listSeen, makeSkyline, raiseWalls, type Skyline, sumSeen } from './skyline.ts';
-import { makeColumns } from './skyline-columns.ts';
+import { type Columns, makeColumns } from './skyline-columns.ts';
 import { byNormal, type Receptors, visitReceptors } from './skyline-groups.ts';
 import type { Occluders } from './skyline-occluders.ts';
-import { makePatchScratch } from './skyline-patch-trace.ts';
+import { makePatchScratch, type PatchScratch } from './skyline-patch-trace.ts';
 import { hidePatches } from './skyline-patches.ts';
-import { makeShelter } from './skyline-shelter.ts';
+import { makeShelter, type Shelter } from './skyline-shelter.ts';
 
 /** Sun on each receptor: columns, one row a receptor. */
 export type SunOnReceptors = {
@@ -42,9 +42,10 @@ export function sunOnReceptors(
     covered: new Uint8Array(to - from),
   };
   const sums = new Float64Array(2);
+  const room = makeRoom(o, light);
+  const dimming = o.crowns.count > 0 ? makeDimming(light.sx.length) : null;
   for (const rows of byNormal(r, from, to)) {
-    const dimming = o.crowns.count > 0 ? makeDimming(light.sx.length) : null;
-    eachSkyline(o, light, r, rows, hider, (row, s) => {
+    eachSkyline(room, o, light, r, rows, hider, (row, s) => {
       if (s === null) out.covered[row - from] = 1;
       else {
         sumSeen(s, sums, 0);
@@ -69,14 +70,36 @@ export function seenSamples(
   hider: Hider | null = null,
 ): Uint8Array {
   const seen = new Uint8Array(light.sx.length);
-  eachSkyline(o, light, r, Uint32Array.of(row), hider, (_, s) => {
+  eachSkyline(makeRoom(o, light), o, light, r, Uint32Array.of(row), hider, (_, s) => {
     if (s !== null) listSeen(s, seen);
   });
   return seen;
 }
 
+/** Working memory for the skylines of any number of planes. */
+type Room = {
+  readonly columns: Columns;
+  readonly plane: PlaneLight;
+  readonly skyline: Skyline;
+  readonly patches: PatchScratch;
+  readonly shelter: Shelter;
+};
+
+function makeRoom(o: Occluders, light: LightColumns): Room {
+  const columns = makeColumns(light.count);
+  const plane = makePlaneLight(light);
+  return {
+    columns,
+    plane,
+    skyline: makeSkyline(plane, columns, o.wallSolid.length),
+    patches: makePatchScratch(light.count),
+    shelter: makeShelter(light.count),
+  };
+}
+
 /** Works out the skyline of receptors of one plane, one after the other in the same memory; null inside a solid. */
 function eachSkyline(
+  { columns, plane, skyline, patches, shelter }: Room,
   o: Occluders,
   light: LightColumns,
   r: Receptors,
@@ -85,11 +108,7 @@ function eachSkyline(
   done: (row: number, s: Skyline | null) => void,
 ): void {
   const first = rows[0]!;
-  const columns = makeColumns(light.count);
-  const plane = lightOnPlane(light, [r.nx[first]!, r.ny[first]!, r.nz[first]!]);
-  const skyline = makeSkyline(plane, columns, o.wallSolid.length);
-  const patches = makePatchScratch(light.count);
-  const shelter = makeShelter(light.count);
+  lightOnPlane(plane, light, [r.nx[first]!, r.ny[first]!, r.nz[first]!]);
   visitReceptors(o, columns, plane.lowest, r, rows, (row, list) => {
     if (list === null) {
       done(row, null);

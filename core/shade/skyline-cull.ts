@@ -2,7 +2,7 @@ import { IN_FRONT_m } from '../units/tolerance.ts';
 import { LISTED } from './skyline.ts';
 import { mayRise, mayStand, raiseHidden, turnRange } from './skyline-bounds.ts';
 import type { Columns } from './skyline-columns.ts';
-import { type Occluders, WALL } from './skyline-occluders.ts';
+import { DISC, EXTENT, type Occluders, WALL } from './skyline-occluders.ts';
 
 /**
  * Which occluders can matter to a group of receptors that lie in one box and share a plane's direction. Dropped is what
@@ -32,9 +32,6 @@ export type Culler = {
   /** How far each solid, and each patch, reaches along the normal. */
   readonly solidReach: Float64Array;
   readonly patchReach: Float64Array;
-  readonly patchTop: Float64Array;
-  /** Per patch: least and most x, least and most y. */
-  readonly patchExtent: Float64Array;
   /** Per column: the lowest altitude that is asked (tangent); and the least that is hidden from all receptors of the box. */
   readonly lowest: Float64Array;
   readonly hidden: Float64Array;
@@ -48,7 +45,6 @@ export type Culler = {
 };
 
 const SPAN = 5;
-const EXTENT = 4;
 /** Walls nearer to the box than this are never judged by bounds. */
 const TOUCHING_m = 4 * IN_FRONT_m;
 
@@ -96,22 +92,10 @@ export function makeCuller(
   }
   const patches = o.patchCorner.length - 1;
   const patchReach = new Float64Array(patches).fill(-Infinity);
-  const patchTop = new Float64Array(patches).fill(-Infinity);
-  const patchExtent = new Float64Array(patches * EXTENT);
   for (let p = 0; p < patches; p++) {
-    const e = p * EXTENT;
-    patchExtent.set([Infinity, -Infinity, Infinity, -Infinity], e);
     for (let i = o.patchCorner[p]!; i < o.patchCorner[p + 1]!; i++) {
-      const z = o.corners[3 * i + 2]!;
-      const x = o.corners[3 * i]!;
-      const y = o.corners[3 * i + 1]!;
-      const r = nx * x + ny * y + nz * z;
-      patchExtent[e] = Math.min(patchExtent[e]!, x);
-      patchExtent[e + 1] = Math.max(patchExtent[e + 1]!, x);
-      patchExtent[e + 2] = Math.min(patchExtent[e + 2]!, y);
-      patchExtent[e + 3] = Math.max(patchExtent[e + 3]!, y);
+      const r = nx * o.corners[3 * i]! + ny * o.corners[3 * i + 1]! + nz * o.corners[3 * i + 2]!;
       if (r > patchReach[p]!) patchReach[p] = r;
-      if (z > patchTop[p]!) patchTop[p] = z;
     }
   }
   return {
@@ -120,8 +104,6 @@ export function makeCuller(
     normal,
     solidReach,
     patchReach,
-    patchTop,
-    patchExtent,
     lowest,
     hidden: new Float64Array(columns.count),
     span: new Float64Array(Math.max(o.wallSolid.length, 1) * SPAN),
@@ -251,14 +233,15 @@ function sortByKey(id: Uint32Array, key: Float64Array, n: number): void {
 
 /** Whether a patch stands in front of the box and may rise above what is hidden anyway. */
 function patchMatters(k: Culler, p: number, box: ReceptorBox): boolean {
-  const top = k.patchTop[p]!;
+  const { patchDisc, patchExtent } = k.occluders;
+  const top = patchDisc[p * DISC + 3]!;
   if (top <= box.z0 || k.patchReach[p]! <= box.plane + IN_FRONT_m) return false;
   // From the box to the patch: the differences lie in one box again, and where that holds the origin the patch may be overhead.
   const at = p * EXTENT;
-  const dx0 = k.patchExtent[at]! - box.x1;
-  const dx1 = k.patchExtent[at + 1]! - box.x0;
-  const dy0 = k.patchExtent[at + 2]! - box.y1;
-  const dy1 = k.patchExtent[at + 3]! - box.y0;
+  const dx0 = patchExtent[at]! - box.x1;
+  const dx1 = patchExtent[at + 1]! - box.x0;
+  const dy0 = patchExtent[at + 2]! - box.y1;
+  const dy1 = patchExtent[at + 3]! - box.y0;
   if (dx0 <= TOUCHING_m && dx1 >= -TOUCHING_m && dy0 <= TOUCHING_m && dy1 >= -TOUCHING_m) return true;
   const gapX = dx0 > 0 ? dx0 : dx1 < 0 ? -dx1 : 0;
   const gapY = dy0 > 0 ? dy0 : dy1 < 0 ? -dy1 : 0;

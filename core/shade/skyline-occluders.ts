@@ -30,11 +30,14 @@ export type Occluders = {
   readonly corners: Float64Array;
   /** An upright cylinder round each patch, `DISC` numbers: x and y of its axis, radius, top. */
   readonly patchDisc: Float64Array;
+  /** Upright boxes round patches, `EXTENT` numbers each: least and most x, least and most y. */
+  readonly patchExtent: Float64Array;
   /** What weakens the sun without hiding it. */
   readonly crowns: Crowns;
 };
 
 export const DISC = 4;
+export const EXTENT = 4;
 
 /**
  * The occluders of solids and flat shaders, and the crowns of trees. The order of any changes nothing but the order of the columns.
@@ -85,7 +88,7 @@ export function makeOccluders(
     solidWall,
     patchCorner: Uint32Array.from(patchCorner),
     corners: Float64Array.from(corners),
-    patchDisc: discsOf(corners, patchCorner),
+    ...roundPatches(corners, patchCorner),
     crowns: crownColumns(trees),
   };
   if (![...result.walls, ...result.corners].every(Number.isFinite))
@@ -93,8 +96,12 @@ export function makeOccluders(
   return result;
 }
 
-/** Upright cylinders round patches, about the middle of their boxes. */
-function discsOf(corners: readonly number[], patchCorner: readonly number[]): Float64Array {
+/** Upright boxes round patches, and cylinders about the middle of the boxes. */
+function roundPatches(
+  corners: readonly number[],
+  patchCorner: readonly number[],
+): Pick<Occluders, 'patchDisc' | 'patchExtent'> {
+  const extents = new Float64Array((patchCorner.length - 1) * EXTENT);
   const discs = new Float64Array((patchCorner.length - 1) * DISC);
   for (let p = 0; p + 1 < patchCorner.length; p++) {
     const from = 3 * patchCorner[p]!;
@@ -116,6 +123,7 @@ function discsOf(corners: readonly number[], patchCorner: readonly number[]): Fl
     let radius = 0;
     for (let i = from; i < to; i += 3) radius = Math.max(radius, Math.hypot(corners[i]! - x, corners[i + 1]! - y));
     discs.set([x, y, radius, top], p * DISC);
+    extents.set([low[0], high[0], low[1], high[1]], p * EXTENT);
   }
-  return discs;
+  return { patchDisc: discs, patchExtent: extents };
 }
