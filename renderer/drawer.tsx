@@ -2,6 +2,7 @@ import { signal } from '@preact/signals';
 import { useLayoutEffect } from 'preact/hooks';
 import { ComparePanel } from './compare/compare-panel.tsx';
 import { LightPanel } from './light/light-panel.tsx';
+import { LimitsPanel } from './limits/limits-panel.tsx';
 import { countOf, KINDS, ScheduleOf } from './schedule/schedules.tsx';
 import { SunPathPanel } from './sun-path/sun-path-panel.tsx';
 import { SizingPanel } from './sizing/sizing-panel.tsx';
@@ -16,6 +17,7 @@ const ASIDES = [
   { page: 'light', tab: words.light.tab, label: words.light.label, Panel: LightPanel },
   { page: 'sizing', tab: words.sizing.tab, label: words.sizing.label, Panel: SizingPanel },
   { page: 'compare', tab: words.compare.tab, label: words.compare.label, Panel: ComparePanel },
+  { page: 'limits', tab: words.limits.tab, label: words.limits.label, Panel: LimitsPanel },
   { page: 'sun-path', tab: words.sunPath.tab, label: words.sunPath.label, Panel: SunPathPanel },
   { page: 'weather', tab: words.weather.tab, label: words.weather.label, Panel: WeatherPanel },
 ] as const;

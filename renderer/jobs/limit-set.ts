@@ -8,6 +8,16 @@ const shipped: Record<string, unknown> = import.meta.glob('../../assets/limits/*
   import: 'default',
 });
 
+/** The sets that ship with the program, by name. @throws {Error} when one of them has faults, which tests would have told */
+export function shippedLimits(): readonly LimitSet[] {
+  const sets = Object.values(shipped).map((set) => {
+    const checked = checkLimitSet(set);
+    if (!checked.ok) throw new Error(checked.faults.map(faultLine).join(' · '));
+    return checked.value;
+  });
+  return sets.toSorted((a, b) => a.name.localeCompare(b.name));
+}
+
 /**
  * The limit set that a scheme has chosen: one that ships with the program, by id, or its own.
  * @returns null when it has chosen none

@@ -3,6 +3,7 @@ import { findingsWords } from './findings.ts';
 import { frameWords } from './frame.ts';
 import { lightWords } from './light.ts';
 import { mapsWords } from './maps.ts';
+import { limitsWords } from './limits.ts';
 import { massingWords } from './massing.ts';
 import { momentWords } from './moment.ts';
 import { namesWords } from './names.ts';
@@ -21,6 +22,7 @@ export const words = {
   ...startWords,
   ...lightWords,
   ...mapsWords,
+  ...limitsWords,
   ...massingWords,
   ...momentWords,
   ...namesWords,
