@@ -42,7 +42,7 @@ export function sunOnReceptors(
     covered: new Uint8Array(to - from),
   };
   const sums = new Float64Array(2);
-  const room = makeRoom(o, light);
+  const room = takeRoom(o, light);
   const dimming = o.crowns.count > 0 ? makeDimming(light.sx.length) : null;
   for (const rows of byNormal(r, from, to)) {
     eachSkyline(room, o, light, r, rows, hider, (row, s) => {
@@ -58,6 +58,7 @@ export function sunOnReceptors(
       }
     });
   }
+  rooms.set(light, room);
   return out;
 }
 
@@ -78,6 +79,7 @@ export function seenSamples(
 
 /** Working memory for the skylines of any number of planes. */
 type Room = {
+  readonly walls: number;
   readonly columns: Columns;
   readonly plane: PlaneLight;
   readonly skyline: Skyline;
@@ -89,12 +91,23 @@ function makeRoom(o: Occluders, light: LightColumns): Room {
   const columns = makeColumns(light.count);
   const plane = makePlaneLight(light);
   return {
+    walls: o.wallSolid.length,
     columns,
     plane,
     skyline: makeSkyline(plane, columns, o.wallSolid.length),
     patches: makePatchScratch(light.count),
     shelter: makeShelter(light.count),
   };
+}
+
+/** Rooms that lie idle: tiles of one map come one after the other, and each would else leave megabytes behind. */
+const rooms = new WeakMap<LightColumns, Room>();
+
+/** A room for one call, out of the idle ones where one is wide enough; nobody else gets it until it is put back. */
+function takeRoom(o: Occluders, light: LightColumns): Room {
+  const idle = rooms.get(light);
+  rooms.delete(light);
+  return idle !== undefined && idle.walls >= o.wallSolid.length ? idle : makeRoom(o, light);
 }
 
 /** Works out the skyline of receptors of one plane, one after the other in the same memory; null inside a solid. */

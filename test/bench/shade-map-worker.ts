@@ -1,5 +1,6 @@
 import { parentPort } from 'node:worker_threads';
-import { type ExposureJob, exposureJob, exposureSlice, joinSlices, slicesOf } from '../../core/shade/exposure-slice.ts';
+import { exposureJob, exposureSlice, joinSlices, slicesOf } from '../../core/shade/exposure-slice.ts';
+import { tiler, type ToTiler } from '../../core/study/tile-pool.ts';
 import { blockField, fieldReceptors } from '../helpers/block-field.ts';
 import { yearLight } from '../helpers/year-light.ts';
 
@@ -9,13 +10,8 @@ import { yearLight } from '../helpers/year-light.ts';
  */
 if (parentPort) {
   const port = parentPort;
-  let job: ExposureJob | null = null;
-  port.on('message', (message: { job: ExposureJob } | { slice: number }) => {
-    if ('job' in message) {
-      job = message.job;
-      port.postMessage({ ready: true });
-    } else if (job) port.postMessage({ slice: message.slice, result: exposureSlice(job, message.slice) });
-  });
+  const hear = tiler((message) => port.postMessage(message));
+  port.on('message', (message: ToTiler) => hear(message));
 } else if (process.argv.includes('--memory')) {
   const field = blockField(7, 200);
   const receptors = fieldReceptors(field, 100_000, 3);

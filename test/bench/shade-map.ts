@@ -1,12 +1,14 @@
 import { execFileSync } from 'node:child_process';
+import { createHash } from 'node:crypto';
 import { availableParallelism } from 'node:os';
 import { resolve } from 'node:path';
 import { Worker } from 'node:worker_threads';
 import { seenSamples, sunOnReceptors } from '../../core/shade/exposure.ts';
 import { columnsFor, type Light, sortLight } from '../../core/shade/exposure-light.ts';
-import { type ExposureJob, exposureJob, slicesOf } from '../../core/shade/exposure-slice.ts';
-import type { Receptors } from '../../core/shade/skyline-groups.ts';
+import { type Exposure, type ExposureJob, exposureJob, SLICE } from '../../core/shade/exposure-slice.ts';
+import { type Receptors, rowsOf } from '../../core/shade/skyline-groups.ts';
 import { makeOccluders } from '../../core/shade/skyline-occluders.ts';
+import { type MakeTileWorker, TilePool } from '../../core/study/tile-pool.ts';
 import { type BlockField, blockField, fieldReceptors } from '../helpers/block-field.ts';
 import { isHidden, meshOf } from '../helpers/ray-casts.ts';
 import { yearLight } from '../helpers/year-light.ts';
@@ -158,82 +160,76 @@ function growthRows(light: Light): Row[] {
   return rows;
 }
 
-/** One worker thread against all cores, with sky and ground light; and the memory of a large map in a process of its own. */
+/**
+ * The pool with one worker thread and with one a core, with sky and ground light, as blocks and receptors grow; and the memory
+ * of a large map in a process of its own.
+ */
 async function coreRows(light: Light): Promise<Row[]> {
   const script = resolve(import.meta.dirname, 'shade-map-worker.js');
-  const field = blockField(7, 200);
-  const receptors = fieldReceptors(field, 40_000, 3);
-  const job = exposureJob(field.solids, field.shaders, light, receptors, { diffuse_Whm2: 1, reflected_Whm2: 1 });
   const cores = availableParallelism();
-  const one = await runOnWorkers(script, job, 1);
-  const all = await runOnWorkers(script, job, cores);
-  if (one.bytes !== all.bytes) throw new Error('the number of workers changed the result');
+  const rows: Row[] = [];
+  for (const [blocks, count] of SIZES) {
+    const field = blockField(7, blocks);
+    const receptors = fieldReceptors(field, count, 3);
+    const job = exposureJob(field.solids, field.shaders, light, receptors, { diffuse_Whm2: 1, reflected_Whm2: 1 });
+    const one = await runOnPool(script, job, 1);
+    const all = await runOnPool(script, job, cores);
+    if (one.bytes !== all.bytes) throw new Error('the number of workers changed the result');
+    rows.push({
+      what: `year, sky and ground too, ${blocks} blocks, ${count} receptors, ${cores} workers`,
+      ours_perSecond: count / all.seconds,
+      other: 'one worker',
+      other_perSecond: count / one.seconds,
+      ratio: one.seconds / all.seconds,
+      note: `same bytes from both; ${((all.seconds / count) * 1e6).toFixed(1)} µs a receptor`,
+    });
+  }
   const large = JSON.parse(execFileSync(process.execPath, [script, '--memory'], { encoding: 'utf8' })) as {
     seconds: number;
     peak_MB: number;
   };
-  return [
-    {
-      what: `year, sky and ground too, 40000 receptors, ${cores} workers [receptors]`,
-      ours_perSecond: 40_000 / all.seconds,
-      other: 'one worker',
-      other_perSecond: 40_000 / one.seconds,
-      ratio: one.seconds / all.seconds,
-      note: 'same bytes from both',
-    },
-    {
-      what: 'year, sky and ground too, 100000 receptors [receptors]',
-      ours_perSecond: 100_000 / large.seconds,
-      other: '',
-      other_perSecond: null,
-      ratio: null,
-      note: `peak memory of the whole process ${large.peak_MB.toFixed(0)} MB (bar: 500 MB)`,
-    },
-  ];
+  rows.push({
+    what: 'year, sky and ground too, 100000 receptors [receptors]',
+    ours_perSecond: 100_000 / large.seconds,
+    other: '',
+    other_perSecond: null,
+    ratio: null,
+    note: `peak memory of the whole process ${large.peak_MB.toFixed(0)} MB (bar: 500 MB)`,
+  });
+  return rows;
 }
 
-/** Works a job out on so many worker threads, each taking the next slice when it is done. Starting them is not timed. */
-async function runOnWorkers(
-  script: string,
-  job: ExposureJob,
-  count: number,
-): Promise<{ seconds: number; bytes: string }> {
-  const workers = Array.from({ length: count }, () => new Worker(script));
-  const total = slicesOf(job);
-  const sums = new Float64Array(2 * total);
-  let next = 0;
+/** Blocks and receptors. */
+const SIZES = [
+  [50, 16_384],
+  [200, 16_384],
+  [1000, 16_384],
+  [5000, 16_384],
+  [200, 4096],
+  [200, 65_536],
+] as const;
+
+/** Works a job out on the pool that the command uses. Workers are warm: a first tile has started them. */
+async function runOnPool(script: string, job: ExposureJob, size: number): Promise<{ seconds: number; bytes: string }> {
+  const make: MakeTileWorker = (hear, die) => {
+    const worker = new Worker(script);
+    worker.on('message', hear);
+    worker.on('error', (error) => die(String(error)));
+    return { post: (message) => worker.postMessage(message), end: () => void worker.terminate() };
+  };
+  const pool = new TilePool(make, size);
   try {
-    await Promise.all(
-      workers.map(
-        (w) =>
-          new Promise<void>((ready, failed) => {
-            w.once('error', failed);
-            w.once('message', () => ready());
-            w.postMessage({ job });
-          }),
-      ),
-    );
+    const first = { ...job, receptors: rowsOf(job.receptors, 0, SLICE) };
+    await pool.run(Array.from({ length: size }, () => first));
     const start = performance.now();
-    await Promise.all(
-      workers.map(
-        (w) =>
-          new Promise<void>((done, failed) => {
-            w.once('error', failed);
-            const give = (): void => {
-              if (next < total) w.postMessage({ slice: next++ });
-              else done();
-            };
-            w.on('message', (m: { slice: number; result: { minutes: Float64Array; beam: Float64Array } }) => {
-              sums[2 * m.slice] = m.result.minutes.reduce((a, b) => a + b, 0);
-              sums[2 * m.slice + 1] = m.result.beam.reduce((a, b) => a + b, 0);
-              give();
-            });
-            give();
-          }),
-      ),
-    );
-    return { seconds: (performance.now() - start) / 1000, bytes: [...sums].join() };
+    const outcome = await pool.run([job]);
+    const seconds = (performance.now() - start) / 1000;
+    if (outcome.kind !== 'done') throw new Error(outcome.kind === 'failed' ? outcome.message : outcome.kind);
+    const { minutes, beam, sky, ground } = outcome.values[0] as Exposure;
+    const bytes = createHash('sha256');
+    for (const column of [minutes, beam, sky, ground]) bytes.update(new Uint8Array(column.buffer));
+    return { seconds, bytes: bytes.digest('hex') };
   } finally {
-    await Promise.all(workers.map((w) => w.terminate()));
+    pool.close();
   }
 }
