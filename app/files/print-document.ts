@@ -1,3 +1,4 @@
+import type { Document } from '../../core/sheet/drawing.ts';
 import { HostFault } from '../contract/dispatch.ts';
 import { checkedDocument } from '../contract/drawing-form.ts';
 
@@ -8,6 +9,11 @@ const CREATED = new Date(0);
 export async function printDocument(value: unknown): Promise<Uint8Array> {
   const document = checkedDocument(value);
   if (!document) throw new HostFault('bad-request', 'this is not a drawing that can be printed');
+  return pdfOf(document);
+}
+
+/** A drawing of our own making as PDF, without the look over that one from a page needs. */
+export async function pdfOf(document: Document): Promise<Uint8Array> {
   const { writePdf } = await import('../pdf/write-pdf.ts');
   return writePdf(document, { created: CREATED });
 }

@@ -1,3 +1,4 @@
+import type { CheckMemo } from '../../core/gain/gain-memo.ts';
 import type { LimitSet } from '../../core/limits/limit-set.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import type { CheckResult } from '../../core/study/check-result.ts';
@@ -62,16 +63,21 @@ async function workingOfRoom(result: CheckResult, scheme: Scheme, room: string):
 }
 
 /** The report with, for each room that is over, the ways to bring its worst finding within. */
-async function pdfReport(result: CheckResult, scheme: Scheme, pulse: Pulse): Promise<Uint8Array> {
-  const [{ findingsReport }, { waysOfOver }, { createCheckMemo }, { printDocument }] = await Promise.all([
+async function pdfReport(result: CheckResult, scheme: Scheme, memo: CheckMemo, pulse: Pulse): Promise<Uint8Array> {
+  const [{ findingsReport }, { waysOfOver }, { pdfOf }] = await Promise.all([
     import('../../core/sheet/findings-report.ts'),
     import('../../core/study/ways-of-over.ts'),
-    import('../../core/gain/gain-memo.ts'),
     import('../files/print-document.ts'),
   ]);
-  const memo = createCheckMemo(Math.max(600, scheme.windows.length));
   const ways = await waysOfOver(result, scheme, memo, pulse);
-  return printDocument(findingsReport(result, scheme, { drawn: today(), ways: ways ?? [] }));
+  return pdfOf(findingsReport(result, scheme, { drawn: today(), ways: ways ?? [] }));
+}
+
+async function report(result: CheckResult, scheme: Scheme, memo: CheckMemo, screen: Screen): Promise<Uint8Array> {
+  const { pulse, done } = progress(screen, 'looking for ways to pass');
+  const bytes = await pdfReport(result, scheme, memo, pulse);
+  done();
+  return bytes;
 }
 
 /** `shadewright check`: every room against its limits. */
@@ -94,13 +100,17 @@ export const declareCheck: Declare = (program, screen, end) => {
       const limitSet = await limitsFor(path, scheme, options, screen);
       const weather = await weatherFor(path, scheme, options, screen);
       if (options.working !== undefined) refuseRoom(scheme, options.working);
-      const { checkScheme } = await import('../../core/study/check.ts');
+      const [{ checkScheme }, { createCheckMemo }] = await Promise.all([
+        import('../../core/study/check.ts'),
+        import('../../core/gain/gain-memo.ts'),
+      ]);
+      const memo = createCheckMemo(Math.max(600, scheme.windows.length));
       const { pulse, done } = progress(screen, 'checking');
-      const result = await checkScheme(scheme, limitSet, notes, pulse, { weather });
+      const result = await checkScheme(scheme, limitSet, notes, pulse, { weather, memo });
       done();
       if (result === null) throw new Error('the check was stopped');
       if (options.pdf !== undefined) {
-        await writeOutput(options.pdf, await pdfReport(result, scheme, async () => 'go'));
+        await writeOutput(options.pdf, await report(result, scheme, memo, screen));
         screen.note(`report written to ${options.pdf}\n`);
       }
       screen.out(await printed(result, scheme, limitSet, options));

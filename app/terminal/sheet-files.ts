@@ -23,8 +23,8 @@ const pagePath = (path: string, k: number): string => (k === 0 ? path : path.rep
 export async function writeSheetFiles(document: Document, to: SheetFiles, command: string): Promise<readonly string[]> {
   const files: [string, Uint8Array | string][] = [];
   if (to.pdf !== undefined) {
-    const { printDocument } = await import('../files/print-document.ts');
-    files.push([to.pdf, await printDocument(document)]);
+    const { pdfOf } = await import('../files/print-document.ts');
+    files.push([to.pdf, await pdfOf(document)]);
   }
   if (to.svg !== undefined) {
     const [{ pageToSvg }, { fontFaceCss }] = await Promise.all([
