@@ -49,7 +49,7 @@ export function findingsReport(result: ReportResult, scheme: Scheme, extra: Repo
     title: [result.title, 'Findings'].filter((t) => t !== '').join(' – '),
     author: scheme.author,
     language: extra.language ?? 'en-GB',
-    pages: finishPages(flow.pages, 'A4', false, '', false),
+    pages: finishPages(flow.pages, 'A4', false, ''),
   };
 }
 

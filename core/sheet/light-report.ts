@@ -75,7 +75,7 @@ export function lightReport(input: LightReportInput): Document {
     title: [scheme.title, title].filter((t) => t !== '').join(' – '),
     author: scheme.author,
     language: input.language ?? 'en-GB',
-    pages: finishPages(flow.pages, 'A4', false, `drawn ${input.drawn}`, false),
+    pages: finishPages(flow.pages, 'A4', false, `drawn ${input.drawn}`),
   };
 }
 

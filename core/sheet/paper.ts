@@ -45,7 +45,7 @@ export function checkBar(x: Mm, y: Mm): readonly Mark[] {
 }
 
 /** The foot: caution, page x of y, check bar and what the page goes by. */
-function foot(size: readonly [Mm, Mm], number: number, count: number, note: string, bar: boolean): readonly Mark[] {
+function foot(size: readonly [Mm, Mm], number: number, count: number, note: string): readonly Mark[] {
   const left = MARGIN.left;
   const right = size[0] - MARGIN.right;
   const top = size[1] - MARGIN.bottom - FOOT + 3;
@@ -58,13 +58,12 @@ function foot(size: readonly [Mm, Mm], number: number, count: number, note: stri
     caution,
     ...(noted ? [words(note, right - measure(page, READ) - 6, top + 4.4, { colour: SOFT, anchor: 'end' })] : []),
     words(page, right, top + 4.4, { anchor: 'end' }),
-    ...(bar ? checkBar(left, size[1] - MARGIN.bottom) : []),
+    ...checkBar(left, size[1] - MARGIN.bottom),
   ];
 }
 
 /**
- * Pages from their contents: foot, page numbers and bookmarks are added here, so that no page can go without them.
- * @param bar   the check bar, for pages that are measured
+ * Pages from their contents: foot, check bar, page numbers and bookmarks are added here, so that no page can go without them.
  * @param note  what every page's foot repeats where there is room, such as the scheme and its hash
  */
 export function finishPages(
@@ -72,7 +71,6 @@ export function finishPages(
   paper: PaperName,
   landscape: boolean,
   note: string,
-  bar = true,
 ): readonly Page[] {
   const size = paperSize(paper, landscape);
   return contents.map((c, i) => ({
@@ -81,7 +79,7 @@ export function finishPages(
     title: c.title,
     marks: [
       ...c.marks,
-      { kind: 'group', label: 'foot', role: 'text', marks: foot(size, i + 1, contents.length, note, bar) },
+      { kind: 'group', label: 'foot', role: 'text', marks: foot(size, i + 1, contents.length, note) },
     ],
   }));
 }

@@ -122,7 +122,7 @@ export function sunPathDocument(
   }));
   const title = [facts.title, TITLE].filter((t) => t !== '').join(' – ');
   const { author, language, note } = facts;
-  return { title, author, language, pages: finishPages(contents, paper, landscape, note, false) };
+  return { title, author, language, pages: finishPages(contents, paper, landscape, note) };
 }
 
 /** A drawing and, where one is wanted, its title block: at the foot of the column beside it, or under it on an upright page. */

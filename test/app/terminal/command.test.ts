@@ -31,7 +31,7 @@ describe('help', () => {
       expect(out).toContain(word);
   });
 
-  test.each(['check', 'shadows', 'exposure', 'sun', 'size', 'compare', 'verify', 'schema', 'open'])(
+  test.each(['check', 'shadows', 'sheet', 'exposure', 'sun', 'size', 'compare', 'verify', 'schema', 'open'])(
     '%s has examples',
     async (name) => {
       const { status, out } = await runCommand([name, '--help'], tempFolder());

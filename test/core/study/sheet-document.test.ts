@@ -32,6 +32,7 @@ for (const name of ['tannery-yard', 'jacaranda-clinic']) {
       for (const page of made.value.pages) {
         expect(sizes).toContain([page.width, page.height].sort((a, b) => a - b).join());
         expect(textOf(page.marks)).toContain(SHORT_CAUTION);
+        expect(textOf(page.marks)).toContain('100 mm on paper when printed at full size');
       }
     });
 
