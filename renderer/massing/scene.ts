@@ -20,6 +20,7 @@ import type { Vec3 } from '../../core/plane/vec.ts';
 import type { Faces, Owner } from './faces.ts';
 import type { CarriedMap } from './map-layer.ts';
 import { type Layer, materials, ORDER } from './layers.ts';
+import { Pace } from './pace.ts';
 import type { Rgb } from './palette.ts';
 import { StillPicture } from './still-picture.ts';
 import type { Strokes } from './strokes.ts';
@@ -30,6 +31,8 @@ const PICKED = ['solids', 'openings'] as const;
 /** The camera stands this far back: outside any site [m]. */
 const BACK_m = 5000;
 const DASH_px = 5;
+/** While a moving view cannot keep pace it is drawn with so many pixels for each of the screen's, across and down. */
+const COARSE = 0.6;
 /** A view that has not changed for so long is at rest. */
 const STILL_AFTER_ms = 160;
 
@@ -49,6 +52,9 @@ export class MassingScene {
   #size: Size = { width: 1, height: 1 };
   #view: Camera | null = null;
   #frame = 0;
+  #pixelRatio = 1;
+  #sharpness = 1;
+  readonly #pace = new Pace();
   readonly #rest: StillPicture | null;
   #still: ReturnType<typeof setTimeout> | null = null;
 
@@ -191,8 +197,8 @@ export class MassingScene {
 
   resize(size: Size, pixelRatio: number): void {
     this.#size = size;
-    this.#renderer.setPixelRatio(pixelRatio);
-    this.#renderer.setSize(size.width, size.height, false);
+    this.#pixelRatio = pixelRatio;
+    this.#setSharpness(1);
     if (this.#view !== null) this.setCamera(this.#view);
     this.invalidate();
   }
@@ -201,12 +207,31 @@ export class MassingScene {
   invalidate(): void {
     this.#rest?.disturb();
     if (this.#still !== null) clearTimeout(this.#still);
-    this.#still = this.#rest === null ? null : setTimeout(() => this.#rest?.rest(), STILL_AFTER_ms);
+    this.#still = this.#rest === null ? null : setTimeout(() => this.#settle(), STILL_AFTER_ms);
     if (this.#frame !== 0) return;
-    this.#frame = requestAnimationFrame(() => {
+    this.#frame = requestAnimationFrame((now) => {
       this.#frame = 0;
+      const isSlow = this.#rest !== null && this.#pace.isTooSlow(now);
+      if (isSlow && this.#sharpness === 1) this.#setSharpness(COARSE);
       this.draw();
     });
+  }
+
+  /** Sharp again, and then smooth. */
+  #settle(): void {
+    this.#pace.reset();
+    if (this.#sharpness !== 1) {
+      this.#setSharpness(1);
+      this.draw();
+    }
+    this.#rest?.rest();
+  }
+
+  /** Draws with so many pixels for each that the screen has, across and down. */
+  #setSharpness(share: number): void {
+    this.#sharpness = share;
+    this.#renderer.setPixelRatio(this.#pixelRatio * share);
+    this.#renderer.setSize(this.#size.width, this.#size.height, false);
   }
 
   draw(): void {
