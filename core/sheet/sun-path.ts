@@ -137,8 +137,10 @@ function onSheet(
   const width = landscape ? BLOCK : rect.width / 2;
   const { height } = titleBlock(0, 0, width, block.scheme, facts);
   const box = landscape ? rect : { ...rect, height: rect.height - height - GAP };
-  const drawn = titleBlock(rect.x + rect.width - width, rect.y + rect.height - height, width, block.scheme, facts);
-  return [...sunPathDrawing(box, input), ...drawn.marks];
+  const layout = sunPathLayout(box, input);
+  const x = landscape ? layout.caption.x : rect.x + rect.width - width;
+  const drawn = titleBlock(x, rect.y + rect.height - height, width, block.scheme, facts);
+  return [...layout.sky, ...sunPathMoment(layout, input), ...drawn.marks];
 }
 
 const PROJECTION_WORDS: { readonly [P in SunPathProjection]: string } = {
