@@ -1,5 +1,6 @@
 import { CROWN, type Crowns, isInFront, THROUGH } from './crown-light.ts';
 import { type Dome, lightBelow } from './dome-light.ts';
+import { turnOf } from './skyline-columns.ts';
 import { openStretches, type SkyTrace } from './sky-view-trace.ts';
 
 /** How much of a light falls in each month: shares that add up to 1, entry 0 for light of no month, which takes the mean of the year. */
@@ -21,22 +22,55 @@ export function crownLoss(
   normal: readonly [number, number, number],
   dome: Dome,
 ): number {
-  const near: number[] = [];
-  for (let k = 0; k < crowns.count; k++) if (isInFront(crowns, k, ...at, normal)) near.push(k);
-  if (near.length === 0) return 0;
   const { columns, width_rad } = t.rays;
+  const { count, ux, uy } = columns;
+  const met: Met[][] = [];
+  const rays: number[] = [];
   const stretch = new Float64Array(2);
+  for (let k = 0; k < crowns.count; k++) {
+    if (!isInFront(crowns, k, ...at, normal)) continue;
+    const [first, n] = raysOf(crowns, k, at, count);
+    for (let j = 0; j < n; j++) {
+      const c = (first + j) % count;
+      // What ends below the skyline keeps nothing off that is not hidden anyway.
+      if (!crownOnRay(crowns, k, at, ux[c]!, uy[c]!, stretch) || stretch[1]! <= t.horizon[c]!) continue;
+      const entry = { crown: k, low: stretch[0]!, high: stretch[1]! };
+      const list = met[c];
+      if (list !== undefined) list.push(entry);
+      else {
+        met[c] = [entry];
+        rays.push(c);
+      }
+    }
+  }
   let sum = 0;
-  for (let c = 0; c < columns.count; c++) {
-    const ux = columns.ux[c]!;
-    const uy = columns.uy[c]!;
-    const met: Met[] = [];
-    for (const k of near)
-      if (crownOnRay(crowns, k, at, ux, uy, stretch)) met.push({ crown: k, low: stretch[0]!, high: stretch[1]! });
-    if (met.length > 0)
-      sum += lossOnRay(t, c, crowns, months, met, normal[0] * ux + normal[1] * uy, normal[2], dome) * width_rad[c]!;
+  // In the order of the rays, whatever crown met them first, so that sums do not hang on it.
+  for (const c of rays.sort((p, q) => p - q)) {
+    const along = normal[0] * ux[c]! + normal[1] * uy[c]!;
+    sum += lossOnRay(t, c, crowns, months, met[c]!, along, normal[2], dome) * width_rad[c]!;
   }
   return dome === 'uniform' ? sum / Math.PI : (3 * sum) / (7 * Math.PI);
+}
+
+/** The rays that a crown can lie on: the first, and how many; from within its radius, all of them. */
+function raysOf(
+  { shape }: Crowns,
+  crown: number,
+  at: readonly [number, number, number],
+  count: number,
+): readonly [number, number] {
+  const o = crown * CROWN;
+  const dx = shape[o]! - at[0];
+  const dy = shape[o + 1]! - at[1];
+  const radius = shape[o + 3]!;
+  const away = Math.sqrt(dx * dx + dy * dy);
+  if (!(away > radius * 1.0001)) return [0, count];
+  // A turn is at most one a radian.
+  const half = Math.asin(radius / away);
+  const turn = turnOf(dx, dy);
+  const first = Math.floor(((turn - half) * count) / 4);
+  const last = Math.ceil(((turn + half) * count) / 4);
+  return [((first % count) + count) % count, Math.min(count, last - first + 1)];
 }
 
 type Met = { readonly crown: number; readonly low: number; readonly high: number };
@@ -55,33 +89,34 @@ function lossOnRay(
   if (a <= 0 && nz <= 0) return 0;
   const front = a <= 0 ? -a / nz : 0;
   const back = a > 0 && nz < 0 ? -a / nz : Infinity;
-  const ends = [...new Set(met.flatMap(({ low, high }) => [low, high]))].sort((p, q) => p - q);
+  const ends = Float64Array.from({ length: 2 * met.length }, (_, i) =>
+    i % 2 === 0 ? met[i >> 1]!.low : met[i >> 1]!.high,
+  ).sort();
   const n = openStretches(t, c);
   let loss = 0;
   for (let e = 0; e + 1 < ends.length; e++) {
     const from = Math.max(front, ends[e]!);
     const to = Math.min(back, ends[e + 1]!);
-    const dim =
-      1 -
-      throughAll(
-        crowns,
-        months,
-        met.filter((m) => m.low < ends[e + 1]! && m.high > ends[e]!),
-      );
+    if (!(to > from)) continue;
+    let light = 0;
     for (let i = 0; i < n; i++) {
       const low = Math.max(from, t.open[2 * i]!);
       const high = Math.min(to, t.open[2 * i + 1]!);
-      if (high > low) loss += dim * (lightBelow(high, a, nz, dome) - lightBelow(low, a, nz, dome));
+      if (high > low) light += lightBelow(high, a, nz, dome) - lightBelow(low, a, nz, dome);
     }
+    if (light > 0) loss += light * (1 - throughAll(crowns, months, met, ends[e]!, ends[e + 1]!));
   }
   return loss;
 }
 
-function throughAll({ through }: Crowns, months: MonthShares, met: readonly Met[]): number {
+/** What comes through all the crowns that span a stretch, as the months share the light. */
+function throughAll({ through }: Crowns, months: MonthShares, met: readonly Met[], low: number, high: number): number {
   let all = 0;
   for (let m = 0; m < THROUGH; m++) {
-    if (months[m] === 0) continue;
-    all += met.reduce((share, { crown }) => share * through[crown * THROUGH + m]!, months[m]!);
+    let share = months[m]!;
+    if (share === 0) continue;
+    for (const one of met) if (one.low < high && one.high > low) share *= through[one.crown * THROUGH + m]!;
+    all += share;
   }
   return all;
 }
