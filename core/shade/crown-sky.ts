@@ -111,11 +111,14 @@ function lossOnRay(
 
 /** What comes through all the crowns that span a stretch, as the months share the light. */
 function throughAll({ through }: Crowns, months: MonthShares, met: readonly Met[], low: number, high: number): number {
+  const rows: number[] = [];
+  for (const one of met) if (one.low < high && one.high > low) rows.push(one.crown * THROUGH);
+  if (rows.length === 0) return 1;
   let all = 0;
   for (let m = 0; m < THROUGH; m++) {
     let share = months[m]!;
     if (share === 0) continue;
-    for (const one of met) if (one.low < high && one.high > low) share *= through[one.crown * THROUGH + m]!;
+    for (const row of rows) share *= through[row + m]!;
     all += share;
   }
   return all;
