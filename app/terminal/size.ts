@@ -1,4 +1,5 @@
 import { Option } from 'commander';
+import type { Scheme } from '../../core/scheme/schema.ts';
 import type { Stretch } from '../../core/sizing/shaded-dates.ts';
 import type { Sweep, Swept } from '../../core/sizing/sweep.ts';
 import type { Declare } from './declare.ts';
@@ -6,23 +7,63 @@ import { number } from './option-values.ts';
 import { readScheme } from './read-input.ts';
 import { Refusal } from './refusal.ts';
 import { table } from './table.ts';
+import { today } from './today.ts';
+import { writeOutput } from './write-output.ts';
 
 type Options = {
-  readonly window: string;
+  readonly window?: readonly string[];
+  readonly wall?: string;
   readonly device: Swept;
+  readonly pdf?: string;
   readonly target?: number;
   readonly json?: true;
 };
 
 const HELP = `
-The window's own device is set to every depth in turn (glass: every g), with everything round it standing. Summer is the clear
+The own device of each window is set to every depth in turn (glass: every g), with everything round them standing. Summer is the clear
 hottest design day, winter the clear day of the winter solstice. Kept off: the dates between which no sun reaches the glass while it
 stands squarely in front of the window (noon for glass that faces the equator); a dash stands for no such dates, or the whole year.
 
 Examples:
   shadewright size scheme.json --window W3 --device overhang
   shadewright size scheme.json --window W3 --device fins --target 4000
-  shadewright size scheme.json --window W3 --device glass --json`;
+  shadewright size scheme.json --window W3,W4 --device glass --json
+  shadewright size scheme.json --wall 2.4:3 --device overhang --pdf sizing.pdf`;
+
+/** Ids with commas between them, or the option given again. */
+const ids = (text: string, before: readonly string[] | undefined): readonly string[] => [
+  ...(before ?? []),
+  ...text.split(',').map((part) => part.trim()),
+];
+
+/** The windows that the call means: those named, or those of a wall. @throws {Refusal} naming those there are */
+async function windowsFor(path: string, scheme: Scheme, { window, wall }: Options): Promise<readonly string[]> {
+  if ((window === undefined) === (wall === undefined))
+    throw new Refusal(
+      'shadewright size: name the windows with --window ID, or a wall with --wall ROOM:NUMBER, one of the two.',
+    );
+  if (window !== undefined) {
+    for (const id of window) if (!scheme.windows.some((w) => w.id === id)) throw noWindow(path, scheme, id);
+    return [...new Set(window)];
+  }
+  const [, room, number] = /^(.+):(\d+)$/.exec(wall ?? '') ?? [];
+  if (room === undefined)
+    throw new Refusal('shadewright size: --wall: write the room and the number of its wall, such as 2.4:3.');
+  const { windowsOfWall } = await import('../../core/sizing/sweep.ts');
+  const found = windowsOfWall(scheme, room, Number(number));
+  if (found.length > 0) return found;
+  const walls = scheme.windows.filter((w) => w.room === room && w.wall !== undefined).map((w) => `${room}:${w.wall}`);
+  const cure =
+    walls.length === 0 ? `room ${room} has no window in a wall` : `there are ${[...new Set(walls)].join(', ')}`;
+  throw new Refusal(`${path}: --wall ${wall}: no window stands in that wall; ${cure}.`);
+}
+
+function noWindow(path: string, scheme: Scheme, id: string): Refusal {
+  const known = scheme.windows.slice(0, 12).map((w) => w.id);
+  const cure =
+    known.length === 0 ? 'it has none' : `it has ${known.join(', ')}${scheme.windows.length > 12 ? ' …' : ''}`;
+  return new Refusal(`${path}: --window ${id}: the scheme has no such window; ${cure}.`);
+}
 
 const NAMES: { readonly [S in Swept]: string } = {
   overhang: 'depth of the overhang',
@@ -64,7 +105,7 @@ function conclusion(sweep: Sweep, target: number | undefined): string[] {
 function asText(sweep: Sweep, target: number | undefined): string {
   const isGlass = sweep.swept === 'glass';
   return [
-    `Window ${sweep.window}: ${NAMES[sweep.swept]}`,
+    `${sweep.windows.length === 1 ? 'Window' : 'Windows'} ${sweep.windows.join(', ')}: ${NAMES[sweep.swept]}`,
     '',
     table(
       [
@@ -87,13 +128,36 @@ function asText(sweep: Sweep, target: number | undefined): string {
   ].join('\n');
 }
 
+/** The sweep as a sheet on A3. */
+async function sheetOf(scheme: Scheme, swept: Sweep, target: number | undefined): Promise<Uint8Array> {
+  const [{ sizingSheet }, { contentHash }, { writeScheme }, { ENGINE_VERSION }, { printDocument }] = await Promise.all([
+    import('../../core/sheet/sizing-sheet.ts'),
+    import('../../core/scheme/hash.ts'),
+    import('../../core/scheme/write.ts'),
+    import('../../core/study/engine.ts'),
+    import('../files/print-document.ts'),
+  ]);
+  return printDocument(
+    sizingSheet({
+      scheme,
+      sweeps: [swept],
+      target_Wh: target ?? null,
+      paper: 'A3',
+      drawn: today(),
+      engine: ENGINE_VERSION,
+      hash: contentHash(writeScheme(scheme)),
+    }),
+  );
+}
+
 /** `shadewright size`: how deep a window's device must be, summer and winter side by side. */
 export const declareSize: Declare = (program, screen) => {
   program
     .command('size')
     .description("sweep the depth of a window's device or its glass, summer and winter side by side")
     .argument('<SCHEME>', 'the scheme file')
-    .requiredOption('--window <ID>', 'the window')
+    .option('--window <IDS>', 'the window, or several with commas between them, sized together', ids)
+    .option('--wall <ROOM:NUMBER>', 'all windows in one wall of a room')
     .addOption(
       new Option('--device <KIND>', 'what is sized')
         .choices(['overhang', 'fins', 'both', 'glass'])
@@ -101,32 +165,31 @@ export const declareSize: Declare = (program, screen) => {
     )
     .option(
       '--target <WH>',
-      'summer gain to come down to, in Wh through the window on the hottest design day',
+      'summer gain to come down to, in Wh through the windows on the hottest design day',
       number(0, 1e9, 'Wh'),
     )
+    .option('--pdf <FILE>', 'write the curves as a sheet')
     .option('--json', 'print JSON')
     .addHelpText('after', HELP)
-    .action(async (path: string, { window, device, target, json }: Options) => {
+    .action(async (path: string, options: Options) => {
+      const { device, target, json, pdf } = options;
       const { scheme } = await readScheme(path, screen);
-      if (!scheme.windows.some((w) => w.id === window)) {
-        const known = scheme.windows
-          .slice(0, 12)
-          .map((w) => w.id)
-          .join(', ');
-        const cure = known === '' ? 'it has none' : `it has ${known}${scheme.windows.length > 12 ? ' …' : ''}`;
-        throw new Refusal(`${path}: --window ${window}: the scheme has no such window; ${cure}.`);
-      }
+      const windows = await windowsFor(path, scheme, options);
       const [{ sweep }, { createCheckMemo }] = await Promise.all([
         import('../../core/sizing/sweep.ts'),
         import('../../core/gain/gain-memo.ts'),
       ]);
       const swept = sweep(
         scheme,
-        window,
+        windows,
         device,
         createCheckMemo(64),
         target === undefined ? {} : { target_Wh: target },
       );
+      if (pdf !== undefined) {
+        await writeOutput(pdf, await sheetOf(scheme, swept, target));
+        screen.note(`sheet written to ${pdf}\n`);
+      }
       screen.out(json ? `${JSON.stringify(swept, null, 2)}\n` : asText(swept, target));
     });
 };

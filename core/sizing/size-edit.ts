@@ -1,4 +1,4 @@
-import type { SchemeEdit } from '../scheme/edit.ts';
+import { applyEdit, type SchemeEdit } from '../scheme/edit.ts';
 import type { Scheme, Window } from '../scheme/schema.ts';
 import { darker, freeId, NEW_OVERHANG } from './lever.ts';
 import type { Swept } from './sweep.ts';
@@ -58,24 +58,9 @@ const NAMES: { readonly [S in Swept]: string } = {
   glass: 'glass',
 };
 
-/**
- * The edit that sets what a sweep swept to one of its amounts, for one window alone: its own device made so deep, a copy where
- * other windows share it, a new one where there is none, none at depth 0; or glass of that g.
- * @param amount depth [m], or g
- * @returns null when the window has it already
- * @throws {RangeError} when the scheme holds no such window
- */
-export function sizeEdit(scheme: Scheme, windowId: string, swept: Swept, amount: number): SchemeEdit | null {
-  const window = scheme.windows.find((w) => w.id === windowId);
-  if (!window) throw new RangeError(`the scheme holds no window ${JSON.stringify(windowId)}`);
-  const name =
-    swept === 'glass'
-      ? `glass of g ${amount} in ${windowId}`
-      : `${NAMES[swept]} of ${windowId} ${amount === 0 ? 'taken off' : `${amount} m deep`}`;
-  if (swept === 'glass') {
-    const edits = glassEdit(scheme, window, amount);
-    return edits.length === 0 ? null : { kind: 'together', edits, name };
-  }
+/** The edits for one window; none when it has the amount already. */
+function editsOf(scheme: Scheme, window: Window, swept: Swept, amount: number): readonly SchemeEdit[] {
+  if (swept === 'glass') return glassEdit(scheme, window, amount);
   const kinds = swept === 'both' ? (['overhang', 'fin'] as const) : ([swept === 'fins' ? 'fin' : 'overhang'] as const);
   const edits: SchemeEdit[] = [];
   let hung: readonly string[] = window.devices;
@@ -85,5 +70,39 @@ export function sizeEdit(scheme: Scheme, windowId: string, swept: Swept, amount:
     hung = next.hung;
   }
   if (hung.join('\n') !== window.devices.join('\n')) edits.push(hang(window, hung));
-  return edits.length === 0 ? null : { kind: 'together', edits, name };
+  return edits;
+}
+
+/**
+ * The edit that sets what a sweep swept to one of its amounts, for the windows named and no others: their own devices made so
+ * deep, a copy where other windows share one, a new one where there is none, none at depth 0; or glass of that g.
+ * @param amount depth [m], or g
+ * @returns null when the windows have it already
+ * @throws {RangeError} when the scheme holds no such window
+ */
+export function sizeEdit(
+  scheme: Scheme,
+  windowIds: readonly string[],
+  swept: Swept,
+  amount: number,
+): SchemeEdit | null {
+  const edits: SchemeEdit[] = [];
+  let now = scheme;
+  for (const id of windowIds) {
+    const window = now.windows.find((w) => w.id === id);
+    if (!window) throw new RangeError(`the scheme holds no window ${JSON.stringify(id)}`);
+    const own = editsOf(now, window, swept, amount);
+    if (own.length === 0) continue;
+    edits.push(...own);
+    // Ids of new entries must be free in what stands by then; a step that is refused is refused again as a whole, with its faults.
+    const next = applyEdit(now, { kind: 'together', edits: own, name: '' });
+    if (next.ok) now = next.value;
+  }
+  if (edits.length === 0) return null;
+  const listed = windowIds.join(', ');
+  const name =
+    swept === 'glass'
+      ? `glass of g ${amount} in ${listed}`
+      : `${NAMES[swept]} of ${listed} ${amount === 0 ? 'taken off' : `${amount} m deep`}`;
+  return { kind: 'together', edits, name };
 }

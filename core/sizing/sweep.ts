@@ -18,21 +18,25 @@ export type Swept = 'overhang' | 'fins' | 'both' | 'glass';
 export type SweepPoint = {
   /** Depth [m], or g. */
   readonly amount: number;
-  /** Clear hottest design day [Wh through the window]. */
+  /** Clear hottest design day [Wh through the windows]. */
   readonly summer_Wh: number;
   /** Highest step of that day [W]. */
   readonly summerPeak_W: number;
   /** Clear day of the winter solstice [Wh]. */
   readonly winter_Wh: number;
-  /** Days between which no sun reaches the glass when it stands squarely in front; null: none, all of the year, or glass. */
+  /**
+   * Days between which no sun reaches the glass when it stands squarely in front; null: none, all of the year, glass, or windows
+   * that differ in it.
+   */
   readonly keptOff: Stretch | null;
 };
 
 export type Sweep = {
-  readonly window: string;
+  /** Ids of the windows that are sized together. */
+  readonly windows: readonly string[];
   readonly swept: Swept;
   readonly unit: 'm' | '';
-  /** What the window has now; null: none, or several that differ. */
+  /** What the windows have now; null: none, or several that differ. */
   readonly now: number | null;
   /** From no device (or the clearest glass) onwards. */
   readonly points: readonly SweepPoint[];
@@ -124,13 +128,21 @@ function amountNow(scheme: Scheme, window: Window, swept: Swept): number | null 
   return depths.length > 0 && depths.every((d) => d === depths[0]) ? (depths[0] as number) : null;
 }
 
+/** What one window takes in under a setting. */
+type WindowPoint = {
+  readonly summer_W: Float64Array;
+  readonly winter_W: Float64Array;
+  readonly step_min: number;
+  readonly keptOff: Stretch | null;
+};
+
 /** One window under a setting, with everything that stands round it. */
 function probeOf(scheme: Scheme, model: Model, window: Window, swept: Swept, memo: CheckMemo, skyModel: SkyModel) {
   const winterKey = solsticeKeys(scheme.site.latitude).winter;
   const days: readonly DayOf[] = checkDayList(scheme, false).filter((d) => d.key === 'hottest' || d.key === winterKey);
   const bearing = model.windows.find((w) => w.id === window.id)?.bearing_deg ?? 0;
   const suns = swept === 'glass' || window.wall === undefined ? null : squareSuns(scheme, bearing);
-  return (amount: number): SweepPoint => {
+  return (amount: number): WindowPoint => {
     const now = withAmount(scheme, window, swept, amount);
     const built = { ...buildModel(now), solids: model.solids, trees: model.trees };
     const run = gainRun(now, built, days, memo, skyModel);
@@ -138,38 +150,76 @@ function probeOf(scheme: Scheme, model: Model, window: Window, swept: Swept, mem
     if (!form) throw new Error('a sweep has one window');
     const columns = run.windowDays(form);
     const day = (key: string): WindowDay => columns.find((c) => c.day === key) as WindowDay;
-    const step_min = run.grids[0]?.step_min ?? 0;
     return {
-      amount,
-      summer_Wh: energy_Wh(day('hottest').total_W, step_min),
-      summerPeak_W: Math.max(...day('hottest').total_W),
-      winter_Wh: energy_Wh(day(winterKey).total_W, step_min),
+      summer_W: day('hottest').total_W,
+      winter_W: day(winterKey).total_W,
+      step_min: run.grids[0]?.step_min ?? 0,
       keptOff: suns ? keptOff(suns, built, form) : null,
     };
   };
 }
 
+const added = (columns: readonly Float64Array[]): Float64Array =>
+  columns.reduce((sum, column) => sum.map((watts, i) => watts + column[i]!));
+
+/** The windows together, step by step: their peaks need not fall together. */
+function together(amount: number, points: readonly WindowPoint[]): SweepPoint {
+  const [first] = points as readonly [WindowPoint, ...WindowPoint[]];
+  const summer = added(points.map((p) => p.summer_W));
+  const alike = points.every((p) => p.keptOff?.from === first.keptOff?.from && p.keptOff?.to === first.keptOff?.to);
+  return {
+    amount,
+    summer_Wh: energy_Wh(summer, first.step_min),
+    summerPeak_W: Math.max(...summer),
+    winter_Wh: energy_Wh(added(points.map((p) => p.winter_W)), first.step_min),
+    keptOff: alike ? first.keptOff : null,
+  };
+}
+
+/** What all of some windows have now; null where one has none, or they differ. */
+function sameNow(scheme: Scheme, windows: readonly Window[], swept: Swept): number | null {
+  const all = windows.map((w) => amountNow(scheme, w, swept));
+  const [first] = all;
+  return first !== undefined && all.every((a) => a === first) ? first : null;
+}
+
+/** Ids of the windows in one wall of a room, in the order of the scheme. */
+export const windowsOfWall = (scheme: Scheme, room: string, wall: number): readonly string[] =>
+  scheme.windows.filter((w) => w.room === room && w.wall === wall).map((w) => w.id);
+
 /**
- * Sweep the depth of a window's overhang, fins or both, or the g of its glass: what it takes in on the clear hottest design day
- * and on the clear day of the winter solstice, side by side.
- * @throws {RangeError} when the scheme holds no such window
+ * Sweep the depth of the overhang, fins or both of some windows, or the g of their glass: what they take in together on the clear
+ * hottest design day and on the clear day of the winter solstice, side by side. Each gets the device as its own; where windows
+ * stand so close that one's device would shade another, that is left out.
+ * @throws {RangeError} when no window is named, or the scheme holds no such window
  */
 export function sweep(
   scheme: Scheme,
-  windowId: string,
+  windowIds: readonly string[],
   swept: Swept,
   memo: CheckMemo,
   options: SweepOptions = {},
 ): Sweep {
-  const window = scheme.windows.find((w) => w.id === windowId);
-  if (!window) throw new RangeError(`the scheme holds no window ${JSON.stringify(windowId)}`);
-  const at = probeOf(scheme, buildModel(scheme), window, swept, memo, options.skyModel ?? skyModelOf(scheme));
+  if (windowIds.length === 0) throw new RangeError('a sweep needs a window');
+  const windows = windowIds.map((id) => {
+    const window = scheme.windows.find((w) => w.id === id);
+    if (!window) throw new RangeError(`the scheme holds no window ${JSON.stringify(id)}`);
+    return window;
+  });
+  const model = buildModel(scheme);
+  const skyModel = options.skyModel ?? skyModelOf(scheme);
+  const probes = windows.map((w) => probeOf(scheme, model, w, swept, memo, skyModel));
+  const at = (amount: number): SweepPoint =>
+    together(
+      amount,
+      probes.map((probe) => probe(amount)),
+    );
   const points = (options.amounts ?? usualAmounts(swept)).map(at);
   return {
-    window: windowId,
+    windows: windowIds,
     swept,
     unit: swept === 'glass' ? '' : 'm',
-    now: amountNow(scheme, window, swept),
+    now: sameNow(scheme, windows, swept),
     points,
     meetsTarget: options.target_Wh === undefined ? null : targetOf(points, options.target_Wh, at),
     enough: swept === 'glass' ? null : enoughOf(points),

@@ -2,6 +2,10 @@ import { fileText } from '../../app/contract/file-text.ts';
 import { createCheckMemo } from '../../core/gain/gain-memo.ts';
 import { faultLine } from '../../core/scheme/fault.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
+import { contentHash } from '../../core/scheme/hash.ts';
+import { writeScheme } from '../../core/scheme/write.ts';
+import { sizingSheet } from '../../core/sheet/sizing-sheet.ts';
+import { ENGINE_VERSION } from '../../core/study/engine.ts';
 import { writeCsv } from '../../core/sheet/csv.ts';
 import { findingsTable } from '../../core/sheet/data-tables.ts';
 import { findingsReport } from '../../core/sheet/findings-report.ts';
@@ -41,7 +45,7 @@ class Years {
 /** What is done for rooms: the check, why, and what can be done about it. Each worker has a memory of its own. */
 export function roomTasks(): Pick<
   Performers,
-  'check' | 'ways' | 'sensitivity' | 'sweep' | 'compare' | 'findingsFile' | 'report'
+  'check' | 'ways' | 'sensitivity' | 'sweep' | 'sizingSheet' | 'compare' | 'findingsFile' | 'report'
 > {
   const memo = createCheckMemo(REMEMBERED);
   const years = new Years();
@@ -55,8 +59,13 @@ export function roomTasks(): Pick<
       waysToPass(held().scheme, limitSet, finding.room, finding, memo, skyModel),
     sensitivity: async ({ limitSet, skyModel, finding }, held) =>
       sensitivity(held().scheme, limitSet, finding.room, finding, memo, skyModel),
-    sweep: async ({ window, swept, target_Wh }, held) =>
-      sweep(held().scheme, window, swept, memo, target_Wh === null ? {} : { target_Wh }),
+    sizingSheet: async ({ sweep: swept, target_Wh, drawn }, held) => {
+      const { scheme } = held();
+      const hash = contentHash(writeScheme(scheme));
+      return sizingSheet({ scheme, sweeps: [swept], target_Wh, paper: 'A3', drawn, engine: ENGINE_VERSION, hash });
+    },
+    sweep: async ({ windows, swept, target_Wh }, held) =>
+      sweep(held().scheme, windows, swept, memo, target_Wh === null ? {} : { target_Wh }),
     compare: ({ variants }, held, pulse) =>
       compareSchemes(
         variants.map((variant) => ({ ...variant, limitSet: limitSetOf(variant.scheme) })),

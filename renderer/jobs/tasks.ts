@@ -83,8 +83,10 @@ export type Tasks = {
   ways: { ask: { limitSet: LimitSet; skyModel: SkyModel; finding: Finding }; answer: Ways };
   /** Which input moves a finding most. */
   sensitivity: { ask: { limitSet: LimitSet; skyModel: SkyModel; finding: Finding }; answer: readonly Bar[] };
-  /** What a window takes in over the depths of a device, or the g of its glass. `target_Wh`: summer gain to come down to. */
-  sweep: { ask: { window: string; swept: Swept; target_Wh: number | null }; answer: Sweep };
+  /** The sizing of windows on paper. */
+  sizingSheet: { ask: { sweep: Sweep; target_Wh: number | null; drawn: string }; answer: Document };
+  /** What windows take in over the depths of a device, or the g of its glass. `target_Wh`: summer gain to come down to. */
+  sweep: { ask: { windows: readonly string[]; swept: Swept; target_Wh: number | null }; answer: Sweep };
   /** Variants of the scheme side by side; the first is what the others are compared with. */
   compare: {
     ask: { variants: readonly { readonly name: string; readonly scheme: Scheme }[] };

@@ -44,7 +44,7 @@ export function SizingChart({ sweep, target_kWh, shown, onPick }: Props) {
         width={width}
         height={height}
         role="img"
-        aria-label={text.chart(sweep.window, text.kinds[sweep.swept])}
+        aria-label={text.chart(sweep.windows.join(', '), text.kinds[sweep.swept])}
         onPointerDown={pick}
         onPointerMove={pick}
       >

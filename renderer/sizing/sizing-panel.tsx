@@ -11,7 +11,8 @@ import { Choice } from '../ui/choice.tsx';
 import { dayAndMonth, fixed, signedPercent } from '../ui/format.ts';
 import { words } from '../words/words.ts';
 import { SizingChart } from './sizing-chart.tsx';
-import { picked, pointAt, pointNow, sizedWindow, swept, target_kWh } from './sizing-state.ts';
+import { picked, pointAt, pointNow, sizedWindows, swept, target_kWh } from './sizing-state.ts';
+import { writeSizing } from './write-sizing.ts';
 import './sizing.css';
 
 const text = words.sizing;
@@ -19,22 +20,22 @@ const text = words.sizing;
 /** How deep a window's overhang or fins must be, or how dark its glass: summer and winter side by side. */
 export function SizingPanel() {
   const open = committed.value;
-  const window = sizedWindow.value;
-  if (open === null || window === null) return <p class="empty-line soft">{text.none}</p>;
-  return <Sizing scheme={open} window={window} />;
+  const windows = sizedWindows.value;
+  if (open === null || windows.length === 0) return <p class="empty-line soft">{text.none}</p>;
+  return <Sizing scheme={open} windows={windows} />;
 }
 
-function Sizing({ scheme, window }: { scheme: Scheme; window: string }) {
+function Sizing({ scheme, windows }: { scheme: Scheme; windows: readonly string[] }) {
   const target = target_kWh.value;
-  const ask = { window, swept: swept.value, target_Wh: target === null ? null : target * 1000 };
-  const study = useStudy(hands.sizing, 'sweep', ask, scheme, `${window}\n${swept.value}\n${target}`);
+  const ask = { windows, swept: swept.value, target_Wh: target === null ? null : target * 1000 };
+  const study = useStudy(hands.sizing, 'sweep', ask, scheme, `${windows.join('\n')}\n${swept.value}\n${target}`);
   const sweep = study.value;
-  const isFresh = sweep !== null && sweep.window === window && sweep.swept === swept.value;
+  const isFresh = sweep !== null && sweep.windows.join() === windows.join() && sweep.swept === swept.value;
   return (
     <div class="sizing-place">
       <div class="sizing">
         <div class="sizing-tools">
-          <h3>{text.title(window)}</h3>
+          <h3>{text.title(windows)}</h3>
           <Choice<Swept>
             label={text.swept}
             value={swept.value}
@@ -115,7 +116,7 @@ function Reading({ sweep, scheme }: { sweep: Sweep; scheme: Scheme }) {
   const kWh = (wh: number): string => fixed(wh / 1000, 2);
   const change = (then: number, before: number): string =>
     before > 0 && shown !== now ? signedPercent(then / before - 1) : text.unchanged;
-  const edit = sizeEdit(scheme, sweep.window, sweep.swept, shown.amount);
+  const edit = sizeEdit(scheme, sweep.windows, sweep.swept, shown.amount);
   const meets = sweep.meetsTarget;
   const enough = enoughText(sweep);
   return (
@@ -162,6 +163,9 @@ function Reading({ sweep, scheme }: { sweep: Sweep; scheme: Scheme }) {
           <span>{meets === null ? text.missed : text.meets(amountText(sweep, meets))}</span>
         )}
         {enough === null ? null : <span class="soft">{enough}</span>}
+        <button type="button" class="link" onClick={() => void writeSizing(sweep, scheme)}>
+          {text.sheet}
+        </button>
       </div>
     </div>
   );

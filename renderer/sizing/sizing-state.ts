@@ -1,7 +1,7 @@
 import { computed, signal } from '@preact/signals';
 import type { Sweep, Swept, SweepPoint } from '../../core/sizing/sweep.ts';
 import { scheme } from '../state/document.ts';
-import { leadOf } from '../state/selection.ts';
+import { selection } from '../state/selection.ts';
 import { check } from '../state/studies.ts';
 
 /** What is sized. */
@@ -11,15 +11,22 @@ export const target_kWh = signal<number | null>(null);
 /** The setting that is looked at; null: what the window has, or the first. */
 export const picked = signal<number | null>(null);
 
-/** The window that is sized: the selected one, else the one that brings most into the worst room. */
-export const sizedWindow = computed<string | null>(() => {
+/**
+ * The windows that are sized together: those selected, those in the walls of the selected rooms, or the one that brings most into
+ * the worst room.
+ */
+export const sizedWindows = computed<readonly string[]>(() => {
   const open = scheme.value;
-  if (open === null) return null;
-  const has = (id: string | null | undefined): id is string => open.windows.some((w) => w.id === id);
-  const chosen = leadOf('window');
-  if (has(chosen)) return chosen;
+  if (open === null) return [];
+  const chosen = selection.value;
+  const ids = new Set(chosen?.ids ?? []);
+  const of = open.windows.filter((w) =>
+    chosen?.kind === 'window' ? ids.has(w.id) : chosen?.kind === 'room' && ids.has(w.room) && w.wall !== undefined,
+  );
+  if (of.length > 0) return of.map((w) => w.id);
   const worst = check.value?.value.findings[0]?.through?.window;
-  return has(worst) ? worst : (open.windows[0]?.id ?? null);
+  const one = open.windows.find((w) => w.id === worst) ?? open.windows[0];
+  return one === undefined ? [] : [one.id];
 });
 
 /** The point of a sweep nearest to an amount. */

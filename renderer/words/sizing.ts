@@ -4,7 +4,10 @@ export const sizingWords = {
     tab: 'Sizing',
     label: 'Sizing of devices and glass',
     none: 'Select a window to size its overhang, fins or glass.',
-    title: (window: string) => `Window ${window}`,
+    title: (windows: readonly string[]) =>
+      windows.length === 1 ? `Window ${windows[0]}` : `Windows ${windows.join(', ')}`,
+    sheet: 'Write this as a sheet (PDF)',
+    fileName: (windows: readonly string[]) => `sizing ${windows.join(' ')}`,
     swept: 'What is sized',
     kinds: { overhang: 'Overhang', fins: 'Fins', both: 'Both', glass: 'Glass' },
     axis: { depth: 'depth, m', g: 'g of the glass' },

@@ -30,12 +30,12 @@ describe('the edit that sets what was swept', () => {
     ['W9', 'overhang', 1.3],
     ['W4', 'glass', 0.35],
   ])('%s, %s at %f: the window then takes in what the sweep said it would', (window, swept, amount) => {
-    const said = sweep(yard, window, swept, createCheckMemo(), { amounts: [amount] }).points[0];
-    const then = made(yard, sizeEdit(yard, window, swept, amount));
-    const found = sweep(then, window, swept, createCheckMemo(), { amounts: [amount] });
+    const said = sweep(yard, [window], swept, createCheckMemo(), { amounts: [amount] }).points[0];
+    const then = made(yard, sizeEdit(yard, [window], swept, amount));
+    const found = sweep(then, [window], swept, createCheckMemo(), { amounts: [amount] });
     expect(found.points[0]).toEqual(said);
     if (amount > 0) expect(found.now).toBe(amount);
-    expect(sizeEdit(then, window, swept, amount), 'a second time there is nothing to do').toBeNull();
+    expect(sizeEdit(then, [window], swept, amount), 'a second time there is nothing to do').toBeNull();
   });
 
   test('a device that other windows share is left to them', () => {
@@ -43,16 +43,16 @@ describe('the edit that sets what was swept', () => {
       (w) => w.id !== 'W9' && w.devices.some((d) => devicesOf(yard, 'W9')[0]?.id === d),
     );
     expect(others.length).toBeGreaterThan(0);
-    const then = made(yard, sizeEdit(yard, 'W9', 'overhang', 1.3));
+    const then = made(yard, sizeEdit(yard, ['W9'], 'overhang', 1.3));
     for (const w of others) expect(devicesOf(then, w.id)).toEqual(devicesOf(yard, w.id));
   });
 
   test('at depth 0 the device comes off the window', () => {
-    const then = made(yard, sizeEdit(yard, 'W20', 'fins', 0));
+    const then = made(yard, sizeEdit(yard, ['W20'], 'fins', 0));
     expect(devicesOf(then, 'W20')).toEqual([]);
   });
 
   test('a window that is not there is our own fault', () => {
-    expect(() => sizeEdit(yard, 'nosuch', 'fins', 1)).toThrow(RangeError);
+    expect(() => sizeEdit(yard, ['nosuch'], 'fins', 1)).toThrow(RangeError);
   });
 });

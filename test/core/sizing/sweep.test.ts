@@ -4,7 +4,10 @@ import { buildModel } from '../../../core/form/build-model.ts';
 import { createCheckMemo } from '../../../core/gain/gain-memo.ts';
 import { overhangDepth_m } from '../../../core/sizing/cut-off.ts';
 import { keptOff, squareSuns } from '../../../core/sizing/shaded-dates.ts';
-import { sweep, usualAmounts } from '../../../core/sizing/sweep.ts';
+import { applyEdit } from '../../../core/scheme/edit.ts';
+import { sizeEdit } from '../../../core/sizing/size-edit.ts';
+import { sweep, usualAmounts, windowsOfWall } from '../../../core/sizing/sweep.ts';
+import { demoScheme } from '../../helpers/demo-scheme.ts';
 import { smallScheme, type SmallScheme } from '../../helpers/small-scheme.ts';
 
 const RAD = Math.PI / 180;
@@ -13,7 +16,7 @@ const canopy = (depth: number, above = 0.3) => ({ id: 'D1', kind: 'overhang', de
 describe('a sweep', () => {
   it('never takes in more behind a deeper device, in summer or in winter', () => {
     for (const swept of ['overhang', 'fins', 'both'] as const) {
-      const { points } = sweep(smallScheme(), 'W1', swept, createCheckMemo());
+      const { points } = sweep(smallScheme(), ['W1'], swept, createCheckMemo());
       expect(points.map((p) => p.amount)).toEqual(usualAmounts(swept));
       for (const [i, p] of points.entries()) {
         const before = points[i - 1];
@@ -26,7 +29,7 @@ describe('a sweep', () => {
   });
   it('of both together takes in no more than of either alone, and no less than nothing at all', () => {
     const memo = createCheckMemo();
-    const of = (swept: 'overhang' | 'fins' | 'both') => sweep(smallScheme(), 'W1', swept, memo).points;
+    const of = (swept: 'overhang' | 'fins' | 'both') => sweep(smallScheme(), ['W1'], swept, memo).points;
     const [overhang, fins, both] = [of('overhang'), of('fins'), of('both')];
     for (const [i, p] of both.entries()) {
       expect(p.summer_Wh).toBeLessThanOrEqual(Math.min(overhang[i]!.summer_Wh, fins[i]!.summer_Wh) * (1 + 1e-9));
@@ -35,7 +38,7 @@ describe('a sweep', () => {
     expect(both[0]).toEqual(overhang[0]);
   });
   it('of the glass is in proportion to g', () => {
-    const { points, now, unit } = sweep(smallScheme(), 'W1', 'glass', createCheckMemo());
+    const { points, now, unit } = sweep(smallScheme(), ['W1'], 'glass', createCheckMemo());
     expect([now, unit]).toEqual([0.6, '']);
     const [first] = points;
     for (const p of points) expect(p.summer_Wh / p.amount).toBeCloseTo(first!.summer_Wh / first!.amount, 6);
@@ -43,7 +46,7 @@ describe('a sweep', () => {
   it('keeps winter sun behind a south overhang that takes most of the summer’s: the point of an overhang', () => {
     const { points } = sweep(
       smallScheme({ devices: [canopy(0.5)], windowDevices: ['D1'] }),
-      'W1',
+      ['W1'],
       'overhang',
       createCheckMemo(),
     );
@@ -55,17 +58,17 @@ describe('a sweep', () => {
   it('meets a target at a depth that the engine confirms, and a centimetre less does not', () => {
     const memo = createCheckMemo();
     const scheme = smallScheme();
-    const open = sweep(scheme, 'W1', 'overhang', memo, { amounts: [0] }).points[0]!.summer_Wh;
-    const found = sweep(scheme, 'W1', 'overhang', memo, { target_Wh: 0.7 * open });
+    const open = sweep(scheme, ['W1'], 'overhang', memo, { amounts: [0] }).points[0]!.summer_Wh;
+    const found = sweep(scheme, ['W1'], 'overhang', memo, { target_Wh: 0.7 * open });
     const depth = found.meetsTarget as number;
-    const [less, enough] = sweep(scheme, 'W1', 'overhang', memo, { amounts: [depth - 0.01, depth] }).points;
+    const [less, enough] = sweep(scheme, ['W1'], 'overhang', memo, { amounts: [depth - 0.01, depth] }).points;
     expect(enough!.summer_Wh).toBeLessThanOrEqual(0.7 * open);
     expect(less!.summer_Wh).toBeGreaterThan(0.7 * open);
-    expect(sweep(scheme, 'W1', 'overhang', memo, { target_Wh: 0 }).meetsTarget).toBeNull();
+    expect(sweep(scheme, ['W1'], 'overhang', memo, { target_Wh: 0 }).meetsTarget).toBeNull();
   });
   it('says beyond which depth nothing worth having is gained', () => {
     const scheme = smallScheme({ devices: [canopy(0.5)], windowDevices: ['D1'] });
-    const found = sweep(scheme, 'W1', 'overhang', createCheckMemo());
+    const found = sweep(scheme, ['W1'], 'overhang', createCheckMemo());
     expect(found.now).toBe(0.5);
     const after = found.points.filter((p) => p.amount >= (found.enough as number));
     const open = found.points[0]!.summer_Wh;
@@ -75,7 +78,7 @@ describe('a sweep', () => {
   });
   it('gives the days between which each depth keeps the squarely standing sun off: the longer the deeper', () => {
     const scheme = smallScheme({ devices: [canopy(0.5)], windowDevices: ['D1'] });
-    const { points } = sweep(scheme, 'W1', 'overhang', createCheckMemo(), { amounts: [0, 0.5, 1, 1.5, 2] });
+    const { points } = sweep(scheme, ['W1'], 'overhang', createCheckMemo(), { amounts: [0, 0.5, 1, 1.5, 2] });
     expect(points.map((p) => p.keptOff === null)).toEqual([true, true, false, false, false]);
     const days = points.slice(2).map((p) => (Date.parse(p.keptOff!.to) - Date.parse(p.keptOff!.from)) / 86_400_000);
     expect(days[0]).toBeLessThan(days[1] as number);
@@ -88,13 +91,13 @@ describe('a sweep', () => {
   it('turns summer and winter over between the hemispheres', () => {
     const north = sweep(
       smallScheme({ latitude: 35, devices: [canopy(0.5)], windowDevices: ['D1'] }),
-      'W1',
+      ['W1'],
       'overhang',
       createCheckMemo(),
     );
     const south = sweep(
       smallScheme({ latitude: -35, wall: 2, devices: [canopy(0.5)], windowDevices: ['D1'] }),
-      'W1',
+      ['W1'],
       'overhang',
       createCheckMemo(),
     );
@@ -151,5 +154,42 @@ describe('when the sun stands squarely in front of a window', () => {
   it('has no such day before north glass at 51.5° north, and none shaded without a device', () => {
     expect(suns({ wall: 2 }).every((d) => d.altitude_deg === null)).toBe(true);
     expect(stretchOf({})).toBeNull();
+  });
+});
+
+describe('several windows together', () => {
+  const yard = demoScheme('tannery-yard');
+  const west = ['W4', 'W12', 'W20'];
+
+  it('take in what each takes in alone, and their peak is that of the sum', () => {
+    const memo = createCheckMemo();
+    const amounts = [0, 0.5, 1];
+    const all = sweep(yard, west, 'overhang', memo, { amounts });
+    const alone = west.map((id) => sweep(yard, [id], 'overhang', memo, { amounts }));
+    for (const [i, point] of all.points.entries()) {
+      const sum = (of: 'summer_Wh' | 'winter_Wh' | 'summerPeak_W'): number =>
+        alone.reduce((total, one) => total + (one.points[i]?.[of] ?? Number.NaN), 0);
+      expect(Math.abs(point.summer_Wh / sum('summer_Wh') - 1)).toBeLessThan(1e-9);
+      expect(Math.abs(point.winter_Wh / sum('winter_Wh') - 1)).toBeLessThan(1e-9);
+      expect(point.summerPeak_W).toBeLessThanOrEqual(sum('summerPeak_W') * (1 + 1e-9));
+    }
+    expect(all.windows).toEqual(west);
+  });
+
+  it('set together take in what was said, and no other window changes', () => {
+    const said = sweep(yard, west, 'fins', createCheckMemo(), { amounts: [0.7] }).points[0];
+    const edit = sizeEdit(yard, west, 'fins', 0.7);
+    const next = applyEdit(yard, edit as NonNullable<typeof edit>);
+    if (!next.ok) throw new Error(JSON.stringify(next.faults));
+    expect(sweep(next.value, west, 'fins', createCheckMemo(), { amounts: [0.7] }).points[0]).toEqual(said);
+    expect(sizeEdit(next.value, west, 'fins', 0.7)).toBeNull();
+    for (const w of yard.windows)
+      if (!west.includes(w.id)) expect(next.value.windows.find((x) => x.id === w.id)).toEqual(w);
+  });
+
+  it('of a wall are those that stand in it', () => {
+    expect(windowsOfWall(yard, '1.3', 3)).toEqual(['W4']);
+    expect(windowsOfWall(yard, '1.5', 1)).toEqual(['W7']);
+    expect(windowsOfWall(yard, '1.3', 0)).toEqual([]);
   });
 });
