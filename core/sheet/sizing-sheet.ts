@@ -58,7 +58,6 @@ export function sizingSheet(input: SizingSheetInput): Document {
       paper,
       true,
       `scheme ${shortHash(input.hash)}, drawn ${input.drawn}`,
-      false,
     ),
   };
 }
