@@ -1,0 +1,132 @@
+import { readFile } from 'node:fs/promises';
+import type { Download, Locator, Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, inject, test } from 'vitest';
+import { type LoopbackDesk, openLoopbackDesk } from '../helpers/loopback-desk.ts';
+
+const executable = inject('chromium');
+const PATIENT = { timeout: 15_000 };
+
+type Saved = {
+  windows: { id: string; width: number; height: number; sill: number }[];
+  rooms: { id: string }[];
+  blocks: { id: string }[];
+};
+
+describe.skipIf(executable === null)('schedules that are changed in place', () => {
+  let desk: LoopbackDesk;
+  let page: Page;
+  beforeAll(async () => {
+    desk = await openLoopbackDesk(executable as string, 'tannery-yard', false, 'example');
+    page = desk.page;
+    page.setDefaultTimeout(PATIENT.timeout);
+    await page.getByText('6 over', { exact: true }).waitFor();
+    await page.getByRole('tab', { name: /^Windows/ }).click();
+  });
+  afterAll(async () => {
+    await desk?.close();
+  });
+
+  const grid = (): Locator => page.getByRole('grid');
+  const row = (id: string): Locator => grid().getByRole('row', { name: new RegExp(`^${id} `) });
+  /** The cell of a row under a head. */
+  const cell = async (id: string, head: string): Promise<Locator> => {
+    const heads = await grid().locator('thead th').allTextContents();
+    return row(id)
+      .locator('td')
+      .nth(heads.findIndex((text) => text.replace(/[↑↓]/, '').trim().startsWith(head)));
+  };
+  const saved = async (): Promise<Saved> => {
+    const [download] = await Promise.all([page.waitForEvent('download'), page.keyboard.press('Control+s')]);
+    return JSON.parse(await readFile(await (download as Download).path(), 'utf8')) as Saved;
+  };
+  const paste = (text: string): Promise<void> =>
+    grid().evaluate((table, typed) => {
+      const data = new DataTransfer();
+      data.setData('text/plain', typed);
+      table.dispatchEvent(new ClipboardEvent('paste', { clipboardData: data, bubbles: true, cancelable: true }));
+    }, text);
+
+  test('typing replaces a cell, Enter takes it, the rooms are checked again, and undo names it', async () => {
+    await (await cell('W4', 'width')).click();
+    await page.keyboard.type('2,5');
+    await page.keyboard.press('Enter');
+    await page.getByRole('button', { name: 'Undo width of W4' }).waitFor();
+    expect(await (await cell('W4', 'width')).textContent()).toBe('2.50');
+    await page.getByText('5 over', { exact: true }).waitFor();
+    await page.keyboard.press('Control+z');
+    await page.getByText('6 over', { exact: true }).waitFor();
+    expect(await (await cell('W4', 'width')).textContent()).toBe('4.90');
+  });
+
+  test('arrows go from cell to cell, F2 opens one as it is, Escape gives up', async () => {
+    await (await cell('W4', 'width')).click();
+    await page.keyboard.press('ArrowRight');
+    await page.keyboard.press('F2');
+    const editor = page.getByLabel('height of W4', { exact: true });
+    expect(await editor.inputValue()).toBe('2.4');
+    await page.keyboard.type('9');
+    await page.keyboard.press('Escape');
+    expect(await (await cell('W4', 'height')).textContent()).toBe('2.40');
+  });
+
+  test('a value that the scheme would contradict is refused at its place, and nothing changes', async () => {
+    await (await cell('W4', 'width')).click();
+    await page.keyboard.type('50');
+    await page.keyboard.press('Enter');
+    const notice = page.getByRole('alert').filter({ hasText: 'nothing is changed' });
+    await notice.waitFor();
+    expect(await notice.textContent()).toMatch(/windows\[3\]/);
+    expect(await (await cell('W4', 'width')).textContent()).toBe('4.90');
+    await notice.getByRole('button', { name: 'Dismiss' }).click();
+  });
+
+  test('several rows change together, in one step', async () => {
+    await row('W14').click();
+    await row('W16').click({ modifiers: ['Shift'] });
+    await (await cell('W16', 'sill')).focus();
+    await page.keyboard.type('1.1');
+    await page.keyboard.press('Enter');
+    await page.getByRole('button', { name: 'Undo sill of 3 rows' }).waitFor();
+    for (const id of ['W14', 'W15', 'W16']) expect(await (await cell(id, 'sill')).textContent()).toBe('1.10');
+    await page.keyboard.press('Control+z');
+  });
+
+  test('cells are pasted from a spreadsheet as one step; with one bad cell none is taken', async () => {
+    await (await cell('W14', 'width')).click();
+    await paste('1.5\t1.3\n1.6\tlow\n');
+    const notice = page.getByRole('alert').filter({ hasText: 'nothing is changed' });
+    expect(await notice.textContent()).toMatch(/W15, height.*“low” is no number/);
+    expect(await (await cell('W14', 'width')).textContent()).toBe('1.40');
+    await paste('1.5\t1.3\n1.6\t1.2\n1.4\t1.1\n');
+    await page.getByRole('button', { name: 'Undo 6 pasted cells' }).waitFor();
+    const { windows } = await saved();
+    expect(windows.filter((w) => ['W14', 'W15', 'W16'].includes(w.id)).map((w) => [w.width, w.height])).toEqual([
+      [1.5, 1.3],
+      [1.6, 1.2],
+      [1.4, 1.1],
+    ]);
+    await page.keyboard.press('Control+z');
+  });
+
+  test('rows are added, copied and taken out; what hangs on one goes with it and comes back by undo', async () => {
+    const before = (await saved()).windows.length;
+    await row('W6').click();
+    await page.getByRole('button', { name: 'Duplicate' }).click();
+    await expect.poll(async () => (await saved()).windows.length, PATIENT).toBe(before + 1);
+    await page.getByRole('button', { name: 'Take out' }).click();
+    await page.getByRole('tab', { name: /^Rooms/ }).click();
+    await row('3.3').click();
+    await page.keyboard.press('Delete');
+    await page.getByRole('button', { name: 'Undo take out room' }).waitFor();
+    const { windows, rooms } = await saved();
+    expect(rooms.some((r) => r.id === '3.3')).toBe(false);
+    expect(windows.length).toBe(before - 1);
+    await page.keyboard.press('Control+z');
+    expect((await saved()).windows.length).toBe(before);
+    await page.getByRole('tab', { name: /^Blocks/ }).click();
+    await page.getByRole('button', { name: 'Add', exact: true }).click();
+    await page.getByRole('button', { name: 'Undo add block' }).waitFor();
+    await page.keyboard.press('Control+z');
+    expect(desk.complaints).toEqual([]);
+  });
+});
