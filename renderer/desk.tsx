@@ -9,6 +9,7 @@ import { PlaceDialog } from './place/place-dialog.tsx';
 import { isSheetsShown } from './sheets/sheet-state.ts';
 import { PrintRoot, SheetsView } from './sheets/sheets-view.tsx';
 import { AboutButton, AboutDialog } from './start/about-dialog.tsx';
+import { FactsDialog } from './start/facts-dialog.tsx';
 import { FaultsDialog } from './start/faults-dialog.tsx';
 import { Start } from './start/start.tsx';
 import { TopBar } from './start/top-bar.tsx';
@@ -71,6 +72,7 @@ export function Desk() {
       <FaultsDialog />
       <UnsavedDialog />
       <PlaceDialog />
+      <FactsDialog />
       <AboutDialog />
       <PrintRoot />
       {isOver.value ? <div class="drop-cover">{words.drop}</div> : null}

@@ -81,6 +81,12 @@ export function addRow(kind: Kind, list: ListName): void {
   if (entry !== null) addEntry(kind, list, entry);
 }
 
+/** A copy of an entry from elsewhere, under an id that is free here. */
+export function addCopy(kind: Kind, list: ListName, entry: Loose): void {
+  const scheme = committed.peek();
+  if (scheme !== null) addEntry(kind, list, { ...entry, id: freeId(scheme[list] as readonly Loose[], entry.id) });
+}
+
 /** A copy of a row under an id of its own. A window is put beside the one it is of, so that the two do not cover each other. */
 export function duplicateRow(kind: Kind, list: ListName, id: string): void {
   const scheme = committed.peek();

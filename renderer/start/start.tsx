@@ -2,7 +2,16 @@ import { signal } from '@preact/signals';
 import { useEffect } from 'preact/hooks';
 import type { Answer } from '../../app/contract/host.ts';
 import { host } from '../bridge/host.ts';
-import { isReading, openByDialog, openDemo, openRecent, openRecovered, takeOpened } from '../state/files.ts';
+import { openPlace } from '../place/place-dialog.tsx';
+import {
+  beginScheme,
+  isReading,
+  openByDialog,
+  openDemo,
+  openRecent,
+  openRecovered,
+  takeOpened,
+} from '../state/files.ts';
 import { tell } from '../state/messages.ts';
 import { version } from '../state/program.ts';
 import { Button } from '../ui/button.tsx';
@@ -41,9 +50,10 @@ export function Start() {
         <h2>{words.start.title}</h2>
         <p class="soft">{isReading.value ? words.start.reading : words.start.line}</p>
         <div class="actions">
-          <Button tone="primary" onPress={() => void openByDialog()}>
-            {words.bar.open}
+          <Button tone="primary" onPress={() => beginScheme(openPlace)}>
+            {words.bar.begin}
           </Button>
+          <Button onPress={() => void openByDialog()}>{words.bar.open}</Button>
         </div>
       </section>
       <Recovered />

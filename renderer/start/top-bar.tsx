@@ -1,10 +1,12 @@
 import { isUnsaved, redoEdit, redoName, scheme, undoEdit, undoName } from '../state/document.ts';
-import { openByDialog, save, saveAs } from '../state/files.ts';
+import { beginScheme, leaveScheme, openByDialog, save, saveAs } from '../state/files.ts';
 import { checkJob, runCheck } from '../state/studies.ts';
 import { switchTheme, theme } from '../state/theme.ts';
 import { openPlace } from '../place/place-dialog.tsx';
 import { Exports } from '../sheets/exports.tsx';
 import { Button } from '../ui/button.tsx';
+import { Menu } from '../ui/menu.tsx';
+import { openFacts } from './facts-dialog.tsx';
 import { degrees, placeOnEarth } from '../ui/format.ts';
 import { DayIcon, MoonIcon, RedoIcon, UndoIcon } from '../ui/icons.tsx';
 import { words } from '../words/words.ts';
@@ -15,7 +17,7 @@ export function TopBar() {
   return (
     <header class="top-bar">
       <Titles />
-      <Button onPress={() => void openByDialog()}>{words.bar.open}</Button>
+      <SchemeMenu />
       {isOpen ? <OpenActions /> : null}
       <ThemeSwitch />
     </header>
@@ -46,6 +48,27 @@ function Titles() {
         <span class="facts">{facts.join(' · ')}</span>
       </button>
     </div>
+  );
+}
+
+/** What can be done with schemes as a whole. */
+function SchemeMenu() {
+  const isOpen = scheme.value !== null;
+  return (
+    <Menu
+      text={words.bar.menu}
+      items={[
+        { text: words.bar.begin, onPress: () => beginScheme(openPlace) },
+        { text: words.bar.open, onPress: () => void openByDialog() },
+        ...(isOpen
+          ? [
+              { text: words.bar.saveAs, onPress: () => void saveAs() },
+              { text: words.facts.open, onPress: openFacts },
+              { text: words.bar.leave, onPress: leaveScheme },
+            ]
+          : []),
+      ]}
+    />
   );
 }
 

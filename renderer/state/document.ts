@@ -33,6 +33,15 @@ export function place(value: Scheme, where: SchemeFile, warnings: readonly Fault
   notes.value = warnings;
 }
 
+/** Takes the scheme off the desk. */
+export function leave(): void {
+  preview.value = null;
+  history.value = null;
+  saved.value = null;
+  file.value = null;
+  notes.value = [];
+}
+
 /** One edit, named for the undo button. */
 export function edit(label: string, change: (scheme: Scheme) => Scheme): void {
   preview.value = null;

@@ -1,6 +1,7 @@
 import { effect, signal } from '@preact/signals';
 import type { FileId, Opened } from '../../app/contract/host.ts';
 import type { Fault } from '../../core/scheme/fault.ts';
+import { blankScheme } from '../../core/scheme/blank.ts';
 import { DEFAULT_YEAR, type Scheme } from '../../core/scheme/schema.ts';
 import { civilOf } from '../../core/sun/civil.ts';
 import { seasons } from '../../core/sun/seasons.ts';
@@ -9,7 +10,7 @@ import { canSaveOver } from '../bridge/page-files.ts';
 import { hands } from '../jobs/hands.ts';
 import { words } from '../words/words.ts';
 import { beginSlot, letGoOfSlot } from './autosave.ts';
-import { committed, file, isUnsaved, markSaved, place } from './document.ts';
+import { committed, file, isUnsaved, leave, markSaved, place } from './document.ts';
 import { tell } from './messages.ts';
 import { civil } from './moment.ts';
 import { selectNothing } from './selection.ts';
@@ -79,6 +80,29 @@ function firstDate(scheme: Scheme): string {
 }
 
 export const takeOpened = (opened: Opened): void => afterLeaving(() => void take(opened.name, opened.bytes, opened.id));
+
+/** Where nobody knows yet where a scheme will stand: the place is asked for at once. */
+const SOMEWHERE = { latitude: 51.5, longitude: 0, zone: 'Europe/London' } as const;
+
+/**
+ * A scheme with nothing drawn, in place of the one that is open.
+ * @param then called once it is there, so that its place can be asked for
+ */
+export function beginScheme(then: () => void): void {
+  afterLeaving(() => {
+    const scheme = blankScheme({ title: words.bar.newTitle, ...SOMEWHERE, limits: 'example-gain' });
+    beginSlot(null);
+    show(scheme, { id: null, name: `${words.bar.newTitle}.scheme.json` }, [], true);
+    then();
+  });
+}
+
+/** Back to the start, where recent schemes and examples are. */
+export const leaveScheme = (): void =>
+  afterLeaving(() => {
+    selectNothing();
+    leave();
+  });
 
 export async function openByDialog(): Promise<void> {
   const reply = await host['scheme:open'](null);

@@ -3,6 +3,10 @@ export const frameWords = {
   app: 'Shadewright',
   bar: {
     label: 'Scheme',
+    menu: 'Scheme',
+    begin: 'New scheme',
+    newTitle: 'New scheme',
+    leave: 'Back to the start',
     open: 'Open…',
     save: 'Save',
     saveAs: 'Save as…',

@@ -29,6 +29,7 @@ export const scheduleWords = {
     cell: (head: string, id: string) => `${head} of ${id}`,
     add: 'Add',
     duplicate: 'Duplicate',
+    typicalGlass: 'Add a typical glass',
     remove: 'Take out',
     nothingChosen: 'Choose a row first',
     addName: (kind: string) => `add ${kind}`,

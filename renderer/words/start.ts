@@ -2,7 +2,7 @@
 export const startWords = {
   start: {
     title: 'Nothing is open',
-    line: 'Open a scheme, drop a scheme file anywhere on this window, or begin with an example.',
+    line: 'Begin a scheme, open one, drop a scheme file anywhere on this window, or begin with an example.',
     examples: 'Examples',
     recent: 'Opened lately',
     recovered: 'Work that was not saved',

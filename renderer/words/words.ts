@@ -1,4 +1,5 @@
 import { compareWords } from './compare.ts';
+import { factsWords } from './facts.ts';
 import { findingsWords } from './findings.ts';
 import { frameWords } from './frame.ts';
 import { lightWords } from './light.ts';
@@ -31,6 +32,7 @@ export const words = {
   ...sunPathWords,
   ...placeWords,
   ...weatherWords,
+  ...factsWords,
   ...findingsWords,
   ...compareWords,
   ...sheetsWords,

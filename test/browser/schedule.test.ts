@@ -129,4 +129,50 @@ describe.skipIf(executable === null)('schedules that are changed in place', () =
     await page.keyboard.press('Control+z');
     expect(desk.complaints).toEqual([]);
   });
+
+  test('glass is taken from the typical kinds that ship with the program, with where its values come from', async () => {
+    await page.getByRole('tab', { name: /^Glass/ }).click();
+    await page.getByLabel('Add a typical glass').selectOption({ label: 'double, clear, air' });
+    await row('double-clear').waitFor();
+    const { glass } = (await saved()) as unknown as { glass: { id: string; g: number; source: string }[] };
+    expect(glass.at(-1)).toMatchObject({ id: 'double-clear', g: 0.76, source: expect.stringContaining('EN 410') });
+    await page.keyboard.press('Control+z');
+  });
+
+  test('a scheme is begun from nothing: its place, a block, a room, a window, and the room is checked', async () => {
+    await page.getByRole('button', { name: 'Scheme', exact: true }).click();
+    await page.getByRole('menuitem', { name: 'New scheme' }).click();
+    const unsaved = page.getByRole('button', { name: 'Discard the changes' });
+    if (await unsaved.isVisible().catch(() => false)) await unsaved.click();
+    await page.getByRole('combobox', { name: 'Town or city' }).fill('lisbon');
+    await page
+      .getByRole('option', { name: /Lisbon/ })
+      .first()
+      .waitFor();
+    await page.keyboard.press('Enter');
+    await page.getByRole('button', { name: 'Set place', exact: true }).click();
+    await page
+      .locator('.top-bar')
+      .getByText(/38\.7\d° N 9\.1\d° W · Europe\/Lisbon/)
+      .waitFor();
+    for (const kind of ['Blocks', 'Rooms', 'Windows']) {
+      await page.getByRole('tab', { name: new RegExp(`^${kind}`) }).click();
+      await page.getByRole('button', { name: 'Add', exact: true }).click();
+      await grid().locator('tbody tr.chosen').waitFor();
+    }
+    await (await cell('W1', 'width')).click();
+    await page.keyboard.type('8');
+    await page.keyboard.press('Enter');
+    await page.locator('.room-head', { hasText: '1.1 New room' }).waitFor();
+    await page.getByRole('button', { name: 'Scheme', exact: true }).click();
+    await page.getByRole('menuitem', { name: 'Title, address and author' }).click();
+    await page.getByLabel('Title', { exact: true }).fill('Casa Nova');
+    await page.keyboard.press('Enter');
+    await page.getByRole('heading', { name: 'Casa Nova' }).waitFor();
+    await page.getByRole('button', { name: 'Scheme', exact: true }).click();
+    await page.getByRole('menuitem', { name: 'Back to the start' }).click();
+    await page.getByRole('button', { name: 'Discard the changes' }).click();
+    await page.getByRole('heading', { name: 'Nothing is open' }).waitFor();
+    expect(desk.complaints).toEqual([]);
+  });
 });
