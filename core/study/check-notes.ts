@@ -3,7 +3,9 @@ import { stands } from '../form/stands.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
 import { needsWeather } from '../limits/metric.ts';
 import type { Fault } from '../scheme/fault.ts';
-import type { Scheme } from '../scheme/schema.ts';
+import { DEFAULT_YEAR, type Scheme } from '../scheme/schema.ts';
+import { checkObserver } from '../sun/check-observer.ts';
+import { zoneDisagrees } from '../sun/zone-of-place.ts';
 import { SLIVER_m2 } from '../units/tolerance.ts';
 
 const warning = (code: string, place: string, message: string, cure: string): Fault => ({
@@ -16,7 +18,7 @@ const warning = (code: string, place: string, message: string, cure: string): Fa
 
 /**
  * What the reader of a check should know about it: rooms that no gain can be worked out for, limits that apply to nothing,
- * glass outside the fit, a hottest day that was assumed. Faults of the scheme's own making are the loader's to find.
+ * glass outside the fit, a site at a pole or with a clock from elsewhere, a hottest day that was assumed. Faults of the scheme's own making are the loader's to find.
  */
 export function checkNotes(
   scheme: Scheme,
@@ -137,6 +139,23 @@ function weatherNotes(set: LimitSet): Fault[] {
 }
 
 function siteNotes(scheme: Scheme): Fault[] {
+  return [...placeNotes(scheme), ...hottestNotes(scheme)];
+}
+
+/** A pole, where bearings lose their usual meaning, and a clock that the sun of the place does not keep. */
+function placeNotes({ site, year }: Scheme): Fault[] {
+  const atPole = checkObserver({
+    latitude_deg: site.latitude,
+    longitude_deg: site.longitude,
+    elevation_m: site.elevation,
+  });
+  const notes = atPole.ok ? atPole.notes.map((note) => ({ ...note, place: `site.${note.place}` })) : [];
+  if (!zoneDisagrees(site.zone, site.longitude, Date.UTC(year ?? DEFAULT_YEAR, 5, 21))) return notes;
+  const message = `the clock of ${site.zone} stands more than three hours from the sun at longitude ${site.longitude}°`;
+  return [...notes, warning('odd-zone', 'site.zone', message, 'check the sign of the longitude, and the zone')];
+}
+
+function hottestNotes(scheme: Scheme): Fault[] {
   if (scheme.site.hottest) return [];
   const message =
     'the hottest design day has no temperatures of its own; 30 °C with a range of 10 K is taken (gain does not depend on it)';

@@ -47,7 +47,9 @@ export function fillGaps(
       'warning',
       'filled',
       `line ${line[first]}, ${head}`,
-      `${filled} missing values were drawn straight between their neighbours`,
+      filled === 1
+        ? '1 missing value was drawn straight between its neighbours'
+        : `${filled} missing values were drawn straight between their neighbours`,
       'look whether that is good enough',
     );
   return true;

@@ -259,4 +259,19 @@ describe('a check', () => {
     expect(codes).toContainEqual(['assumed', 'site.hottest']);
     for (const n of result.notes) expect(n.cure).not.toBe('');
   });
+
+  it('says that the site is at a pole, or that its clock is not that of its longitude, and nothing of an ordinary place', async () => {
+    const at = async (site: object): Promise<(string | undefined)[][]> => {
+      const scheme = schemeOf(JSON.stringify({ ...yard, site: { ...yard.site, ...site } }));
+      const { notes } = await checked(scheme, null);
+      return notes.filter((n) => n.place.startsWith('site.')).map((n) => [n.code, n.place]);
+    };
+    expect(await at({})).toEqual([]);
+    expect(await at({ latitude: 90 })).toEqual([['at-a-pole', 'site.latitude']]);
+    expect(await at({ latitude: -90, longitude: 0, zone: 'Etc/UTC' })).toEqual([['at-a-pole', 'site.latitude']]);
+    // The sun moves 15° an hour: 44° is 2.9 h, 46° is 3.1 h.
+    expect(await at({ longitude: -151, zone: 'Australia/Sydney' })).toEqual([['odd-zone', 'site.zone']]);
+    expect(await at({ longitude: 44, zone: 'Etc/UTC' })).toEqual([]);
+    expect(await at({ longitude: 46, zone: 'Etc/UTC' })).toEqual([['odd-zone', 'site.zone']]);
+  });
 });
