@@ -20,7 +20,7 @@ export const findingsWords = {
     narrow: {
       label: 'Narrow the rooms down',
       fields: { block: 'Block', storey: 'Storey', use: 'Use', bearing: 'Facing' },
-      any: { block: 'any block', storey: 'any storey', use: 'any use', bearing: 'any side' },
+      any: { block: 'block', storey: 'storey', use: 'use', bearing: 'side' },
       block: (id: string) => `block ${id}`,
       storey: (m: string) => `floor at ${m} m`,
       bearings: { N: 'facing north', E: 'facing east', S: 'facing south', W: 'facing west' },
