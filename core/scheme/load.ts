@@ -3,6 +3,7 @@ import { checkReferences } from './check-references.ts';
 import type { Checked, Fault } from './fault.ts';
 import { jsonFaultAt, lineAndColumn } from './json-fault.ts';
 import { migrate } from './migrate.ts';
+import { misspelt } from './misspelt.ts';
 import { MOST_NESTED, nestsTooDeep } from './nesting.ts';
 import { sayIssue } from './say-issue.ts';
 import { Scheme } from './schema.ts';
@@ -106,7 +107,11 @@ export function loadScheme(text: string): Checked<Scheme> {
   const read = Scheme.safeParse(moved.value);
   if (!read.success)
     return { ok: false, faults: atMost(read.error.issues.flatMap((issue) => sayIssue(issue, moved.value))) };
-  return checkScheme(read.data);
+  const checked = checkScheme(read.data);
+  const notes = misspelt(moved.value as Record<string, unknown>);
+  return checked.ok
+    ? { ...checked, notes: [...notes, ...checked.notes] }
+    : { ok: false, faults: atMost([...checked.faults, ...notes]) };
 }
 
 /** What a scheme's own values cannot say: references, geometry and the zone. Also for a scheme that was made by editing. */
