@@ -11,7 +11,7 @@ export type Metric = {
 };
 
 const GAIN =
-  'Solar heat through the glass, step by step: beam and circumsolar light times the sunlit share of the glass and g at the sun’s angle; light of dome, horizon and ground times what the window sees of each and the hemispherical g; less frame, less closed blinds. Light that walls of other buildings and the undersides of devices throw back is left out; the ground in front counts as sunlit';
+  'Solar heat through the glass, step by step: beam and circumsolar light times the sunlit share of the glass and g at the sun’s angle; light of dome, horizon and ground times what the window sees of each and the hemispherical g; g counts the heat that the panes take up and give off inward (secondary heat, EN 410) with the light that passes, as if it came in at once; less frame, less closed blinds. Light that walls of other buildings and the undersides of devices throw back is left out; the ground in front counts as sunlit';
 
 export const METRICS: { readonly [M in MetricId]: Metric } = {
   'peak-gain': {

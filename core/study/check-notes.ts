@@ -5,7 +5,7 @@ import { needsWeather } from '../limits/metric.ts';
 import type { Fault } from '../scheme/fault.ts';
 import { DEFAULT_YEAR, type Scheme } from '../scheme/schema.ts';
 import { checkObserver } from '../sun/check-observer.ts';
-import { zoneDisagrees } from '../sun/zone-of-place.ts';
+import { zoneDisagrees } from '../sun/zone-disagrees.ts';
 import { SLIVER_m2 } from '../units/tolerance.ts';
 
 const warning = (code: string, place: string, message: string, cure: string): Fault => ({

@@ -3,6 +3,7 @@ import type { Checked, Fault } from '../scheme/fault.ts';
 import { bytesHash } from '../scheme/hash.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import type { WeatherMapping } from '../sky/weather/mapping.ts';
+import { FAR_CLOCK } from '../sky/weather/check-clock.ts';
 import { readWeather } from '../sky/weather/read-weather.ts';
 import { weatherGrid } from '../sky/weather/weather-grid.ts';
 import type { WeatherPlace } from '../sky/weather/weather-year.ts';
@@ -29,7 +30,8 @@ export type WeatherInput = {
 /**
  * A weather file read for a scheme's site.
  * @param mapping null where the file says itself what its columns are
- * @returns every fault of the file with its place and cure, or the year with its warnings
+ * @returns every fault of the file with its place and cure, one whose clock is hours from the site's sun among them, or the year
+ *          with its warnings
  */
 export function weatherInput(
   scheme: Scheme,
@@ -44,6 +46,8 @@ export function weatherInput(
   const { site } = scheme;
   const observer = { latitude_deg: site.latitude, longitude_deg: site.longitude, elevation_m: site.elevation };
   const { grid, notes } = weatherGrid(year, observer, site.zone);
+  const far = notes.filter((note) => note.code === FAR_CLOCK);
+  if (far.length > 0) return { ok: false, faults: far.map((note) => ({ ...note, level: 'error', place: 'weather' })) };
   const hash = bytesHash(bytes);
   const key = JSON.stringify([hash, mapping, observer, site.zone]);
   const { kind, place, rows, step_min } = year;

@@ -1,6 +1,5 @@
 import tzLookup from '@photostructure/tz-lookup';
-import { wrap180 } from '../units/angle.ts';
-import { isZone, offset_min } from './civil.ts';
+import { isZone } from './civil.ts';
 
 /**
  * The time zone that a place most likely keeps: a suggestion for the user to confirm. The map behind it is coarse; near
@@ -13,21 +12,4 @@ export function zoneOfPlace(latitude_deg: number, longitude_deg: number): string
   if (!(Math.abs(latitude_deg) <= 90 && Math.abs(longitude_deg) <= 180)) return null;
   const zone = tzLookup(latitude_deg, longitude_deg);
   return isZone(zone) ? zone : null;
-}
-
-/** Clocks stray from the sun by up to three hours (the west of China keeps Beijing's); more is most likely a mistake [h]. */
-const ODD_h = 3;
-
-/**
- * Whether a zone's clock stands more than three hours from the mean sun of a longitude: a sign turned round (east for west)
- * or a zone from elsewhere.
- * @param zone          of the time zone database
- * @param longitude_deg any
- * @param instant_ms    UTC, for the offset in force
- * @throws {RangeError} on no such zone
- */
-export function zoneDisagrees(zone: string, longitude_deg: number, instant_ms: number): boolean {
-  // Compared around the clock: on either side of the date line the same hour carries two dates.
-  const apart_deg = wrap180((offset_min(instant_ms, zone) / 60) * 15 - longitude_deg);
-  return Math.abs(apart_deg) / 15 > ODD_h;
 }

@@ -1,6 +1,6 @@
 import { fileText } from '../../app/contract/file-text.ts';
 import { createCheckMemo } from '../../core/gain/gain-memo.ts';
-import { faultLine } from '../../core/scheme/fault.ts';
+import type { Checked, Fault } from '../../core/scheme/fault.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import { contentHash } from '../../core/scheme/hash.ts';
 import { writeScheme } from '../../core/scheme/write.ts';
@@ -28,17 +28,14 @@ const REMEMBERED = 2000;
 /** The year of weather read last: a check after an edit need not read the file again. */
 class Years {
   #key = '';
-  #input: WeatherInput | null = null;
+  #input: Checked<WeatherInput> | null = null;
 
-  /** @throws {Error} when the file has faults, which choosing it would have told */
-  of(scheme: Scheme, { name, bytes, hash, mapping }: WeatherAtHand): WeatherInput {
+  of(scheme: Scheme, { name, bytes, hash, mapping }: WeatherAtHand): Checked<WeatherInput> {
     const key = JSON.stringify([hash, mapping, scheme.site]);
     if (this.#input !== null && key === this.#key) return this.#input;
-    const read = weatherInput(scheme, name, bytes, fileText(bytes), mapping);
-    if (!read.ok) throw new Error(read.faults.map(faultLine).join(' · '));
     this.#key = key;
-    this.#input = read.value;
-    return read.value;
+    this.#input = weatherInput(scheme, name, bytes, fileText(bytes), mapping);
+    return this.#input;
   }
 }
 
@@ -53,7 +50,12 @@ export function roomTasks(): Pick<
     check: ({ notes, weather }, held, pulse) => {
       const { scheme } = held();
       const year = weather === null ? null : years.of(scheme, weather);
-      return checkScheme(scheme, limitSetOf(scheme), notes, pulse, { memo, weather: year });
+      // A year that does not go with the site any more is told, and the design days are checked all the same.
+      const told = year === null || year.ok ? [] : year.faults.map((fault): Fault => ({ ...fault, level: 'warning' }));
+      return checkScheme(scheme, limitSetOf(scheme), [...notes, ...told], pulse, {
+        memo,
+        weather: year?.ok ? year.value : null,
+      });
     },
     ways: async ({ limitSet, skyModel, finding }, held) =>
       waysToPass(held().scheme, limitSet, finding.room, finding, memo, skyModel),

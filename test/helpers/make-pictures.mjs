@@ -6,9 +6,12 @@ import { join, resolve } from 'node:path';
 import { chromium } from 'playwright-core';
 
 const root = resolve(import.meta.dirname, '../..');
-const executablePath = [process.env.SHADEWRIGHT_BROWSER, '/usr/bin/chromium', '/usr/bin/chromium-browser', '/usr/bin/google-chrome'].find(
-  (path) => path !== undefined && existsSync(path),
-);
+const executablePath = [
+  process.env.SHADEWRIGHT_BROWSER,
+  '/usr/bin/chromium',
+  '/usr/bin/chromium-browser',
+  '/usr/bin/google-chrome',
+].find((path) => path !== undefined && existsSync(path));
 
 /** What is done before each picture is taken. */
 const PICTURES = [
@@ -59,7 +62,13 @@ const PICTURES = [
 /** The desk of the built program on the example, served to a browser of ours. */
 async function serve(folder) {
   const child = spawn(process.execPath, [join(root, 'out/main/cli.js'), 'open', '--example', 'tannery-yard'], {
-    env: { ...process.env, DISPLAY: '', WAYLAND_DISPLAY: '', SHADEWRIGHT_DATA: folder, ELECTRON_OVERRIDE_DIST_PATH: folder },
+    env: {
+      ...process.env,
+      DISPLAY: '',
+      WAYLAND_DISPLAY: '',
+      SHADEWRIGHT_DATA: folder,
+      ELECTRON_OVERRIDE_DIST_PATH: folder,
+    },
   });
   let said = '';
   const url = await new Promise((found) => {
@@ -77,7 +86,13 @@ for (const { name, width, height, theme, steps } of PICTURES) {
   const { url, stop } = await serve(folder);
   const browser = await chromium.launch({
     executablePath,
-    args: ['--no-sandbox', '--use-angle=swiftshader', '--enable-unsafe-swiftshader', '--disable-quic', '--no-first-run'],
+    args: [
+      '--no-sandbox',
+      '--use-angle=swiftshader',
+      '--enable-unsafe-swiftshader',
+      '--disable-quic',
+      '--no-first-run',
+    ],
   });
   const context = await browser.newContext({ viewport: { width, height }, locale: 'en-GB', colorScheme: theme });
   const page = await context.newPage();

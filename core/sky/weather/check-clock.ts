@@ -9,6 +9,11 @@ const STEP_min = 30;
 /** One day of so many is looked at: a clock is wrong all year or not at all. */
 const EVERY_DAYS = 5;
 
+/** A label taken for the wrong end of an hour is an hour out at most; more is another place or another zone [h]. */
+const FAR_h = 2;
+/** Code of a clock so far out that sums over the year would be nonsense: midday light under a low sun. */
+export const FAR_CLOCK = 'far-clock';
+
 /**
  * Whether sunlight and sun agree: the rows' sunlight must fall in their daytime, and global must be beam on the level and
  * diffuse. A wrong time zone, a label taken for the wrong end of its hour or the wrong place shows here, and nowhere else so
@@ -33,7 +38,7 @@ export function checkClock(weather: WeatherYear, observer: Observer): readonly F
   return [
     {
       level: 'warning',
-      code: 'clock',
+      code: hours >= FAR_h ? FAR_CLOCK : 'clock',
       place: '',
       message: `sunlight and sun do not agree: they would with every row ${hours} h ${best.shift_min > 0 ? 'later' : 'earlier'}`,
       cure: 'check which end of its interval a row is labelled by, the hours from UTC, and the place',

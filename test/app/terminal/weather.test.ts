@@ -96,11 +96,25 @@ describe('a check with a year of weather', () => {
   });
 
   test.skipIf(!existsSync(TMY3))('a TMY3 file needs no mapping', async () => {
-    const ran = await runCommand(['check', DEMO, '--weather', TMY3], tempFolder());
-    expect(ran.status).toBe(1);
+    const folder = tempFolder();
+    const scheme = JSON.parse(readFileSync(DEMO, 'utf8'));
+    Object.assign(scheme.site, { latitude: 36.1, longitude: -79.95, zone: 'America/New_York', elevation: 273 });
+    writeFileSync(join(folder, 'yard.scheme.json'), JSON.stringify(scheme));
+    const ran = await runCommand(['check', 'yard.scheme.json', '--weather', TMY3], folder);
+    expect(ran.status, ran.err).toBe(1);
     expect(ran.out).toMatch(/Weather year: 723170TYA\.CSV, TMY3, GREENSBORO/);
-    expect(ran.out, 'weather of another place is told').toMatch(/choose weather from nearer the site/);
+    expect(ran.out).not.toMatch(/choose weather from nearer the site|do not agree/);
   });
+
+  test.skipIf(!existsSync(TMY3))(
+    'weather whose light is hours from the site’s sun is refused: its sums would be nonsense',
+    async () => {
+      const ran = await runCommand(['check', DEMO, '--weather', TMY3], tempFolder());
+      expect(ran.status).toBe(2);
+      expect(ran.out).toBe('');
+      expect(ran.err).toMatch(/sunlight and sun do not agree.*5 h/);
+    },
+  );
 });
 
 test('the working of a room that is not there is refused, in every form', async () => {

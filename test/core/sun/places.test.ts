@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { foldName, type Place, searchPlaces } from '../../../core/sun/places.ts';
-import { zoneDisagrees, zoneOfPlace } from '../../../core/sun/zone-of-place.ts';
+import { zoneDisagrees } from '../../../core/sun/zone-disagrees.ts';
+import { zoneOfPlace } from '../../../core/sun/zone-of-place.ts';
 
 const place = (name: string, country: string, population: number, region = ''): Place => ({
   name,

@@ -194,7 +194,7 @@ describe.skipIf(!HERE).each(checks)('$id', (c) => {
       columns: { ...weather.columns, global_Wm2, tAir_C, beamNormal_Wm2: null, diffuse_Wm2: null },
     };
     expect(checkClock(alone, observerOf(c))).toEqual([]);
-    expect(checkClock(alone, east)[0]?.code).toBe('clock');
+    expect(checkClock(alone, east)[0]?.code).toBe('far-clock');
   });
 });
 
