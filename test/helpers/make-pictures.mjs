@@ -33,7 +33,9 @@ const PICTURES = [
     theme: 'light',
     steps: async (page) => {
       await page.getByRole('button', { name: 'Sun map' }).click();
-      await page.waitForTimeout(6000);
+      await page.getByText('sun hours', { exact: true }).click();
+      await page.waitForTimeout(9000);
+      await page.keyboard.press('Escape');
     },
   },
   {
