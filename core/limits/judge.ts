@@ -18,12 +18,15 @@ const SHOWN: readonly MetricId[] = ['peak-gain', 'mean-gain', 'day-gain', 'glazi
 const SHOWN_OF_YEAR: readonly MetricId[] = ['year-gain', 'warm-gain', 'year-peak'];
 
 /**
- * The value a limit sets for a room: by bearing of its most glazed wall where the limit says so, the strictest of equals; the
- * plain value for a room with rooflights alone.
+ * The value a limit sets for a room: that of its step of openings to floor, where the limit has steps; by bearing of its most
+ * glazed wall where it says so, the strictest of equals; the plain value for a room with rooflights alone.
  */
 export function limitValueFor(limit: Limit, facts: RoomFacts): number {
-  const values = mostGlazed(facts.windows).map((q) => limit.byBearing?.[q] ?? limit.value);
-  if (!limit.byBearing || values.length === 0) return limit.value;
+  const openings = facts.windows.reduce((sum, w) => sum + w.opening_m2, 0);
+  const share = (100 * openings) / facts.room.floor_m2;
+  const { value, byBearing } = limit.byGlazing?.find((step) => share <= step.upTo) ?? limit;
+  const values = mostGlazed(facts.windows).map((q) => byBearing?.[q] ?? value);
+  if (!byBearing || values.length === 0) return value;
   return limit.comparison === 'at-most' ? Math.min(...values) : Math.max(...values);
 }
 

@@ -10,6 +10,15 @@ export type Limit = {
   readonly unit: string;
   /** Values by true bearing of the most glazed wall: N, E, S, W; overrides `value` where given. */
   readonly byBearing?: { readonly N: number; readonly E: number; readonly S: number; readonly W: number };
+  /**
+   * Values by openings as a share of the floor [%], smallest first: the first whose `upTo` is not less counts, above all of them
+   * `value`. By bearing, where the entry says so.
+   */
+  readonly byGlazing?: readonly {
+    readonly upTo: number;
+    readonly value: number;
+    readonly byBearing?: Limit['byBearing'];
+  }[];
   /** Uses it applies to; absent: every room with a window. */
   readonly uses?: readonly string[];
   /** Design days it looks at, by key; absent: the hottest design day. */

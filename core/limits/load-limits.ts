@@ -123,6 +123,16 @@ function entryFaults(set: LimitSetFile): Fault[] {
           `there is no use ${JSON.stringify(use)}`,
           `the uses are ${list(USES)}`,
         );
+    for (const [k, step] of (limit.byGlazing ?? []).entries()) {
+      const before = limit.byGlazing?.[k - 1];
+      if (before !== undefined && step.upTo <= before.upTo)
+        say(
+          `${place}.byGlazing[${k}].upTo`,
+          'not-ascending',
+          `the step up to ${step.upTo} % follows the one up to ${before.upTo} %`,
+          'write the steps from the smallest share of openings to the largest',
+        );
+    }
     if (limit.source.trim() === '')
       say(
         `${place}.source`,

@@ -19,6 +19,18 @@ export const LimitEntry = z.looseObject({
     .looseObject({ N: value, E: value, S: value, W: value })
     .optional()
     .describe('values by true bearing of the most glazed wall; they stand in place of `value`'),
+  byGlazing: z
+    .array(
+      z.looseObject({
+        upTo: z.number().min(0).max(1000).describe('openings as a share of the floor, up to this [%]'),
+        value,
+        byBearing: z.looseObject({ N: value, E: value, S: value, W: value }).optional(),
+      }),
+    )
+    .min(1)
+    .max(20)
+    .optional()
+    .describe('values by how much of the floor the openings are, smallest first; above all of them `value` holds'),
   uses: z.array(z.string().max(60)).max(20).optional().describe('uses of rooms it applies to; absent: every room'),
   days: z
     .array(z.string().max(60))

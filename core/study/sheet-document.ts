@@ -196,7 +196,7 @@ async function sunPathSheets({ scheme, model, set, facts }: SheetJob): Promise<C
     path: sunPath(observer, site.zone, scheme.year ?? DEFAULT_YEAR),
     place: { name: scheme.title, zone: site.zone, ...observer },
     moment: null,
-    mask: hidden === null ? null : { of: `window ${set.window}`, hidden },
+    mask: hidden === null ? null : { of: placeWords(model, set.window ?? ''), hidden },
   };
   const inputs = (['stereographic', 'altitude-azimuth'] as const).map((projection) => ({ ...input, projection }));
   const value = sunPathDocument(inputs, set.paper, set.landscape, {
@@ -254,6 +254,10 @@ async function findings({ scheme, context, facts, pulse }: SheetJob): Promise<Ch
   const value = findingsReport(result, scheme, { drawn, ways, ...(language === undefined ? {} : { language }) });
   return { ok: true, value, notes: [] };
 }
+
+/** What a mask is of, in words. */
+const placeWords = (model: Model, id: string): string =>
+  model.receptors.some((r) => r.id === id && r.kind === 'point') ? `point ${id}` : `window ${id}`;
 
 const noWindow = (id: string | null): Checked<never> =>
   refuse(

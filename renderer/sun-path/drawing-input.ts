@@ -17,7 +17,16 @@ export const drawingOf = computed<Fixed | null>(() => {
   return {
     path,
     place: { name: of.title, zone: of.site.zone, ...observerOf(of) },
-    mask: mask === null || window === null ? null : { of: words.sunPath.maskOf(window), hidden: mask },
+    mask:
+      mask === null || window === null
+        ? null
+        : {
+            of: words.sunPath.maskOf(
+              window,
+              of.receptors.every((r) => r.id !== window || r.kind === 'window'),
+            ),
+            hidden: mask,
+          },
   };
 });
 

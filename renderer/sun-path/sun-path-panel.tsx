@@ -78,7 +78,7 @@ function Tools({ children }: { readonly children?: preact.ComponentChildren }) {
 
 /** Whether what hides the sky from the selected window is drawn. */
 function MaskChoice() {
-  const window = leadOf('window');
+  const window = leadOf('window') ?? leadOf('receptor');
   if (window === null) return <p class="soft">{words.sunPath.maskNone}</p>;
   return (
     <label class="check">

@@ -41,8 +41,8 @@ export const observerOf = ({ site }: Scheme): Observer => ({
   elevation_m: site.elevation,
 });
 
-/** The window whose sky is looked at, where that is wanted. */
-const maskWindow = computed(() => (isMaskWanted.value ? leadOf('window') : null));
+/** The window or the point whose sky is looked at, where that is wanted. */
+const maskWindow = computed(() => (isMaskWanted.value ? (leadOf('window') ?? leadOf('receptor')) : null));
 
 async function study(of: Scheme, window: string | null, key: string): Promise<void> {
   const ask = { observer: observerOf(of), zone: of.site.zone, year: of.year ?? DEFAULT_YEAR, window };

@@ -246,3 +246,24 @@ describe('findings', () => {
     expect(countRooms(findings)).toEqual({ over: 0, close: 0, within: 0 });
   });
 });
+
+describe('a limit that goes by how much of the floor the openings are', () => {
+  // Openings of W1 and W2 over 10 m² of floor.
+  const openings = facts.windows.reduce((sum, w) => sum + w.opening_m2, 0);
+  const share = (100 * openings) / 10;
+  const steps = [
+    { upTo: share / 2, value: 90 },
+    { upTo: share, value: 70, byBearing: { N: 1, E: 2, S: 3, W: 4 } },
+    { upTo: share * 2, value: 30 },
+  ];
+
+  it('takes the first step that the room does not pass, by its bearing where the step says so', () => {
+    // W1 has the larger opening and faces west.
+    expect(limitValueFor(limit({ byGlazing: steps }), facts)).toBe(4);
+    expect(limitValueFor(limit({ byGlazing: steps.slice(2) }), facts)).toBe(30);
+  });
+
+  it('takes the plain value above all steps', () => {
+    expect(limitValueFor(limit({ value: 12, byGlazing: steps.slice(0, 1) }), facts)).toBe(12);
+  });
+});

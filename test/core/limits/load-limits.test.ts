@@ -80,6 +80,18 @@ describe('a limit set that is wrong', () => {
     ['a value that is no number', { value: '50' }, 'limits[0].value', 'wrong-type'],
     ['no source', { source: ' ' }, 'limits[0].source', 'missing'],
     ['days for what has none', { metric: 'glazing-to-floor', unit: '%', days: ['june'] }, 'limits[0].days', 'no-days'],
+    ['hours above nothing', { metric: 'hours-above', unit: 'h' }, 'limits[0]', 'missing'],
+    [
+      'steps of openings that fall',
+      {
+        byGlazing: [
+          { upTo: 30, value: 5 },
+          { upTo: 20, value: 4 },
+        ],
+      },
+      'limits[0].byGlazing[1].upTo',
+      'not-ascending',
+    ],
     ['a comparison that is none', { comparison: 'below' }, 'limits[0].comparison', 'not-a-choice'],
   ])('with %s is refused at its place', (_, limit, place, code) => {
     const faults = faultsOf(set(limit));

@@ -37,7 +37,7 @@ test('weather of another place or by another clock is told with a cure', () => {
   expect(far.ok && far.notes.some((note) => note.cure !== '')).toBe(true);
   const turned = { ...mapping, time: { ...mapping.time, offset_h: -9 } };
   const late = weatherFacts(asText(madeYear()), turned, site, 'Africa/Lagos');
-  expect(late.ok && late.notes.some((note) => note.code === 'clock')).toBe(true);
+  expect(late.ok && late.notes.some((note) => note.code === 'far-clock')).toBe(true);
 });
 
 test('the hash of a text’s bytes is the hash of the text (FIPS 180-4, “abc”)', () => {

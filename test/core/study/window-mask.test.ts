@@ -34,6 +34,20 @@ const model = (north: number) =>
         { id: 'r', name: '', use: 'living', block: 'H', box: { at: [0, 0], width: 10, depth: 8 }, floor: 0, height: 3 },
       ],
       glass: [{ id: 'g', name: '', g: 0.6, u: 1.2, light: 0.7, panes: 2, frame: 0.2 }],
+      receptors: [
+        { id: 'p', kind: 'point', at: [5, -0.01, 2], normal: [0, -1, 0] },
+        { id: 'n', kind: 'window', block: 'H', wall: 0, from: 4, sill: 1, width: 2, height: 2 },
+        {
+          id: 'a',
+          kind: 'area',
+          outline: [
+            [20, 0],
+            [24, 0],
+            [24, 4],
+            [20, 4],
+          ],
+        },
+      ],
       windows: [{ id: 'w', room: 'r', wall: 0, from: 4, sill: 1, width: 2, height: 2, glass: 'g' }],
     }),
   );
@@ -54,6 +68,16 @@ test('a long wall hides atan((top − z)·cos(azimuth)/distance), closed form; w
 
 test('behind the window its own wall hides the sky up to nearly the zenith', () => {
   expect(hiddenAt(0, 0.5)).toBeGreaterThan(89);
+});
+
+test('a point and a neighbour’s window where a window stands see the same sky as it', () => {
+  const [window, point, neighbour] = ['w', 'p', 'n'].map((id) => windowMask(model(0), id));
+  expect(point).toEqual(window);
+  expect(neighbour).toEqual(window);
+});
+
+test('an area has no one place to look from', () => {
+  expect(windowMask(model(0), 'a')).toBeNull();
 });
 
 test('no such window, no mask', () => {
