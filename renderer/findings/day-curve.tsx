@@ -1,5 +1,6 @@
 import { fixed } from '../ui/format.ts';
 import { useSize } from '../ui/use-size.ts';
+import { ValueRules } from '../ui/value-rules.tsx';
 import { words } from '../words/words.ts';
 import { axisTop, type RoomCurve } from './room-curve.ts';
 
@@ -29,22 +30,10 @@ export function DayCurve({ curve, label, limit, at_min }: Props) {
   const hours: number[] = [];
   const hourStep = to - from > 600 ? 180 : 120;
   for (let h = Math.ceil(from / hourStep) * hourStep; h <= to; h += hourStep) hours.push(h);
-  const values: number[] = [];
-  for (let v = 0; v <= top + 1e-9; v += step) values.push(v);
   return (
     <div ref={ref} class="day-curve">
       <svg width={width} height={HEIGHT} role="img" aria-label={label}>
-        {values.map((v) => (
-          <g key={v}>
-            <path class="rule" d={`M${LEFT} ${Math.round(y(v)) + 0.5}H${width - RIGHT}`} />
-            <text class="axis" x={LEFT - 6} y={y(v) + 4.5} text-anchor="end">
-              {fixed(v, step < 1 ? 1 : 0)}
-            </text>
-          </g>
-        ))}
-        <text class="axis" x={0} y={11}>
-          W/m²
-        </text>
+        <ValueRules top={top} step={step} left={LEFT} right={width - RIGHT} y={y} unit="W/m²" />
         {width > 0 ? <Areas curve={curve} x={x} y={y} /> : null}
         {hours.map((h) => (
           <text key={h} class="axis" x={x(h)} y={HEIGHT - 5} text-anchor="middle">
