@@ -72,7 +72,6 @@ export function changesOf<Row>(list: ListName, cells: readonly CellChange<Row>[]
     const place = `${id}, ${head}`;
     const before = edit?.typed(row) ?? null;
     if (edit === undefined || before === null) {
-      // A table pasted back over itself may hold what cannot be changed, as long as it is as it was.
       faults.push(fault(place, words.schedule.fixedCell, words.schedule.fixedCure));
       continue;
     }

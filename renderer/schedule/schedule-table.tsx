@@ -1,19 +1,15 @@
-import { useLayoutEffect, useMemo, useRef, useState } from 'preact/hooks';
+import { useMemo, useRef, useState } from 'preact/hooks';
 import type { Fault } from '../../core/scheme/fault.ts';
-import { performEdit } from '../state/perform-edit.ts';
-import { isSelected, type Kind, selection, select } from '../state/selection.ts';
+import { type Kind, selection, select } from '../state/selection.ts';
 import { words } from '../words/words.ts';
-import { type Changes, changesOf, clipboardCell, readClipboard } from './cell-edit.ts';
-import { removeRows } from './row-actions.ts';
-import { RowTools } from './row-tools.tsx';
-import { BodyRow, type Editing, isNumeric, type Row, written } from './body-row.tsx';
+import { BodyRow, isNumeric, type Row } from './body-row.tsx';
 import type { Column, Schedule } from './columns.ts';
 import { pressCell } from './press-cell.ts';
+import { removeRows } from './row-actions.ts';
+import { RowTools } from './row-tools.tsx';
 import { nextOrder, type Order, sortRows } from './sort-rows.ts';
-
-/** Height of a row, as in the style sheet [px]: rows out of sight are not made. */
-const ROW_px = 28;
-const SPARE_ROWS = 12;
+import { type Cells, useCells } from './use-cells.ts';
+import { ROW_px, useVisibleRows } from './use-visible-rows.ts';
 
 /**
  * One schedule as a grid: sortable by its heads, one tab stop, arrow keys from cell to cell, the row's thing selected with it.
@@ -22,87 +18,29 @@ const SPARE_ROWS = 12;
 export function ScheduleTable<R extends Row>({ schedule, label }: { schedule: Schedule<R>; label: string }) {
   const { kind, list, columns } = schedule;
   const [order, setOrder] = useState<Order | null>(null);
-  const [range, setRange] = useState<readonly [number, number]>([0, 40]);
   const [column, setColumn] = useState(0);
-  const [editing, setEditing] = useState<Editing | null>(null);
-  const [faults, setFaults] = useState<readonly Fault[]>([]);
   const scroller = useRef<HTMLDivElement>(null);
   const rows = useMemo(() => sortRows(schedule.rows, columns, order), [schedule, order]);
   const lead = selection.value?.kind === kind ? (selection.value.ids.at(-1) ?? null) : null;
   const leadAt = lead === null ? -1 : rows.findIndex((r) => r.id === lead);
-
-  const look = (): void => {
-    const { scrollTop, clientHeight } = scroller.current as HTMLDivElement;
-    const from = Math.max(0, Math.floor(scrollTop / ROW_px) - SPARE_ROWS);
-    setRange([from, from + Math.ceil(clientHeight / ROW_px) + 2 * SPARE_ROWS]);
-  };
-  useLayoutEffect(() => {
-    const watch = new ResizeObserver(look);
-    watch.observe(scroller.current as HTMLDivElement);
-    return () => watch.disconnect();
-  }, []);
-  useLayoutEffect(() => {
-    if (leadAt >= 0) bringIntoView(scroller.current as HTMLDivElement, leadAt);
-  }, [leadAt]);
+  const { from, to, look } = useVisibleRows(scroller, rows.length, leadAt);
+  const cells = useCells(schedule, rows);
 
   const focusCell = (row: number, at: number): void => {
     const index = Math.min(rows.length - 1, Math.max(0, row));
-    const to = Math.min(columns.length - 1, Math.max(0, at));
+    const stop = Math.min(columns.length - 1, Math.max(0, at));
     const id = rows[index]?.id;
     if (id === undefined) return;
     if (lead !== id) select(kind, id);
-    setColumn(to);
+    setColumn(stop);
     requestAnimationFrame(() =>
-      scroller.current?.querySelector<HTMLElement>(`[data-row="${index}"] [data-column="${to}"]`)?.focus(),
+      scroller.current?.querySelector<HTMLElement>(`[data-row="${index}"] [data-column="${stop}"]`)?.focus(),
     );
   };
-  const edit = (index: number, at: number, begin: string | null): void => {
-    const row = rows[index];
-    const of = columns[at];
-    const typed = row === undefined ? null : (of?.edit?.typed(row) ?? null);
-    if (row === undefined || of === undefined || typed === null) return;
-    setFaults([]);
-    setEditing({ id: row.id, key: of.key, begin: begin ?? typed, isTyped: begin !== null });
-  };
-  const perform = (changes: Changes): void => {
-    if (!changes.ok) setFaults(changes.faults);
-    else setFaults(changes.edit === null ? [] : performEdit(changes.edit));
-  };
-  /** The rows that change with a row: all that are chosen, when it is one of them. */
-  const rowsWith = (id: string): readonly R[] =>
-    isSelected(kind, id) ? rows.filter((row) => isSelected(kind, row.id)) : rows.filter((row) => row.id === id);
-  const take = (of: Column<R>, id: string, text: string): void => {
-    const changed = rowsWith(id);
-    const name =
-      changed.length === 1 ? words.schedule.editOne(of.head, id) : words.schedule.editMany(of.head, changed.length);
-    perform(
-      changesOf(
-        list,
-        changed.map((row) => ({ id: row.id, row, head: of.head, edit: of.edit, text })),
-        name,
-      ),
-    );
-  };
-  const paste = (text: string): void => {
-    const cells = readClipboard(text).flatMap((line, r) =>
-      line.map((cell, c) => ({ row: rows[Math.max(0, leadAt) + r], of: columns[column + c], cell })),
-    );
-    const known = cells.flatMap(({ row, of, cell }) =>
-      row === undefined || of === undefined ? [] : [{ id: row.id, row, head: of.head, edit: of.edit, text: cell }],
-    );
-    perform(changesOf(list, known, words.schedule.pasted(known.length)));
-  };
-  const copy = (): string =>
-    rows
-      .filter((row) => isSelected(kind, row.id))
-      .map((row) => columns.map((of) => clipboardCell(of.edit?.typed(row) ?? written(of, row))).join('\t'))
-      .join('\n');
-
-  const [from, to] = [Math.min(range[0], rows.length), Math.min(range[1], rows.length)];
   return (
     <div class="schedule-place">
       <RowTools kind={kind} list={list} />
-      <CellFaults faults={faults} onDismiss={() => setFaults([])} />
+      <CellFaults faults={cells.faults} onDismiss={cells.dismiss} />
       <div class="schedule-scroller" ref={scroller} onScroll={look}>
         <table
           // biome-ignore lint/a11y/noNoninteractiveElementToInteractiveRole: a grid of data is a table
@@ -116,20 +54,11 @@ export function ScheduleTable<R extends Row>({ schedule, label }: { schedule: Sc
               at: leadAt,
               column,
               focusCell,
-              edit,
+              edit: (row, at, typed) => cells.open(rows[row], columns[at], typed),
               remove: () => removeRows(kind, list, selection.peek()?.ids ?? []),
             })
           }
-          onCopy={(event) => {
-            if (editing !== null) return;
-            event.preventDefault();
-            event.clipboardData?.setData('text/plain', copy());
-          }}
-          onPaste={(event) => {
-            if (editing !== null) return;
-            event.preventDefault();
-            paste(event.clipboardData?.getData('text/plain') ?? '');
-          }}
+          {...clipboardOf(cells, Math.max(0, leadAt), column)}
         >
           <thead>
             <tr aria-rowindex={1}>
@@ -147,18 +76,18 @@ export function ScheduleTable<R extends Row>({ schedule, label }: { schedule: Sc
                 schedule={schedule}
                 index={from + i}
                 stop={(leadAt < 0 ? from + i === 0 : row.id === lead) ? column : null}
-                editing={editing?.id === row.id ? editing : null}
+                editing={cells.editing?.id === row.id ? cells.editing : null}
                 onCell={setColumn}
-                onEdit={(at) => edit(from + i, at, null)}
+                onEdit={(at) => cells.open(row, columns[at], null)}
                 onRange={() => chooseRange(kind, rows, lead, row.id)}
                 onTake={(of, text, then) => {
-                  setEditing(null);
-                  take(of, row.id, text);
+                  cells.close();
+                  cells.take(of, row.id, text);
                   const side = then === 'right' ? 1 : then === 'left' ? -1 : 0;
                   if (then !== 'stay') focusCell(from + i + (then === 'down' ? 1 : 0), column + side);
                 }}
                 onGiveUp={() => {
-                  setEditing(null);
+                  cells.close();
                   focusCell(from + i, column);
                 }}
               />
@@ -170,6 +99,23 @@ export function ScheduleTable<R extends Row>({ schedule, label }: { schedule: Sc
       </div>
     </div>
   );
+}
+
+/** Copying and pasting whole cells; while one is being changed, its own text is meant. */
+function clipboardOf<R extends Row>(cells: Cells<R>, row: number, column: number) {
+  const isOwn = (event: ClipboardEvent): boolean => {
+    if (cells.editing !== null) return false;
+    event.preventDefault();
+    return true;
+  };
+  return {
+    onCopy: (event: ClipboardEvent) => {
+      if (isOwn(event)) event.clipboardData?.setData('text/plain', cells.copy());
+    },
+    onPaste: (event: ClipboardEvent) => {
+      if (isOwn(event)) cells.paste(event.clipboardData?.getData('text/plain') ?? '', row, column);
+    },
+  };
 }
 
 /** All rows between the one that leads and another, as they are sorted. */
@@ -228,11 +174,4 @@ function Head<R extends Row>({
       </button>
     </th>
   );
-}
-
-function bringIntoView(scroller: HTMLDivElement, index: number): void {
-  const top = index * ROW_px;
-  const room = scroller.clientHeight - 2 * ROW_px;
-  if (top < scroller.scrollTop) scroller.scrollTop = top;
-  else if (top > scroller.scrollTop + room) scroller.scrollTop = top - room;
 }

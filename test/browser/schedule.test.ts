@@ -106,6 +106,12 @@ describe.skipIf(executable === null)('schedules that are changed in place', () =
       [1.4, 1.1],
     ]);
     await page.keyboard.press('Control+z');
+    // Whole rows go over: what follows from the rest is passed over, and an id that is taken is refused.
+    await (await cell('W14', 'id')).click();
+    await paste('W14\t2.4\t2\tN\t1.9\t1.3\n');
+    await page.getByRole('button', { name: 'Undo 5 pasted cells' }).waitFor();
+    expect(await (await cell('W14', 'width')).textContent()).toBe('1.90');
+    await page.keyboard.press('Control+z');
   });
 
   test('rows are added, copied and taken out; what hangs on one goes with it and comes back by undo', async () => {

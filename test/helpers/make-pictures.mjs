@@ -102,7 +102,7 @@ for (const { name, width, height, theme, steps } of PICTURES) {
   await page.getByText('6 over', { exact: true }).waitFor();
   await steps(page);
   await page.waitForTimeout(2500);
-  await page.screenshot({ path: join(root, `assets/samples/${name}.png`) });
+  await page.screenshot({ path: join(root, `assets/pictures/${name}.png`) });
   await browser.close();
   stop();
   rmSync(folder, { recursive: true, force: true });
