@@ -21,7 +21,7 @@ type Options = {
 
 const HELP = `
 The own device of each window is set to every depth in turn (glass: every g), with everything round them standing. Summer is the clear
-hottest design day, winter the clear day of the winter solstice. Kept off: the dates between which no sun reaches the glass while it
+hottest design day, winter the clear day of the winter solstice. Kept off: the dates, with the hour that is meant, between which no sun reaches the glass while it
 stands squarely in front of the window (noon for glass that faces the equator); a dash stands for no such dates, or the whole year.
 
 Examples:
@@ -78,7 +78,8 @@ const MONTHS = 'Jan Feb Mar Apr May Jun Jul Aug Sep Oct Nov Dec'.split(' ');
 
 /** Month and day without the year, because the sun is the same from year to year within half a day. */
 const dayOfYear = (date: string): string => `${Number(date.slice(8))} ${MONTHS[Number(date.slice(5, 7)) - 1]}`;
-const stretchText = (s: Stretch | null): string => (s === null ? '–' : `${dayOfYear(s.from)} to ${dayOfYear(s.to)}`);
+const stretchText = (s: Stretch | null): string =>
+  s === null ? '–' : `${dayOfYear(s.from)} ${s.fromTime} to ${dayOfYear(s.to)} ${s.toTime}`;
 
 function enoughText(enough: number | null): string {
   if (enough === null) return 'Every step tried still saves 1 % or more of the summer gain of the window without it.';

@@ -154,7 +154,10 @@ function figures(sweep: Sweep, area: Rect): readonly Mark[] {
     line(area.x, head + 1.4, area.x + area.width, head + 1.4, RULE),
   ];
   shown.forEach((p, i) => {
-    const off = p.keptOff === null ? '–' : `${dayWords(p.keptOff.from)} to ${dayWords(p.keptOff.to)}`;
+    const off =
+      p.keptOff === null
+        ? '–'
+        : `${dayWords(p.keptOff.from)} ${p.keptOff.fromTime} to ${dayWords(p.keptOff.to)} ${p.keptOff.toTime}`;
     const texts = [
       amountWords(sweep, p.amount),
       fixed(p.summer_Wh / 1000, 2),
@@ -225,6 +228,6 @@ const HOW: Note = {
   heading: 'How it was worked out',
   lines: [
     'Each setting in turn, with everything that stands round the windows; heat through the glass in five-minute steps under a clear sky. Summer is the hottest design day, winter the day of the solstice.',
-    'Sun kept off: the dates between which no sun reaches the glass while it stands squarely in front of it, which for glass that faces the equator is noon.',
+    'Sun kept off: the dates, with the hour that is meant, between which no sun reaches the glass while it stands squarely in front of it, which for glass that faces the equator is noon.',
   ],
 };

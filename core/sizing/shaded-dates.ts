@@ -10,18 +10,29 @@ import { DEG, wrap180 } from '../units/angle.ts';
 /** The sun of one day when it stands most squarely in front of a bearing. */
 export type SquareSun = {
   readonly date: string;
+  /** Time of the site's clock then, HH:MM, to five minutes; empty where it does not stand so. */
+  readonly time: string;
   /** True altitude; null: on this day the sun does not stand squarely in front above the horizon. */
   readonly altitude_deg: number | null;
   readonly azimuth_deg: number;
 };
 
-/** A stretch of the year, first and last day, both counted. It may run over the new year. */
-export type Stretch = { readonly from: string; readonly to: string };
+/** A stretch of the year, first and last day, both counted, each with the hour that is meant. It may run over the new year. */
+export type Stretch = {
+  readonly from: string;
+  readonly to: string;
+  /** Times of the site's clock, HH:MM, at which the sun stands squarely in front on those days. */
+  readonly fromTime: string;
+  readonly toTime: string;
+};
 
 /** Minutes between the samples in which the squarest sun of a day is looked for. */
 const STEP_MIN = 5;
 /** A sun further off the bearing than this does not stand squarely in front [°]. */
 const SQUARE_deg = 5;
+
+const clockText = (minutes: number): string =>
+  `${String(Math.floor(minutes / 60)).padStart(2, '0')}:${String(Math.floor(minutes % 60)).padStart(2, '0')}`;
 
 /**
  * Day by day through the scheme's year: where the sun stands when its azimuth comes nearest to a bearing. Before glass that
@@ -34,7 +45,7 @@ export function squareSuns(scheme: Scheme, bearing_deg: number): readonly Square
   const days = new Date(Date.UTC(year, 1, 29)).getUTCMonth() === 1 ? 366 : 365;
   for (let d = 0; d < days; d++) {
     const date = new Date(Date.UTC(year, 0, 1 + d)).toISOString().slice(0, 10);
-    const { instant_ms } = daySamples(date, zone, STEP_MIN);
+    const { instant_ms, clock_min } = daySamples(date, zone, STEP_MIN);
     const table = sunTable(instant_ms, { latitude_deg, longitude_deg, elevation_m });
     let best = -1;
     let nearest = SQUARE_deg;
@@ -47,8 +58,13 @@ export function squareSuns(scheme: Scheme, bearing_deg: number): readonly Square
     }
     suns.push(
       best < 0
-        ? { date, altitude_deg: null, azimuth_deg: bearing_deg }
-        : { date, altitude_deg: table.altitude_rad[best]! / DEG, azimuth_deg: table.azimuth_rad[best]! / DEG },
+        ? { date, time: '', altitude_deg: null, azimuth_deg: bearing_deg }
+        : {
+            date,
+            time: clockText(clock_min[best]!),
+            altitude_deg: table.altitude_rad[best]! / DEG,
+            azimuth_deg: table.azimuth_rad[best]! / DEG,
+          },
     );
   }
   return suns;
@@ -76,6 +92,7 @@ export function keptOff(suns: readonly SquareSun[], model: Model, window: Window
     while (dark[(start + run) % n]) run++;
     if (run > best.run) best = { at: start, run };
   }
-  const dateAt = (i: number): string => (suns[i % n] as SquareSun).date;
-  return best.run === 0 ? null : { from: dateAt(best.at), to: dateAt(best.at + best.run - 1) };
+  if (best.run === 0) return null;
+  const [first, last] = [suns[best.at] as SquareSun, suns[(best.at + best.run - 1) % n] as SquareSun];
+  return { from: first.date, to: last.date, fromTime: first.time, toTime: last.time };
 }

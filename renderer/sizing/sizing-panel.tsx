@@ -107,6 +107,8 @@ function enoughText(sweep: Sweep): string | null {
   return sweep.enough === 0 ? text.never : text.enough(amountText(sweep, sweep.enough));
 }
 
+const dayAndHour = (date: string, time: string): string => `${dayAndMonth(date)}, ${time}`;
+
 /** What the picked setting brings against what the window has now, and the way to set it. */
 function Reading({ sweep, scheme }: { sweep: Sweep; scheme: Scheme }) {
   const now = pointNow(sweep);
@@ -156,7 +158,10 @@ function Reading({ sweep, scheme }: { sweep: Sweep; scheme: Scheme }) {
           <span class="soft">
             {shown.keptOff === null
               ? text.keptOffNever
-              : text.keptOff(dayAndMonth(shown.keptOff.from), dayAndMonth(shown.keptOff.to))}
+              : text.keptOff(
+                  dayAndHour(shown.keptOff.from, shown.keptOff.fromTime),
+                  dayAndHour(shown.keptOff.to, shown.keptOff.toTime),
+                )}
           </span>
         )}
         {target_kWh.value === null ? null : (

@@ -143,6 +143,12 @@ describe('when the sun stands squarely in front of a window', () => {
     const least = declination(noons[0] as Date);
     const last = noons.filter((day) => declination(day) >= least).at(-1);
     expect(stretch?.to).toBe(last?.toISOString().slice(0, 10));
+    // The hour that is meant: before south glass that of the sun’s transit, within the five minutes of a sample.
+    const transit = Astronomy.SearchHourAngle(Astronomy.Body.Sun, observer, 0, new Date('2025-05-21T00:00:00Z')).time
+      .date;
+    const [hour, minute] = (stretch?.fromTime ?? '').split(':').map(Number) as [number, number];
+    const clock = transit.getUTCHours() * 60 + transit.getUTCMinutes();
+    expect(Math.abs(hour * 60 + minute - clock)).toBeLessThanOrEqual(5);
   });
   it('runs over the new year in the south', () => {
     const summer = suns({ latitude: -35, wall: 2 }).find((d) => d.date === '2025-11-20')?.altitude_deg as number;
