@@ -2,6 +2,7 @@ import { buildModel } from '../form/build-model.ts';
 import type { CheckMemo } from '../gain/gain-memo.ts';
 import type { Finding } from '../limits/finding.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
+import { needsWeather } from '../limits/metric.ts';
 import { shown } from '../limits/reason.ts';
 import type { SchemeEdit } from '../scheme/edit.ts';
 import { type Fault, faultLine } from '../scheme/fault.ts';
@@ -24,7 +25,7 @@ type Trial = { readonly lever: Lever; readonly windows: readonly Window[] };
  * themselves say why.
  * @param roomId   of the room
  * @param finding  of the check: which limit is meant
- * @returns        no ways for a finding that is not over, or has no limit; what it rests on all the same
+ * @returns        no ways for a finding that is not over, has no limit, or is of a year of weather; what it rests on all the same
  * @throws {RangeError} when the set holds no such limit, or the scheme no such room
  */
 export function waysToPass(
@@ -40,7 +41,8 @@ export function waysToPass(
   const probe = roomProbe(scheme, buildModel(scheme), limit, limitSet.close, roomId, memo, skyModel);
   const price = probe.price(null);
   const windows = scheme.windows.filter((w) => w.room === roomId);
-  const over = finding.verdict === 'over';
+  // A trial on a year of weather takes seconds, and a bisection dozens of them: such limits are left to sizing and to hand.
+  const over = finding.verdict === 'over' && !needsWeather(limit.metric);
   const ways = over ? leversFor(scheme, windows, finding).map((trials) => bestOf(probe, trials)) : [];
   return { finding, price, restsOn: restsOn(probe, null, finding), ways };
 }

@@ -16,6 +16,7 @@ import { Disc } from '../ui/disc.tsx';
 import { roomCurve } from './room-curve.ts';
 import { SensitivityOf } from './sensitivity.tsx';
 import { WaysOf } from './ways.tsx';
+import { YearFacts } from './year-facts.tsx';
 import { stepValue, workingText } from './working-text.ts';
 
 type Props = { readonly of: RoomFindings; readonly result: CheckResult; readonly scheme: Scheme };
@@ -35,6 +36,7 @@ export function RoomDetail({ of, result, scheme }: Props) {
       ))}
       <CurveOf finding={finding} result={result} />
       <ShowMoment finding={finding} zone={result.zone} />
+      <YearFacts room={finding.room} result={result} />
       <WaysOf key={`ways ${finding.limit}`} finding={finding} result={result} scheme={scheme} />
       <SensitivityOf key={`moves ${finding.limit}`} finding={finding} result={result} scheme={scheme} />
       <WorkingOf key={finding.limit} finding={finding} result={result} scheme={scheme} />

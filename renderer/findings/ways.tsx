@@ -52,6 +52,7 @@ function Found({ study, room }: { study: ReturnType<typeof useStudy<'ways'>>; ro
   return (
     <div class={study.isWorking ? 'being-redone' : ''}>
       {passing.length > 0 ? <p class="soft">{text.line}</p> : null}
+      {ways.ways.length === 0 ? <p class="soft">{text.notForYear}</p> : null}
       <ul class="way-list">
         {passing.map((way) => (
           <Passing key={way.lever} way={way} ways={ways} room={room} />

@@ -100,6 +100,15 @@ function Values({ limit, isOwn }: Props) {
           onNumber={(above) => changeLimit(limit.id, { above })}
         />
       ) : null}
+      {limit.byGlazing === undefined ? null : (
+        <p class="wide soft">
+          {text.byGlazing}{' '}
+          {limit.byGlazing
+            .map((step) => text.step(fixed(step.upTo, 0), fixed(step.value, decimalsFor(step.value)), limit.unit))
+            .join('; ')}
+          .
+        </p>
+      )}
       <label class="tick wide">
         <input
           type="checkbox"

@@ -62,6 +62,8 @@ export const findingsWords = {
       winter: (change: string) => `winter sun ${change}`,
       daylight: (change: string) => `daylight ${change}`,
       none: 'unchanged',
+      notForYear:
+        'Ways are looked for on the design days; for a limit on the weather year try a change by hand or by sizing.',
       cannot: 'What does not do it alone',
       lever: {
         overhang: 'Overhang',
@@ -77,6 +79,13 @@ export const findingsWords = {
       applied: (what: string) => `Applied: ${what}.`,
       undo: 'Undo',
       caution: 'What projects is a load on the structure: ask an engineer. Check the change against your local code.',
+    },
+    year: {
+      title: 'Over the weather year',
+      whole: 'whole year, per m² of floor',
+      warm: 'warm half of it',
+      highest: 'highest',
+      source: (file: string, kind: string) => `By ${file} (${kind}); cloud and all.`,
     },
     sensitivity: {
       title: 'What moves it most',

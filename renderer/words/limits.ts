@@ -22,6 +22,8 @@ export const limitsWords = {
     newSource: 'our own brief: write where the value comes from',
     line: (name: string, sign: string, value: string, unit: string) => `${name}: ${sign} ${value} ${unit}`,
     byBearing: 'by side',
+    byGlazing: 'Other values by how much of the floor the openings are (changed in the file):',
+    step: (share: string, value: string, unit: string) => `up to ${share} %, ${value} ${unit}`,
     fields: {
       name: 'Name',
       metric: 'What is measured',

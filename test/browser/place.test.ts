@@ -153,6 +153,12 @@ describe.skipIf(executable === null)('place, sun path and weather', () => {
       mapping: { headLine: 2, delimiter: ';', time: { columns: ['when'], offset_h: 1 } },
     });
     expect(saved).not.toContain(rows[4000]?.when);
+    // The rooms are checked over it as well.
+    await page.locator('.room-head').first().click();
+    const year = page.getByRole('region', { name: 'Over the weather year' });
+    await year.getByText('By roof.csv').waitFor();
+    expect(await year.textContent()).toMatch(/whole year, per m² of floor[\d,.]+ kWh\/m².*highest.*W\/m²/);
+    await page.locator('.room-head').first().click();
   });
 
   test('a file that is no weather is refused with its cure, and what the scheme goes by stays', async () => {
