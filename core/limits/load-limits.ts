@@ -7,6 +7,7 @@ import { sayIssue } from '../scheme/say-issue.ts';
 import { Room } from '../scheme/schema.ts';
 import type { LimitSet } from './limit-set.ts';
 import { isMetric, METRIC_IDS, METRICS } from './metric.ts';
+import type { MetricId } from './metric-id.ts';
 
 const USES: readonly string[] = Room.shape.use.options;
 const DAY_KEYS: readonly string[] = CHECK_DAYS.map((d) => d.key);
@@ -61,85 +62,71 @@ function failed(code: string, message: string, cure: string): Checked<never> {
   return { ok: false, faults: [{ level: 'error', code, place: '', message, cure }] };
 }
 
+type Entry = LimitSetFile['limits'][number];
+type Say = (place: string, code: string, message: string, cure: string) => void;
+
 /** What the shape of the file cannot tell: metrics, days, uses and units that do not exist, ids used twice. */
 function entryFaults(set: LimitSetFile): Fault[] {
   const faults: Fault[] = [];
   const seen = new Map<string, number>();
-  const say = (place: string, code: string, message: string, cure: string): void => {
-    faults.push({ level: 'error', code, place, message, cure });
-  };
   for (const [i, limit] of set.limits.entries()) {
-    const place = `limits[${i}]`;
+    const say: Say = (field, code, message, cure) => {
+      const place = field === '' ? `limits[${i}]` : `limits[${i}].${field}`;
+      faults.push({ level: 'error', code, place, message, cure });
+    };
     const first = seen.get(limit.id);
-    if (first !== undefined)
-      say(
-        `${place}.id`,
-        'same-id',
-        `the id ${limit.id} is also that of limits[${first}]`,
-        'give each limit its own id',
-      );
-    else seen.set(limit.id, i);
-    if (!isMetric(limit.metric)) {
-      const cure = `the metrics are ${list(METRIC_IDS)}`;
-      say(`${place}.metric`, 'unknown-metric', `there is no metric ${JSON.stringify(limit.metric)}`, cure);
-      continue;
+    if (first === undefined) seen.set(limit.id, i);
+    else say('id', 'same-id', `the id ${limit.id} is also that of limits[${first}]`, 'give each limit its own id');
+    if (isMetric(limit.metric)) {
+      metricFaults(limit, limit.metric, say);
+      listFaults(limit, say);
+    } else {
+      const message = `there is no metric ${JSON.stringify(limit.metric)}`;
+      say('metric', 'unknown-metric', message, `the metrics are ${list(METRIC_IDS)}`);
     }
-    const metric = METRICS[limit.metric];
-    if (limit.unit !== metric.unit) {
-      const message = `${limit.metric} is in ${metric.unit}, got ${JSON.stringify(limit.unit)}`;
-      say(`${place}.unit`, 'wrong-unit', message, `write "unit": "${metric.unit}" and the value in it`);
-    }
-    if (limit.metric === 'mean-gain' && limit.clock === undefined)
-      say(
-        place,
-        'missing',
-        'a mean needs the clock hours it is taken over',
-        'add "clock": ["07:30", "17:30"] or your own hours',
-      );
-    if (limit.metric === 'hours-above' && limit.above === undefined)
-      say(
-        place,
-        'missing',
-        'hours-above needs the gain that is to be stayed under',
-        'add "above": 25, in W per m² of floor',
-      );
-    if (limit.clock && clockMinutes(limit.clock[0]) === clockMinutes(limit.clock[1]))
-      say(`${place}.clock`, 'empty-stretch', 'the clock hours begin and end together', 'write two different times');
-    if (limit.days && !metric.byDay)
-      say(`${place}.days`, 'no-days', `${limit.metric} does not look at single days`, 'take days out');
-    for (const [k, day] of (limit.days ?? []).entries())
-      if (!DAY_KEYS.includes(day))
-        say(
-          `${place}.days[${k}]`,
-          'unknown-day',
-          `there is no design day ${JSON.stringify(day)}`,
-          `the days are ${list(DAY_KEYS)}`,
-        );
-    for (const [k, use] of (limit.uses ?? []).entries())
-      if (!USES.includes(use))
-        say(
-          `${place}.uses[${k}]`,
-          'unknown-use',
-          `there is no use ${JSON.stringify(use)}`,
-          `the uses are ${list(USES)}`,
-        );
-    for (const [k, step] of (limit.byGlazing ?? []).entries()) {
-      const before = limit.byGlazing?.[k - 1];
-      if (before !== undefined && step.upTo <= before.upTo)
-        say(
-          `${place}.byGlazing[${k}].upTo`,
-          'not-ascending',
-          `the step up to ${step.upTo} % follows the one up to ${before.upTo} %`,
-          'write the steps from the smallest share of openings to the largest',
-        );
-    }
-    if (limit.source.trim() === '')
-      say(
-        `${place}.source`,
-        'missing',
-        'the limit does not say where it comes from',
-        'name the code, page and edition, or "our own brief"',
-      );
   }
   return faults;
+}
+
+/** What a metric asks of its limit. */
+function metricFaults(limit: Entry, id: MetricId, say: Say): void {
+  const metric = METRICS[id];
+  if (limit.unit !== metric.unit) {
+    const message = `${id} is in ${metric.unit}, got ${JSON.stringify(limit.unit)}`;
+    say('unit', 'wrong-unit', message, `write "unit": "${metric.unit}" and the value in it`);
+  }
+  if (id === 'mean-gain' && limit.clock === undefined) {
+    const cure = 'add "clock": ["07:30", "17:30"] or your own hours';
+    say('', 'missing', 'a mean needs the clock hours it is taken over', cure);
+  }
+  if (id === 'hours-above' && limit.above === undefined) {
+    const cure = 'add "above": 25, in W per m² of floor';
+    say('', 'missing', 'hours-above needs the gain that is to be stayed under', cure);
+  }
+  if (limit.days && !metric.byDay) say('days', 'no-days', `${id} does not look at single days`, 'take days out');
+}
+
+/** What does not depend on the metric: hours, days, uses, steps, and where the value comes from. */
+function listFaults(limit: Entry, say: Say): void {
+  if (limit.clock && clockMinutes(limit.clock[0]) === clockMinutes(limit.clock[1]))
+    say('clock', 'empty-stretch', 'the clock hours begin and end together', 'write two different times');
+  for (const [k, day] of (limit.days ?? []).entries())
+    if (!DAY_KEYS.includes(day)) {
+      const message = `there is no design day ${JSON.stringify(day)}`;
+      say(`days[${k}]`, 'unknown-day', message, `the days are ${list(DAY_KEYS)}`);
+    }
+  for (const [k, use] of (limit.uses ?? []).entries())
+    if (!USES.includes(use))
+      say(`uses[${k}]`, 'unknown-use', `there is no use ${JSON.stringify(use)}`, `the uses are ${list(USES)}`);
+  for (const [k, step] of (limit.byGlazing ?? []).entries()) {
+    const before = limit.byGlazing?.[k - 1];
+    if (before === undefined || step.upTo > before.upTo) continue;
+    const message = `the step up to ${step.upTo} % follows the one up to ${before.upTo} %`;
+    const cure = 'write the steps from the smallest share of openings to the largest';
+    say(`byGlazing[${k}].upTo`, 'not-ascending', message, cure);
+  }
+  if (limit.source.trim() === '') {
+    const cure = 'name the code, page and edition, or "our own brief"';
+    say('source', 'missing', 'the limit does not say where it comes from', cure);
+  }
 }

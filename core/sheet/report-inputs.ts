@@ -39,20 +39,17 @@ export function deviceWords(d: Device): string {
   }
 }
 
-/** The scheme in full: whoever has these pages can work everything out again. Lengths in metres, angles in degrees. */
-export function inputsPages(flow: Flow, report: Report): void {
-  const { scheme } = report;
-  flow.turn('Inputs');
-  flow.say('Lengths in metres, angles in degrees, axes of the drawing: x east, y to the top of the drawing, z up.');
-  const put = (title: string, columns: readonly Column[], rows: readonly (readonly string[])[]): void => {
-    if (rows.length === 0) return;
-    flow.heading(title, 30);
-    table(flow, columns, rows);
-    flow.gap(2);
-  };
-  put(
-    'Blocks',
-    [
+/** One list of the scheme as a table. */
+type InputTable = {
+  readonly title: string;
+  readonly columns: readonly Column[];
+  readonly rows: (scheme: Scheme) => readonly (readonly string[])[];
+};
+
+const TABLES: readonly InputTable[] = [
+  {
+    title: 'Blocks',
+    columns: [
       { head: 'id', width: 18 },
       { head: 'name', width: 34 },
       { head: 'standing', width: 22 },
@@ -60,11 +57,12 @@ export function inputsPages(flow: Flow, report: Report): void {
       { head: 'height', width: 18, align: 'end' },
       { head: 'outline', width: 72 },
     ],
-    scheme.blocks.flatMap((b) => withShape([b.id, b.name, b.standing, fixed(b.base, 2), fixed(b.height, 2)], b)),
-  );
-  put(
-    'Rooms',
-    [
+    rows: (scheme) =>
+      scheme.blocks.flatMap((b) => withShape([b.id, b.name, b.standing, fixed(b.base, 2), fixed(b.height, 2)], b)),
+  },
+  {
+    title: 'Rooms',
+    columns: [
       { head: 'id', width: 18 },
       { head: 'name', width: 34 },
       { head: 'use', width: 22 },
@@ -73,11 +71,12 @@ export function inputsPages(flow: Flow, report: Report): void {
       { head: 'height', width: 16, align: 'end' },
       { head: 'outline', width: 56 },
     ],
-    scheme.rooms.flatMap((r) => withShape([r.id, r.name, r.use, r.block, fixed(r.floor, 2), fixed(r.height, 2)], r)),
-  );
-  put(
-    'Windows',
-    [
+    rows: (scheme) =>
+      scheme.rooms.flatMap((r) => withShape([r.id, r.name, r.use, r.block, fixed(r.floor, 2), fixed(r.height, 2)], r)),
+  },
+  {
+    title: 'Windows',
+    columns: [
       { head: 'id', width: 18 },
       { head: 'room', width: 18 },
       { head: 'wall', width: 20 },
@@ -89,22 +88,23 @@ export function inputsPages(flow: Flow, report: Report): void {
       { head: 'glass', width: 16 },
       { head: 'devices', width: 30 },
     ],
-    scheme.windows.map((w) => [
-      w.id,
-      w.room,
-      w.roof ? `roof at ${w.roof.at.map(plain).join(', ')}` : String(w.wall ?? ''),
-      fixed(w.from, 2),
-      fixed(w.sill, 2),
-      fixed(w.width, 2),
-      fixed(w.height, 2),
-      fixed(w.reveal, 2),
-      w.glass,
-      w.devices.join(', '),
-    ]),
-  );
-  put(
-    'Glass',
-    [
+    rows: (scheme) =>
+      scheme.windows.map((w) => [
+        w.id,
+        w.room,
+        w.roof ? `roof at ${w.roof.at.map(plain).join(', ')}` : String(w.wall ?? ''),
+        fixed(w.from, 2),
+        fixed(w.sill, 2),
+        fixed(w.width, 2),
+        fixed(w.height, 2),
+        fixed(w.reveal, 2),
+        w.glass,
+        w.devices.join(', '),
+      ]),
+  },
+  {
+    title: 'Glass',
+    columns: [
       { head: 'id', width: 18 },
       { head: 'name', width: 58 },
       { head: 'g', width: 15, align: 'end' },
@@ -114,28 +114,29 @@ export function inputsPages(flow: Flow, report: Report): void {
       { head: 'coating', width: 18, align: 'end' },
       { head: 'frame', width: 25, align: 'end' },
     ],
-    scheme.glass.map((g) => [
-      g.id,
-      g.name,
-      fixed(g.g, 2),
-      fixed(g.u, 2),
-      fixed(g.light, 2),
-      String(g.panes),
-      String(g.coating),
-      fixed(g.frame, 2),
-    ]),
-  );
-  put(
-    'Devices',
-    [
+    rows: (scheme) =>
+      scheme.glass.map((g) => [
+        g.id,
+        g.name,
+        fixed(g.g, 2),
+        fixed(g.u, 2),
+        fixed(g.light, 2),
+        String(g.panes),
+        String(g.coating),
+        fixed(g.frame, 2),
+      ]),
+  },
+  {
+    title: 'Devices',
+    columns: [
       { head: 'id', width: 18 },
       { head: 'what it is', width: 162 },
     ],
-    scheme.devices.map((d) => [d.id, deviceWords(d)]),
-  );
-  put(
-    'Trees',
-    [
+    rows: (scheme) => scheme.devices.map((d) => [d.id, deviceWords(d)]),
+  },
+  {
+    title: 'Trees',
+    columns: [
       { head: 'id', width: 18 },
       { head: 'name', width: 36 },
       { head: 'at', width: 30 },
@@ -143,13 +144,27 @@ export function inputsPages(flow: Flow, report: Report): void {
       { head: 'spread', width: 18, align: 'end' },
       { head: 'lets through, January to December', width: 60 },
     ],
-    scheme.trees.map((t) => [
-      t.id,
-      t.name,
-      t.at.map(plain).join(', '),
-      fixed(t.height, 1),
-      fixed(t.spread, 1),
-      t.transmittance.join(' '),
-    ]),
-  );
+    rows: (scheme) =>
+      scheme.trees.map((t) => [
+        t.id,
+        t.name,
+        t.at.map(plain).join(', '),
+        fixed(t.height, 1),
+        fixed(t.spread, 1),
+        t.transmittance.join(' '),
+      ]),
+  },
+];
+
+/** The scheme in full: whoever has these pages can work everything out again. Lengths in metres, angles in degrees. */
+export function inputsPages(flow: Flow, { scheme }: Report): void {
+  flow.turn('Inputs');
+  flow.say('Lengths in metres, angles in degrees, axes of the drawing: x east, y to the top of the drawing, z up.');
+  for (const { title, columns, rows } of TABLES) {
+    const cells = rows(scheme);
+    if (cells.length === 0) continue;
+    flow.heading(title, 30);
+    table(flow, columns, cells);
+    flow.gap(2);
+  }
 }
