@@ -1,8 +1,5 @@
-import type { Model, RoomForm, Solid, WindowForm } from '../../core/form/model.ts';
-import { signedArea } from '../../core/plane/ring.ts';
-import type { Block, Device, Glass, Room, Scheme, Window } from '../../core/scheme/schema.ts';
 import type { Kind } from '../state/selection.ts';
-import { bearing, fixed, percent } from '../ui/format.ts';
+import { fixed } from '../ui/format.ts';
 import { words } from '../words/words.ts';
 import type { CellEdit, ListName } from './cell-edit.ts';
 
@@ -28,298 +25,38 @@ export type Schedule<Row extends { readonly id: string }> = {
   readonly columns: readonly Column<Row>[];
 };
 
-const head = words.schedule.head;
-const length = (v: number): string => fixed(v, 2);
-const area = (v: number): string => fixed(v, 1);
-
-const plain = (v: number): string => String(v);
+/** The heads of all columns. */
+export const head = words.schedule.head;
+/** Metres to the centimetre. */
+export const length = (v: number): string => fixed(v, 2);
+/** Square metres to the tenth. */
+export const area = (v: number): string => fixed(v, 1);
 
 /** A text of the row's entry that can be typed. */
-const text = <R>(field: string, of: (row: R) => string): { readonly edit: CellEdit<R> } => ({
+export const text = <R>(field: string, of: (row: R) => string): { readonly edit: CellEdit<R> } => ({
   edit: { field, kind: 'text', typed: of },
 });
-const number = <R>(field: string, of: (row: R) => number | null): { readonly edit: CellEdit<R> } => ({
+/** A number of it; null where the row has none. */
+export const number = <R>(field: string, of: (row: R) => number | null): { readonly edit: CellEdit<R> } => ({
   edit: {
     field,
     kind: 'number',
     typed: (row) => {
       const value = of(row);
-      return value === null ? null : plain(value);
+      return value === null ? null : String(value);
     },
   },
 });
-const choice = <R>(
+/** One of a few, by value and name. */
+export const choice = <R>(
   field: string,
   of: (row: R) => string,
   options: readonly (readonly [string, string])[],
 ): { readonly edit: CellEdit<R> } => ({ edit: { field, kind: 'choice', typed: of, options } });
 
-const named = (names: { readonly [value: string]: string }): readonly (readonly [string, string])[] =>
+/** Values with their names, to choose from. */
+export const named = (names: { readonly [value: string]: string }): readonly (readonly [string, string])[] =>
   Object.entries(names);
-const ids = (entries: readonly { readonly id: string }[]): readonly (readonly [string, string])[] =>
+/** Entries to choose from by their ids. */
+export const ids = (entries: readonly { readonly id: string }[]): readonly (readonly [string, string])[] =>
   entries.map(({ id }) => [id, id] as const);
-
-export type BlockRow = { readonly id: string; readonly block: Block; readonly solid: Solid | undefined };
-
-export function blockSchedule(scheme: Scheme, model: Model): Schedule<BlockRow> {
-  const solids = new Map(model.solids.map((s) => [s.id, s]));
-  return {
-    kind: 'block',
-    list: 'blocks',
-    rows: scheme.blocks.map((block) => ({ id: block.id, block, solid: solids.get(block.id) })),
-    columns: [
-      { key: 'id', head: head.id, value: (r) => r.id, ...text('id', (r: BlockRow) => r.id) },
-      { key: 'name', head: head.name, value: (r) => r.block.name, ...text('name', (r: BlockRow) => r.block.name) },
-      {
-        key: 'standing',
-        head: head.standing,
-        value: (r) => words.massing.standing[r.block.standing],
-        ...choice('standing', (r: BlockRow) => r.block.standing, named(words.massing.standing)),
-      },
-      {
-        key: 'base',
-        head: head.base,
-        unit: 'm',
-        value: (r) => r.block.base,
-        write: length,
-        ...number('base', (r: BlockRow) => r.block.base),
-      },
-      {
-        key: 'height',
-        head: head.height,
-        unit: 'm',
-        value: (r) => r.block.height,
-        write: length,
-        ...number('height', (r: BlockRow) => r.block.height),
-      },
-      ...boxColumns((r: BlockRow) => r.block.box ?? null),
-      {
-        key: 'area',
-        head: head.area,
-        unit: 'm²',
-        value: (r) => (r.solid ? signedArea(r.solid.outline) : null),
-        write: area,
-      },
-      { key: 'corners', head: head.corners, value: (r) => r.solid?.outline.length ?? null, write: (v) => fixed(v, 0) },
-    ],
-  };
-}
-
-/** Width and depth of what was drawn as a box; what was drawn as an outline has neither. */
-const boxColumns = <R>(boxOf: (row: R) => { readonly width: number; readonly depth: number } | null): Column<R>[] =>
-  (['width', 'depth'] as const).map((field) => ({
-    key: field,
-    head: head[field],
-    unit: 'm',
-    value: (row) => boxOf(row)?.[field] ?? null,
-    write: length,
-    ...number(`box.${field}`, (row: R) => boxOf(row)?.[field] ?? null),
-  }));
-
-export type RoomRow = {
-  readonly id: string;
-  readonly room: Room;
-  readonly form: RoomForm | undefined;
-  readonly glazing_m2: number;
-};
-
-export function roomSchedule(scheme: Scheme, model: Model): Schedule<RoomRow> {
-  const forms = new Map(model.rooms.map((r) => [r.id, r]));
-  const glazing = new Map<string, number>();
-  for (const w of model.windows) glazing.set(w.room, (glazing.get(w.room) ?? 0) + w.opening_m2);
-  return {
-    kind: 'room',
-    list: 'rooms',
-    rows: scheme.rooms.map((room) => ({
-      id: room.id,
-      room,
-      form: forms.get(room.id),
-      glazing_m2: glazing.get(room.id) ?? 0,
-    })),
-    columns: [
-      { key: 'id', head: head.id, value: (r) => r.id, ...text('id', (r: RoomRow) => r.id) },
-      { key: 'name', head: head.name, value: (r) => r.room.name, ...text('name', (r: RoomRow) => r.room.name) },
-      {
-        key: 'use',
-        head: head.use,
-        value: (r) => words.schedule.uses[r.room.use],
-        ...choice('use', (r: RoomRow) => r.room.use, named(words.schedule.uses)),
-      },
-      {
-        key: 'block',
-        head: head.block,
-        value: (r) => r.room.block,
-        ...choice('block', (r: RoomRow) => r.room.block, ids(scheme.blocks)),
-      },
-      {
-        key: 'floor',
-        head: head.floor,
-        unit: 'm',
-        value: (r) => r.room.floor,
-        write: length,
-        ...number('floor', (r: RoomRow) => r.room.floor),
-      },
-      {
-        key: 'height',
-        head: head.height,
-        unit: 'm',
-        value: (r) => r.room.height,
-        write: length,
-        ...number('height', (r: RoomRow) => r.room.height),
-      },
-      ...boxColumns((r: RoomRow) => r.room.box ?? null),
-      { key: 'area', head: head.area, unit: 'm²', value: (r) => r.form?.floor_m2 ?? null, write: area },
-      { key: 'glazing', head: head.openings, unit: 'm²', value: (r) => r.glazing_m2, write: area },
-      {
-        key: 'share',
-        head: head.share,
-        value: (r) => (r.form ? r.glazing_m2 / r.form.floor_m2 : null),
-        write: percent,
-      },
-    ],
-  };
-}
-
-export type WindowRow = { readonly id: string; readonly window: Window; readonly form: WindowForm | undefined };
-
-/** @param sunlit share of each window's glass in direct sun at the moment, by id */
-export function windowSchedule(scheme: Scheme, model: Model, sunlit: ReadonlyMap<string, number>): Schedule<WindowRow> {
-  const forms = new Map(model.windows.map((w) => [w.id, w]));
-  const devices = new Map(scheme.devices.map((d) => [d.id, d]));
-  return {
-    kind: 'window',
-    list: 'windows',
-    rows: scheme.windows.map((window) => ({ id: window.id, window, form: forms.get(window.id) })),
-    columns: [
-      { key: 'id', head: head.id, value: (r) => r.id, ...text('id', (r: WindowRow) => r.id) },
-      {
-        key: 'room',
-        head: head.room,
-        value: (r) => r.window.room,
-        ...choice('room', (r: WindowRow) => r.window.room, ids(scheme.rooms)),
-      },
-      {
-        key: 'wall',
-        head: head.wall,
-        value: (r) => r.window.wall ?? null,
-        write: (v) => fixed(v, 0),
-        ...number('wall', (r: WindowRow) => r.window.wall ?? null),
-      },
-      {
-        key: 'faces',
-        head: head.faces,
-        value: (r) => r.form?.bearing_deg ?? null,
-        write: (v, r) => (r.form?.tilt_deg === 0 ? words.schedule.roof : bearing(v)),
-      },
-      ...(['width', 'height', 'from', 'sill', 'reveal'] as const).map((field) => ({
-        key: field,
-        head: head[field],
-        unit: 'm',
-        value: (r: WindowRow) => r.window[field] ?? null,
-        write: length,
-        // A rooflight has no place along a wall.
-        ...number(field, (r: WindowRow) =>
-          r.window.wall === undefined && (field === 'from' || field === 'sill') ? null : (r.window[field] ?? null),
-        ),
-      })),
-      {
-        key: 'glass',
-        head: head.glass,
-        value: (r) => r.window.glass,
-        ...choice('glass', (r: WindowRow) => r.window.glass, ids(scheme.glass)),
-      },
-      {
-        key: 'devices',
-        head: head.devices,
-        value: (r) =>
-          r.window.devices.map((id) => (devices.get(id) ? shortDevice(devices.get(id) as Device) : id)).join(', ') ||
-          null,
-        edit: { field: 'devices', kind: 'list', typed: (r) => r.window.devices.join(', ') },
-      },
-      { key: 'sun', head: head.sunNow, value: (r) => sunlit.get(r.id) ?? null, write: percent },
-    ],
-  };
-}
-
-export function glassSchedule(scheme: Scheme): Schedule<Glass> {
-  const used = new Map<string, number>();
-  for (const w of scheme.windows) used.set(w.glass, (used.get(w.glass) ?? 0) + 1);
-  return {
-    kind: 'glass',
-    list: 'glass',
-    rows: scheme.glass,
-    columns: [
-      { key: 'id', head: head.id, value: (r) => r.id, ...text('id', (r: Glass) => r.id) },
-      { key: 'name', head: head.name, value: (r) => r.name, ...text('name', (r: Glass) => r.name) },
-      { key: 'g', head: head.g, value: (r) => r.g, write: length, ...number('g', (r: Glass) => r.g) },
-      { key: 'u', head: head.u, unit: 'W/m²K', value: (r) => r.u, write: length, ...number('u', (r: Glass) => r.u) },
-      {
-        key: 'light',
-        head: head.light,
-        value: (r) => r.light,
-        write: length,
-        ...number('light', (r: Glass) => r.light),
-      },
-      {
-        key: 'panes',
-        head: head.panes,
-        value: (r) => r.panes,
-        write: (v) => fixed(v, 0),
-        ...number('panes', (r: Glass) => r.panes),
-      },
-      {
-        key: 'frame',
-        head: head.frame,
-        value: (r) => r.frame,
-        write: percent,
-        edit: { field: 'frame', kind: 'share', typed: (r) => `${Math.round(r.frame * 1e6) / 1e4} %` },
-      },
-      { key: 'used', head: head.usedBy, value: (r) => used.get(r.id) ?? 0, write: (v) => fixed(v, 0) },
-    ],
-  };
-}
-
-export function deviceSchedule(scheme: Scheme): Schedule<Device> {
-  const used = new Map<string, number>();
-  for (const id of scheme.windows.flatMap((w) => w.devices)) used.set(id, (used.get(id) ?? 0) + 1);
-  return {
-    kind: 'device',
-    list: 'devices',
-    rows: scheme.devices,
-    columns: [
-      { key: 'id', head: head.id, value: (r) => r.id, ...text('id', (r: Device) => r.id) },
-      { key: 'kind', head: head.kind, value: (r) => words.schedule.kinds[r.kind] },
-      {
-        key: 'depth',
-        head: head.depth,
-        unit: 'm',
-        value: (r) => (r.kind === 'blind' ? null : r.depth),
-        write: length,
-        ...number('depth', (r: Device) => (r.kind === 'blind' ? null : r.depth)),
-      },
-      { key: 'size', head: head.size, value: sizeOf },
-      { key: 'place', head: head.place, value: placeOf },
-      { key: 'used', head: head.usedBy, value: (r) => used.get(r.id) ?? 0, write: (v) => fixed(v, 0) },
-    ],
-  };
-}
-
-const shortDevice = (d: Device): string =>
-  d.kind === 'blind'
-    ? `${words.schedule.kinds.blind} ${words.schedule.places[d.place]}`
-    : d.kind === 'louvres'
-      ? `${words.schedule.kinds.louvres} ${d.count}`
-      : `${words.schedule.kinds[d.kind]} ${length(d.depth)}`;
-
-function sizeOf(d: Device): string {
-  if (d.kind === 'louvres') return `${d.count} × ${length(d.spacing)} m`;
-  if (d.kind === 'blind') return `τ ${length(d.transmittance)}, ρ ${length(d.reflectance)}`;
-  return d.kind === 'overhang' ? `${fixed(d.tilt, 0)}°` : `${length(d.gap)} m`;
-}
-
-function placeOf(d: Device): string {
-  if (d.kind === 'fin') return words.schedule.sides[d.side];
-  if (d.kind === 'blind') return words.schedule.places[d.place];
-  if (d.kind === 'overhang') return words.schedule.above(length(d.above));
-  return words.schedule.gap(length(d.gap));
-}

@@ -3,7 +3,8 @@ import { scheme } from '../state/document.ts';
 import type { Kind } from '../state/selection.ts';
 import { model, moment } from '../state/studies.ts';
 import { words } from '../words/words.ts';
-import { blockSchedule, deviceSchedule, glassSchedule, roomSchedule, windowSchedule } from './columns.ts';
+import { blockSchedule, roomSchedule, windowSchedule } from './building-columns.ts';
+import { deviceSchedule, glassSchedule } from './stock-columns.ts';
 import { ScheduleTable } from './schedule-table.tsx';
 import './schedule.css';
 
