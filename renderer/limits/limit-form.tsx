@@ -4,22 +4,22 @@ import { METRIC_IDS, METRICS } from '../../core/limits/metric.ts';
 import type { MetricId } from '../../core/limits/metric-id.ts';
 import { decimalsFor, fixed } from '../ui/format.ts';
 import { words } from '../words/words.ts';
-import { DateField, NumberField, SelectField, TextField } from './limit-fields.tsx';
+import { DateField, SelectField, TextField } from './limit-fields.tsx';
+import { LimitValues } from './limit-values.tsx';
 import { changeLimit, removeLimit } from './limits-state.ts';
 
 const text = words.limits;
-const SIDES = ['N', 'E', 'S', 'W'] as const;
 const USES = Object.keys(words.schedule.uses) as (keyof typeof words.schedule.uses)[];
 
 type Props = { readonly limit: Limit; readonly isOwn: boolean };
 
+const allowed = ({ value, byBearing, byGlazing }: Limit): string => {
+  if (byGlazing !== undefined) return text.byGlazing;
+  return byBearing === undefined ? fixed(value, decimalsFor(value)) : text.byBearing;
+};
+
 const summaryOf = (limit: Limit): string =>
-  text.line(
-    limit.name,
-    limit.comparison === 'at-most' ? '≤' : '≥',
-    limit.byBearing === undefined ? fixed(limit.value, decimalsFor(limit.value)) : text.byBearing,
-    limit.unit,
-  );
+  text.line(limit.name, limit.comparison === 'at-most' ? '≤' : '≥', allowed(limit), limit.unit);
 
 /** One limit: in a line, and opened with everything that it says. */
 export function LimitForm({ limit, isOwn }: Props) {
@@ -29,7 +29,7 @@ export function LimitForm({ limit, isOwn }: Props) {
         <summary>{summaryOf(limit)}</summary>
         <div class="limit-fields">
           <What limit={limit} isOwn={isOwn} />
-          <Values limit={limit} isOwn={isOwn} />
+          <LimitValues limit={limit} isOwn={isOwn} />
           <When limit={limit} isOwn={isOwn} />
           <Uses limit={limit} isOwn={isOwn} />
           <Where limit={limit} isOwn={isOwn} />
@@ -66,74 +66,6 @@ function What({ limit, isOwn }: Props) {
         options={METRIC_IDS.map((id) => [id, METRICS[id].name])}
         onChoose={(metric) => changeLimit(limit.id, { metric })}
       />
-    </>
-  );
-}
-
-function Values({ limit, isOwn }: Props) {
-  const { byBearing } = limit;
-  return (
-    <>
-      <SelectField<Limit['comparison']>
-        label={text.fields.comparison}
-        value={limit.comparison}
-        off={!isOwn}
-        options={[
-          ['at-most', text.comparisons['at-most']],
-          ['at-least', text.comparisons['at-least']],
-        ]}
-        onChoose={(comparison) => changeLimit(limit.id, { comparison })}
-      />
-      <NumberField
-        label={text.fields.value}
-        unit={limit.unit}
-        value={limit.value}
-        off={!isOwn}
-        onNumber={(value) => changeLimit(limit.id, { value })}
-      />
-      {limit.metric === 'hours-above' ? (
-        <NumberField
-          label={text.fields.above}
-          unit="W/m²"
-          value={limit.above ?? null}
-          off={!isOwn}
-          onNumber={(above) => changeLimit(limit.id, { above })}
-        />
-      ) : null}
-      {limit.byGlazing === undefined ? null : (
-        <p class="wide soft">
-          {text.byGlazing}{' '}
-          {limit.byGlazing
-            .map((step) => text.step(fixed(step.upTo, 0), fixed(step.value, decimalsFor(step.value)), limit.unit))
-            .join('; ')}
-          .
-        </p>
-      )}
-      <label class="tick wide">
-        <input
-          type="checkbox"
-          disabled={!isOwn}
-          checked={byBearing !== undefined}
-          onChange={(event) => {
-            const { value } = limit;
-            const all = { N: value, E: value, S: value, W: value };
-            changeLimit(limit.id, { byBearing: event.currentTarget.checked ? all : undefined });
-          }}
-        />
-        {text.sides}
-      </label>
-      {byBearing === undefined
-        ? null
-        : SIDES.map((side) => (
-            <NumberField
-              key={side}
-              label={text.fields[side]}
-              unit={limit.unit}
-              value={byBearing[side]}
-              off={!isOwn}
-              onNumber={(value) => changeLimit(limit.id, { byBearing: { ...byBearing, [side]: value } })}
-            />
-          ))}
     </>
   );
 }

@@ -98,15 +98,17 @@ export function changeLimit(id: string, part: { readonly [F in keyof Limit]?: Li
     if (limit.id !== id) return limit;
     const next: Record<string, unknown> = { ...limit, ...part };
     for (const key of Object.keys(next)) if (next[key] === undefined) delete next[key];
-    return part.metric === undefined ? (next as Limit) : fitted(next as Limit, part.metric);
+    return part.metric === undefined ? (next as Limit) : fitted(next as Limit, limit.metric, part.metric);
   });
   changeSet({ limits });
 }
 
-function fitted(limit: Limit, metric: MetricId): Limit {
+/** The limit for another metric; a name that only named the metric before goes with it. */
+function fitted(limit: Limit, before: MetricId, metric: MetricId): Limit {
   const { days, clock, above, ...rest } = limit;
   return {
     ...rest,
+    name: limit.name === METRICS[before].name ? METRICS[metric].name : limit.name,
     unit: METRICS[metric].unit,
     ...(METRICS[metric].byDay && days !== undefined ? { days } : {}),
     ...(metric === 'mean-gain' ? { clock: clock ?? ['07:30', '17:30'] } : {}),

@@ -78,7 +78,9 @@ describe.skipIf(executable === null)('the limits in the desk', () => {
     const [download] = await Promise.all([page.waitForEvent('download'), page.keyboard.press('Control+s')]);
     const saved = JSON.parse(await readFile(await (download as Download).path(), 'utf8'));
     const limit = saved.limits.limits.at(-1);
+    // The name that the limit began with was its metric’s, and went with it.
     expect(limit).toMatchObject({
+      name: 'window openings as a share of the floor',
       metric: 'glazing-to-floor',
       unit: '%',
       byBearing: { N: 60, E: 60, S: 60, W: 20 },
@@ -87,6 +89,40 @@ describe.skipIf(executable === null)('the limits in the desk', () => {
     });
     expect(saved.limits.example).toBe(false);
     await page.locator('.room', { hasText: 'Bedroom west' }).first().waitFor();
+    expect(desk.complaints).toEqual([]);
+  });
+
+  test('values by how much of the floor the openings are: added, kept in order, judged by, and taken out', async () => {
+    const peak = page.locator('.limit', { has: page.locator('summary', { hasText: /^peak solar gain/ }) });
+    const steps = async () => {
+      const [download] = await Promise.all([page.waitForEvent('download'), page.keyboard.press('Control+s')]);
+      const saved = JSON.parse(await readFile(await (download as Download).path(), 'utf8'));
+      return saved.limits.limits.find((limit: { metric: string }) => limit.metric === 'peak-gain').byGlazing;
+    };
+    await peak.getByRole('button', { name: 'Add a step of openings' }).click();
+    const first = peak.getByRole('group', { name: 'Step 1' });
+    await first.getByLabel('Openings up to').fill('900');
+    await page.keyboard.press('Enter');
+    await first.getByLabel('Value', { exact: true }).fill('64');
+    await page.keyboard.press('Enter');
+    // 111.3 W/m² stands above the step’s 64, where the limit’s own value of 200 left it room.
+    await page.locator('.room-head', { hasText: '3.3 Studio' }).locator('.margin', { hasText: '+47.3' }).waitFor();
+    expect(await steps()).toEqual([{ upTo: 900, value: 64 }]);
+
+    await peak.getByRole('button', { name: 'Add a step of openings' }).click();
+    const second = peak.getByRole('group', { name: 'Step 2' });
+    await second.getByLabel('Openings up to').fill('20');
+    await page.keyboard.press('Enter');
+    const refusal = page.getByRole('alert').filter({ hasText: 'Not changed, because' });
+    expect(await refusal.textContent()).toContain('from the smallest share of openings to the largest');
+    await second.getByLabel('Another value for each side').check();
+    await second.getByLabel('west', { exact: true }).fill('45');
+    await page.keyboard.press('Enter');
+    expect((await steps())[1]).toEqual({ upTo: 910, value: 200, byBearing: { N: 200, E: 200, S: 200, W: 45 } });
+
+    await peak.getByRole('button', { name: 'Take out step 2' }).click();
+    await peak.getByRole('button', { name: 'Take out step 1' }).click();
+    expect(await steps()).toBeUndefined();
     expect(desk.complaints).toEqual([]);
   });
 });
