@@ -62,6 +62,8 @@ export function BodyRow<R extends Row>(props: BodyRowProps<R>) {
             onFocus={() => props.onCell(at)}
             onDblClick={() => props.onEdit(at)}
           >
+            {/* Under its editor the text stays, unseen: it holds the column's width. */}
+            {isEdited ? <span class="under">{written(column, row)}</span> : written(column, row)}
             {isEdited ? (
               <CellEditor
                 edit={column.edit as CellEdit<R>}
@@ -71,9 +73,7 @@ export function BodyRow<R extends Row>(props: BodyRowProps<R>) {
                 onTake={(text, then) => props.onTake(column, text, then)}
                 onGiveUp={props.onGiveUp}
               />
-            ) : (
-              written(column, row)
-            )}
+            ) : null}
           </td>
         );
       })}

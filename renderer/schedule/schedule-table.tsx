@@ -8,6 +8,7 @@ import { pressCell } from './press-cell.ts';
 import { removeRows } from './row-actions.ts';
 import { RowTools } from './row-tools.tsx';
 import { nextOrder, type Order, sortRows } from './sort-rows.ts';
+import { useCellFocus } from './use-cell-focus.ts';
 import { type Cells, useCells } from './use-cells.ts';
 import { ROW_px, useVisibleRows } from './use-visible-rows.ts';
 
@@ -25,6 +26,7 @@ export function ScheduleTable<R extends Row>({ schedule, label }: { schedule: Sc
   const leadAt = lead === null ? -1 : rows.findIndex((r) => r.id === lead);
   const { from, to, look } = useVisibleRows(scroller, rows.length, leadAt);
   const cells = useCells(schedule, rows);
+  const goTo = useCellFocus(scroller);
 
   const focusCell = (row: number, at: number): void => {
     const index = Math.min(rows.length - 1, Math.max(0, row));
@@ -33,9 +35,7 @@ export function ScheduleTable<R extends Row>({ schedule, label }: { schedule: Sc
     if (id === undefined) return;
     if (lead !== id) select(kind, id);
     setColumn(stop);
-    requestAnimationFrame(() =>
-      scroller.current?.querySelector<HTMLElement>(`[data-row="${index}"] [data-column="${stop}"]`)?.focus(),
-    );
+    goTo(index, stop);
   };
   return (
     <div class="schedule-place">

@@ -69,6 +69,27 @@ describe.skipIf(executable === null)('schedules that are changed in place', () =
     expect(await (await cell('W4', 'height')).textContent()).toBe('2.40');
   });
 
+  test('a cell that is opened in the same frame as the arrow that went to it stays open', async () => {
+    await (await cell('W4', 'width')).click();
+    const label = await page.evaluate(async () => {
+      const press = async (key: string): Promise<void> => {
+        document.activeElement?.dispatchEvent(new KeyboardEvent('keydown', { key, bubbles: true, cancelable: true }));
+        // The next key comes as a task of its own, before anything is painted.
+        await new Promise((next) => setTimeout(next, 0));
+      };
+      await press('ArrowRight');
+      await press('F2');
+      for (let i = 0; i < 3; i++) await new Promise((next) => requestAnimationFrame(next));
+      return document.activeElement?.getAttribute('aria-label');
+    });
+    expect(label).toBe('height of W4');
+    await page.keyboard.press('Escape');
+    await page.keyboard.press('PageDown');
+    await page.keyboard.press('End');
+    await page.keyboard.press('Home');
+    expect(await grid().locator('td:focus').getAttribute('data-column')).toBe('0');
+  });
+
   test('a value that the scheme would contradict is refused at its place, and nothing changes', async () => {
     await (await cell('W4', 'width')).click();
     await page.keyboard.type('50');

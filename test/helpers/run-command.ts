@@ -7,7 +7,6 @@ export type Ran = {
   readonly status: number | null;
   readonly out: string;
   readonly err: string;
-  readonly took_ms: number;
 };
 
 /** Runs the built command as a user would, in a folder; one that hangs is killed and has status null. */
@@ -18,7 +17,6 @@ export function runCommand(
   most_ms = 60_000,
 ): Promise<Ran> {
   const { SHADEWRIGHT_DEBUG: _, ...inherited } = process.env;
-  const start = performance.now();
   return new Promise((settle) => {
     const child = spawn(process.execPath, [COMMAND, ...words], {
       cwd: folder,
@@ -30,6 +28,6 @@ export function runCommand(
     let err = '';
     child.stdout.setEncoding('utf8').on('data', (text: string) => (out += text));
     child.stderr.setEncoding('utf8').on('data', (text: string) => (err += text));
-    child.on('close', (status) => settle({ status, out, err, took_ms: performance.now() - start }));
+    child.on('close', (status) => settle({ status, out, err }));
   });
 }

@@ -11,9 +11,8 @@ test('reads a file up to the bound, and refuses one byte more before reading it'
   expect(await readBounded(path, 100)).toMatchObject({ ok: true });
   expect(await readBounded(path, 99)).toMatchObject({ ok: false, fault: { code: 'too-large' } });
   truncateSync(path, 200 * 1024 * 1024 * 1024);
-  const before = performance.now();
+  // 200 GB: more than any machine could have read before this test is given up.
   expect(await readBounded(path, 100)).toMatchObject({ ok: false, fault: { code: 'too-large' } });
-  expect(performance.now() - before).toBeLessThan(1000);
 });
 
 test('reads an empty file', async () => {

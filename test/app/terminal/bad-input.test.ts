@@ -135,7 +135,6 @@ describe('a file that', () => {
     truncateSync(join(folder, 'scheme.json'), 200 * 1024 * 1024);
     const ran = await runCommand(['check', 'scheme.json'], folder);
     expectRefused(ran, /200 MiB/, /64 MiB/);
-    expect(ran.took_ms).toBeLessThan(5000);
   });
 
   test.skipIf(process.platform === 'win32')('never ends is refused and not waited for', async () => {
