@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import type { Device, Fin, Louvres, Overhang } from '../scheme/schema.ts';
 import { DEG } from '../units/angle.ts';
 import type { Panel, Shader } from './model.ts';
@@ -28,7 +29,7 @@ export function deviceShaders(device: Device, opening: Panel): Shader[] {
 function overhang(d: Overhang, p: Panel): Shader[] {
   if (!(d.depth > 0)) return [];
   const root = p.height_m + d.above;
-  const front = root - d.depth * Math.tan(d.tilt * DEG);
+  const front = root - d.depth * maths.tan(d.tilt * DEG);
   const left = -d.left;
   const right = p.width_m + d.right;
   return [
@@ -71,8 +72,8 @@ function fins(d: Fin, p: Panel): Shader[] {
  * turns about its centre line, which lies gap + depth / 2 in front of the wall.
  */
 function louvres(d: Louvres, p: Panel): Shader[] {
-  const c = (d.depth / 2) * Math.cos(d.tilt * DEG);
-  const s = (d.depth / 2) * Math.sin(d.tilt * DEG);
+  const c = (d.depth / 2) * maths.cos(d.tilt * DEG);
+  const s = (d.depth / 2) * maths.sin(d.tilt * DEG);
   const z = d.gap + d.depth / 2;
   const left = -d.left;
   const right = p.width_m + d.right;

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import type { Point, Ring, Vec3 } from '../plane/vec.ts';
 import { DEG, wrap360 } from '../units/angle.ts';
 import type { Panel } from './model.ts';
@@ -40,8 +41,8 @@ export function wallPanel(edge: Edge, from_m: number, bottom_m: number, width_m:
 
 /** A rectangle in a flat roof: `at` its corner, turned clockwise about it as a box is. Right × up is straight up. */
 export function roofPanel(at: Point, turn_deg: number, level_m: number, width_m: number, height_m: number): Panel {
-  const c = Math.cos(turn_deg * DEG);
-  const s = Math.sin(turn_deg * DEG);
+  const c = maths.cos(turn_deg * DEG);
+  const s = maths.sin(turn_deg * DEG);
   return {
     origin: [at[0], at[1], level_m],
     right: [c, 0 - s, 0],
@@ -80,4 +81,4 @@ export const pointOn = (p: Panel, x: number, y: number, z: number): Vec3 => [
 
 /** True azimuth of an upright panel's outward normal [°, 0..360): its bearing in the drawing less `north`. */
 export const trueBearing_deg = (normal: Vec3, north_deg: number): number =>
-  wrap360(Math.atan2(normal[0], normal[1]) / DEG - north_deg);
+  wrap360(maths.atan2(normal[0], normal[1]) / DEG - north_deg);

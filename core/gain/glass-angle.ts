@@ -1,3 +1,5 @@
+import * as maths from '../maths/maths.ts';
+
 /** How glass lets less through as the sun strikes it more obliquely: by optics where the panes are known, by fit where only g is. */
 
 /** Refractive index of soda-lime float glass in sunlight, as solar handbooks take it (Duffie and Beckman, Solar Engineering of Thermal Processes, ch. 5). */
@@ -22,7 +24,7 @@ function reflection(from: number, to: number, cosIn: number, cosOut: number): Sp
 
 /** Cosine of the angle after refraction from index `from` into `to` (Snell). */
 const refracted = (from: number, to: number, cosIn: number): number =>
-  Math.sqrt(1 - (from / to) ** 2 * Math.max(0, 1 - cosIn * cosIn));
+  Math.sqrt(1 - maths.square(from / to) * Math.max(0, 1 - cosIn * cosIn));
 
 /**
  * Share of sunlight that passes N equal clear panes in air, all reflections between their faces summed.
@@ -43,7 +45,7 @@ export function clearPanesTransmittance(
   const cosOut = refracted(1, index, cosIn);
   const r = reflection(1, index, cosIn, cosOut);
   const through = (x: number): number => (1 - x) / (1 + (2 * panes - 1) * x);
-  return ((through(r.s) + through(r.p)) / 2) * Math.exp((-panes * absorption) / cosOut);
+  return ((through(r.s) + through(r.p)) / 2) * maths.exp((-panes * absorption) / cosOut);
 }
 
 /** The angle curve of N clear panes, from `clearPanesTransmittance`. */
@@ -67,8 +69,8 @@ export function karlssonRoosCurve(panes: number, coating: number): AngleCurve {
   const alpha = 5.2 + 0.7 * coating;
   const gamma = 5.26 + 0.06 * panes + (0.73 + 0.04 * panes) * coating;
   const at = (cosIncidence: number): number => {
-    const z = Math.acos(Math.min(1, Math.max(0, cosIncidence))) / (Math.PI / 2);
-    return Math.max(0, 1 - a * z ** alpha - b * z * z - c * z ** gamma);
+    const z = maths.acos(Math.min(1, Math.max(0, cosIncidence))) / (Math.PI / 2);
+    return Math.max(0, 1 - a * maths.pow(z, alpha) - b * z * z - c * maths.pow(z, gamma));
   };
   return { at, hemispherical: hemispherical(at) };
 }
@@ -81,7 +83,7 @@ export function hemispherical(at: (cosIncidence: number) => number): number {
   const n = 720;
   const h = Math.PI / 2 / n;
   let sum = 0;
-  for (let i = 1; i < n; i++) sum += (i % 2 === 1 ? 4 : 2) * at(Math.cos(i * h)) * Math.sin(2 * i * h);
+  for (let i = 1; i < n; i++) sum += (i % 2 === 1 ? 4 : 2) * at(maths.cos(i * h)) * maths.sin(2 * i * h);
   return (sum * h) / 3;
 }
 
@@ -129,7 +131,7 @@ export function bondedFaceModifier(
       s *= (1 - inner.s) / (1 - inner.s * outer.s);
       p *= (1 - inner.p) / (1 - inner.p * outer.p);
     }
-    return ((s + p) / 2) * Math.exp((-extinction_pm * thickness_m) / cosGlass);
+    return ((s + p) / 2) * maths.exp((-extinction_pm * thickness_m) / cosGlass);
   };
   return through(Math.min(1, Math.max(0, cosIncidence))) / through(1);
 }
@@ -145,4 +147,7 @@ export const oneParameterModifier = (cosIncidence: number, b: number): number =>
  * Polynomial modifier 1 − (1 − cos θ)⁵.
  * @see C. Schlick, Computer Graphics Forum 13, 233–246 (1994)
  */
-export const schlickModifier = (cosIncidence: number): number => 1 - (1 - Math.max(0, cosIncidence)) ** 5;
+export function schlickModifier(cosIncidence: number): number {
+  const off = 1 - Math.max(0, cosIncidence);
+  return 1 - maths.square(maths.square(off)) * off;
+}

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
 import { planeIrradiance, type SkyModel } from '../sky/transpose.ts';
@@ -27,8 +28,8 @@ export type FacingLight = { readonly open: OpenLight; readonly cosIncidence: Flo
 export function cosIncidence(altitude_rad: number, azimuth_rad: number, facing: Facing): number {
   const tilt = facing.tilt_deg * DEG;
   return (
-    Math.sin(altitude_rad) * Math.cos(tilt) +
-    Math.cos(altitude_rad) * Math.sin(tilt) * Math.cos(azimuth_rad - facing.bearing_deg * DEG)
+    maths.sin(altitude_rad) * maths.cos(tilt) +
+    maths.cos(altitude_rad) * maths.sin(tilt) * maths.cos(azimuth_rad - facing.bearing_deg * DEG)
   );
 }
 
@@ -90,7 +91,7 @@ export function viewOf(
   seen: { readonly sky: number; readonly horizon: number; readonly ground: number },
   tilt_deg: number,
 ): { readonly sky: number; readonly horizon: number; readonly ground: number } {
-  const up = Math.cos(tilt_deg * DEG);
+  const up = maths.cos(tilt_deg * DEG);
   const ground = (1 - up) / 2;
   return { sky: seen.sky / ((1 + up) / 2), horizon: seen.horizon, ground: ground > 0 ? seen.ground / ground : 0 };
 }

@@ -1,6 +1,7 @@
 import { openLightAt, viewOf } from '../gain/open-light.ts';
 import { PARTS, type Part, type WindowDay } from '../gain/series.ts';
 import { glassCurve } from '../gain/window-day.ts';
+import * as maths from '../maths/maths.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
 import { monthly, monthOf } from '../sky/monthly.ts';
@@ -49,7 +50,7 @@ function glassLines(source: Source, w: WorkedWindow, day: WindowDay, step: numbe
     line(`${w.window}: frame`, glass.frame, '', { place: `${glassPlace}.frame` }),
     line(`${w.window}: glass`, w.glass_m2, 'm²', { formula: 'A = opening × (1 − frame)' }),
     line(`${w.window}: faces`, w.tilt_deg > 0 ? w.bearing_deg : 'up', w.tilt_deg > 0 ? '° from true north' : ''),
-    line(`${w.window}: angle of incidence`, Math.acos(Math.min(1, cos)) / DEG, '°', {
+    line(`${w.window}: angle of incidence`, maths.acos(Math.min(1, cos)) / DEG, '°', {
       note: cos > 0 ? 'from the normal of the glass' : 'the sun is behind the glass or down',
     }),
     line(`${w.window}: sunlit share of the glass`, day.sunlit[step]!, '', {

@@ -1,4 +1,5 @@
-import { ClipType, Clipper64, FillRule, type Path64, type Paths64, type PolyPath64, PolyTree64 } from 'clipper2-ts';
+import { Clipper64, ClipType, FillRule, type Path64, type Paths64, type PolyPath64, PolyTree64 } from 'clipper2-ts';
+import { decadeOf, tenTo } from '../maths/decade.ts';
 import { SLIVER_m2, UNION_GRID_m } from '../units/tolerance.ts';
 import { fromFirstCorner, type Region } from './region.ts';
 import { signedArea } from './ring.ts';
@@ -61,8 +62,9 @@ function gridFor(shapes: readonly Shape[]): Grid | null {
     }
   if (!(x1 > x0) || !(y1 > y0)) return null;
   const span = Math.max(x1 - x0, y1 - y0);
-  const coarser = Math.max(0, Math.ceil(Math.log10(span / UNION_GRID_m / EXACT_SPAN)));
-  const perMetre = 10 ** (Math.round(-Math.log10(UNION_GRID_m)) - coarser);
+  const beyond = span / UNION_GRID_m / EXACT_SPAN;
+  const coarser = beyond > 1 ? decadeOf(beyond) + (beyond > tenTo(decadeOf(beyond)) ? 1 : 0) : 0;
+  const perMetre = tenTo(-decadeOf(UNION_GRID_m) - coarser);
   // The origin lies on the grid itself, so that the grid stays where it is when a shape moves.
   return { perMetre, x: Math.round(((x0 + x1) / 2) * perMetre), y: Math.round(((y0 + y1) / 2) * perMetre) };
 }

@@ -138,4 +138,7 @@ const fromEdge = (piece: readonly number[], a: number, b: number): number[] => {
 };
 
 const turn = (a: Point, b: Point, c: Point): number => (b[0] - a[0]) * (c[1] - a[1]) - (b[1] - a[1]) * (c[0] - a[0]);
-const square = (a: Point, b: Point): number => (b[0] - a[0]) ** 2 + (b[1] - a[1]) ** 2;
+const square = (a: Point, b: Point): number => {
+  const [x, y] = [b[0] - a[0], b[1] - a[1]];
+  return x * x + y * y;
+};

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { anticlockwise } from '../plane/ring.ts';
 import type { Point, Ring } from '../plane/vec.ts';
 import { DEG } from '../units/angle.ts';
@@ -15,8 +16,8 @@ type Shaped = {
 export function outlineOf(shape: Shaped): Ring {
   const { box, outline } = shape;
   if (box) {
-    const c = Math.cos(box.turn * DEG);
-    const s = Math.sin(box.turn * DEG);
+    const c = maths.cos(box.turn * DEG);
+    const s = maths.sin(box.turn * DEG);
     const corner = (u: number, v: number): Point => [box.at[0] + u * c + v * s, box.at[1] - u * s + v * c];
     return [corner(0, 0), corner(box.width, 0), corner(box.width, box.depth), corner(0, box.depth)];
   }

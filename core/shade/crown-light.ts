@@ -1,6 +1,7 @@
+import * as maths from '../maths/maths.ts';
 import type { Tree } from '../scheme/schema.ts';
-import { turnOf } from './skyline-columns.ts';
 import type { Skyline } from './skyline.ts';
+import { turnOf } from './skyline-columns.ts';
 
 /**
  * Crowns of trees as plain columns: ellipsoids upright on their axes (see `crown.ts`), and what each lets through. Light that
@@ -52,8 +53,9 @@ export function isInFront(
   const o = crown * CROWN;
   const [nx, ny, nz] = normal;
   const along = nx * (shape[o]! - x) + ny * (shape[o + 1]! - y) + nz * (shape[o + 2]! - z);
-  const flat = shape[o + 3]! ** 2 * (nx * nx + ny * ny);
-  return along + Math.sqrt(flat + (shape[o + 4]! * nz) ** 2) > 0;
+  const flat = shape[o + 3]! * shape[o + 3]! * (nx * nx + ny * ny);
+  const upright = shape[o + 4]! * nz;
+  return along + Math.sqrt(flat + upright * upright) > 0;
 }
 
 /** Working memory of `dimSeen`: what comes through to each sample (1 at rest), and the samples that are dimmed. */
@@ -119,7 +121,7 @@ function dimByCrown(
   if (cz + rise <= 0) return before;
   // Seen from beyond its radius it spans some columns and altitudes; from closer, any. A turn is at most one a radian.
   const isFar = away > radius * 1.0001;
-  const half = isFar ? Math.asin(radius / away) : 2;
+  const half = isFar ? maths.asin(radius / away) : 2;
   const turn = isFar ? turnOf(cx, cy) : 2;
   const first = Math.floor(((turn - half) * count) / 4);
   const columns = Math.min(count, Math.floor(((turn + half) * count) / 4) - first + 1);

@@ -1,7 +1,8 @@
+import * as maths from '../maths/maths.ts';
 import { CROWN, type Crowns, isInFront, THROUGH } from './crown-light.ts';
 import { type Dome, lightBelow } from './dome-light.ts';
-import { turnOf } from './skyline-columns.ts';
 import { openStretches, type SkyTrace } from './sky-view-trace.ts';
+import { turnOf } from './skyline-columns.ts';
 
 /** How much of a light falls in each month: shares that add up to 1, entry 0 for light of no month, which takes the mean of the year. */
 export type MonthShares = Float64Array;
@@ -66,7 +67,7 @@ function raysOf(
   const away = Math.sqrt(dx * dx + dy * dy);
   if (!(away > radius * 1.0001)) return [0, count];
   // A turn is at most one a radian.
-  const half = Math.asin(radius / away);
+  const half = maths.asin(radius / away);
   const turn = turnOf(dx, dy);
   const first = Math.floor(((turn - half) * count) / 4);
   const last = Math.ceil(((turn + half) * count) / 4);
@@ -148,7 +149,7 @@ export function crownOnRay(
   const k2 = 1 - aside * aside;
   if (!(k2 > 0)) return false;
   const a2 = radius * radius * k2;
-  const b2 = shape[o + 4]! ** 2 * k2;
+  const b2 = shape[o + 4]! * shape[o + 4]! * k2;
   stretch[0] = -Infinity;
   stretch[1] = Infinity;
   if ((p * p) / a2 + (h * h) / b2 < 1) return true;

@@ -1,4 +1,5 @@
 import type { Panel } from '../form/model.ts';
+import * as maths from '../maths/maths.ts';
 import { convexHull } from '../plane/convex-hull.ts';
 import type { Point, Vec3 } from '../plane/vec.ts';
 import type { Tree } from '../scheme/schema.ts';
@@ -20,9 +21,9 @@ export type Crown = {
 
 /** Corners of the polygon that stands for an ellipse; it is drawn a little large, so that its area is the ellipse's own. */
 const SIDES = 48;
-const EQUAL_AREA = Math.sqrt((2 * Math.PI) / (SIDES * Math.sin((2 * Math.PI) / SIDES)));
-const COS = Float64Array.from({ length: SIDES }, (_, i) => Math.cos((2 * Math.PI * i) / SIDES));
-const SIN = Float64Array.from({ length: SIDES }, (_, i) => Math.sin((2 * Math.PI * i) / SIDES));
+const EQUAL_AREA = Math.sqrt((2 * Math.PI) / (SIDES * maths.sin((2 * Math.PI) / SIDES)));
+const COS = Float64Array.from({ length: SIDES }, (_, i) => maths.cos((2 * Math.PI * i) / SIDES));
+const SIN = Float64Array.from({ length: SIDES }, (_, i) => maths.sin((2 * Math.PI * i) / SIDES));
 
 /** The crowns that reach in front of a panel. Trees without a crown (all trunk) are left out. */
 export function crownsOf(panel: Panel, trees: readonly Tree[]): Crown[] {
@@ -84,7 +85,7 @@ function cutCrownOutline(crown: Crown, a: number, b: number, outX: Float64Array,
   const [rx, ry, rz] = crown.half;
   const [cx, cy, cz] = crown.centre;
   const points: Point[] = [];
-  const section = Math.sqrt(Math.max(0, 1 - (cz / rz) ** 2));
+  const section = Math.sqrt(Math.max(0, 1 - (cz / rz) * (cz / rz)));
   // In axes where the crown is a unit sphere, the rim is the great circle square to the ray.
   const ray: Vec3 = [a / rx, b / ry, 1 / rz];
   const flat = Math.hypot(ray[0], ray[2]);

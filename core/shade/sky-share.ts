@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { isUpright } from './hiders.ts';
 import { openShare, type WindowShade } from './sunlit-fraction.ts';
 
@@ -83,16 +84,17 @@ function levelSky(shade: WindowShade, month: number): WindowSky {
 const UPRIGHT = lattice(UPRIGHT_LATTICE, (u, v) => {
   const target = Math.PI * (v - 0.5);
   let psi = target / 2;
-  for (let k = 0; k < 40; k++) psi -= (psi + Math.sin(psi) * Math.cos(psi) - target) / (2 * Math.cos(psi) ** 2 + 1e-12);
+  for (let k = 0; k < 40; k++)
+    psi -= (psi + maths.sin(psi) * maths.cos(psi) - target) / (2 * maths.square(maths.cos(psi)) + 1e-12);
   const cos = Math.sqrt(1 - u * u);
-  return { a: Math.tan(psi) / cos, b: u / cos, sine: Math.cos(psi) * u };
+  return { a: maths.tan(psi) / cos, b: u / cos, sine: maths.cos(psi) * u };
 });
 
 /** The whole projected dome, a disc: even in the square of the radius and in the angle. */
 const LEVEL = lattice(LEVEL_LATTICE, (u, v) => {
   const cos = Math.sqrt(1 - u);
   const slope = Math.sqrt(u) / cos;
-  return { a: slope * Math.cos(2 * Math.PI * v), b: slope * Math.sin(2 * Math.PI * v), sine: cos };
+  return { a: slope * maths.cos(2 * Math.PI * v), b: slope * maths.sin(2 * Math.PI * v), sine: cos };
 });
 
 /** @param place  slopes and sine of the altitude of the direction at a place in the unit square */

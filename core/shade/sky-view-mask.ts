@@ -1,8 +1,9 @@
-import { visitReceptors } from './skyline-groups.ts';
-import type { Occluders } from './skyline-occluders.ts';
-import { facing } from './exposure-grid.ts';
+import * as maths from '../maths/maths.ts';
+import type { Vec3 } from '../plane/vec.ts';
+import { DEG } from '../units/angle.ts';
 import { ANY_MONTH, crownLoss } from './crown-sky.ts';
 import type { Dome } from './dome-light.ts';
+import { facing } from './exposure-grid.ts';
 import { domeShare } from './sky-view.ts';
 import {
   makeSkyRays,
@@ -12,8 +13,8 @@ import {
   type SkyTrace,
   traceSky,
 } from './sky-view-trace.ts';
-import type { Vec3 } from '../plane/vec.ts';
-import { DEG } from '../units/angle.ts';
+import { visitReceptors } from './skyline-groups.ts';
+import type { Occluders } from './skyline-occluders.ts';
 
 /** What hides the dome from a point, azimuth by azimuth. */
 export type ShadingMask = {
@@ -57,7 +58,7 @@ export function shadingMask(o: Occluders, at: Vec3, north_rad: number, count = 7
     for (let c = 0; c < count; c++) hidden[c] = hiddenStretches(t, c);
   });
   const azimuths = hidden.map((stretches, c) => {
-    const bearing = Math.atan2(rays.columns.ux[c]!, rays.columns.uy[c]!);
+    const bearing = maths.atan2(rays.columns.ux[c]!, rays.columns.uy[c]!);
     const azimuth = (bearing - north_rad) / DEG;
     return { azimuth_deg: ((azimuth % 360) + 360) % 360, hidden: stretches };
   });
@@ -71,9 +72,9 @@ function hiddenStretches(t: SkyTrace, c: number): (readonly [number, number])[] 
   const out: (readonly [number, number])[] = [];
   let from = 0;
   for (let i = 0; i < n; i++) {
-    const low = Math.atan(t.open[2 * i]!) / DEG;
+    const low = maths.atan(t.open[2 * i]!) / DEG;
     if (low > from) out.push([from, low]);
-    from = Math.atan(t.open[2 * i + 1]!) / DEG;
+    from = maths.atan(t.open[2 * i + 1]!) / DEG;
   }
   if (from < 90) out.push([from, 90]);
   return out;

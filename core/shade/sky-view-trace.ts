@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { LISTED } from './skyline.ts';
 import { type Columns, makeColumns } from './skyline-columns.ts';
 import type { Shortlist } from './skyline-cull.ts';
@@ -26,7 +27,7 @@ export function makeSkyRays(count: number): SkyRays {
   const { ux, uy } = columns;
   const width_rad = new Float64Array(count);
   for (let c = 0; c < count; c++) {
-    const w = Math.atan2(ux[c]! * uy[c + 1]! - uy[c]! * ux[c + 1]!, ux[c]! * ux[c + 1]! + uy[c]! * uy[c + 1]!);
+    const w = maths.atan2(ux[c]! * uy[c + 1]! - uy[c]! * ux[c + 1]!, ux[c]! * ux[c + 1]! + uy[c]! * uy[c + 1]!);
     width_rad[c]! += w / 2;
     width_rad[(c + 1) % count]! += w / 2;
   }

@@ -1,3 +1,5 @@
+import * as maths from '../maths/maths.ts';
+
 /**
  * The horizon cut into columns of azimuth. Columns are equal in *turn*, a stand-in for the angle that needs one division
  * and no arc tangent: turn = 1 − f above the x axis and 3 + f below it, with f = x / (|x| + |y|). It grows steadily
@@ -45,8 +47,8 @@ export function makeColumns(count: number): Columns {
   for (let j = 0; j < count; j++) {
     widest = Math.max(
       widest,
-      Math.atan2(ux[j]! * uy[j + 1]! - uy[j]! * ux[j + 1]!, ux[j]! * ux[j + 1]! + uy[j]! * uy[j + 1]!),
+      maths.atan2(ux[j]! * uy[j + 1]! - uy[j]! * ux[j + 1]!, ux[j]! * ux[j + 1]! + uy[j]! * uy[j + 1]!),
     );
   }
-  return { count, ux, uy, bulge: (1 / Math.cos(widest / 2)) * (1 + 1e-12) };
+  return { count, ux, uy, bulge: (1 / maths.cos(widest / 2)) * (1 + 1e-12) };
 }

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import type { Vec3 } from '../plane/vec.ts';
 
 /**
@@ -8,6 +9,6 @@ import type { Vec3 } from '../plane/vec.ts';
  */
 export function sunVector(azimuth_rad: number, altitude_rad: number, north_rad: number): Vec3 {
   const bearing = azimuth_rad + north_rad;
-  const c = Math.cos(altitude_rad);
-  return [c * Math.sin(bearing), c * Math.cos(bearing), Math.sin(altitude_rad)];
+  const c = maths.cos(altitude_rad);
+  return [c * maths.sin(bearing), c * maths.cos(bearing), maths.sin(altitude_rad)];
 }

@@ -1,4 +1,5 @@
 import type { Part, RoomDay } from '../gain/series.ts';
+import { decadeOf, tenTo } from '../maths/decade.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
 import type { Mark, Mm } from './drawing.ts';
 import { BEAM, GROUND, INK, OVER, RULE, SKY, SOFT, THIN } from './ink.ts';
@@ -24,7 +25,7 @@ export type CurveLimit = {
 /** A round step for an axis so that it has at most so many parts. */
 export function niceStep(top: number, parts: number): number {
   const rough = Math.max(top, 1e-6) / parts;
-  const ten = 10 ** Math.floor(Math.log10(rough));
+  const ten = tenTo(decadeOf(rough));
   return ([1, 2, 5, 10].find((k) => k * ten >= rough - 1e-12) ?? 10) * ten;
 }
 

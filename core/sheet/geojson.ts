@@ -1,4 +1,5 @@
 import type { Model } from '../form/model.ts';
+import * as maths from '../maths/maths.ts';
 import type { Region } from '../plane/region.ts';
 import type { Point } from '../plane/vec.ts';
 import type { Scheme } from '../scheme/schema.ts';
@@ -22,7 +23,7 @@ export function toLonlat(site: Scheme['site']): (p: Point) => Lonlat {
   const phi = site.latitude * DEG;
   const lambda = site.longitude * DEG;
   const turn = site.north * DEG;
-  const [sp, cp, sl, cl] = [Math.sin(phi), Math.cos(phi), Math.sin(lambda), Math.cos(lambda)];
+  const [sp, cp, sl, cl] = [maths.sin(phi), maths.cos(phi), maths.sin(lambda), maths.cos(lambda)];
   const n = A / Math.sqrt(1 - E2 * sp * sp);
   const origin = [
     (n + site.elevation) * cp * cl,
@@ -30,17 +31,20 @@ export function toLonlat(site: Scheme['site']): (p: Point) => Lonlat {
     (n * (1 - E2) + site.elevation) * sp,
   ] as const;
   return (p) => {
-    const east = p[0] * Math.cos(turn) - p[1] * Math.sin(turn);
-    const north = p[0] * Math.sin(turn) + p[1] * Math.cos(turn);
+    const east = p[0] * maths.cos(turn) - p[1] * maths.sin(turn);
+    const north = p[0] * maths.sin(turn) + p[1] * maths.cos(turn);
     const x = origin[0] - sl * east - sp * cl * north;
     const y = origin[1] + cl * east - sp * sl * north;
     const z = origin[2] + cp * north;
     const b = A * (1 - F);
     const r = Math.hypot(x, y);
-    const beta = Math.atan2(z * A, r * b);
-    const latitude = Math.atan2(z + (E2 / (1 - E2)) * b * Math.sin(beta) ** 3, r - E2 * A * Math.cos(beta) ** 3);
+    const beta = maths.atan2(z * A, r * b);
+    const latitude = maths.atan2(
+      z + (E2 / (1 - E2)) * b * maths.cube(maths.sin(beta)),
+      r - E2 * A * maths.cube(maths.cos(beta)),
+    );
     // Longitude runs on past 180° rather than jump; `cutAtDateLine` parts what crosses it.
-    const dLambda = Math.atan2(y * cl - x * sl, x * cl + y * sl);
+    const dLambda = maths.atan2(y * cl - x * sl, x * cl + y * sl);
     return [round(site.longitude + dLambda / DEG), round(latitude / DEG)];
   };
 }
@@ -69,10 +73,10 @@ function dateLineOf(site: Scheme['site']): DateLine | null {
   if (Math.abs(away) > FAR_deg) return null;
   const phi = site.latitude * DEG;
   const turn = site.north * DEG;
-  const radius = (A / Math.sqrt(1 - E2 * Math.sin(phi) ** 2) + site.elevation) * Math.cos(phi);
+  const radius = (A / Math.sqrt(1 - E2 * maths.square(maths.sin(phi))) + site.elevation) * maths.cos(phi);
   const point = (north: number): Point => {
-    const east = Math.tan(away * DEG) * (radius - north * Math.sin(phi));
-    return [east * Math.cos(turn) + north * Math.sin(turn), north * Math.cos(turn) - east * Math.sin(turn)];
+    const east = maths.tan(away * DEG) * (radius - north * maths.sin(phi));
+    return [east * maths.cos(turn) + north * maths.sin(turn), north * maths.cos(turn) - east * maths.sin(turn)];
   };
   // Run so that what lies past the line is on its right.
   return { at, along: at === 180 ? [point(-1000), point(1000)] : [point(1000), point(-1000)] };

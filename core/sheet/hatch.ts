@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import type { Hatch, Mm } from './drawing.ts';
 
 type Run = readonly (readonly [Mm, Mm])[];
@@ -13,7 +14,7 @@ export type HatchLine = readonly [Mm, Mm, Mm, Mm];
  */
 export function hatchLines(runs: readonly Run[], hatch: Hatch): readonly HatchLine[] {
   const angle = (hatch.angle_deg * Math.PI) / 180;
-  const [ux, uy] = [Math.cos(angle), -Math.sin(angle)];
+  const [ux, uy] = [maths.cos(angle), -maths.sin(angle)];
   const [nx, ny] = [-uy, ux];
   let low = Number.POSITIVE_INFINITY;
   let high = Number.NEGATIVE_INFINITY;

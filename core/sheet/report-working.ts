@@ -1,5 +1,6 @@
 import type { Finding } from '../limits/finding.ts';
 import { workingOf } from '../limits/working.ts';
+import { decadeOf } from '../maths/decade.ts';
 import { quantity } from './finding-words.ts';
 import type { Flow } from './flow.ts';
 import { SOFT } from './ink.ts';
@@ -50,6 +51,6 @@ const withUnit = (value: string, unit: string): string =>
 /** Four figures: a working is there to be recomputed. */
 function precise(value: number): string {
   if (value === 0) return '0';
-  const digits = Math.max(0, Math.min(6, 3 - Math.floor(Math.log10(Math.abs(value)))));
+  const digits = Math.max(0, Math.min(6, 3 - decadeOf(value)));
   return fixed(value, Number.isInteger(value) ? 0 : digits);
 }

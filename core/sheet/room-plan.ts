@@ -1,5 +1,6 @@
 import type { Model, RoomForm, WindowForm } from '../form/model.ts';
 import { pointOn } from '../form/panel.ts';
+import * as maths from '../maths/maths.ts';
 import { centroid } from '../plane/ring.ts';
 import { DEG } from '../units/angle.ts';
 import type { Mark, Mm } from './drawing.ts';
@@ -109,7 +110,7 @@ function windowMark(view: PlanView, w: WindowForm, chosen: boolean): readonly Ma
 /** An arrow that points the way the light goes, ending short of the room. @param bearing_deg  towards the sun, from the top of the page */
 function sunArrow(view: PlanView, room: RoomForm, bearing_deg: number): readonly Mark[] {
   const [cx, cy] = centroid(room.outline.map((p) => onPage(view, p)));
-  const [ux, uy] = [Math.sin(bearing_deg * DEG), -Math.cos(bearing_deg * DEG)];
+  const [ux, uy] = [maths.sin(bearing_deg * DEG), -maths.cos(bearing_deg * DEG)];
   const { x, y, width, height } = view.frame;
   const reach = (p: number, u: number, low: number, high: number): number =>
     u > 1e-9 ? (high - p) / u : u < -1e-9 ? (low - p) / u : Number.POSITIVE_INFINITY;

@@ -1,3 +1,5 @@
+import { decadeOf, tenTo } from '../maths/decade.ts';
+import * as maths from '../maths/maths.ts';
 import { DEG } from '../units/angle.ts';
 import type { Mark, Mm } from './drawing.ts';
 import { FINE, INK, WHITE } from './ink.ts';
@@ -10,8 +12,8 @@ import { FOOT_m, type SheetUnits, scaleWords } from './sheet-units.ts';
  * @param north_deg  true north, clockwise from the top of the page
  */
 export function northPoint(cx: Mm, cy: Mm, radius: Mm, north_deg: number): Mark {
-  const s = Math.sin(north_deg * DEG);
-  const c = Math.cos(north_deg * DEG);
+  const s = maths.sin(north_deg * DEG);
+  const c = maths.cos(north_deg * DEG);
   const at = (along: number, across: number): readonly [Mm, Mm] => [
     cx + radius * (along * s + across * c),
     cy - radius * (along * c - across * s),
@@ -32,7 +34,7 @@ export function northPoint(cx: Mm, cy: Mm, radius: Mm, north_deg: number): Mark 
 /** The longest round length of ground whose bar is no wider than a place, in metres, or in feet. */
 export function barLength(width: Mm, scale: number, units: SheetUnits = 'metric'): number {
   const most = (width * scale) / 1000 / (units === 'imperial' ? FOOT_m : 1);
-  const ten = 10 ** Math.floor(Math.log10(most));
+  const ten = tenTo(decadeOf(most));
   for (const k of [5, 2, 1]) if (k * ten <= most) return k * ten;
   return ten;
 }

@@ -1,5 +1,6 @@
 import type { RoomForm, WindowForm } from '../form/model.ts';
 import { pointOn } from '../form/panel.ts';
+import * as maths from '../maths/maths.ts';
 import type { Point } from '../plane/vec.ts';
 import type { Mark, Mm, Stroke } from './drawing.ts';
 import { BEAM, EXISTING_FILL, FINE, INK, PROPOSED_LINE, SOFT, THIN, WHITE } from './ink.ts';
@@ -115,7 +116,7 @@ export function sectionDrawing(input: SectionInput): readonly Mark[] {
 /** Sunlight as bands from the air through the glass down to the floor. */
 function beams(input: SectionInput, at: Place, sill: number, profile_rad: number): readonly Mark[] {
   const { section, reach } = input;
-  const slope = Math.tan(profile_rad);
+  const slope = maths.tan(profile_rad);
   const glass = -section.reveal_m;
   const far = Math.max(reach.out + 2, 20);
   return input.lit.flatMap(([low, high]) => {
@@ -136,7 +137,7 @@ function beams(input: SectionInput, at: Place, sill: number, profile_rad: number
 function grazing(section: WindowSection, profile_rad: number, sill: number, at: Place, reach: Reach): readonly Mark[] {
   const [out, up] = furthestTip(section);
   if (out <= 0.02) return [];
-  const slope = Math.tan(profile_rad);
+  const slope = maths.tan(profile_rad);
   const end = Math.max(up - out * slope, -sill - SLAB_m);
   const far = reach.out + 2;
   return [line(...at([far, up + (far - out) * slope]), ...at([out - (up - end) / slope, end]), BEAM_LINE)];
@@ -212,7 +213,7 @@ function angleMark(profile_rad: number, section: WindowSection, reach: Reach, at
   const arc: (readonly [Mm, Mm])[] = [];
   for (let i = 0; i <= 16; i++) {
     const a = (profile_rad * i) / 16;
-    arc.push(at([tip[0] + radius * Math.cos(a), tip[1] + radius * Math.sin(a)]));
+    arc.push(at([tip[0] + radius * maths.cos(a), tip[1] + radius * maths.sin(a)]));
   }
   const [lx, ly] = at([tip[0] + radius + 0.05, tip[1] + 0.06]);
   return [

@@ -1,4 +1,4 @@
-import { area as squareMetres, fixed } from './numerals.ts';
+import { fixed, area as squareMetres } from './numerals.ts';
 
 /** Units of a drawing. They change what is printed, never what is worked out. */
 export type SheetUnits = 'metric' | 'imperial';
@@ -69,7 +69,7 @@ export const planHeight = (m: number, units: SheetUnits): string => (units === '
 /** An area with its unit. */
 export function areaText(m2: number, units: SheetUnits): string {
   if (units === 'metric') return squareMetres(m2);
-  return `${fixed(m2 / FOOT_m ** 2, 0)}\u00a0sq\u00a0ft`;
+  return `${fixed(m2 / (FOOT_m * FOOT_m), 0)}\u00a0sq\u00a0ft`;
 }
 
 /** A length of a dimension line: metres to the centimetre, or feet and inches to the eighth of an inch. */

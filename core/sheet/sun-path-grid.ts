@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { DEG, wrap360 } from '../units/angle.ts';
 import type { Mark, Mm, Stroke } from './drawing.ts';
 import { HAIR, INK, SOFT, WHITE } from './ink.ts';
@@ -36,12 +37,12 @@ function discGrid(view: SkyView & { kind: 'stereographic' }): readonly Mark[] {
   const ring = (altitude: number): Mark => ({
     kind: 'circle',
     at: centre,
-    radius: radius * Math.tan(((90 - altitude) * DEG) / 2),
+    radius: radius * maths.tan(((90 - altitude) * DEG) / 2),
     stroke: altitude % 30 === 0 ? GRID : FINE_GRID,
   });
   const tick = (bearing: number): Mark => {
     const long = bearing % 30 === 0 ? 1.6 : 0.9;
-    const [s, c] = [Math.sin(bearing * DEG), Math.cos(bearing * DEG)];
+    const [s, c] = [maths.sin(bearing * DEG), maths.cos(bearing * DEG)];
     const end = radius + long;
     return line(centre[0] + s * radius, centre[1] - c * radius, centre[0] + s * end, centre[1] - c * end, EDGE);
   };
@@ -122,7 +123,7 @@ function bearingSpots(view: SkyView): readonly { readonly bearing: number; reado
   if (view.kind === 'stereographic') {
     const out = view.radius + 4.4;
     return BEARINGS.map((bearing) => {
-      const [s, c] = [Math.sin(bearing * DEG), Math.cos(bearing * DEG)];
+      const [s, c] = [maths.sin(bearing * DEG), maths.cos(bearing * DEG)];
       return { bearing, spot: { at: [view.centre[0] + s * out, view.centre[1] - c * out], turn_deg: 0 } };
     });
   }

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import type { Mark, Mm } from './drawing.ts';
 import { INK } from './ink.ts';
 import { CAP_HEIGHT, measure } from './measure.ts';
@@ -80,8 +81,8 @@ function boxOf({ text, size, face }: LabelText, { at, turn_deg }: LabelSpot): Bo
   const turn = (turn_deg * Math.PI) / 180;
   return {
     at,
-    ux: Math.cos(turn),
-    uy: -Math.sin(turn),
+    ux: maths.cos(turn),
+    uy: -maths.sin(turn),
     halfWidth: measure(text, size, face) / 2 + CLEAR / 2,
     halfHeight: (size * CAP_HEIGHT) / 2 + CLEAR / 2,
   };
@@ -155,7 +156,7 @@ function centred({ text, size, face = 'regular', colour = INK }: LabelText, { at
   return {
     kind: 'text',
     text,
-    at: [at[0] + Math.sin(turn) * drop, at[1] + Math.cos(turn) * drop],
+    at: [at[0] + maths.sin(turn) * drop, at[1] + maths.cos(turn) * drop],
     size,
     face,
     colour,

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { seasons } from '../sun/seasons.ts';
 import type { PathRun, SunPath } from '../sun/sun-path.ts';
 import { toDegrees } from '../units/angle.ts';
@@ -93,7 +94,7 @@ function heightAt(view: SkyView, altitude_deg: number): (p: PagePoint) => Mm {
 
 /** The angle of a chord, so that its text is never upside down [°]. */
 function upright(a: PagePoint, b: PagePoint): number {
-  const turn = toDegrees(Math.atan2(a[1] - b[1], b[0] - a[0]));
+  const turn = toDegrees(maths.atan2(a[1] - b[1], b[0] - a[0]));
   return turn > 90 ? turn - 180 : turn <= -90 ? turn + 180 : turn;
 }
 
@@ -151,7 +152,7 @@ const rankOf = (stretch: HourStretch): number => HOUR_ORDER.indexOf(Number(stret
 const tipSpots = ({ at, way }: Tip): readonly LabelSpot[] =>
   [2.6, 3.2, 4, 5].flatMap((out) =>
     [0, 25, -25, 50, -50].map((aside): LabelSpot => {
-      const [s, c] = [Math.sin((aside * Math.PI) / 180), Math.cos((aside * Math.PI) / 180)];
+      const [s, c] = [maths.sin((aside * Math.PI) / 180), maths.cos((aside * Math.PI) / 180)];
       const [wx, wy] = [way[0] * c - way[1] * s, way[0] * s + way[1] * c];
       return { at: [at[0] + wx * out, at[1] + wy * out], turn_deg: 0 };
     }),

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { stereographic } from '../sun/sun-path.ts';
 import { DEG, toDegrees, wrap180, wrap360 } from '../units/angle.ts';
 import type { Mm } from './drawing.ts';
@@ -38,7 +39,7 @@ export function pageToSky(
     const [e, n] = [(px - view.centre[0]) / view.radius, (view.centre[1] - py) / view.radius];
     const r = Math.hypot(e, n);
     if (r > 1) return null;
-    return { azimuth_rad: wrap360(toDegrees(Math.atan2(e, n))) * DEG, altitude_rad: 90 * DEG - 2 * Math.atan(r) };
+    return { azimuth_rad: wrap360(toDegrees(maths.atan2(e, n))) * DEG, altitude_rad: 90 * DEG - 2 * maths.atan(r) };
   }
   const { x, y, width, height } = view.frame;
   const [u, v] = [(px - x) / width, (py - y) / height];

@@ -1,4 +1,5 @@
 import type { Verdict } from '../limits/finding.ts';
+import * as maths from '../maths/maths.ts';
 import type { Mark, Mm } from './drawing.ts';
 import { CLOSE, OVER, SOFT, WHITE, WITHIN } from './ink.ts';
 
@@ -21,7 +22,7 @@ export function verdictDisc(verdict: Verdict | null, x: Mm, y: Mm, radius: Mm = 
   const half: (readonly [Mm, Mm])[] = [];
   for (let i = 0; i <= 24; i++) {
     const angle = Math.PI / 2 + (Math.PI * i) / 24;
-    half.push([x + radius * Math.cos(angle), y + radius * Math.sin(angle)]);
+    half.push([x + radius * maths.cos(angle), y + radius * maths.sin(angle)]);
   }
   return [ring, { kind: 'path', runs: [half], closed: true, fill: colour }];
 }

@@ -1,4 +1,5 @@
 import type { WindowForm } from '../form/model.ts';
+import * as maths from '../maths/maths.ts';
 import { dot, minus } from '../plane/vec.ts';
 
 /**
@@ -43,7 +44,7 @@ export const onGlass = (p: SectionPoint, reveal_m: number, slope: number): numbe
  * @param profile_rad  profile angle of the sun, above 0 and below π/2
  */
 export function litOnGlass(s: WindowSection, profile_rad: number): readonly (readonly [number, number])[] {
-  const slope = Math.tan(profile_rad);
+  const slope = maths.tan(profile_rad);
   const hidden: (readonly [number, number])[] = [[s.height_m - s.reveal_m * slope, Number.POSITIVE_INFINITY]];
   for (const blade of s.blades) {
     const [a, b] = blade.ends.map((e) => onGlass(e, s.reveal_m, slope)) as [number, number];

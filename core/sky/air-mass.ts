@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { DEG } from '../units/angle.ts';
 
 /** Pressure of the standard atmosphere at sea level [hPa]. */
@@ -12,7 +13,7 @@ export const SEA_LEVEL_hPa = 1013.25;
 export function relativeAirMass(apparentAltitude_rad: number): number {
   const h_deg = apparentAltitude_rad / DEG;
   if (!(h_deg >= 0)) return Number.NaN;
-  return 1 / (Math.sin(apparentAltitude_rad) + 0.50572 * (h_deg + 6.07995) ** -1.6364);
+  return 1 / (maths.sin(apparentAltitude_rad) + 0.50572 * maths.pow(h_deg + 6.07995, -1.6364));
 }
 
 /**
@@ -24,7 +25,7 @@ export function relativeAirMass(apparentAltitude_rad: number): number {
 export function relativeAirMass1966(zenith_rad: number): number {
   const z_deg = zenith_rad / DEG;
   if (!(z_deg <= 90)) return Number.NaN;
-  return 1 / (Math.cos(zenith_rad) + 0.15 * (93.885 - z_deg) ** -1.253);
+  return 1 / (maths.cos(zenith_rad) + 0.15 * maths.pow(93.885 - z_deg, -1.253));
 }
 
 /** Air mass for the thinner air of a high place: in proportion to the pressure. @param pressure_hPa station pressure [hPa] */

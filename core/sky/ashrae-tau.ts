@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { type ClearSun, type ModelNote, NO_SUN, type SplitSky } from './clear-sun.ts';
 
 /**
@@ -36,10 +37,10 @@ export function ashraeExponents({ edition, tauBeam: b, tauDiffuse: d }: AshraeAi
  * @see ASHRAE Handbook of Fundamentals (2009), ch. 14; (2013), ch. 14, the same with new exponents
  */
 export function ashraeTau(sun: ClearSun, air: AshraeAir): SplitSky {
-  const up = Math.sin(sun.apparentAltitude_rad);
+  const up = maths.sin(sun.apparentAltitude_rad);
   if (!(up > 0)) return NO_SUN;
   const power = ashraeExponents(air);
-  const beam = sun.extraterrestrial_Wm2 * Math.exp(-air.tauBeam * sun.airMass ** power.beam);
-  const diffuse = sun.extraterrestrial_Wm2 * Math.exp(-air.tauDiffuse * sun.airMass ** power.diffuse);
+  const beam = sun.extraterrestrial_Wm2 * maths.exp(-air.tauBeam * maths.pow(sun.airMass, power.beam));
+  const diffuse = sun.extraterrestrial_Wm2 * maths.exp(-air.tauDiffuse * maths.pow(sun.airMass, power.diffuse));
   return { beamNormal_Wm2: beam, diffuse_Wm2: diffuse, global_Wm2: beam * up + diffuse };
 }

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { absoluteAirMass } from './air-mass.ts';
 import { type ClearSun, type ModelNote, NO_SUN, type SplitSky } from './clear-sun.ts';
 
@@ -37,27 +38,28 @@ export const BIRD_NOTE: ModelNote = {
  *      −0.3035, which changes results by less than 0.02 %. The level planes take the sun's height as it is given.
  */
 export function birdHulstrom(sun: ClearSun, air: BirdAir): SplitSky {
-  const up = Math.sin(sun.apparentAltitude_rad);
+  const up = maths.sin(sun.apparentAltitude_rad);
   if (!(up > 0)) return NO_SUN;
   const m = sun.airMass;
   const mp = absoluteAirMass(m, sun.pressure_hPa);
   const forward = air.forward ?? 0.85;
-  const molecules = Math.exp(-0.0903 * mp ** 0.84 * (1 + mp - mp ** 1.01));
+  const molecules = maths.exp(-0.0903 * maths.pow(mp, 0.84) * (1 + mp - maths.pow(mp, 1.01)));
   const xo = air.ozone_cm * m;
-  const ozone = 1 - 0.1611 * xo * (1 + 139.48 * xo) ** -0.3034 - (0.002715 * xo) / (1 + 0.044 * xo + 0.0003 * xo * xo);
-  const gases = Math.exp(-0.0127 * mp ** 0.26);
+  const ozone =
+    1 - 0.1611 * xo * maths.pow(1 + 139.48 * xo, -0.3034) - (0.002715 * xo) / (1 + 0.044 * xo + 0.0003 * xo * xo);
+  const gases = maths.exp(-0.0127 * maths.pow(mp, 0.26));
   const xw = air.water_cm * m;
-  const water = 1 - (2.4959 * xw) / ((1 + 79.034 * xw) ** 0.6828 + 6.385 * xw);
+  const water = 1 - (2.4959 * xw) / (maths.pow(1 + 79.034 * xw, 0.6828) + 6.385 * xw);
   const depth = 0.27583 * air.aerosol380 + 0.35 * air.aerosol500;
-  const aerosol = Math.exp(-(depth ** 0.873) * (1 + depth - depth ** 0.7088) * m ** 0.9108);
-  const absorbed = 1 - 0.1 * (1 - m + m ** 1.06) * (1 - aerosol);
+  const aerosol = maths.exp(-maths.pow(depth, 0.873) * (1 + depth - maths.pow(depth, 0.7088)) * maths.pow(m, 0.9108));
+  const absorbed = 1 - 0.1 * (1 - m + maths.pow(m, 1.06)) * (1 - aerosol);
   const scattered = aerosol / absorbed;
   const skyReflectance = 0.0685 + (1 - forward) * (1 - scattered);
   const e0 = sun.extraterrestrial_Wm2;
   const beam = 0.9662 * e0 * aerosol * water * gases * ozone * molecules;
   const once =
     (0.79 * e0 * up * ozone * gases * water * absorbed * (0.5 * (1 - molecules) + forward * (1 - scattered))) /
-    (1 - m + m ** 1.02);
+    (1 - m + maths.pow(m, 1.02));
   const global = (beam * up + once) / (1 - air.groundReflectance * skyReflectance);
   return { beamNormal_Wm2: beam, diffuse_Wm2: global - beam * up, global_Wm2: global };
 }

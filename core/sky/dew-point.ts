@@ -1,3 +1,5 @@
+import * as maths from '../maths/maths.ts';
+
 /**
  * Dew point of moist air over water.
  * @param tAir_C                air temperature [°C], −40 to 50
@@ -7,6 +9,6 @@
  */
 export function dewPoint_C(tAir_C: number, relativeHumidity_pct: number): number {
   const share = Math.min(100, Math.max(1, relativeHumidity_pct)) / 100;
-  const x = Math.log(share) + (17.625 * tAir_C) / (243.04 + tAir_C);
+  const x = maths.log(share) + (17.625 * tAir_C) / (243.04 + tAir_C);
   return (243.04 * x) / (17.625 - x);
 }

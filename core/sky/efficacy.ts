@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { type PerezInput, perezSky } from './perez.ts';
 
 type Four = readonly [number, number, number, number];
@@ -21,7 +22,7 @@ const DARKEST = 0.01;
 export type Efficacy = { readonly global: number; readonly diffuse: number; readonly beam: number };
 
 /** Water in the air from the dew point, as brought down to the ground [cm]. @see R. Perez et al. (1990) */
-export const waterFromDewPoint_cm = (dewPoint_C: number): number => Math.exp(0.07 * dewPoint_C - 0.075);
+export const waterFromDewPoint_cm = (dewPoint_C: number): number => maths.exp(0.07 * dewPoint_C - 0.075);
 
 /**
  * How many lumens a watt of daylight carries. Good for the sun above about 3°; with the sun below the horizon the value of the
@@ -35,12 +36,12 @@ export function daylightEfficacy(input: PerezInput, dewPoint_C: number): Efficac
   const row = EFFICACY[sky.bin - 1] as (typeof EFFICACY)[number];
   const water = waterFromDewPoint_cm(dewPoint_C);
   const z = Math.min(input.zenith_rad, Math.PI / 2);
-  const bright = Math.log(Math.max(DARKEST, sky.brightness));
-  const even = ([a, b, c, d]: Four): number => a + b * water + c * Math.cos(z) + d * bright;
+  const bright = maths.log(Math.max(DARKEST, sky.brightness));
+  const even = ([a, b, c, d]: Four): number => a + b * water + c * maths.cos(z) + d * bright;
   const [a, b, c, d] = row.beam;
   return {
     global: even(row.global),
     diffuse: even(row.diffuse),
-    beam: Math.max(0, a + b * water + c * Math.exp(5.73 * z - 5) + d * sky.brightness),
+    beam: Math.max(0, a + b * water + c * maths.exp(5.73 * z - 5) + d * sky.brightness),
   };
 }

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { DEG } from '../units/angle.ts';
 
 /**
@@ -30,7 +31,11 @@ export const extraterrestrial = (distance_au: number, constant_Wm2: number = SOL
 export function extraterrestrialSpencer(dayOfYear: number, constant_Wm2: number = SOLAR_CONSTANT.astm_Wm2): number {
   const b = (2 * Math.PI * (dayOfYear - 1)) / 365;
   const ratio =
-    1.00011 + 0.034221 * Math.cos(b) + 0.00128 * Math.sin(b) + 0.000719 * Math.cos(2 * b) + 7.7e-5 * Math.sin(2 * b);
+    1.00011 +
+    0.034221 * maths.cos(b) +
+    0.00128 * maths.sin(b) +
+    0.000719 * maths.cos(2 * b) +
+    7.7e-5 * maths.sin(2 * b);
   return constant_Wm2 * ratio;
 }
 
@@ -40,7 +45,7 @@ export function extraterrestrialSpencer(dayOfYear: number, constant_Wm2: number 
  * @see ASHRAE Handbook of Fundamentals (2009), ch. 14
  */
 export function extraterrestrialAshrae(dayOfYear: number, constant_Wm2: number = SOLAR_CONSTANT.ashrae_Wm2): number {
-  return constant_Wm2 * (1 + 0.033 * Math.cos(((360 * (dayOfYear - 3)) / 365) * DEG));
+  return constant_Wm2 * (1 + 0.033 * maths.cos(((360 * (dayOfYear - 3)) / 365) * DEG));
 }
 
 /** Day of the year of an instant, counted in UTC: 1 = 1 January. @param instant_ms UTC milliseconds */

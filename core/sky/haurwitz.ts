@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import type { ClearSun, ModelNote } from './clear-sun.ts';
 
 export const HAURWITZ_NOTE: ModelNote = {
@@ -15,6 +16,6 @@ export const HAURWITZ_NOTE: ModelNote = {
  * @see B. Haurwitz, Journal of Meteorology 2, 154–166 (1945)
  */
 export function haurwitz(sun: Pick<ClearSun, 'apparentAltitude_rad'>): number {
-  const up = Math.sin(sun.apparentAltitude_rad);
-  return up > 0 ? 1098 * up * Math.exp(-0.059 / up) : 0;
+  const up = maths.sin(sun.apparentAltitude_rad);
+  return up > 0 ? 1098 * up * maths.exp(-0.059 / up) : 0;
 }

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { absoluteAirMass } from './air-mass.ts';
 import { type ClearSun, type ModelNote, NO_SUN, type SplitSky } from './clear-sun.ts';
 
@@ -29,18 +30,18 @@ export const INEICHEN_NOTE: ModelNote = {
  * @see P. Ineichen, R. Perez, Solar Energy 73, 151–157 (2002); R. Perez et al., Solar Energy 73, 307–317 (2002)
  */
 export function ineichenPerez(sun: ClearSun, linkeTurbidity: number, raiseLowSun = false): SplitSky {
-  const up = Math.sin(sun.apparentAltitude_rad);
+  const up = maths.sin(sun.apparentAltitude_rad);
   if (!(up > 0)) return NO_SUN;
   const z = sun.elevation_m;
   const m = absoluteAirMass(sun.airMass, sun.pressure_hPa);
-  const f1 = Math.exp(-z / 8000);
-  const f2 = Math.exp(-z / 1250);
+  const f1 = maths.exp(-z / 8000);
+  const f2 = maths.exp(-z / 1250);
   const c1 = 5.09e-5 * z + 0.868;
   const c2 = 3.92e-5 * z + 0.0387;
-  const raise = raiseLowSun ? Math.exp(0.01 * m ** 1.8) : 1;
-  const global = raise * c1 * sun.extraterrestrial_Wm2 * up * Math.exp(-c2 * m * (f1 + f2 * (linkeTurbidity - 1)));
-  const fromTurbidity = sun.extraterrestrial_Wm2 * (0.664 + 0.163 / f1) * Math.exp(-0.09 * m * (linkeTurbidity - 1));
-  const fromGlobal = (global * Math.max(0, 1 - (0.1 - 0.2 * Math.exp(-linkeTurbidity)) / (0.1 + 0.882 / f1))) / up;
+  const raise = raiseLowSun ? maths.exp(0.01 * maths.pow(m, 1.8)) : 1;
+  const global = raise * c1 * sun.extraterrestrial_Wm2 * up * maths.exp(-c2 * m * (f1 + f2 * (linkeTurbidity - 1)));
+  const fromTurbidity = sun.extraterrestrial_Wm2 * (0.664 + 0.163 / f1) * maths.exp(-0.09 * m * (linkeTurbidity - 1));
+  const fromGlobal = (global * Math.max(0, 1 - (0.1 - 0.2 * maths.exp(-linkeTurbidity)) / (0.1 + 0.882 / f1))) / up;
   const beam = Math.min(fromTurbidity, fromGlobal);
   return { beamNormal_Wm2: beam, diffuse_Wm2: global - beam * up, global_Wm2: global };
 }

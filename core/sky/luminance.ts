@@ -1,3 +1,5 @@
+import * as maths from '../maths/maths.ts';
+
 /** Luminance of a point of the sky over that of the zenith. `fromSun_rad`: difference of azimuth to the sun. */
 export type RelativeLuminance = (altitude_rad: number, fromSun_rad: number) => number;
 
@@ -6,7 +8,7 @@ export type RelativeLuminance = (altitude_rad: number, fromSun_rad: number) => n
  * @see CIE (1955), after P. Moon, D. E. Spencer, Illuminating Engineering 37, 707–726 (1942); kept in ISO 15469:2004 as the
  *      sixteenth sky
  */
-export const overcastLuminance: RelativeLuminance = (altitude_rad) => (1 + 2 * Math.sin(altitude_rad)) / 3;
+export const overcastLuminance: RelativeLuminance = (altitude_rad) => (1 + 2 * maths.sin(altitude_rad)) / 3;
 
 /** Horizontal illuminance of the traditional overcast sky over its zenith luminance: ∫ L sin γ dω = 7π/9 [sr]. */
 export const OVERCAST_LEVEL_sr = (7 * Math.PI) / 9;
@@ -65,16 +67,16 @@ export function generalSky(type: number, sunZenith_rad: number): RelativeLuminan
   if (!kind) throw new RangeError(`no such sky: ${type}; the general skies are 1 to 15`);
   const { a, b, c, d, e } = kind;
   // exp(b/cos Z) tends to 0 at the horizon, so the gradation tends to 1; b is negative in every row.
-  const gradation = (cosZ: number): number => (cosZ > 0 ? 1 + a * Math.exp(b / cosZ) : 1);
+  const gradation = (cosZ: number): number => (cosZ > 0 ? 1 + a * maths.exp(b / cosZ) : 1);
   const corona = (chi: number, cosChi: number): number =>
-    1 + c * (Math.exp(d * chi) - Math.exp((d * Math.PI) / 2)) + e * cosChi * cosChi;
-  const cosSun = Math.cos(sunZenith_rad);
-  const sinSun = Math.sin(sunZenith_rad);
+    1 + c * (maths.exp(d * chi) - maths.exp((d * Math.PI) / 2)) + e * cosChi * cosChi;
+  const cosSun = maths.cos(sunZenith_rad);
+  const sinSun = maths.sin(sunZenith_rad);
   const zenith = corona(sunZenith_rad, cosSun) * gradation(1);
   return (altitude_rad, fromSun_rad) => {
-    const cosZ = Math.sin(altitude_rad);
-    const cosChi = Math.min(1, Math.max(-1, cosSun * cosZ + sinSun * Math.cos(altitude_rad) * Math.cos(fromSun_rad)));
-    return (corona(Math.acos(cosChi), cosChi) * gradation(cosZ)) / zenith;
+    const cosZ = maths.sin(altitude_rad);
+    const cosChi = Math.min(1, Math.max(-1, cosSun * cosZ + sinSun * maths.cos(altitude_rad) * maths.cos(fromSun_rad)));
+    return (corona(maths.acos(cosChi), cosChi) * gradation(cosZ)) / zenith;
   };
 }
 
@@ -83,7 +85,7 @@ const RINGS = 180;
 
 /** Horizontal illuminance of an open sky over its zenith luminance: ∫ L sin γ dω [sr]; π for an even sky. */
 export function levelShare_sr(luminance: RelativeLuminance): number {
-  return dome(luminance, (altitude) => Math.sin(altitude), -Math.PI, Math.PI);
+  return dome(luminance, (altitude) => maths.sin(altitude), -Math.PI, Math.PI);
 }
 
 /**
@@ -92,7 +94,7 @@ export function levelShare_sr(luminance: RelativeLuminance): number {
  */
 export function verticalShare_sr(luminance: RelativeLuminance, bearingFromSun_rad: number): number {
   const facing = (altitude: number, azimuth: number): number =>
-    Math.cos(altitude) * Math.cos(azimuth - bearingFromSun_rad);
+    maths.cos(altitude) * maths.cos(azimuth - bearingFromSun_rad);
   return dome(luminance, facing, bearingFromSun_rad - Math.PI / 2, bearingFromSun_rad + Math.PI / 2);
 }
 
@@ -109,7 +111,7 @@ function dome(
   for (let i = 0; i < RINGS; i++) {
     const altitude = (i + 0.5) * high;
     // Solid angle of the patch, exactly: the ring's height in sine times the width of the spoke.
-    const patch = (Math.sin((i + 1) * high) - Math.sin(i * high)) * wide;
+    const patch = (maths.sin((i + 1) * high) - maths.sin(i * high)) * wide;
     for (let k = 0; k < spokes; k++) {
       const azimuth = from_rad + (k + 0.5) * wide;
       sum += luminance(altitude, azimuth) * cosine(altitude, azimuth) * patch;

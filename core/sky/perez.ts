@@ -48,7 +48,7 @@ export function perezSky(input: PerezInput): PerezSky {
       ? { clearness: Number.POSITIVE_INFINITY, brightness: 0, bin: 8 }
       : { clearness: 1, brightness: 0, bin: 1 };
   }
-  const k = 1.041 * z ** 3;
+  const k = 1.041 * z * z * z;
   const clearness = ((diffuse + beam) / diffuse + k) / (1 + k);
   let bin = 1;
   for (const limit of CLEARNESS) if (clearness >= limit) bin++;

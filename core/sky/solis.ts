@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { SEA_LEVEL_hPa } from './air-mass.ts';
 import { type ClearSun, type ModelNote, NO_SUN, type SplitSky } from './clear-sun.ts';
 
@@ -27,14 +28,15 @@ export const SOLIS_NOTE: ModelNote = {
  * @see P. Ineichen, Solar Energy 82, 758–762 (2008)
  */
 export function simplifiedSolis(sun: ClearSun, air: SolisAir): SplitSky {
-  const up = Math.sin(sun.apparentAltitude_rad);
+  const up = maths.sin(sun.apparentAltitude_rad);
   if (!(up > 0)) return NO_SUN;
   const a = air.aerosol700;
   const w = Math.max(air.water_cm, 0.2);
-  const lw = Math.log(w);
-  const lp = Math.log(sun.pressure_hPa / SEA_LEVEL_hPa);
+  const lw = maths.log(w);
+  const lp = maths.log(sun.pressure_hPa / SEA_LEVEL_hPa);
   const raised =
-    sun.extraterrestrial_Wm2 * (0.12 * w ** 0.56 * a * a + 0.97 * w ** 0.032 * a + 1.08 * w ** 0.0051 + 0.071 * lp);
+    sun.extraterrestrial_Wm2 *
+    (0.12 * maths.pow(w, 0.56) * a * a + 0.97 * maths.pow(w, 0.032) * a + 1.08 * maths.pow(w, 0.0051) + 0.071 * lp);
   const tauBeam =
     (1.82 + 0.056 * lw + 0.0071 * lw * lw) * a + 0.33 + 0.045 * lw + 0.0096 * lw * lw + (0.0089 * w + 0.13) * lp;
   const powerBeam = (0.00925 * a * a + 0.0148 * a - 0.0172) * lw - 0.7565 * a * a + 0.5057 * a + 0.4557;
@@ -43,9 +45,9 @@ export function simplifiedSolis(sun: ClearSun, air: SolisAir): SplitSky {
   const powerGlobal = -0.0147 * lw - 0.3079 * a * a + 0.2846 * a + 0.3798;
   const powerDiffuse = -0.337 * a * a + 0.63 * a + 0.116 + lp / (18 + 152 * a);
   return {
-    beamNormal_Wm2: raised * Math.exp(-tauBeam / up ** powerBeam),
-    diffuse_Wm2: raised * Math.exp(-tauDiffuse(a, w, lp) / up ** powerDiffuse),
-    global_Wm2: raised * up * Math.exp(-tauGlobal / up ** powerGlobal),
+    beamNormal_Wm2: raised * maths.exp(-tauBeam / maths.pow(up, powerBeam)),
+    diffuse_Wm2: raised * maths.exp(-tauDiffuse(a, w, lp) / maths.pow(up, powerDiffuse)),
+    global_Wm2: raised * up * maths.exp(-tauGlobal / maths.pow(up, powerGlobal)),
   };
 }
 
@@ -57,6 +59,6 @@ function tauDiffuse(a: number, w: number, lp: number): number {
   const t2 = clean ? -0.23 * w + 74.8 : -0.134 * w + 15.5;
   const t1 = clean ? 0.092 * w - 8.86 : 0.0554 * w - 5.71;
   const t0 = clean ? 0.0042 * w + 3.12 : 0.0057 * w + 2.94;
-  const tp = clean ? -0.83 * (1 + a) ** -17.2 : -0.71 * (1 + a) ** -15;
+  const tp = clean ? -0.83 * maths.pow(1 + a, -17.2) : -0.71 * maths.pow(1 + a, -15);
   return (((t4 * a + t3) * a + t2) * a + t1) * a + t0 + tp * lp;
 }

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { relativeAirMass1966, SEA_LEVEL_hPa } from './air-mass.ts';
 import { DIRINT_FACTORS } from './dirint-factors.ts';
 import { extraterrestrialSpencer, SOLAR_CONSTANT } from './extraterrestrial.ts';
@@ -49,13 +50,13 @@ export const SPLIT_NOTES = {
  */
 export function clearnessIndex(reading: GlobalReading, constant_Wm2: number, most = 1): number {
   const outside =
-    extraterrestrialSpencer(reading.dayOfYear, constant_Wm2) * Math.max(Math.cos(reading.zenith_rad), LOWEST_COS);
+    extraterrestrialSpencer(reading.dayOfYear, constant_Wm2) * Math.max(maths.cos(reading.zenith_rad), LOWEST_COS);
   return Math.min(most, Math.max(0, reading.global_Wm2 / outside));
 }
 
 /** Diffuse is what global leaves after the beam on the level; never below 0, where a fit gives more beam than there is light. */
 const rest = (reading: GlobalReading, beam: number): number =>
-  Math.max(0, reading.global_Wm2 - beam * Math.cos(reading.zenith_rad));
+  Math.max(0, reading.global_Wm2 - beam * maths.cos(reading.zenith_rad));
 
 const sunless = (reading: GlobalReading): boolean =>
   !(reading.global_Wm2 >= 0) || !(reading.zenith_rad <= LOWEST_SUN_rad);
@@ -69,13 +70,9 @@ export function erbs(reading: GlobalReading): Split {
   if (sunless(reading)) return { beamNormal_Wm2: 0, diffuse_Wm2: Math.max(0, reading.global_Wm2) };
   const k = clearnessIndex(reading, SOLAR_CONSTANT.astm_Wm2);
   const share =
-    k <= 0.22
-      ? 1 - 0.09 * k
-      : k <= 0.8
-        ? 0.9511 - 0.1604 * k + 4.388 * k ** 2 - 16.638 * k ** 3 + 12.336 * k ** 4
-        : 0.165;
+    k <= 0.22 ? 1 - 0.09 * k : k <= 0.8 ? 0.9511 + k * (-0.1604 + k * (4.388 + k * (-16.638 + k * 12.336))) : 0.165;
   const diffuse = reading.global_Wm2 * share;
-  return { beamNormal_Wm2: (reading.global_Wm2 - diffuse) / Math.cos(reading.zenith_rad), diffuse_Wm2: diffuse };
+  return { beamNormal_Wm2: (reading.global_Wm2 - diffuse) / maths.cos(reading.zenith_rad), diffuse_Wm2: diffuse };
 }
 
 /** DISC's intermediate values, which DIRINT goes on from. */
@@ -86,14 +83,12 @@ function discBeam(reading: GlobalReading, pressure_hPa: number): Disc {
   const airMass = Math.min(LONGEST_PATH, (relativeAirMass1966(reading.zenith_rad) * pressure_hPa) / SEA_LEVEL_hPa);
   if (sunless(reading)) return { beam: 0, clearness: k, airMass };
   const cloudy = k <= 0.6;
-  const a = cloudy
-    ? 0.512 - 1.56 * k + 2.286 * k ** 2 - 2.222 * k ** 3
-    : -5.743 + 21.77 * k - 27.49 * k ** 2 + 11.56 * k ** 3;
-  const b = cloudy ? 0.37 + 0.962 * k : 41.4 - 118.5 * k + 66.05 * k ** 2 + 31.9 * k ** 3;
-  const c = cloudy ? -0.28 + 0.932 * k - 2.048 * k ** 2 : -47.01 + 184.2 * k - 222 * k ** 2 + 73.81 * k ** 3;
+  const a = cloudy ? 0.512 + k * (-1.56 + k * (2.286 - k * 2.222)) : -5.743 + k * (21.77 + k * (-27.49 + k * 11.56));
+  const b = cloudy ? 0.37 + 0.962 * k : 41.4 + k * (-118.5 + k * (66.05 + k * 31.9));
+  const c = cloudy ? -0.28 + k * (0.932 - k * 2.048) : -47.01 + k * (184.2 + k * (-222 + k * 73.81));
   const m = airMass;
-  const clearest = 0.866 - 0.122 * m + 0.0121 * m ** 2 - 0.000653 * m ** 3 + 1.4e-5 * m ** 4;
-  const share = clearest - (a + b * Math.exp(c * m));
+  const clearest = 0.866 + m * (-0.122 + m * (0.0121 + m * (-0.000653 + m * 1.4e-5)));
+  const share = clearest - (a + b * maths.exp(c * m));
   return {
     beam: Math.max(0, share * extraterrestrialSpencer(reading.dayOfYear, SOLAR_CONSTANT.disc_Wm2)),
     clearness: k,
@@ -143,14 +138,14 @@ export function dirint(series: DirintSeries): Split[] {
     typeof pressure_hPa === 'number' ? pressure_hPa : (pressure_hPa[i] as number);
   const first = readings.map((reading, i) => discBeam(reading, pressure(i)));
   const clearness = first.map(({ clearness: k, airMass }) =>
-    Math.min(1, Math.max(0, k / (1.031 * Math.exp(-1.4 / (0.9 + 9.4 / airMass)) + 0.1))),
+    Math.min(1, Math.max(0, k / (1.031 * maths.exp(-1.4 / (0.9 + 9.4 / airMass)) + 0.1))),
   );
   return readings.map((reading, i) => {
     const { beam } = first[i] as Disc;
     if (!(beam > 0)) return { beamNormal_Wm2: 0, diffuse_Wm2: Math.max(0, reading.global_Wm2) };
     const steadiness = inOrder ? classOf(unsteadiness(clearness, i), STEADINESS_LIMITS) : UNKNOWN_STEADINESS;
     const water = dewPoint_C
-      ? classOf(Math.exp(0.07 * (dewPoint_C[i] as number) - 0.075), WATER_LIMITS_cm)
+      ? classOf(maths.exp(0.07 * (dewPoint_C[i] as number) - 0.075), WATER_LIMITS_cm)
       : UNKNOWN_WATER;
     const row =
       classOf(clearness[i] as number, CLEARNESS_LIMITS) * 6 +

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { perezBrightness } from './perez.ts';
 
 /** The sky at one moment and how the plane lies in it. */
@@ -60,7 +61,7 @@ export const SKY_MODELS: {
 /** cos 89°: Hay–Davies divides by the height of the sun; below 1° it stands still. */
 const LOWEST_HAY_DAVIES = 0.01745;
 /** cos 85°: the same in Perez, as in the paper. */
-const LOWEST_PEREZ = Math.cos((85 * Math.PI) / 180);
+const LOWEST_PEREZ = maths.cos((85 * Math.PI) / 180);
 
 /**
  * Irradiance on an unshaded plane with a free horizon, its parts apart. With the sun at or below the horizon no beam and an
@@ -69,9 +70,9 @@ const LOWEST_PEREZ = Math.cos((85 * Math.PI) / 180);
  */
 export function planeIrradiance(model: SkyModel, input: PlaneInput): PlaneParts {
   const { diffuse_Wm2: diffuse, tilt_rad, groundReflectance } = input;
-  const up = Math.cos(input.zenith_rad);
-  const ground = (input.global_Wm2 * groundReflectance * (1 - Math.cos(tilt_rad))) / 2;
-  const dome = (1 + Math.cos(tilt_rad)) / 2;
+  const up = maths.cos(input.zenith_rad);
+  const ground = (input.global_Wm2 * groundReflectance * (1 - maths.cos(tilt_rad))) / 2;
+  const dome = (1 + maths.cos(tilt_rad)) / 2;
   const facing = Math.max(0, input.cosIncidence);
   if (!(up > 0)) return { beam: 0, circumsolar: 0, sky: diffuse * dome, horizon: 0, ground };
   const beam = input.beamNormal_Wm2 * facing;
@@ -85,7 +86,7 @@ export function planeIrradiance(model: SkyModel, input: PlaneInput): PlaneParts 
   const { f1, f2 } = perezBrightness(input);
   const circumsolar = (diffuse * f1 * facing) / Math.max(up, LOWEST_PEREZ);
   const sky = diffuse * (1 - f1) * dome;
-  const horizon = diffuse * f2 * Math.sin(tilt_rad);
+  const horizon = diffuse * f2 * maths.sin(tilt_rad);
   // A dark horizon can outweigh the rest on a plane that faces away from the sun or down; there is no negative light.
   return circumsolar + sky + horizon > 0
     ? { beam, circumsolar, sky, horizon, ground }

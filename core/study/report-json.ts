@@ -55,7 +55,7 @@ export function reportJson(result: CheckResult, scheme: Scheme, limitSet: LimitS
   };
 }
 
-/** How far a number may differ between two machines, as a share of it: the last digits of sine and power differ, nothing else. */
+/** How far a number may differ, as a share of it: a report may have been through a program that shortens its numbers. */
 export const SAME_SHARE = 1e-9;
 
 const isSame = (a: unknown, b: unknown): boolean =>

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { DEG, toDegrees, wrap180 } from '../units/angle.ts';
 import { dayBounds } from './civil.ts';
 import type { Observer } from './position.ts';
@@ -44,7 +45,7 @@ function passings(observer: Observer, knots: SunKnots): Passing {
     let t = near_ms;
     // Each turn leaves a thousandth of the error before it.
     for (let turn = 0; turn < 4; turn++) {
-      const hourAngle = toDegrees(greenwich(t, sun) - Math.atan2(sun.y, sun.x)) + observer.longitude_deg;
+      const hourAngle = toDegrees(greenwich(t, sun) - maths.atan2(sun.y, sun.x)) + observer.longitude_deg;
       t -= (wrap180(hourAngle - hour_deg) / 360) * DAY_ms;
     }
     return t;

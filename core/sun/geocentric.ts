@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { DEG, toDegrees, wrap180 } from '../units/angle.ts';
 import { heliocentric } from './heliocentric.ts';
 import { meanObliquity_deg, nutation } from './nutation.ts';
@@ -37,12 +38,12 @@ export function geocentricSun(days_TT: number): GeocentricSun {
   const lambda = apparentLongitude_deg * DEG;
   const beta = -earth.latitude_rad;
   const epsilon = obliquity_deg * DEG;
-  const cosEpsilon = Math.cos(epsilon);
-  const sinEpsilon = Math.sin(epsilon);
-  const across = Math.cos(beta) * Math.sin(lambda);
-  const up = Math.sin(beta);
+  const cosEpsilon = maths.cos(epsilon);
+  const sinEpsilon = maths.sin(epsilon);
+  const across = maths.cos(beta) * maths.sin(lambda);
+  const up = maths.sin(beta);
   return {
-    x: Math.cos(beta) * Math.cos(lambda),
+    x: maths.cos(beta) * maths.cos(lambda),
     y: across * cosEpsilon - up * sinEpsilon,
     z: across * sinEpsilon + up * cosEpsilon,
     distance_au: earth.distance_au,
@@ -57,10 +58,10 @@ export function geocentricSun(days_TT: number): GeocentricSun {
 }
 
 /** Right ascension of the sun [°], (−180, 180]. */
-export const rightAscension_deg = (sun: GeocentricSun): number => toDegrees(Math.atan2(sun.y, sun.x));
+export const rightAscension_deg = (sun: GeocentricSun): number => toDegrees(maths.atan2(sun.y, sun.x));
 
 /** Declination of the sun [°]. */
-export const declination_deg = (sun: GeocentricSun): number => toDegrees(Math.atan2(sun.z, Math.hypot(sun.x, sun.y)));
+export const declination_deg = (sun: GeocentricSun): number => toDegrees(maths.atan2(sun.z, Math.hypot(sun.x, sun.y)));
 
 /** Coefficients of the sun's mean longitude in thousands of Julian years [°]. Reda & Andreas 2004, equation A2. */
 const MEAN_LONGITUDE = [280.4664567, 360007.6982779, 0.03032028, 1 / 49931, -1 / 15300, -1 / 2000000] as const;

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { DISTANCE, LATITUDE, LONGITUDE, type Series } from './earth-terms.ts';
 
 /** One group of terms laid out flat (A, B, C, A, B, C …): the sums below run for every sun position, objects are too slow. */
@@ -13,7 +14,7 @@ function sum(groups: readonly Float64Array[], t: number): number {
   for (let k = groups.length - 1; k >= 0; k--) {
     const terms = groups[k] as Float64Array;
     let group = 0;
-    for (let i = 0; i < terms.length; i += 3) group += terms[i]! * Math.cos(terms[i + 1]! + terms[i + 2]! * t);
+    for (let i = 0; i < terms.length; i += 3) group += terms[i]! * maths.cos(terms[i + 1]! + terms[i + 2]! * t);
     total = total * t + group;
   }
   return total * 1e-8;

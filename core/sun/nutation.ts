@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { DEG } from '../units/angle.ts';
 
 /**
@@ -109,8 +110,8 @@ export function nutation(T: number): Nutation {
   let obliquity = 0;
   for (let i = 0; i < terms.length; i += ROW) {
     const angle = terms[i]! * D + terms[i + 1]! * M + terms[i + 2]! * moon + terms[i + 3]! * F + terms[i + 4]! * node;
-    longitude += (terms[i + 5]! + terms[i + 6]! * T) * Math.sin(angle);
-    obliquity += (terms[i + 7]! + terms[i + 8]! * T) * Math.cos(angle);
+    longitude += (terms[i + 5]! + terms[i + 6]! * T) * maths.sin(angle);
+    obliquity += (terms[i + 7]! + terms[i + 8]! * T) * maths.cos(angle);
   }
   return { longitude_deg: longitude / 36e6, obliquity_deg: obliquity / 36e6 };
 }

@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { DEG } from '../units/angle.ts';
 
 /** The sun's radius and the refraction at the horizon which the algorithm takes [°]. */
@@ -20,7 +21,7 @@ export const LAST_REFRACTED_deg = -(SUN_RADIUS_deg + HORIZON_REFRACTION_deg);
  */
 export function refraction_deg(altitude_deg: number, pressure_hPa: number, temperature_C: number): number {
   if (altitude_deg < LAST_REFRACTED_deg) return 0;
-  const bend = 1.02 / (60 * Math.tan((altitude_deg + 10.3 / (altitude_deg + 5.11)) * DEG));
+  const bend = 1.02 / (60 * maths.tan((altitude_deg + 10.3 / (altitude_deg + 5.11)) * DEG));
   return (pressure_hPa / 1010) * (283 / (273 + temperature_C)) * bend;
 }
 
@@ -35,4 +36,4 @@ export const USUAL_TEMPERATURE_C = 12;
  *      p = 100·[(44331.514 − z)/11880.516]^(1/0.1902632) Pa
  */
 export const standardPressure_hPa = (elevation_m: number): number =>
-  ((44331.514 - elevation_m) / 11880.516) ** (1 / 0.1902632);
+  maths.pow((44331.514 - elevation_m) / 11880.516, 1 / 0.1902632);

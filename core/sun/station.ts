@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import { DEG } from '../units/angle.ts';
 import type { Observer } from './position.ts';
 
@@ -21,16 +22,16 @@ const EARTH_RADIUS_m = 6378140;
  */
 export function stationOf(observer: Observer): Station {
   const latitude = observer.latitude_deg * DEG;
-  const sinLatitude = Math.sin(latitude);
-  const cosLatitude = Math.cos(latitude);
-  const u = Math.atan2(FLATTENING * sinLatitude, cosLatitude);
+  const sinLatitude = maths.sin(latitude);
+  const cosLatitude = maths.cos(latitude);
+  const u = maths.atan2(FLATTENING * sinLatitude, cosLatitude);
   const height = observer.elevation_m / EARTH_RADIUS_m;
   return {
     sinLatitude,
     cosLatitude,
     longitude_rad: observer.longitude_deg * DEG,
-    fromAxis: Math.cos(u) + height * cosLatitude,
-    fromEquator: FLATTENING * Math.sin(u) + height * sinLatitude,
+    fromAxis: maths.cos(u) + height * cosLatitude,
+    fromEquator: FLATTENING * maths.sin(u) + height * sinLatitude,
   };
 }
 
@@ -63,15 +64,15 @@ export function lookFrom(
 ): void {
   const { sinLatitude, cosLatitude, fromAxis, fromEquator } = station;
   const theta = sidereal_rad + station.longitude_rad;
-  const c = Math.cos(theta);
-  const s = Math.sin(theta);
-  const parallax = Math.sin(PARALLAX_rad / distance_au);
+  const c = maths.cos(theta);
+  const s = maths.sin(theta);
+  const parallax = maths.sin(PARALLAX_rad / distance_au);
   const meridian = x * c + y * s - fromAxis * parallax;
   const west = x * s - y * c;
   const pole = z - fromEquator * parallax;
   const up = sinLatitude * pole + cosLatitude * meridian;
   const north = cosLatitude * pole - sinLatitude * meridian;
-  const azimuth = Math.atan2(-west, north);
+  const azimuth = maths.atan2(-west, north);
   out.azimuth_rad = azimuth < 0 ? azimuth + 2 * Math.PI : azimuth === 0 ? 0 : azimuth;
-  out.altitude_rad = Math.atan2(up, Math.sqrt(west * west + north * north));
+  out.altitude_rad = maths.atan2(up, Math.sqrt(west * west + north * north));
 }

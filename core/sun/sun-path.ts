@@ -1,5 +1,6 @@
+import * as maths from '../maths/maths.ts';
 import { DEG } from '../units/angle.ts';
-import { clockChanges, civilOf, dayBounds, resolveCivil } from './civil.ts';
+import { civilOf, clockChanges, dayBounds, resolveCivil } from './civil.ts';
 import type { Observer } from './position.ts';
 import { sunTable } from './sun-table.ts';
 
@@ -121,6 +122,6 @@ export function sunPath(observer: Observer, zone: string, year: number): SunPath
  * @see J. P. Snyder, Map Projections: A Working Manual, USGS Professional Paper 1395 (1987), pp. 154–163
  */
 export function stereographic(azimuth_rad: number, altitude_rad: number): readonly [number, number] {
-  const r = Math.tan((90 * DEG - altitude_rad) / 2);
-  return [r * Math.sin(azimuth_rad), r * Math.cos(azimuth_rad)];
+  const r = maths.tan((90 * DEG - altitude_rad) / 2);
+  return [r * maths.sin(azimuth_rad), r * maths.cos(azimuth_rad)];
 }

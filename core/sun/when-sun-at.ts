@@ -1,3 +1,4 @@
+import * as maths from '../maths/maths.ts';
 import type { Observer } from './position.ts';
 import { seasons } from './seasons.ts';
 import { sunTable } from './sun-table.ts';
@@ -48,8 +49,8 @@ function days(from: number, to: number, apart: number): readonly number[] {
 type Vector = readonly [number, number, number];
 
 const unit = (azimuth_rad: number, altitude_rad: number): Vector => {
-  const c = Math.cos(altitude_rad);
-  return [c * Math.sin(azimuth_rad), c * Math.cos(azimuth_rad), Math.sin(altitude_rad)];
+  const c = maths.cos(altitude_rad);
+  return [c * maths.sin(azimuth_rad), c * maths.cos(azimuth_rad), maths.sin(altitude_rad)];
 };
 
 /** The instant of several days at which the sun comes nearest to a direction, on straight lines between steps of ten minutes. */
@@ -66,7 +67,7 @@ function nearest(starts: readonly number[], p: Vector, observer: Observer): When
       const to: Vector = [p[0] - a[0], p[1] - a[1], p[2] - a[2]];
       const share = Math.min(1, Math.max(0, dot(to, along) / dot(along, along)));
       const away = Math.hypot(to[0] - share * along[0], to[1] - share * along[1], to[2] - share * along[2]);
-      const away_rad = 2 * Math.asin(Math.min(1, away / 2));
+      const away_rad = 2 * maths.asin(Math.min(1, away / 2));
       if (away_rad < best.away_rad) best = { instant_ms: instants[i - 1]! + share * STEP_ms, away_rad };
       a = b;
     }

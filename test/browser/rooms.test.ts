@@ -149,12 +149,9 @@ describe.skipIf(executable === null)('from what is over to what cures it, withou
     await writeFile(join(folder, 'yard.scheme.json'), scheme);
     const ran = await runCommand(['check', 'yard.scheme.json', '--json'], folder);
     const found = JSON.parse(ran.out) as Report;
-    expect(found.findings.map((f) => [f.room, f.limit, f.verdict])).toEqual(
-      report.findings.map((f) => [f.room, f.limit, f.verdict]),
-    );
-    // Two engines of JavaScript differ in the last bit of sine and cosine: twelve digits are what both have.
-    for (const [i, f] of found.findings.entries())
-      expect(f.value.toPrecision(12)).toBe(report.findings[i]?.value.toPrecision(12));
+    // Every double of every finding, in two engines of JavaScript: see core/maths.
+    expect(found.findings.length).toBeGreaterThan(10);
+    expect(found.findings).toEqual(report.findings);
     expect(desk.complaints).toEqual([]);
   });
 });

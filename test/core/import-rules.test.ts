@@ -9,6 +9,7 @@ const root = resolve(import.meta.dirname, '../..');
 /** The stages of core, each of which imports only from itself and from those before it. */
 const STAGES = [
   'units',
+  'maths',
   'plane',
   'scheme',
   'sun',

@@ -1,3 +1,5 @@
+import { square } from '../../maths/maths.ts';
+import * as maths from '../../maths/maths.ts';
 import type { Fault } from '../../scheme/fault.ts';
 import type { Observer } from '../../sun/position.ts';
 import { sunTable } from '../../sun/sun-table.ts';
@@ -61,8 +63,8 @@ function misfitOf(
   );
   let sum = 0;
   rows.forEach((i, k) => {
-    const up = Math.max(0, Math.sin(altitude_rad[k]!));
-    if (global && beam && diffuse) sum += (global[i]! - diffuse[i]! - beam[i]! * up) ** 2;
+    const up = Math.max(0, maths.sin(altitude_rad[k]!));
+    if (global && beam && diffuse) sum += square(global[i]! - diffuse[i]! - beam[i]! * up);
     else if (up === 0) sum += (global ?? diffuse)?.[i] ?? 0;
   });
   return sum / rows.length;

@@ -1,3 +1,4 @@
+import * as maths from '../../maths/maths.ts';
 import type { Fault } from '../../scheme/fault.ts';
 import { standardPressure_hPa } from '../../sun/refraction.ts';
 import { dewPoint_C } from '../dew-point.ts';
@@ -15,7 +16,7 @@ export type Radiation = {
 };
 
 /** Below this altitude of the sun a difference over the sine of it is mostly error; what is left over is called diffuse. 3° as in the splits. */
-const LOWEST_UP = Math.sin((3 * Math.PI) / 180);
+const LOWEST_UP = maths.sin((3 * Math.PI) / 180);
 
 const note = (message: string): Fault => ({
   level: 'warning',
@@ -32,7 +33,7 @@ const note = (message: string): Fault => ({
  */
 export function completeRadiation(weather: WeatherYear, sun: RowSun, elevation_m: number): Radiation {
   const { global_Wm2: global, beamNormal_Wm2: beam, diffuse_Wm2: diffuse } = weather.columns;
-  const up = sun.apparentAltitude_rad.map((h) => Math.max(0, Math.sin(h)));
+  const up = sun.apparentAltitude_rad.map((h) => Math.max(0, maths.sin(h)));
   if (beam && diffuse) {
     const notes = global ? [] : [note('the file has no global irradiance; it was worked out from beam and diffuse')];
     return {

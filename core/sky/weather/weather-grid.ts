@@ -1,3 +1,4 @@
+import * as maths from '../../maths/maths.ts';
 import type { Fault } from '../../scheme/fault.ts';
 import { offset_min } from '../../sun/civil.ts';
 import type { Observer } from '../../sun/position.ts';
@@ -66,7 +67,7 @@ function nearby(weather: WeatherYear, observer: Observer): Fault[] {
   if (latitude_deg === null || longitude_deg === null) return [];
   const north = Math.abs(latitude_deg - observer.latitude_deg);
   const around = Math.abs(((longitude_deg - observer.longitude_deg + 540) % 360) - 180);
-  if (north <= NEAR_deg && around * Math.cos((latitude_deg * Math.PI) / 180) <= NEAR_deg) return [];
+  if (north <= NEAR_deg && around * maths.cos((latitude_deg * Math.PI) / 180) <= NEAR_deg) return [];
   return [
     {
       level: 'warning',
