@@ -1,5 +1,6 @@
 import { basename } from 'node:path';
 import type { ComparedRow, Comparison } from '../../core/study/compare.ts';
+import { MOST_SIDE_BY_SIDE, variantsOf, withoutVariants } from '../../core/scheme/variants.ts';
 import type { SchemeVariant } from '../../core/study/compare-schemes.ts';
 import type { DataTable } from '../../core/sheet/csv.ts';
 import type { Declare } from './declare.ts';
@@ -17,25 +18,26 @@ type Options = {
   readonly csv?: true;
 };
 
-/** More variants than this make a table that nobody reads. */
-const MOST_VARIANTS = 8;
-
 const HELP = `
 The first scheme is what the others are compared with; rooms are matched by their ids. Each is judged by the limits that it names. Shadows are
 those that a scheme adds to the ground at the dates and times given: 21 March, 21 June and 21 December at 09:00, 12:00 and 15:00 unless told
-otherwise. Exit status 1 says that a room of the last scheme is over.
+otherwise. One scheme named alone stands beside the variants that are kept with it, as the last.
+Exit status 1 says that a room of the last scheme is over.
 
 Examples:
   shadewright compare before.scheme.json after.scheme.json
+  shadewright compare yard.scheme.json
   shadewright compare a.scheme.json b.scheme.json c.scheme.json --on 2025-12-21 --at 10:00,12:00,14:00 --csv`;
 
-async function variantsOf(paths: readonly string[], screen: Screen): Promise<readonly SchemeVariant[]> {
+async function besideEachOther(paths: readonly string[], screen: Screen): Promise<readonly SchemeVariant[]> {
   const { limitsOfScheme } = await import('../files/shipped-limits.ts');
   const variants: SchemeVariant[] = [];
   for (const path of paths) {
     const { scheme } = await readScheme(path, screen);
-    const limitSet = accepted(path, limitsOfScheme(scheme), screen);
-    variants.push({ name: basename(path).replace(/(\.scheme)?\.json$/i, ''), scheme, limitSet });
+    const own = { name: basename(path).replace(/(\.scheme)?\.json$/i, ''), scheme: withoutVariants(scheme) };
+    // A scheme that is named alone stands beside what is kept with it, as in the desk: last.
+    for (const one of paths.length === 1 ? [...variantsOf(scheme), own] : [own])
+      variants.push({ ...one, limitSet: accepted(path, limitsOfScheme(one.scheme), screen) });
   }
   return variants;
 }
@@ -132,7 +134,10 @@ export const declareCompare: Declare = (program, screen, end) => {
   program
     .command('compare')
     .description('set variants of one scheme side by side: findings, gains and the shadow each adds')
-    .argument('<SCHEMES...>', 'two or more scheme files; the first is what the others are compared with')
+    .argument(
+      '<SCHEMES...>',
+      'two or more scheme files, or one with variants kept in it; the first is what the others are compared with',
+    )
     .option('--on <DATES>', 'civil dates of the shadows, with commas between them', dates)
     .option('--at <TIMES>', 'times of the clock, with commas between them', times)
     .option('--json', 'print JSON')
@@ -141,13 +146,15 @@ export const declareCompare: Declare = (program, screen, end) => {
     .action(async (paths: readonly string[], options: Options) => {
       if (options.json && options.csv)
         throw new Refusal('shadewright compare: both --json and --csv were given; give one of the two.');
-      if (paths.length < 2)
-        throw new Refusal('shadewright compare: one scheme was given; name two or more to compare.');
-      if (paths.length > MOST_VARIANTS)
+      if (paths.length > MOST_SIDE_BY_SIDE)
         throw new Refusal(
-          `shadewright compare: ${paths.length} schemes were given; at most ${MOST_VARIANTS} fit side by side.`,
+          `shadewright compare: ${paths.length} schemes were given; at most ${MOST_SIDE_BY_SIDE} fit side by side.`,
         );
-      const variants = await variantsOf(paths, screen);
+      const variants = await besideEachOther(paths, screen);
+      if (variants.length < 2)
+        throw new Refusal(
+          'shadewright compare: one scheme was given, and no variants are kept with it; name two or more to compare.',
+        );
       const [{ compareSchemes }, { createCheckMemo }, { USUAL_TIMES, usualDates }] = await Promise.all([
         import('../../core/study/compare-schemes.ts'),
         import('../../core/gain/gain-memo.ts'),

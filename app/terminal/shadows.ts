@@ -61,10 +61,9 @@ async function sheetOf(
   moments: readonly ShadowMoment[],
   options: Options,
 ): Promise<Document> {
-  const [{ shadowSheet }, { contentHash }, { writeScheme }, { ENGINE_VERSION }] = await Promise.all([
+  const [{ shadowSheet }, { schemeHash }, { ENGINE_VERSION }] = await Promise.all([
     import('../../core/sheet/shadow-sheet.ts'),
     import('../../core/scheme/hash.ts'),
-    import('../../core/scheme/write.ts'),
     import('../../core/study/engine.ts'),
   ]);
   const drawn = shadowSheet({
@@ -79,7 +78,7 @@ async function sheetOf(
     ...(options.number === undefined ? {} : { number: options.number }),
     drawn: today(),
     engine: ENGINE_VERSION,
-    hash: contentHash(writeScheme(scheme)),
+    hash: schemeHash(scheme),
   });
   if (drawn.ok) return drawn.value;
   throw new Refusal(...drawn.faults.map((f) => `shadewright shadows: ${f.message}; ${f.cure}.`));

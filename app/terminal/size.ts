@@ -131,10 +131,9 @@ function asText(sweep: Sweep, target: number | undefined): string {
 
 /** The sweep as a sheet on A3. */
 async function sheetOf(scheme: Scheme, swept: Sweep, target: number | undefined): Promise<Uint8Array> {
-  const [{ sizingSheet }, { contentHash }, { writeScheme }, { ENGINE_VERSION }, { printDocument }] = await Promise.all([
+  const [{ sizingSheet }, { schemeHash }, { ENGINE_VERSION }, { printDocument }] = await Promise.all([
     import('../../core/sheet/sizing-sheet.ts'),
     import('../../core/scheme/hash.ts'),
-    import('../../core/scheme/write.ts'),
     import('../../core/study/engine.ts'),
     import('../files/print-document.ts'),
   ]);
@@ -146,7 +145,7 @@ async function sheetOf(scheme: Scheme, swept: Sweep, target: number | undefined)
       paper: 'A3',
       drawn: today(),
       engine: ENGINE_VERSION,
-      hash: contentHash(writeScheme(scheme)),
+      hash: schemeHash(scheme),
     }),
   );
 }

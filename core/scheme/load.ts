@@ -86,6 +86,13 @@ export function loadScheme(text: string): Checked<Scheme> {
       'take out what is not of the scheme',
     );
   const file = parsed as Record<string, unknown>;
+  if (text.includes('__proto__') && hasForbiddenKey(file))
+    return wholeFile('forbidden-key', 'a key named __proto__ is not allowed', 'take it out');
+  return readScheme(file);
+}
+
+/** A scheme as it was parsed: migrated, validated, its variants too. */
+function readScheme(file: Record<string, unknown>): Checked<Scheme> {
   if (file['format'] !== 'shadewright') {
     return {
       ok: false,
@@ -100,8 +107,6 @@ export function loadScheme(text: string): Checked<Scheme> {
       ],
     };
   }
-  if (text.includes('__proto__') && hasForbiddenKey(file))
-    return wholeFile('forbidden-key', 'a key named __proto__ is not allowed', 'take it out');
   const moved = migrate(file);
   if (!moved.ok) return { ok: false, faults: [moved.fault] };
   const read = Scheme.safeParse(moved.value);
@@ -109,9 +114,42 @@ export function loadScheme(text: string): Checked<Scheme> {
     return { ok: false, faults: atMost(read.error.issues.flatMap((issue) => sayIssue(issue, moved.value))) };
   const checked = checkScheme(read.data);
   const notes = misspelt(moved.value as Record<string, unknown>);
-  return checked.ok
-    ? { ...checked, notes: [...notes, ...checked.notes] }
-    : { ok: false, faults: atMost([...checked.faults, ...notes]) };
+  if (!checked.ok) return { ok: false, faults: atMost([...checked.faults, ...notes]) };
+  const whole = readVariants(checked.value);
+  return whole.ok ? { ...whole, notes: [...notes, ...checked.notes, ...whole.notes] } : whole;
+}
+
+/** The variants of a scheme, each read as a scheme of its own; its faults stand under its place. */
+function readVariants(scheme: Scheme): Checked<Scheme> {
+  if (scheme.variants === undefined) return { ok: true, value: scheme, notes: [] };
+  const found: Fault[] = [];
+  const variants = scheme.variants.map((variant, i) => {
+    const place = `variants[${i}]`;
+    const same = scheme.variants?.findIndex(({ name }) => name === variant.name);
+    if (same !== i)
+      found.push({
+        level: 'error',
+        code: 'same-name',
+        place: `${place}.name`,
+        message: `another variant is called ${JSON.stringify(variant.name)}`,
+        cure: 'give each a name of its own',
+      });
+    if (variant.scheme['variants'] !== undefined) {
+      const message = 'a variant has no variants of its own';
+      found.push({ level: 'error', code: 'too-deep', place: `${place}.scheme.variants`, message, cure: 'take it out' });
+      return variant;
+    }
+    const read = readScheme(variant.scheme);
+    const inside = (fault: Fault): Fault => ({
+      ...fault,
+      place: fault.place === '' ? `${place}.scheme` : `${place}.scheme.${fault.place}`,
+    });
+    found.push(...(read.ok ? read.notes : read.faults).map(inside));
+    return read.ok ? { ...variant, scheme: read.value } : variant;
+  });
+  return found.some((fault) => fault.level === 'error')
+    ? { ok: false, faults: atMost(found) }
+    : { ok: true, value: { ...scheme, variants }, notes: found };
 }
 
 /** What a scheme's own values cannot say: references, geometry and the zone. Also for a scheme that was made by editing. */

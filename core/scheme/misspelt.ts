@@ -1,5 +1,5 @@
 import type { Fault } from './fault.ts';
-import { Block, Device, Glass, Receptor, Room, Scheme, SheetSet, Site, Tree, Window } from './schema.ts';
+import { Block, Device, Glass, Receptor, Room, Scheme, SheetSet, Site, Tree, Variant, Window } from './schema.ts';
 
 /** A field further than this from every known one is taken for an addition of somebody's own, which is kept and not spoken of. */
 const MOST_EDITS = 2;
@@ -77,5 +77,6 @@ export function misspelt(read: Loose): readonly Fault[] {
     ...entries('trees', () => fieldsOf(Tree)),
     ...entries('receptors', (entry) => fieldsOfKind(Receptor, entry)),
     ...entries('sheets', () => fieldsOf(SheetSet)),
+    ...entries('variants', () => fieldsOf(Variant)),
   ];
 }

@@ -216,6 +216,12 @@ export const SheetSet = z.looseObject({
   number: z.string().max(60).optional().describe('drawing number'),
 });
 
+/** What is kept is read as a scheme of its own (load.ts). */
+export const Variant = z.looseObject({
+  name: z.string().min(1).max(60),
+  scheme: z.looseObject({}).describe('a whole scheme, without variants of its own'),
+});
+
 export const Scheme = z.looseObject({
   format: z.literal('shadewright'),
   version: z.literal(1),
@@ -242,6 +248,7 @@ export const Scheme = z.looseObject({
     .default(null),
   receptors: z.array(Receptor).max(20000).default([]),
   sheets: z.array(SheetSet).max(200).default([]),
+  variants: z.array(Variant).max(7).optional().describe('other states of the scheme, kept to be compared with'),
 });
 
 export type Scheme = z.output<typeof Scheme>;

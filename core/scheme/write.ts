@@ -99,6 +99,7 @@ const SCHEME_ORDER = [
   'limits',
   'receptors',
   'sheets',
+  'variants',
 ];
 const WIDE = 150;
 

@@ -10,9 +10,8 @@ import { countRooms, findingsOf } from '../limits/judge.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
 import type { DayFacts, RoomFacts } from '../limits/room-facts.ts';
 import type { Fault } from '../scheme/fault.ts';
-import { contentHash } from '../scheme/hash.ts';
+import { schemeHash } from '../scheme/hash.ts';
 import type { Scheme } from '../scheme/schema.ts';
-import { writeScheme } from '../scheme/write.ts';
 import type { SkyModel } from '../sky/transpose.ts';
 import { checkNotes } from './check-notes.ts';
 import type { CheckResult, RoomResult, WindowResult } from './check-result.ts';
@@ -92,7 +91,7 @@ function resultOf(
   const findings = findingsOf(gains, days, limitSet);
   return {
     engine: ENGINE_VERSION,
-    schemeHash: contentHash(writeScheme(scheme)),
+    schemeHash: schemeHash(scheme),
     title: scheme.title,
     zone: scheme.site.zone,
     latitude_deg: scheme.site.latitude,

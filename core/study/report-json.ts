@@ -1,6 +1,7 @@
 import type { Finding } from '../limits/finding.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
 import type { Scheme } from '../scheme/schema.ts';
+import { withoutVariants } from '../scheme/variants.ts';
 import { writeScheme } from '../scheme/write.ts';
 import type { CheckResult, RoomResult } from './check-result.ts';
 
@@ -51,7 +52,7 @@ export function reportJson(result: CheckResult, scheme: Scheme, limitSet: LimitS
     notes,
     cautions,
     limitSet,
-    scheme: JSON.parse(writeScheme(scheme)),
+    scheme: JSON.parse(writeScheme(withoutVariants(scheme))),
   };
 }
 

@@ -2,9 +2,8 @@ import type { Model } from '../form/model.ts';
 import { createCheckMemo } from '../gain/gain-memo.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
 import type { Checked, Fault } from '../scheme/fault.ts';
-import { contentHash } from '../scheme/hash.ts';
+import { schemeHash } from '../scheme/hash.ts';
 import { DEFAULT_YEAR, type Scheme, type SheetSet } from '../scheme/schema.ts';
-import { writeScheme } from '../scheme/write.ts';
 import type { Document } from '../sheet/drawing.ts';
 import { findingsReport } from '../sheet/findings-report.ts';
 import { lightReport } from '../sheet/light-report.ts';
@@ -140,7 +139,7 @@ function factsOf(scheme: Scheme, set: SheetSet, context: SheetContext): Pick<She
     facts: {
       drawn: context.drawn,
       engine: ENGINE_VERSION,
-      hash: contentHash(writeScheme(scheme)),
+      hash: schemeHash(scheme),
       ...(set.number === undefined ? {} : { number: set.number }),
       ...(set.units === undefined ? {} : { units: set.units }),
       ...(context.language === undefined ? {} : { language: context.language }),

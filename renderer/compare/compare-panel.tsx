@@ -8,7 +8,7 @@ import { Button } from '../ui/button.tsx';
 import { Disc } from '../ui/disc.tsx';
 import { decimalsFor, fixed, signed } from '../ui/format.ts';
 import { words } from '../words/words.ts';
-import { addFile, isFull, kept, keepNow, letGo, putOnDesk } from './compare-state.ts';
+import { addFile, isFull, kept, keepNow, LONGEST_NAME, letGo, putOnDesk } from './compare-state.ts';
 import './compare.css';
 
 const text = words.compare;
@@ -35,7 +35,7 @@ function Keep() {
         type="text"
         aria-label={text.name}
         placeholder={text.usual(kept.value.length + 1)}
-        maxLength={40}
+        maxLength={LONGEST_NAME}
         value={name}
         onInput={(event) => setName(event.currentTarget.value)}
       />

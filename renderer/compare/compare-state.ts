@@ -1,27 +1,15 @@
-import { computed, signal } from '@preact/signals';
+import { computed } from '@preact/signals';
 import { faultLine } from '../../core/scheme/fault.ts';
-import type { Scheme } from '../../core/scheme/schema.ts';
+import { type KeptVariant, MOST_SIDE_BY_SIDE, variantsOf } from '../../core/scheme/variants.ts';
 import { host } from '../bridge/host.ts';
 import { hands } from '../jobs/hands.ts';
-import { committed, edit, file } from '../state/document.ts';
+import { committed, edit, editVariants, whole } from '../state/document.ts';
 import { tell } from '../state/messages.ts';
 import { words } from '../words/words.ts';
 
-/** A scheme that is kept to be compared with. Kept for this session: a variant that matters is saved as a file of its own. */
-export type Kept = { readonly name: string; readonly scheme: Scheme };
-
-/** As many as can be read side by side, that on the desk counted. */
-const MOST = 8;
-
-export const kept = signal<readonly Kept[]>([]);
-export const isFull = computed(() => kept.value.length >= MOST - 1);
-
-// Variants belong to the file that they were made from.
-let owner = file.peek();
-file.subscribe((now) => {
-  if (now === null || (owner !== null && now.name !== owner.name)) kept.value = [];
-  owner = now;
-});
+/** The variants that are kept with the scheme: saved with it, and each kept or let go of as an edit. */
+export const kept = computed<readonly KeptVariant[]>(() => (whole.value === null ? [] : variantsOf(whole.value)));
+export const isFull = computed(() => kept.value.length >= MOST_SIDE_BY_SIDE - 1);
 
 /** A name that no variant has yet. */
 function freeName(wanted: string): string {
@@ -30,12 +18,16 @@ function freeName(wanted: string): string {
   for (let n = 2; ; n++) if (!used.has(`${wanted} ${n}`)) return `${wanted} ${n}`;
 }
 
+function add(variant: KeptVariant): void {
+  editVariants(words.compare.keepEdit(variant.name), (variants) => [...variants, variant]);
+}
+
 /** Keeps the scheme as it stands on the desk. */
 export function keepNow(name: string): void {
   const scheme = committed.peek();
   if (scheme === null || isFull.peek()) return;
   const wanted = name.trim() === '' ? words.compare.usual(kept.peek().length + 1) : name.trim();
-  kept.value = [...kept.peek(), { name: freeName(wanted), scheme }];
+  add({ name: freeName(wanted), scheme });
 }
 
 /** Adds a scheme file that the user chooses. */
@@ -49,17 +41,18 @@ export async function addFile(): Promise<void> {
   if (outcome.kind !== 'done') return;
   if (!outcome.result.ok)
     return tell('failure', words.compare.notAdded(name, outcome.result.faults.map(faultLine).join(' · ')));
-  kept.value = [
-    ...kept.peek(),
-    { name: freeName(name.replace(/(\.scheme)?\.json$/i, '')), scheme: outcome.result.value },
-  ];
+  const short = name.replace(/(\.scheme)?\.json$/i, '').slice(0, LONGEST_NAME) || name;
+  add({ name: freeName(short), scheme: outcome.result.value });
 }
+
+/** A free name may need a number more; the file's own bound is 60. */
+export const LONGEST_NAME = 40;
 
 export function letGo(name: string): void {
-  kept.value = kept.peek().filter((variant) => variant.name !== name);
+  editVariants(words.compare.letGoEdit(name), (variants) => variants.filter((variant) => variant.name !== name));
 }
 
-/** Puts a variant on the desk as one edit, which undo takes back. */
-export function putOnDesk({ name, scheme }: Kept): void {
+/** Puts a variant on the desk as one edit, which undo takes back; the variants stay. */
+export function putOnDesk({ name, scheme }: KeptVariant): void {
   edit(words.compare.edit(name), () => scheme);
 }

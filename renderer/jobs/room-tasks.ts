@@ -2,8 +2,7 @@ import { fileText } from '../../app/contract/file-text.ts';
 import { createCheckMemo } from '../../core/gain/gain-memo.ts';
 import type { Checked, Fault } from '../../core/scheme/fault.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
-import { contentHash } from '../../core/scheme/hash.ts';
-import { writeScheme } from '../../core/scheme/write.ts';
+import { schemeHash } from '../../core/scheme/hash.ts';
 import { sizingSheet } from '../../core/sheet/sizing-sheet.ts';
 import { ENGINE_VERSION } from '../../core/study/engine.ts';
 import { writeCsv } from '../../core/sheet/csv.ts';
@@ -63,7 +62,7 @@ export function roomTasks(): Pick<
       sensitivity(held().scheme, limitSet, finding.room, finding, memo, skyModel),
     sizingSheet: async ({ sweep: swept, target_Wh, drawn }, held) => {
       const { scheme } = held();
-      const hash = contentHash(writeScheme(scheme));
+      const hash = schemeHash(scheme);
       return sizingSheet({ scheme, sweeps: [swept], target_Wh, paper: 'A3', drawn, engine: ENGINE_VERSION, hash });
     },
     sweep: async ({ windows, swept, target_Wh }, held) =>

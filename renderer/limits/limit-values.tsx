@@ -41,12 +41,7 @@ export function LimitValues({ limit, isOwn }: Props) {
           onNumber={(above) => changeLimit(limit.id, { above })}
         />
       ) : null}
-      <Sides
-        of={limit}
-        unit={limit.unit}
-        isOwn={isOwn}
-        onSides={(byBearing) => changeLimit(limit.id, { byBearing })}
-      />
+      <Sides of={limit} unit={limit.unit} isOwn={isOwn} onSides={(byBearing) => changeLimit(limit.id, { byBearing })} />
       <Steps limit={limit} isOwn={isOwn} />
     </>
   );

@@ -2,7 +2,7 @@ import { effect } from '@preact/signals';
 import { desktopBridge, host } from '../bridge/host.ts';
 import { hands } from '../jobs/hands.ts';
 import { words } from '../words/words.ts';
-import { committed, file, isUnsaved } from './document.ts';
+import { file, isUnsaved, whole } from './document.ts';
 import { tell } from './messages.ts';
 
 /** Typing and dragging make a row of edits: the last of them is kept once the hand has rested this long. */
@@ -35,7 +35,7 @@ export function letGoOfSlot(): void {
 const fileName = (name: string): string => name.replace(/[\\/\0]/g, '-').slice(0, 120) || 'scheme';
 
 async function keep(): Promise<void> {
-  const [scheme, where, key] = [committed.peek(), file.peek(), slot];
+  const [scheme, where, key] = [whole.peek(), file.peek(), slot];
   if (scheme === null || where === null || !isUnsaved.peek()) return;
   const written = await hands.keeper.run('write', { scheme });
   // By now it may have been saved, or another scheme may be open.
@@ -58,7 +58,7 @@ export function keepUnsavedWork(): void {
   let timer: ReturnType<typeof setTimeout> | undefined;
   effect(() => {
     clearTimeout(timer);
-    if (committed.value === null) return;
+    if (whole.value === null) return;
     if (isUnsaved.value) timer = setTimeout(() => void keep(), REST_ms);
     else letGoOfSlot();
   });

@@ -2,6 +2,7 @@ import { computed, signal } from '@preact/signals';
 import type { FileId } from '../../app/contract/host.ts';
 import type { Fault } from '../../core/scheme/fault.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
+import { type KeptVariant, variantsOf, withoutVariants, withVariants } from '../../core/scheme/variants.ts';
 import { begin, commit, type History, redo, redoLabel, undo, undoLabel } from './history.ts';
 
 /** Where the open scheme lives. Without an id it has no file yet: saving asks for a place. */
@@ -16,11 +17,18 @@ export const file = signal<SchemeFile | null>(null);
 /** Warnings that came with the file. */
 export const notes = signal<readonly Fault[]>([]);
 
-/** The scheme as committed. */
-export const committed = computed(() => history.value?.now.value ?? null);
+/** The document as committed, with the variants that are kept with it: what is saved. */
+export const whole = computed(() => history.value?.now.value ?? null);
+let alone: Scheme | null = null;
+/** The scheme alone, as it is drawn and worked out; the same object as long as only its variants change. */
+export const committed = computed<Scheme | null>(() => {
+  const now = whole.value === null ? null : withoutVariants(whole.value);
+  if (now === null || alone === null || !isSameOutside(alone, now)) alone = now;
+  return alone;
+});
 /** The scheme as it should be drawn and worked out now. */
 export const scheme = computed(() => preview.value ?? committed.value);
-export const isUnsaved = computed(() => committed.value !== null && committed.value !== saved.value);
+export const isUnsaved = computed(() => whole.value !== null && whole.value !== saved.value);
 export const undoName = computed(() => (history.value === null ? null : undoLabel(history.value)));
 export const redoName = computed(() => (history.value === null ? null : redoLabel(history.value)));
 
@@ -42,10 +50,28 @@ export function leave(): void {
   notes.value = [];
 }
 
-/** One edit, named for the undo button. */
-export function edit(label: string, change: (scheme: Scheme) => Scheme): void {
+function commitAs(label: string, change: (now: Scheme) => Scheme): void {
   preview.value = null;
   if (history.value !== null) history.value = commit(history.value, change(history.value.now.value), label);
+}
+
+/** One edit of the scheme, named for the undo button; its variants stay as they are. */
+export function edit(label: string, change: (scheme: Scheme) => Scheme): void {
+  commitAs(label, (now) => withVariants(change(withoutVariants(now)), variantsOf(now)));
+}
+
+/** One edit of what is kept with the scheme. */
+export function editVariants(
+  label: string,
+  change: (variants: readonly KeptVariant[]) => readonly KeptVariant[],
+): void {
+  commitAs(label, (now) => withVariants(now, change(variantsOf(now))));
+}
+
+/** Whether two schemes are the same part by part, as objects. */
+function isSameOutside(a: Scheme, b: Scheme): boolean {
+  const keys = Object.keys(a);
+  return keys.length === Object.keys(b).length && keys.every((key) => a[key] === b[key]);
 }
 
 export function undoEdit(): void {

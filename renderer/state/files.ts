@@ -10,7 +10,7 @@ import { canSaveOver } from '../bridge/page-files.ts';
 import { hands } from '../jobs/hands.ts';
 import { words } from '../words/words.ts';
 import { beginSlot, letGoOfSlot } from './autosave.ts';
-import { committed, file, isUnsaved, leave, markSaved, place } from './document.ts';
+import { file, isUnsaved, leave, markSaved, place, whole } from './document.ts';
 import { tell } from './messages.ts';
 import { civil } from './moment.ts';
 import { selectNothing } from './selection.ts';
@@ -147,7 +147,7 @@ async function textOf(scheme: Scheme): Promise<string | null> {
 
 /** @returns whether the scheme is on disk now */
 export async function save(): Promise<boolean> {
-  const scheme = committed.peek();
+  const scheme = whole.peek();
   const where = file.peek();
   if (scheme === null || where === null) return false;
   if (where.id === null || !canSaveOver(where.id)) return saveAs();
@@ -164,7 +164,7 @@ export async function save(): Promise<boolean> {
 }
 
 export async function saveAs(): Promise<boolean> {
-  const scheme = committed.peek();
+  const scheme = whole.peek();
   const where = file.peek();
   if (scheme === null || where === null) return false;
   const written = await textOf(scheme);

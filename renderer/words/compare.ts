@@ -3,7 +3,7 @@ export const compareWords = {
   compare: {
     tab: 'Variants',
     label: 'Variants side by side',
-    line: 'Keep the scheme as it is now, go on changing it, and see here what the change brings.',
+    line: 'Keep the scheme as it is now, go on changing it, and see here what the change brings. What is kept is saved with the scheme.',
     keep: 'Keep as it is now',
     name: 'Name of what is kept',
     usual: (n: number) => `Variant ${n}`,
@@ -13,6 +13,8 @@ export const compareWords = {
     back: (name: string) => `Put ${name} on the desk`,
     put: 'Put on the desk',
     edit: (name: string) => `variant ${name}`,
+    keepEdit: (name: string) => `keeping ${name}`,
+    letGoEdit: (name: string) => `letting go of ${name}`,
     counts: (over: number, close: number, within: number) => `${over} over, ${close} close, ${within} within`,
     room: 'room',
     what: 'of',

@@ -91,6 +91,10 @@ describe.skipIf(executable === null)('from what is over to what cures it, withou
     await page.getByRole('tab', { name: 'Variants' }).click();
     await page.getByLabel('Name of what is kept').fill('as drawn');
     await page.getByRole('button', { name: 'Keep as it is now' }).click();
+    await page.getByRole('button', { name: 'Undo keeping as drawn' }).waitFor();
+    const file = JSON.parse((await downloaded(page, () => page.keyboard.press('Control+s'))).toString());
+    expect(file.variants).toHaveLength(1);
+    expect(file.variants[0]).toMatchObject({ name: 'as drawn', scheme: { format: 'shadewright', title: file.title } });
     await office.getByRole('button', { name: /^Apply: glass/ }).click();
     const heads = page.locator('.compare thead th.variant');
     await expect

@@ -32,6 +32,26 @@ describe('compare', () => {
     expect(back.status).toBe(1);
   });
 
+  test('sets a scheme beside the variants that are kept with it, the scheme itself last', async () => {
+    const folder = folderWithTwo();
+    const [yard, darker] = ['yard', 'darker'].map((name) =>
+      JSON.parse(readFileSync(join(folder, `${name}.scheme.json`), 'utf8')),
+    );
+    writeFileSync(
+      join(folder, 'both.scheme.json'),
+      JSON.stringify({ ...yard, variants: [{ name: 'dark panes', scheme: darker }] }),
+    );
+    const ran = await runCommand(['compare', 'both.scheme.json'], folder);
+    expect(ran.status, ran.err).toBe(1);
+    expect(ran.out).toMatch(/^dark panes +0 +[\s\S]*^both +6 +2 +8 +example-gain$/m);
+    const [alone, kept] = await Promise.all(
+      ['yard', 'both'].map(async (name) =>
+        JSON.parse((await runCommand(['check', `${name}.scheme.json`, '--json'], folder)).out),
+      ),
+    );
+    expect(kept).toEqual(alone);
+  });
+
   test('gives the same as JSON and as CSV', async () => {
     const folder = folderWithTwo();
     const files = ['yard.scheme.json', 'darker.scheme.json'];
