@@ -93,7 +93,7 @@ export function checkText(result: CheckResult): string {
   const { over, close, within } = result.counts;
   const set = result.limitSet;
   const head = [
-    `${result.title || 'Untitled scheme'}: ${result.rooms.length} rooms, scheme ${result.schemeHash.slice(0, 12)}, engine ${result.engine}`,
+    `${result.title || 'Untitled scheme'}: ${result.rooms.length} ${result.rooms.length === 1 ? 'room' : 'rooms'}, scheme ${result.schemeHash.slice(0, 12)}, engine ${result.engine}`,
     set === null
       ? 'No limit set is chosen: these are metrics without a verdict. Choose one in the scheme ("limits") or with --limits FILE.'
       : `${over} over, ${close} close, ${within} within; limits: ${set.name}${set.example ? ' (example: check your local code)' : ''}`,

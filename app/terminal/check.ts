@@ -4,6 +4,7 @@ import type { Scheme } from '../../core/scheme/schema.ts';
 import type { CheckResult } from '../../core/study/check-result.ts';
 import type { Pulse } from '../../core/study/job.ts';
 import type { Declare } from './declare.ts';
+import { keepApart } from './outputs-apart.ts';
 import { progress } from './progress.ts';
 import { accepted, readLimits, readScheme } from './read-input.ts';
 import { EXIT, Refusal } from './refusal.ts';
@@ -96,6 +97,15 @@ export const declareCheck: Declare = (program, screen, end) => {
     .action(async (path: string, options: Options) => {
       if (options.json && options.csv)
         throw new Refusal('shadewright check: both --json and --csv were given; give one of the two.');
+      await keepApart(
+        'check',
+        [
+          { as: 'the scheme', path },
+          { as: 'the limit set', path: options.limits },
+          { as: 'the weather file', path: options.weather },
+        ],
+        [{ as: '--pdf', path: options.pdf }],
+      );
       const { scheme, notes } = await readScheme(path, screen);
       const limitSet = await limitsFor(path, scheme, options, screen);
       const weather = await weatherFor(path, scheme, options, screen);

@@ -1,3 +1,4 @@
+import { CAUTIONS } from '../../core/limits/cautions.ts';
 import { writeCsv } from '../../core/sheet/csv.ts';
 import type { BeforeAfter, NeighbourLight } from '../../core/study/exposure-neighbours.ts';
 import { hoursText } from './exposure-words.ts';
@@ -51,6 +52,8 @@ export function lightText(light: NeighbourLight): string {
       ],
       rows,
     ),
+    ...CAUTIONS,
+    '',
   ].join('\n');
 }
 

@@ -1,3 +1,4 @@
+import { CAUTIONS } from '../../core/limits/cautions.ts';
 import type { Model } from '../../core/form/model.ts';
 import type { Exposure } from '../../core/shade/exposure-slice.ts';
 import { type ExposureMap, type Surface, type SurfaceMap, surfacesOf } from '../../core/study/exposure-map.ts';
@@ -111,6 +112,8 @@ export function mapText(map: ExposureMap): string {
       ],
       map.surfaces.map(rowOf),
     ),
+    ...CAUTIONS,
+    '',
   ].join('\n');
 }
 

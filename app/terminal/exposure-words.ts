@@ -4,6 +4,18 @@ export function hoursText(minutes: number): string {
   return `${Math.floor(whole / 60)} h ${String(whole % 60).padStart(2, '0')}`;
 }
 
-/** The dates of a result in a few words. */
-export const periodText = (dates: readonly string[]): string =>
-  dates.length === 1 ? `${dates[0]}` : `${dates.length} days, ${dates[0]} to ${dates.at(-1)}`;
+const DAY_ms = 86_400_000;
+
+/** Whether dates follow each other without a gap. @param dates in order, each once */
+const isSpan = (dates: readonly string[]): boolean =>
+  Math.round((Date.parse(dates.at(-1) ?? '') - Date.parse(dates[0] ?? '')) / DAY_ms) === dates.length - 1;
+
+/** The dates of a result in a few words, so that two dates are not read as all that lies between them. */
+export function periodText(dates: readonly string[]): string {
+  if (dates.length === 1) return `${dates[0]}`;
+  if (dates.length > 2 && isSpan(dates)) return `${dates.length} days, ${dates[0]} to ${dates.at(-1)}`;
+  if (dates.length === 2) return `${dates[0]} and ${dates[1]}`;
+  return dates.length <= 4
+    ? `${dates.length} days, ${dates.slice(0, -1).join(', ')} and ${dates.at(-1)}`
+    : `${dates.length} days from ${dates[0]} to ${dates.at(-1)}, not all that lie between`;
+}

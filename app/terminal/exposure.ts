@@ -1,12 +1,13 @@
 import { availableParallelism } from 'node:os';
 import { Option } from 'commander';
+import { CAUTIONS } from '../../core/limits/cautions.ts';
 import type { Checked } from '../../core/scheme/fault.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import type { ExposureDates } from '../../core/study/exposure-dates.ts';
 import type { ExposureResult } from '../../core/study/exposure.ts';
 import type { Declare } from './declare.ts';
 import { hoursText, periodText } from './exposure-words.ts';
-import { date, dates, number, shares, whole } from './option-values.ts';
+import { dates, number, shares, whole } from './option-values.ts';
 import { progress } from './progress.ts';
 import { accepted, readScheme } from './read-input.ts';
 import { Refusal } from './refusal.ts';
@@ -55,7 +56,7 @@ async function periodOf(scheme: Scheme, { on, between, year }: Options): Promise
     const [first, last, ...more] = between;
     if (first === undefined || last === undefined || more.length > 0)
       throw new Refusal(
-        '--between: it takes two dates, the first and the last day; give --between 2025-04-01 2025-09-30.',
+        'shadewright exposure: --between takes two dates, the first and the last day; give --between 2025-04-01 2025-09-30.',
       );
     return { between: [first, last] };
   }
@@ -89,6 +90,8 @@ function asText(rows: readonly Row[], result: ExposureResult): string {
         row.ground.toFixed(0),
       ]),
     ),
+    ...CAUTIONS,
+    '',
   ].join('\n');
 }
 
@@ -204,11 +207,7 @@ export const declareExposure: Declare = (program, screen) => {
     .description('add up sun hours and energy on receptors and surfaces, and what receptors keep of their light')
     .argument('<SCHEME>', 'the scheme file')
     .option('--on <DATES...>', 'civil dates', dates)
-    .option(
-      '--between <DATES...>',
-      'the first and the last civil date',
-      (text: string, before: readonly string[] | undefined) => [...(before ?? []), date(text)],
-    )
+    .option('--between <DATES...>', 'the first and the last civil date', dates)
     .option('--year <Y>', 'a whole civil year', whole(1900, 2100, 'a year'))
     .addOption(new Option('--step <MIN>', 'minutes between samples').argParser(whole(1, 60, 'minutes')).default(5))
     .option('--spacing <M>', 'between points of areas and maps: 1, with --light 0.5', number(0.01, 1000, 'metres'))

@@ -1,13 +1,14 @@
-import { Option } from 'commander';
+import { type Command, Option } from 'commander';
 import type { Model } from '../../core/form/model.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import type { Document } from '../../core/sheet/drawing.ts';
 import type { ShadowMoment } from '../../core/sheet/shadow-moment.ts';
 import type { Declare } from './declare.ts';
+import { keepApart } from './outputs-apart.ts';
 import { clock, dates, whole } from './option-values.ts';
 import { readScheme } from './read-input.ts';
 import { Refusal } from './refusal.ts';
-import { type SheetFiles, writeSheetFiles } from './sheet-files.ts';
+import { namedSheets, type SheetFiles, writeSheetFiles } from './sheet-files.ts';
 import { paperOptions, seasonsOption } from './sheet.ts';
 import { shadowText } from './shadow-text.ts';
 import { today } from './today.ts';
@@ -53,6 +54,20 @@ function timesOf({ from, to, every }: Options): readonly string[] {
   const times: string[] = [];
   for (let minute = from; minute <= to && minute < 24 * 60; minute += every) times.push(timeOf(minute));
   return times;
+}
+
+/** Options that say how sheets are drawn. */
+const OF_SHEETS = ['paper', 'scale', 'units', 'portrait', 'perPage', 'number', 'dpi'] as const;
+
+/** @throws {Refusal} when a drawing is described and none is asked for: what does nothing would be taken for done */
+function refuseIdle(command: Command, { pdf, svg, png }: Options): void {
+  if (pdf !== undefined || svg !== undefined || png !== undefined) return;
+  const idle = OF_SHEETS.find((name) => command.getOptionValueSource(name) === 'cli');
+  if (idle === undefined) return;
+  const word = command.options.find((option) => option.attributeName() === idle)?.long ?? idle;
+  throw new Refusal(
+    `shadewright shadows: ${word} says how the sheets are drawn, and none is asked for; add --pdf FILE, --svg FILE or --png FILE, or leave it out.`,
+  );
 }
 
 async function sheetOf(
@@ -104,6 +119,9 @@ export const declareShadows: Declare = (program, screen) => {
     .action(async (path: string, options: Options) => {
       if (options.json && options.csv)
         throw new Refusal('shadewright shadows: both --json and --csv were given; give one of the two.');
+      const written = [...namedSheets(options), { as: '--geojson', path: options.geojson }];
+      await keepApart('shadows', [{ as: 'the scheme', path }], written);
+      refuseIdle(command, options);
       const { scheme } = await readScheme(path, screen);
       const [{ buildModel }, { shadowMoments }, { seasonDates, usualDates }] = await Promise.all([
         import('../../core/form/build-model.ts'),
@@ -119,16 +137,16 @@ export const declareShadows: Declare = (program, screen) => {
       }
       const model = buildModel(scheme);
       const moments = shadowMoments(scheme, model, on, times);
-      const written: string[] = [];
+      const files: string[] = [];
       if (options.pdf !== undefined || options.svg !== undefined || options.png !== undefined) {
-        written.push(...(await writeSheetFiles(await sheetOf(scheme, model, moments, options), options, 'shadows')));
+        files.push(...(await writeSheetFiles(await sheetOf(scheme, model, moments, options), options, 'shadows')));
       }
       if (options.geojson !== undefined) {
         const { shadowGeoJson } = await import('../../core/sheet/geojson.ts');
         await writeOutput(options.geojson, `${JSON.stringify(shadowGeoJson(scheme, model, moments))}\n`);
-        written.push(options.geojson);
+        files.push(options.geojson);
       }
-      for (const file of written) screen.note(`written: ${file}\n`);
+      for (const file of files) screen.note(`written: ${file}\n`);
       screen.out(shadowText(scheme, moments, options.csv ? 'csv' : options.json ? 'json' : 'text'));
     });
 };

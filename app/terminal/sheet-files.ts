@@ -1,4 +1,5 @@
 import type { Document } from '../../core/sheet/drawing.ts';
+import type { NamedFile } from './outputs-apart.ts';
 import { Refusal } from './refusal.ts';
 import { writeOutput } from './write-output.ts';
 
@@ -10,6 +11,13 @@ export type SheetFiles = {
   /** Dots per inch of PNG. */
   readonly dpi: number;
 };
+
+/** The files of a call with the options that name them. */
+export const namedSheets = ({ pdf, svg, png }: SheetFiles): readonly NamedFile[] => [
+  { as: '--pdf', path: pdf },
+  { as: '--svg', path: svg },
+  { as: '--png', path: png },
+];
 
 /** Where page k of several goes: `study.svg`, or `study-2.svg` from the second on. */
 const pagePath = (path: string, k: number): string => (k === 0 ? path : path.replace(/(\.[^./\\]*)?$/, `-${k + 1}$1`));

@@ -3,10 +3,11 @@ import { faultLine } from '../../core/scheme/fault.ts';
 import type { Scheme, SheetSet } from '../../core/scheme/schema.ts';
 import type { Declare } from './declare.ts';
 import { dates, scale, times, whole } from './option-values.ts';
+import { keepApart } from './outputs-apart.ts';
 import { progress } from './progress.ts';
 import { accepted, readLimits, readScheme } from './read-input.ts';
 import { Refusal } from './refusal.ts';
-import { type SheetFiles, writeSheetFiles } from './sheet-files.ts';
+import { namedSheets, type SheetFiles, writeSheetFiles } from './sheet-files.ts';
 import { today } from './today.ts';
 
 type Options = SheetFiles & {
@@ -121,6 +122,11 @@ export const declareSheet: Declare = (program, screen) => {
     .action(async (what: string, path: string, options: Options) => {
       if (options.pdf === undefined && options.svg === undefined && options.png === undefined)
         throw new Refusal('shadewright sheet: no file is asked for; give --pdf FILE, --svg FILE or --png FILE.');
+      const read = [
+        { as: 'the scheme', path },
+        { as: 'the limit set', path: options.limits },
+      ];
+      await keepApart('sheet', read, namedSheets(options));
       const { scheme, notes } = await readScheme(path, screen);
       const set = await setOf(scheme, what, options);
       const [{ buildModel }, { sheetDocument }] = await Promise.all([

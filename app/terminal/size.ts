@@ -1,8 +1,10 @@
 import { Option } from 'commander';
+import { CAUTIONS } from '../../core/limits/cautions.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import type { Stretch } from '../../core/sizing/shaded-dates.ts';
 import type { Sweep, Swept } from '../../core/sizing/sweep.ts';
 import type { Declare } from './declare.ts';
+import { keepApart } from './outputs-apart.ts';
 import { number } from './option-values.ts';
 import { readScheme } from './read-input.ts';
 import { Refusal } from './refusal.ts';
@@ -30,11 +32,8 @@ Examples:
   shadewright size scheme.json --window W3,W4 --device glass --json
   shadewright size scheme.json --wall 2.4:3 --device overhang --pdf sizing.pdf`;
 
-/** Ids with commas between them, or the option given again. */
-const ids = (text: string, before: readonly string[] | undefined): readonly string[] => [
-  ...(before ?? []),
-  ...text.split(',').map((part) => part.trim()),
-];
+/** Each time that the option is given: an id, or several with commas between them. */
+const texts = (text: string, before: readonly string[] | undefined): readonly string[] => [...(before ?? []), text];
 
 /** The windows that the call means: those named, or those of a wall. @throws {Refusal} naming those there are */
 async function windowsFor(path: string, scheme: Scheme, { window, wall }: Options): Promise<readonly string[]> {
@@ -43,8 +42,11 @@ async function windowsFor(path: string, scheme: Scheme, { window, wall }: Option
       'shadewright size: name the windows with --window ID, or a wall with --wall ROOM:NUMBER, one of the two.',
     );
   if (window !== undefined) {
-    for (const id of window) if (!scheme.windows.some((w) => w.id === id)) throw noWindow(path, scheme, id);
-    return [...new Set(window)];
+    const isWindow = (id: string): boolean => scheme.windows.some((w) => w.id === id);
+    // An id may itself hold a comma.
+    const named = window.flatMap((text) => (isWindow(text) ? [text] : text.split(',').map((part) => part.trim())));
+    for (const id of named) if (!isWindow(id)) throw noWindow(path, scheme, id);
+    return [...new Set(named)];
   }
   const [, room, number] = /^(.+):(\d+)$/.exec(wall ?? '') ?? [];
   if (room === undefined)
@@ -126,6 +128,8 @@ function asText(sweep: Sweep, target: number | undefined): string {
     ),
     ...conclusion(sweep, target),
     '',
+    ...CAUTIONS,
+    '',
   ].join('\n');
 }
 
@@ -156,7 +160,7 @@ export const declareSize: Declare = (program, screen) => {
     .command('size')
     .description("sweep the depth of a window's device or its glass, summer and winter side by side")
     .argument('<SCHEME>', 'the scheme file')
-    .option('--window <IDS>', 'the window, or several with commas between them, sized together', ids)
+    .option('--window <IDS>', 'the window, or several with commas between them, sized together', texts)
     .option('--wall <ROOM:NUMBER>', 'all windows in one wall of a room')
     .addOption(
       new Option('--device <KIND>', 'what is sized')
@@ -173,6 +177,7 @@ export const declareSize: Declare = (program, screen) => {
     .addHelpText('after', HELP)
     .action(async (path: string, options: Options) => {
       const { device, target, json, pdf } = options;
+      await keepApart('size', [{ as: 'the scheme', path }], [{ as: '--pdf', path: pdf }]);
       const { scheme } = await readScheme(path, screen);
       const windows = await windowsFor(path, scheme, options);
       const [{ sweep }, { createCheckMemo }] = await Promise.all([

@@ -1,4 +1,5 @@
 import { Option } from 'commander';
+import { CAUTIONS } from '../../core/limits/cautions.ts';
 import { checkInstant, checkObserver } from '../../core/sun/check-observer.ts';
 import type { Observer } from '../../core/sun/position.ts';
 import { checkedZone } from './checked-zone.ts';
@@ -45,6 +46,10 @@ Examples:
   shadewright sun --lat 51.45 --lon -2.59 --zone Europe/London --at 2025-06-21T12:00Z
   shadewright sun --lat -33.9 --lon 151.2 --zone Australia/Sydney --on 2025-12-21 --step 30 --json`;
 
+/** Seconds as ISO 8601 has them: two digits, and thousandths only where there are any. */
+const secondsText = (seconds: number): string =>
+  Number.isInteger(seconds) ? String(seconds).padStart(2, '0') : seconds.toFixed(3).padStart(6, '0');
+
 const utc = (instant_ms: number): string => new Date(instant_ms).toISOString().replace('.000Z', 'Z');
 
 type Place = { readonly observer: Observer; readonly zone: string };
@@ -85,6 +90,10 @@ async function instantsOf(options: Options, zone: string, screen: Screen): Promi
   }
   const { daySamples } = await import('../../core/sun/civil.ts');
   const { instant_ms: middles } = daySamples(options.on ?? '', zone, options.step);
+  if (middles.length === 0)
+    throw new Refusal(
+      `shadewright sun: --on ${options.on} does not occur in ${zone}, whose clocks crossed the date line; give another day.`,
+    );
   const step_ms = options.step * 60_000;
   const first_ms = (middles[0] ?? 0) - step_ms / 2;
   return Array.from(middles, (_middle, k) => first_ms + k * step_ms);
@@ -114,6 +123,15 @@ const asText = (rows: readonly Row[], place: Place): string => {
     ),
   ].join('\n');
 };
+
+/** A sign of the longitude that was turned round, or a zone from elsewhere, gives hours that nobody would notice to be wrong. */
+async function noteOddZone({ observer, zone }: Place, instant_ms: number | undefined, screen: Screen): Promise<void> {
+  const { zoneDisagrees } = await import('../../core/sun/zone-disagrees.ts');
+  if (instant_ms === undefined || !zoneDisagrees(zone, observer.longitude_deg, instant_ms)) return;
+  screen.note(
+    `note: the clock of ${zone} stands more than three hours from the sun at longitude ${observer.longitude_deg}°; check the sign of the longitude, and the zone.\n`,
+  );
+}
 
 /** Rise, highest point and set of a civil day, in words. */
 async function dayText(day: string, { zone, observer }: Place): Promise<string> {
@@ -155,6 +173,7 @@ export const declareSun: Declare = (program, screen) => {
     .action(async (path: string | undefined, options: Options) => {
       const place = await placeOf(path, options, screen);
       const instants = await instantsOf(options, place.zone, screen);
+      await noteOddZone(place, instants[0], screen);
       const [{ sunPosition }, { civilOf }] = await Promise.all([
         import('../../core/sun/spa.ts'),
         import('../../core/sun/civil.ts'),
@@ -164,7 +183,7 @@ export const declareSun: Declare = (program, screen) => {
         const civil = civilOf(instant_ms, place.zone);
         return {
           instant: utc(instant_ms),
-          local: `${civil.date}T${civil.time}:${String(civil.seconds).padStart(2, '0')}${civil.offset}`,
+          local: `${civil.date}T${civil.time}:${secondsText(civil.seconds)}${civil.offset}`,
           azimuth: sun.azimuth_deg,
           altitude: sun.altitude_deg,
           apparentAltitude: sun.apparentAltitude_deg,
@@ -172,6 +191,9 @@ export const declareSun: Declare = (program, screen) => {
         };
       });
       if (options.json) screen.out(`${JSON.stringify(rows, null, 2)}\n`);
-      else screen.out(asText(rows, place) + (options.on === undefined ? '' : await dayText(options.on, place)));
+      else {
+        const day = options.on === undefined ? '' : await dayText(options.on, place);
+        screen.out(`${asText(rows, place)}${day}${CAUTIONS[3]}\n`);
+      }
     });
 };

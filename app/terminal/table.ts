@@ -2,7 +2,10 @@ export type Column = { readonly head: string; readonly align: 'left' | 'right' }
 
 /** Columns of plain text under a rule, two spaces apart; trailing blanks are left out so that lines can be compared. */
 export function table(columns: readonly Column[], rows: readonly (readonly string[])[]): string {
-  const widths = columns.map(({ head }, c) => Math.max(head.length, ...rows.map((row) => row[c]?.length ?? 0)));
+  // A name that runs over lines would break the row it stands in.
+  const cell = (text: string | undefined): string => (text ?? '').replace(/[\r\n\t]+/gu, ' ');
+  const all = [columns.map(({ head }) => cell(head)), ...rows.map((row) => columns.map((_, c) => cell(row[c])))];
+  const widths = columns.map((_, c) => all.reduce((most, row) => Math.max(most, (row[c] as string).length), 0));
   const line = (cells: readonly string[]): string =>
     columns
       .map(({ align }, c) =>
@@ -10,10 +13,6 @@ export function table(columns: readonly Column[], rows: readonly (readonly strin
       )
       .join('  ')
       .trimEnd();
-  return [
-    line(columns.map(({ head }) => head)),
-    widths.map((width) => '─'.repeat(width)).join('  '),
-    ...rows.map(line),
-    '',
-  ].join('\n');
+  const [head, ...body] = all.map(line);
+  return [head, widths.map((width) => '─'.repeat(width)).join('  '), ...body, ''].join('\n');
 }

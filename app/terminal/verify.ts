@@ -10,19 +10,38 @@ import type { Screen } from './screen.ts';
 
 /** Differences that are named; one is enough for the report not to hold. */
 const MOST_NAMED = 10;
-/** What is compared: everything that a reader would rely on. Notes and cautions are words, and may be worded anew. */
+/** What is compared: everything that a reader would rely on. */
 const COMPARED = ['schemeHash', 'title', 'zone', 'skyModel', 'counts', 'findings', 'rooms', 'days'] as const;
+/** Words that go with every result: the same version says them the same, and none may be left out. Others may stand beside them. */
+const WORDS = ['notes', 'cautions'] as const;
+
+/** What a report should say in words and does not. Another version may have worded it otherwise. */
+function leftOut(said: Partial<ReportFile>, found: ReportFile): readonly Difference[] {
+  if (said.engine !== found.engine) return [];
+  return WORDS.flatMap((key) => {
+    const list: unknown = said[key];
+    const words = new Set((Array.isArray(list) ? list : []).map((word) => JSON.stringify(word)));
+    return found[key].flatMap((word, i) =>
+      words.has(JSON.stringify(word)) ? [] : [{ place: `${key}[${i}]`, said: undefined, found: word }],
+    );
+  });
+}
 
 const HELP = `
 The scheme and the limits are in the report; every number is worked out from them again. Numbers count as the same within a share of
-1e-9 (for those below 1: within 1e-9), because sine and cosine differ in the last digit from one machine to the next. Exit status 0
-says that the report holds, 1 that it does not, 2 that the file is no report.
+1e-9 (for those below 1: within 1e-9), because a report may have been through a program that shortens numbers. Notes and cautions
+must all be there where the same version wrote them. Exit status 0 says that the report holds, 1 that it does not, 2 that the file is
+no report.
 
 Examples:
   shadewright check scheme.json --json > report.json
   shadewright verify report.json`;
 
-const shown = (value: unknown): string => (value === undefined ? 'nothing' : JSON.stringify(value).slice(0, 80));
+function shown(value: unknown): string {
+  if (value === undefined) return 'nothing';
+  const text = JSON.stringify(value);
+  return text.length > 80 ? `${text.slice(0, 79)}…` : text;
+}
 
 /** One place where the report departs from what was worked out again, and by how much where both are numbers. */
 function differenceText({ place, said, found }: Difference): string {
@@ -97,13 +116,17 @@ export const declareVerify: Declare = (program, screen, end) => {
       const limitSet = said.limitSet === null ? null : accepted(path, checkLimitSet(said.limitSet, 'limitSet'), screen);
       const weather = await weatherOf(said, path, options.weather, scheme, screen);
       const { pulse, done } = progress(screen, 'verifying');
-      const result = await checkScheme(scheme, limitSet, loaded.ok ? loaded.notes : [], pulse, { weather });
+      // Without the notes of reading: a report from the desk may be of a scheme that was never read from a file.
+      const result = await checkScheme(scheme, limitSet, [], pulse, { weather });
       done();
       if (result === null) throw new Error('the check was stopped');
       // By way of JSON, so that what it cannot say (such as infinity) reads alike on both sides.
       const found = JSON.parse(JSON.stringify(reportJson(result, scheme, limitSet))) as ReportFile;
       const pick = (report: Partial<ReportFile>) => Object.fromEntries(COMPARED.map((key) => [key, report[key]]));
-      const differences = reportDifferences(pick(said), pick(found), MOST_NAMED);
+      const differences = [...reportDifferences(pick(said), pick(found), MOST_NAMED), ...leftOut(said, found)].slice(
+        0,
+        MOST_NAMED,
+      );
       const engine =
         said.engine === found.engine ? '' : ` (written by engine ${said.engine}, worked out by ${found.engine})`;
       if (differences.length > 0) {

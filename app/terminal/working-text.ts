@@ -1,3 +1,4 @@
+import { CAUTIONS } from '../../core/limits/cautions.ts';
 import type { Working, WorkingStep } from '../../core/limits/finding.ts';
 
 /** Six figures: enough to work a number out again by hand. */
@@ -16,9 +17,8 @@ function stepText(step: WorkingStep): string {
 export function workingText(workings: readonly Working[]): string {
   if (workings.length === 0)
     return 'This room has no finding to be worked out: it has no window, or no limit applies to it.\n';
-  return workings
-    .map(({ title, method, source, steps }) =>
-      [title, `  method: ${method}`, `  source: ${source}`, ...steps.map(stepText), ''].join('\n'),
-    )
-    .join('\n');
+  const worked = workings.map(({ title, method, source, steps }) =>
+    [title, `  method: ${method}`, `  source: ${source}`, ...steps.map(stepText), ''].join('\n'),
+  );
+  return [...worked, ...CAUTIONS, ''].join('\n');
 }

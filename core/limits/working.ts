@@ -97,7 +97,7 @@ function periodLines(result: Worked, scheme: Scheme, room: WorkedRoom, finding: 
   lines.push(line('room, all windows', over(day.total_W), unit, { formula: mean ? 'Σ W / n' : 'Σ W × step' }));
   const peak = peakStep(day);
   if (day.total_W[peak]! > 0)
-    lines.push(line('one step in full, the highest of the day:', '', ''), ...stepLines(result, scheme, room, at, peak));
+    lines.push(line('one step in full, the highest of the day', '', ''), ...stepLines(result, scheme, room, at, peak));
   return lines;
 }
 

@@ -16,6 +16,14 @@ const warning = (code: string, place: string, message: string, cure: string): Fa
   cure,
 });
 
+/** Said so that "nothing over" is not read as "all within". */
+const NO_ROOMS = warning(
+  'no-rooms',
+  'rooms',
+  'the scheme has no rooms, so nothing was checked',
+  'add the rooms and their windows',
+);
+
 /**
  * What the reader of a check should know about it: rooms that no gain can be worked out for, limits that apply to nothing,
  * glass outside the fit, a site at a pole or with a clock from elsewhere, a hottest day that was assumed. Faults of the scheme's own making are the loader's to find.
@@ -27,6 +35,7 @@ export function checkNotes(
   hasWeather: boolean,
 ): readonly Fault[] {
   return [
+    ...(scheme.rooms.length === 0 ? [NO_ROOMS] : []),
     ...model.rooms.flatMap((room) => roomNotes(room, scheme)),
     ...scheme.glass.flatMap((glass, i) => glassNotes(glass, `glass[${i}]`)),
     ...scheme.devices.flatMap((device, i) => deviceNotes(device, `devices[${i}]`)),

@@ -25,6 +25,7 @@ import {
 import { checkAsk, shadersAt, tooManyPoints } from './exposure.ts';
 import { exposureDates } from './exposure-dates.ts';
 import type { Pulse } from './job.ts';
+import { type BuiltOver, builtShare, receptorNotes } from './receptor-notes.ts';
 
 /** What is asked: a year for probable sunlight, and one date for sun on ground and levels of exposure. */
 export type NeighbourAsk = {
@@ -109,12 +110,21 @@ export async function neighbourLight(
     after: occludersAt(model, 'after', ask.trees ?? false),
   };
   const receptors: (PointLight | AreaLight)[] = [];
+  const built: (readonly BuiltOver[])[] = [];
   for (const [i, receptor] of model.receptors.entries()) {
-    receptors.push(receptor.kind === 'area' ? areaLight(run, receptor) : pointLight(run, receptor));
+    if (receptor.kind === 'area') {
+      const area = areaLight(run, receptor);
+      receptors.push(area.light);
+      built.push(area.built);
+    } else {
+      receptors.push(pointLight(run, receptor));
+      built.push([]);
+    }
     if ((await pulse(i + 1, model.receptors.length)) === 'stop') return null;
   }
   const openHours = run.year.open_min / 60;
-  return { ok: true, value: { year, date, hours, openHours, receptors }, notes: treeNotes(scheme, ask) };
+  const notes = [...treeNotes(scheme, ask), ...receptorNotes(model, ['before', 'after'], built)];
+  return { ok: true, value: { year, date, hours, openHours, receptors }, notes };
 }
 
 type Run = {
@@ -189,13 +199,22 @@ function windowCentre(r: ReceptorForm): readonly [Vec3, Vec3] {
   return [pointOn(r.panel, r.panel.width_m / 2, r.panel.height_m / 2, 0), r.panel.normal];
 }
 
-function areaLight(run: Run, r: Extract<ReceptorForm, { kind: 'area' }>): AreaLight {
+/** An area's share with so many hours of sun, and how much of it is built over before and after. */
+function areaLight(
+  run: Run,
+  r: Extract<ReceptorForm, { kind: 'area' }>,
+): { readonly light: AreaLight; readonly built: readonly BuiltOver[] } {
   const { receptors } = levelGrid(r.outline, r.level, run.spacing_m);
-  const [was, is] = [run.before, run.after].map((o) => {
-    const sun = onDate(o, run.day, receptors);
-    return sunlitShare(sun.minutes, sun.covered, run.hours);
-  }) as [number, number];
-  return { kind: 'area', id: r.id, share: beforeAfter(was, is) };
+  const was = onDate(run.before, run.day, receptors);
+  const is = onDate(run.after, run.day, receptors);
+  const share = (sun: typeof was): number => sunlitShare(sun.minutes, sun.covered, run.hours);
+  return {
+    light: { kind: 'area', id: r.id, share: beforeAfter(share(was), share(is)) },
+    built: [
+      { stage: 'before', share: builtShare(was.covered) },
+      { stage: 'after', share: builtShare(is.covered) },
+    ],
+  };
 }
 
 const onDate = (o: Occluders, day: PeriodSky, receptors: Receptors) =>

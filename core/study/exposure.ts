@@ -16,6 +16,7 @@ import { momentSky, type PeriodSky, periodSky } from '../shade/exposure-period.t
 import { type Exposure, exposureJob } from '../shade/exposure-slice.ts';
 import { type ExposureDates, exposureDates } from './exposure-dates.ts';
 import type { Pulse } from './job.ts';
+import { builtShare, receptorNotes } from './receptor-notes.ts';
 import { runHere, type RunJobs } from './run-jobs.ts';
 
 /** What is asked of an exposure study. */
@@ -103,7 +104,10 @@ export async function exposureStudy(
     return summary(receptor, layout, own);
   });
   const value = { stage, dates: dates.value, step_min, spacing_m, sunSamples: sky.light.sx.length, receptors };
-  return { ok: true, value, notes: notesOf(model) };
+  const built = receptors.map((r, i) =>
+    model.receptors[i]?.kind === 'area' && r.grid !== null ? [{ stage, share: builtShare(r.grid.values.covered) }] : [],
+  );
+  return { ok: true, value, notes: [...notesOf(model), ...receptorNotes(model, [stage], built)] };
 }
 
 /** The sun and sky of what is asked. @param dates from `exposureDates` */
