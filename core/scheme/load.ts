@@ -1,5 +1,6 @@
 import { checkGeometry } from './check-geometry.ts';
 import { checkReferences } from './check-references.ts';
+import { checkStock } from './check-stock.ts';
 import type { Checked, Fault } from './fault.ts';
 import { jsonFaultAt, lineAndColumn } from './json-fault.ts';
 import { migrate } from './migrate.ts';
@@ -164,7 +165,7 @@ export function checkScheme(scheme: Scheme): Checked<Scheme> {
       cure: 'write an IANA name such as Europe/London',
     });
   }
-  found.push(...checkReferences(scheme));
+  found.push(...checkReferences(scheme), ...checkStock(scheme));
   // Geometry needs its references: a window of no room has no wall to stand in.
   if (found.every((f) => f.level === 'warning')) found.push(...checkGeometry(scheme));
   const errors = found.filter((f) => f.level === 'error');

@@ -1,5 +1,5 @@
 import type { Fault } from './fault.ts';
-import { Block, Device, Glass, Receptor, Room, Scheme, SheetSet, Site, Tree, Variant, Window } from './schema.ts';
+import { Block, Box, Device, Glass, Receptor, Room, Rooflight, Scheme, SheetSet, Site, Tree, Variant, Window } from './schema.ts';
 
 /** A field further than this from every known one is taken for an addition of somebody's own, which is kept and not spoken of. */
 const MOST_EDITS = 2;
@@ -66,12 +66,22 @@ export function misspelt(read: Loose): readonly Fault[] {
     const all = read[list];
     return Array.isArray(all) ? all.flatMap((entry: Loose, i) => nearly(entry, fields(entry), `${list}[${i}]`)) : [];
   };
+  /** What stands inside the entries of a list, such as the boxes of its blocks. */
+  const inside = (list: string, field: string, fields: readonly string[]): Fault[] => {
+    const all = read[list];
+    return Array.isArray(all)
+      ? all.flatMap((entry: Loose, i) => nearly((entry[field] ?? {}) as Loose, fields, `${list}[${i}].${field}`))
+      : [];
+  };
   return [
     ...nearly(read, fieldsOf(Scheme), ''),
     ...nearly((read['site'] ?? {}) as Loose, fieldsOf(Site), 'site'),
     ...entries('blocks', () => fieldsOf(Block)),
+    ...inside('blocks', 'box', fieldsOf(Box)),
     ...entries('rooms', () => fieldsOf(Room)),
+    ...inside('rooms', 'box', fieldsOf(Box)),
     ...entries('windows', () => fieldsOf(Window)),
+    ...inside('windows', 'roof', fieldsOf(Rooflight)),
     ...entries('glass', () => fieldsOf(Glass)),
     ...entries('devices', (entry) => fieldsOfKind(Device, entry)),
     ...entries('trees', () => fieldsOf(Tree)),

@@ -1,5 +1,6 @@
 import type { z } from 'zod';
 import type { Fault } from './fault.ts';
+import { Device, Receptor } from './schema.ts';
 
 type Issue = z.core.$ZodIssue;
 
@@ -55,6 +56,22 @@ function bound(issue: Issue & { code: 'too_small' | 'too_big' }, got: string): [
   return [`must be ${edge} ${limit}, got ${got}`, `write a number that is ${edge} ${limit}`];
 }
 
+/** The kinds that an entry of a list may be of. */
+function kindsAt([list]: readonly PropertyKey[]): string {
+  const { options } = list === 'receptors' ? Receptor : Device;
+  return options.map((option) => shown(option.shape.kind.value)).join(', ');
+}
+
+/** What is wrong where one of two fields must stand, and not both. */
+function eitherWords(fields: unknown, value: unknown): [message: string, cure: string] {
+  const [a, b] = fields as [string, string];
+  return valueAt(value, [a]) === undefined
+    ? [`needs a ${a} or ${article(b)} ${b}, and has neither`, 'add one of the two']
+    : [`has both a ${a} and ${article(b)} ${b}`, 'keep one of the two'];
+}
+
+const article = (noun: string): string => (/^[aeiou]/u.test(noun) ? 'an' : 'a');
+
 function words(issue: Issue, root: unknown): [code: string, message: string, cure: string] {
   const got = shown(valueAt(root, issue.path));
   switch (issue.code) {
@@ -78,17 +95,18 @@ function words(issue: Issue, root: unknown): [code: string, message: string, cur
       ];
     }
     case 'invalid_format':
-      return ['wrong-form', `is not of the right form, got ${got}`, 'see the schema (shadewright schema)'];
+      return issue.message.startsWith('must be ')
+        ? ['wrong-form', `${issue.message.split(', such as ')[0]}, got ${got}`, `write ${issue.message.slice(8)}`]
+        : ['wrong-form', `is not of the right form, got ${got}`, 'see the schema (shadewright schema)'];
     case 'invalid_union':
       return issue.discriminator !== undefined
-        ? [
-            'not-a-choice',
-            `must name a known ${issue.discriminator}, got ${shown(valueAt(root, [...issue.path, issue.discriminator]))}`,
-            `see the schema for the choices of ${issue.discriminator}`,
-          ]
+        ? ['not-a-choice', `must be one of ${kindsAt(issue.path)}, got ${got}`, 'choose one of these']
         : ['wrong-type', `fits none of the forms allowed here, got ${got}`, 'see the schema (shadewright schema)'];
     case 'custom':
-      return [String(issue.params?.['code'] ?? 'contradiction'), issue.message, 'keep one of the two'];
+      return [
+        String(issue.params?.['code'] ?? 'contradiction'),
+        ...eitherWords(issue.params?.['either'], valueAt(root, issue.path)),
+      ];
     default:
       return ['invalid', issue.message, 'see the schema (shadewright schema)'];
   }

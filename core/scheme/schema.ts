@@ -12,20 +12,23 @@ const positive = finite.gt(0).max(1e5);
 const share = finite.min(0).max(1);
 const id = z.string().min(1).max(60);
 const text = z.string().max(2000);
+const clock = z
+  .string()
+  .regex(/^([01]\d|2[0-3]):[0-5]\d$|^24:00$/, 'must be a time of the clock from 00:00 to 24:00, such as 09:30');
 const point = z.tuple([metres, metres]);
 const outline = z.array(point).min(3).max(2000);
 
-const box = z.looseObject({
+export const Box = z.looseObject({
   at: point.describe('lower left corner of the box before it is turned'),
   width: positive.describe('along x [m]'),
   depth: positive.describe('along y [m]'),
   turn: finite.min(-360).max(360).default(0).describe('degrees clockwise about `at`'),
 });
 
-const shape = { box: box.optional(), outline: outline.optional() };
+const shape = { box: Box.optional(), outline: outline.optional() };
 const oneShape = <T extends { box?: unknown; outline?: unknown }>(v: T): boolean =>
   (v.box === undefined) !== (v.outline === undefined);
-const oneShapeMessage = { message: 'needs either a box or an outline, and not both', params: { code: 'one-shape' } };
+const oneShapeMessage = { params: { code: 'one-shape', either: ['box', 'outline'] } };
 
 export const Standing = z.enum(['existing', 'proposed', 'removed', 'context']);
 
@@ -54,15 +57,14 @@ export const Room = z
   })
   .refine(oneShape, oneShapeMessage);
 
+export const Rooflight = z.looseObject({ at: point, turn: finite.min(-360).max(360).default(0) });
+
 export const Window = z
   .looseObject({
     id,
     room: id,
     wall: z.int().min(0).max(1999).optional().describe('edge n of the room outline, from corner n to corner n + 1'),
-    roof: z
-      .looseObject({ at: point, turn: finite.min(-360).max(360).default(0) })
-      .optional()
-      .describe('in place of wall: a rooflight in the flat roof, `at` its corner'),
+    roof: Rooflight.optional().describe('in place of wall: a rooflight in the flat roof, `at` its corner'),
     from: metres.default(0).describe('from corner n along the wall [m]'),
     sill: metres.default(0).describe('above the floor [m]'),
     width: positive,
@@ -72,8 +74,7 @@ export const Window = z
     devices: z.array(id).max(50).default([]),
   })
   .refine((v) => (v.wall === undefined) !== (v.roof === undefined), {
-    message: 'needs either a wall or a roof, and not both',
-    params: { code: 'one-place' },
+    params: { code: 'one-place', either: ['wall', 'roof'] },
   });
 
 export const Glass = z.looseObject({
@@ -135,14 +136,8 @@ const blind = z.looseObject({
     .max(2000)
     .optional()
     .describe('closed when the irradiance on the glass exceeds this [W/m²]'),
-  closedFrom: z
-    .string()
-    .regex(/^\d\d:\d\d$/)
-    .optional(),
-  closedTo: z
-    .string()
-    .regex(/^\d\d:\d\d$/)
-    .optional(),
+  closedFrom: clock.optional(),
+  closedTo: clock.optional(),
 });
 
 export const Device = z.discriminatedUnion('kind', [overhang, fin, louvres, blind]);

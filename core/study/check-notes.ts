@@ -6,6 +6,7 @@ import type { Fault } from '../scheme/fault.ts';
 import { DEFAULT_YEAR, type Scheme } from '../scheme/schema.ts';
 import { checkObserver } from '../sun/check-observer.ts';
 import { zoneDisagrees } from '../sun/zone-disagrees.ts';
+import { windowPlaceNotes } from './covered-windows.ts';
 import { SLIVER_m2 } from '../units/tolerance.ts';
 
 const warning = (code: string, place: string, message: string, cure: string): Fault => ({
@@ -37,6 +38,7 @@ export function checkNotes(
   return [
     ...(scheme.rooms.length === 0 ? [NO_ROOMS] : []),
     ...model.rooms.flatMap((room) => roomNotes(room, scheme)),
+    ...windowPlaceNotes(model),
     ...scheme.glass.flatMap((glass, i) => glassNotes(glass, `glass[${i}]`)),
     ...scheme.devices.flatMap((device, i) => deviceNotes(device, `devices[${i}]`)),
     ...(limitSet ? limitNotes(limitSet, model) : []),
