@@ -16,3 +16,9 @@ export const schemeHash = (scheme: Scheme): string => contentHash(writeScheme(wi
 
 /** Content hash of a file's bytes, as `contentHash`: a weather file is known again by it, whatever its name. */
 export const bytesHash = (bytes: Uint8Array): string => bytesToHex(sha256(bytes));
+
+/** The same of bytes that come in pieces. */
+export function growingHash(): { readonly add: (piece: Uint8Array) => void; readonly text: () => string } {
+  const hash = sha256.create();
+  return { add: (piece) => void hash.update(piece), text: () => bytesToHex(hash.digest()) };
+}

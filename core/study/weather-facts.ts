@@ -20,14 +20,14 @@ export type WeatherFacts = {
 
 /**
  * A weather file read, summed up and held against the sun of the site.
- * @param text     of the file
+ * @param text     of the file, whole or in pieces
  * @param mapping  null where the file says itself what its columns are
  * @param observer the site
  * @param zone     of the site
  * @returns the facts with every warning, or every fault with its place and cure
  */
 export function weatherFacts(
-  text: string,
+  text: string | Iterable<string>,
   mapping: WeatherMapping | null,
   observer: Observer,
   zone: string,

@@ -1,12 +1,10 @@
 import { type WeatherMonths, weatherMonths } from '../gain/weather-run.ts';
 import type { Checked, Fault } from '../scheme/fault.ts';
-import { bytesHash } from '../scheme/hash.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import type { WeatherMapping } from '../sky/weather/mapping.ts';
 import { FAR_CLOCK } from '../sky/weather/check-clock.ts';
-import { readWeather } from '../sky/weather/read-weather.ts';
 import { weatherGrid } from '../sky/weather/weather-grid.ts';
-import type { WeatherPlace } from '../sky/weather/weather-year.ts';
+import type { WeatherPlace, WeatherYear } from '../sky/weather/weather-year.ts';
 
 /** A year of weather as a check reports it. */
 export type WeatherUsed = {
@@ -28,19 +26,19 @@ export type WeatherInput = {
 };
 
 /**
- * A weather file read for a scheme's site.
- * @param mapping null where the file says itself what its columns are
+ * A year of weather made ready for a scheme's site.
+ * @param file    its name and the hash of its bytes
+ * @param read    what was read from it
+ * @param mapping by which it was read; null where the file says itself what its columns are
  * @returns every fault of the file with its place and cure, one whose clock is hours from the site's sun among them, or the year
  *          with its warnings
  */
 export function weatherInput(
   scheme: Scheme,
-  file: string,
-  bytes: Uint8Array,
-  text: string,
+  { name, hash }: { readonly name: string; readonly hash: string },
+  read: Checked<WeatherYear>,
   mapping: WeatherMapping | null,
 ): Checked<WeatherInput> {
-  const read = readWeather(text, mapping);
   if (!read.ok) return read;
   const year = read.value;
   const { site } = scheme;
@@ -48,7 +46,6 @@ export function weatherInput(
   const { grid, notes } = weatherGrid(year, observer, site.zone);
   const far = notes.filter((note) => note.code === FAR_CLOCK);
   if (far.length > 0) return { ok: false, faults: far.map((note) => ({ ...note, level: 'error', place: 'weather' })) };
-  const hash = bytesHash(bytes);
   const key = JSON.stringify([hash, mapping, observer, site.zone]);
   const { kind, place, rows, step_min } = year;
   // The file's own places are rows of it; what has none is of the file as a whole.
@@ -56,7 +53,7 @@ export function weatherInput(
   return {
     ok: true,
     value: {
-      used: { file, hash, kind, place, rows, step_min },
+      used: { file: name, hash, kind, place, rows, step_min },
       months: weatherMonths(grid, year.month, key),
       notes: all,
     },

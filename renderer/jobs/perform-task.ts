@@ -1,4 +1,4 @@
-import { fileText } from '../../app/contract/file-text.ts';
+import { textPieces } from '../../app/contract/file-text.ts';
 import { bytesHash } from '../../core/scheme/hash.ts';
 import { loadScheme } from '../../core/scheme/load.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
@@ -68,9 +68,8 @@ const performers = (): Performers => ({
     isOdd: isZone(zone) && zoneDisagrees(zone, longitude, instant_ms),
   }),
   weather: async ({ bytes, mapping, observer, zone }) => {
-    const text = fileText(bytes);
-    const facts = weatherFacts(text, mapping, observer, zone);
-    return { hash: bytesHash(bytes), facts, guess: facts.ok ? null : guessTable(text) };
+    const facts = weatherFacts(textPieces(bytes), mapping, observer, zone);
+    return { hash: bytesHash(bytes), facts, guess: facts.ok ? null : guessTable(textPieces(bytes)) };
   },
 });
 

@@ -1,8 +1,9 @@
-import { fileText } from '../../app/contract/file-text.ts';
+import { textPieces } from '../../app/contract/file-text.ts';
 import { createCheckMemo } from '../../core/gain/gain-memo.ts';
 import type { Checked, Fault } from '../../core/scheme/fault.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import { schemeHash } from '../../core/scheme/hash.ts';
+import { readWeather } from '../../core/sky/weather/read-weather.ts';
 import { sizingSheet } from '../../core/sheet/sizing-sheet.ts';
 import { ENGINE_VERSION } from '../../core/study/engine.ts';
 import { writeCsv } from '../../core/sheet/csv.ts';
@@ -33,7 +34,7 @@ class Years {
     const key = JSON.stringify([hash, mapping, scheme.site]);
     if (this.#input !== null && key === this.#key) return this.#input;
     this.#key = key;
-    this.#input = weatherInput(scheme, name, bytes, fileText(bytes), mapping);
+    this.#input = weatherInput(scheme, { name, hash }, readWeather(textPieces(bytes), mapping), mapping);
     return this.#input;
   }
 }

@@ -18,6 +18,8 @@ export type TableGuess = {
 
 /** So many lines are looked at. */
 const LOOKED_AT = 60;
+/** And so many characters of them. */
+const LOOKED_AT_MOST = 200_000;
 const SAMPLED = 4;
 const DELIMITERS = ['\t', ';', ','] as const;
 
@@ -83,12 +85,11 @@ const FORMS = [
 
 /**
  * A first guess at how a table is to be read.
- * @param text of the file
+ * @param text of the file, whole or in pieces; its beginning is looked at
  * @returns null when no line of it looks like the head of a table
  */
-export function guessTable(text: string): TableGuess | null {
-  const lines = text
-    .slice(0, 200_000)
+export function guessTable(text: string | Iterable<string>): TableGuess | null {
+  const lines = beginningOf(text)
     .replace(/^\ufeff/, '')
     .split('\n', LOOKED_AT);
   const delimiter = likelyDelimiter(lines);
@@ -112,6 +113,15 @@ export function guessTable(text: string): TableGuess | null {
     time: likelyTime(heads, sample),
     columns: likelyColumns(heads),
   };
+}
+
+function beginningOf(text: string | Iterable<string>): string {
+  let beginning = '';
+  for (const piece of typeof text === 'string' ? [text] : text) {
+    beginning += piece;
+    if (beginning.length >= LOOKED_AT_MOST) break;
+  }
+  return beginning.slice(0, LOOKED_AT_MOST);
 }
 
 /** The delimiter that cuts most lines into one and the same number of cells. */

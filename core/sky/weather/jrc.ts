@@ -1,9 +1,9 @@
 import type { Checked, Fault } from '../../scheme/fault.ts';
 import { headCells } from './cells.ts';
 import { findColumns, headNumber, type KnownColumn } from './known-columns.ts';
-import { readRows } from './read-rows.ts';
 import { timeForm } from './time-form.ts';
-import type { WeatherPlace, WeatherYear } from './weather-year.ts';
+import type { RowPlan } from './plan.ts';
+import type { WeatherPlace } from './weather-year.ts';
 
 const COLUMNS: readonly KnownColumn[] = [
   { quantity: 'global_Wm2', head: 'G(h)', unit: 'W/m2' },
@@ -16,14 +16,17 @@ const COLUMNS: readonly KnownColumn[] = [
 ];
 
 /** Lines above the column heads: the place, the offset and the year of each month. */
-const HEAD_LINES = 60;
+export const JRC_HEAD_LINES = 60;
 
 const headAt = (lines: readonly string[]): number =>
-  lines.slice(0, HEAD_LINES).findIndex((line) => line.startsWith('time(UTC),'));
+  lines.slice(0, JRC_HEAD_LINES).findIndex((line) => line.startsWith('time(UTC),'));
 
-/** Whether a file is a typical year of the Joint Research Centre. */
-export const isJrc = (lines: readonly string[]): boolean =>
-  (lines[0] ?? '').startsWith('Latitude (decimal degrees):') && headAt(lines) > 0;
+/** Whether a file begins like a typical year of the Joint Research Centre. */
+export const mayBeJrc = (lines: readonly string[]): boolean =>
+  (lines[0] ?? '').startsWith('Latitude (decimal degrees):');
+
+/** Whether it is one, by its head. */
+export const isJrc = (lines: readonly string[]): boolean => mayBeJrc(lines) && headAt(lines) > 0;
 
 /**
  * A typical year as the Joint Research Centre of the European Commission gives it. Times are UTC. The sunlight was read off
@@ -31,7 +34,7 @@ export const isJrc = (lines: readonly string[]): boolean =>
  * Notes follow the rows after a blank line.
  * @see European Commission, Joint Research Centre, PVGIS user manual, typical meteorological year (format of the CSV download)
  */
-export function readJrc(lines: readonly string[]): Checked<WeatherYear> {
+export function jrcPlan(lines: readonly string[]): Checked<RowPlan> {
   const at = headAt(lines);
   const heads = headCells(lines[at] ?? '', ',');
   const faults: Fault[] = [];
@@ -40,11 +43,9 @@ export function readJrc(lines: readonly string[]): Checked<WeatherYear> {
   const columns = findColumns(COLUMNS, heads, `line ${at + 1}`, faults);
   const form = timeForm('YYYYMMDD:HHmm');
   if (faults.length > 0 || !form) return { ok: false, faults };
-  const read = readRows({
+  const plan: RowPlan = {
     kind: 'JRC typical year',
     place,
-    lines,
-    firstRow: at + 1,
     heads,
     delimiter: ',',
     decimal: '.',
@@ -55,8 +56,8 @@ export function readJrc(lines: readonly string[]): Checked<WeatherYear> {
     columns,
     missing: ['-9999', '-9999.0', 'NaN'],
     endsAtBlank: true,
-  });
-  return read.ok ? { ...read, notes: [...notes, ...read.notes] } : read;
+  };
+  return { ok: true, value: plan, notes };
 }
 
 /** Place and time offset of the irradiance, as the lines above the table give them. */

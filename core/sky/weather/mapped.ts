@@ -1,12 +1,11 @@
 import type { Checked, Fault } from '../../scheme/fault.ts';
 import { headCells } from './cells.ts';
 import { checkMapping, UNITS, type WeatherMapping } from './mapping.ts';
-import { readRows } from './read-rows.ts';
 import { timeForm } from './time-form.ts';
-import type { WeatherYear } from './weather-year.ts';
+import type { RowPlan } from './plan.ts';
 
 /** Any table of weather, read as its mapping says. Faults of the mapping are placed in the scheme, faults of the file in its lines. */
-export function readMapped(lines: readonly string[], mapping: WeatherMapping): Checked<WeatherYear> {
+export function mappedPlan(lines: readonly string[], mapping: WeatherMapping): Checked<RowPlan> {
   const wrong = checkMapping(mapping, 'weather');
   const form = timeForm(mapping.time.form);
   if (wrong.length > 0 || !form) return { ok: false, faults: wrong };
@@ -34,11 +33,9 @@ export function readMapped(lines: readonly string[], mapping: WeatherMapping): C
   });
   if (faults.length > 0) return { ok: false, faults };
   const { latitude, longitude, elevation } = mapping.place;
-  return readRows({
+  const plan: RowPlan = {
     kind: 'table',
     place: { name: mapping.name, latitude_deg: latitude, longitude_deg: longitude, elevation_m: elevation },
-    lines,
-    firstRow: mapping.headLine,
     heads,
     delimiter: mapping.delimiter,
     decimal: mapping.decimal,
@@ -49,5 +46,6 @@ export function readMapped(lines: readonly string[], mapping: WeatherMapping): C
     columns,
     missing: mapping.missing,
     endsAtBlank: false,
-  });
+  };
+  return { ok: true, value: plan, notes: [] };
 }

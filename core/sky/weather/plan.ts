@@ -6,9 +6,6 @@ import type { Label, Quantity, WeatherPlace } from './weather-year.ts';
 export type RowPlan = {
   readonly kind: string;
   readonly place: WeatherPlace;
-  readonly lines: readonly string[];
-  /** Index of the first line of rows. */
-  readonly firstRow: number;
   /** What the columns are called, for telling faults; a row has as many cells. */
   readonly heads: readonly string[];
   readonly delimiter: ',' | ';' | '\t';

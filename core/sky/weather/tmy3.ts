@@ -1,9 +1,8 @@
 import type { Checked, Fault } from '../../scheme/fault.ts';
 import { headCells } from './cells.ts';
 import { findColumns, headNumber, type KnownColumn } from './known-columns.ts';
-import { readRows } from './read-rows.ts';
 import { timeForm } from './time-form.ts';
-import type { WeatherYear } from './weather-year.ts';
+import type { RowPlan } from './plan.ts';
 
 const COLUMNS: readonly KnownColumn[] = [
   { quantity: 'global_Wm2', head: 'GHI (W/m^2)', unit: 'W/m2' },
@@ -25,7 +24,7 @@ export const isTmy3 = (lines: readonly string[]): boolean =>
  * over the hour before the label, temperature and the rest hold at the label.
  * @see S. Wilcox, W. Marion, Users Manual for TMY3 Data Sets, NREL/TP-581-43156 (2008)
  */
-export function readTmy3(lines: readonly string[]): Checked<WeatherYear> {
+export function tmy3Plan(lines: readonly string[]): Checked<RowPlan> {
   const station = headCells(lines[0] ?? '', ',');
   const heads = headCells(lines[1] ?? '', ',');
   const [id = '', name = '', region = '', ...numbers] = station;
@@ -45,11 +44,9 @@ export function readTmy3(lines: readonly string[]): Checked<WeatherYear> {
   const columns = findColumns(COLUMNS, heads, 'line 2', faults);
   const form = timeForm('MM/DD/YYYY HH:mm');
   if (faults.length > 0 || !form) return { ok: false, faults };
-  return readRows({
+  const plan: RowPlan = {
     kind: 'TMY3',
     place,
-    lines,
-    firstRow: 2,
     heads,
     delimiter: ',',
     decimal: '.',
@@ -60,5 +57,6 @@ export function readTmy3(lines: readonly string[]): Checked<WeatherYear> {
     columns,
     missing: ['-9900', '-9900.0', '-9999'],
     endsAtBlank: false,
-  });
+  };
+  return { ok: true, value: plan, notes: [] };
 }

@@ -2,7 +2,7 @@ import { spawnSync } from 'node:child_process';
 import { truncateSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { expect, test } from 'vitest';
-import { readBounded } from '../../../app/files/read-bounded.ts';
+import { readBounded, streamBounded } from '../../../app/files/read-bounded.ts';
 import { tempFolder } from '../../helpers/temp-folder.ts';
 
 test('reads a file up to the bound, and refuses one byte more before reading it', async () => {
@@ -42,3 +42,26 @@ test.skipIf(process.platform === 'win32')(
       expect(await readBounded(path, 10)).toMatchObject({ ok: false, fault: { code: 'not-a-file' } });
   },
 );
+
+test('streams a file in pieces that make it up, stops when told, and refuses what reading refuses', async () => {
+  const folder = tempFolder();
+  const path = join(folder, 'a');
+  const bytes = Buffer.from(Array.from({ length: 200_000 }, (_, i) => (i * 7) % 251));
+  writeFileSync(path, bytes);
+  const pieces: Buffer[] = [];
+  expect(await streamBounded(path, 1e6, (piece) => pieces.push(Buffer.from(piece)) > 0)).toBeNull();
+  expect(pieces.length).toBeGreaterThan(3);
+  expect(Buffer.concat(pieces).equals(bytes)).toBe(true);
+  let taken = 0;
+  expect(await streamBounded(path, 1e6, () => ++taken < 2)).toBeNull();
+  expect(taken).toBe(2);
+  expect(await streamBounded(path, 1000, () => true)).toMatchObject({ code: 'too-large' });
+  expect(await streamBounded(join(folder, 'none'), 10, () => true)).toMatchObject({ code: 'missing' });
+  expect(await streamBounded(folder, 10, () => true)).toMatchObject({ code: 'not-a-file' });
+  // A fault of whoever takes the pieces is theirs.
+  await expect(
+    streamBounded(path, 1e6, () => {
+      throw new TypeError('mine');
+    }),
+  ).rejects.toThrow('mine');
+});

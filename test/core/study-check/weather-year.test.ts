@@ -9,7 +9,9 @@ import type { LimitSet } from '../../../core/limits/limit-set.ts';
 import type { MetricId } from '../../../core/limits/metric-id.ts';
 import { METRICS } from '../../../core/limits/metric.ts';
 import { workingOf } from '../../../core/limits/working.ts';
+import { bytesHash } from '../../../core/scheme/hash.ts';
 import { Scheme } from '../../../core/scheme/schema.ts';
+import { readWeather } from '../../../core/sky/weather/read-weather.ts';
 import { waysToPass } from '../../../core/sizing/ways-to-pass.ts';
 import { checkScheme } from '../../../core/study/check.ts';
 import type { CheckResult } from '../../../core/study/check-result.ts';
@@ -40,7 +42,12 @@ function at(c: Case, over: Parameters<typeof smallScheme>[0], more: object = {})
 
 function weatherOf(c: Case, scheme: Scheme): WeatherInput {
   const bytes = readFileSync(resolve(FOLDER, c.file));
-  const read = weatherInput(scheme, c.file, bytes, bytes.toString('latin1'), null);
+  const read = weatherInput(
+    scheme,
+    { name: c.file, hash: bytesHash(bytes) },
+    readWeather(bytes.toString('latin1')),
+    null,
+  );
   if (!read.ok) throw new Error(JSON.stringify(read.faults));
   return read.value;
 }

@@ -251,16 +251,3 @@ function yearOnWall(
   }
   return sum / 1000;
 }
-
-describe.skipIf(!HERE)('speed', () => {
-  it.each(checks)('$id is read in less than 300 ms', (c) => {
-    const file = readFileSync(resolve(FOLDER, c.file), 'latin1');
-    const times = Array.from({ length: 5 }, () => {
-      const before = performance.now();
-      readWeather(file);
-      return performance.now() - before;
-    }).sort((a, b) => a - b);
-    console.info(`${c.id}: ${times.map((t) => t.toFixed(0)).join(', ')} ms`);
-    expect(times[0]).toBeLessThan(300);
-  });
-});

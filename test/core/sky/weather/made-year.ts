@@ -1,3 +1,5 @@
+import type { WeatherMapping } from '../../../../core/sky/weather/mapping.ts';
+
 /** A made-up hourly year as a table, for spoiling in one place at a time. Local time UTC+1, labelled by the end of the hour. */
 export const HEAD = 'when;global;air;pressure';
 
@@ -22,3 +24,20 @@ export function madeYear(year = 2023): Row[] {
 
 export const asText = (rows: readonly Row[], head = HEAD): string =>
   `a made-up year\n${head}\n${rows.map((r) => `${r.when};${r.global};${r.air};${r.pressure}`).join('\n')}\n`;
+
+/** How it is to be read. */
+export const MAPPING: WeatherMapping = {
+  name: 'station on the roof',
+  delimiter: ';',
+  decimal: '.',
+  headLine: 2,
+  time: { columns: ['when'], form: 'YYYY-MM-DD HH:mm', offset_h: 1, label: 'end', shift_min: 0 },
+  air: 'mean',
+  columns: [
+    { quantity: 'global_Wm2', column: 'global', unit: 'W/m2' },
+    { quantity: 'tAir_C', column: 'air', unit: 'C' },
+    { quantity: 'pressure_hPa', column: 'pressure', unit: 'Pa' },
+  ],
+  missing: ['-999'],
+  place: { latitude: 45, longitude: 15, elevation: 100 },
+};

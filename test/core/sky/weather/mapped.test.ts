@@ -6,23 +6,7 @@ import { readWeather } from '../../../../core/sky/weather/read-weather.ts';
 import { weatherSummary } from '../../../../core/sky/weather/summary.ts';
 import { timeForm } from '../../../../core/sky/weather/time-form.ts';
 import { weatherGrid } from '../../../../core/sky/weather/weather-grid.ts';
-import { asText, madeYear, type Row } from './made-year.ts';
-
-const MAPPING: WeatherMapping = {
-  name: 'station on the roof',
-  delimiter: ';',
-  decimal: '.',
-  headLine: 2,
-  time: { columns: ['when'], form: 'YYYY-MM-DD HH:mm', offset_h: 1, label: 'end', shift_min: 0 },
-  air: 'mean',
-  columns: [
-    { quantity: 'global_Wm2', column: 'global', unit: 'W/m2' },
-    { quantity: 'tAir_C', column: 'air', unit: 'C' },
-    { quantity: 'pressure_hPa', column: 'pressure', unit: 'Pa' },
-  ],
-  missing: ['-999'],
-  place: { latitude: 45, longitude: 15, elevation: 100 },
-};
+import { asText, MAPPING, madeYear, type Row } from './made-year.ts';
 
 /** The codes of the faults that a spoilt year brings, each once, and all of them as lines. */
 function spoilt(
