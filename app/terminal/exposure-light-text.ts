@@ -1,7 +1,7 @@
 import { CAUTIONS } from '../../core/limits/cautions.ts';
 import { writeCsv } from '../../core/sheet/csv.ts';
 import type { BeforeAfter, NeighbourLight } from '../../core/study/exposure-neighbours.ts';
-import { hoursText } from './exposure-words.ts';
+import { counted, hoursText, lowSunText } from './exposure-words.ts';
 import { table } from './table.ts';
 
 /** The figures as they are, shares as 0..1. */
@@ -25,7 +25,7 @@ const shown = (v: number, kind: Figure['kind']): string =>
   kind === 'minutes' ? hoursText(v) : kind === 'factor' ? v.toFixed(3) : `${(100 * v).toFixed(1)} %`;
 
 /** One line a figure, in the order of the scheme: before, after, and what is kept. */
-export function lightText(light: NeighbourLight): string {
+export function lightText(light: NeighbourLight, lowSun: number | undefined): string {
   const rows = light.receptors.flatMap((r) => {
     const figures = figuresOf(r, light).map(({ name, of, kind }) => [
       r.id,
@@ -39,7 +39,7 @@ export function lightText(light: NeighbourLight): string {
     return figures;
   });
   return [
-    `Light of ${light.receptors.length} receptors before and after: ${light.year}, and ${light.date} alone.`,
+    `Light of ${counted(light.receptors.length, 'receptor')} before and after: ${light.year}, and ${light.date} alone${lowSunText(lowSun)}.`,
     `An open place has ${light.openHours.toFixed(0)} h of sun in the year as counted here; sunlight hours are shares of that.`,
     '',
     table(

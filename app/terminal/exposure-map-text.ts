@@ -3,7 +3,7 @@ import type { Model } from '../../core/form/model.ts';
 import type { Exposure } from '../../core/shade/exposure-slice.ts';
 import { type ExposureMap, type Surface, type SurfaceMap, surfacesOf } from '../../core/study/exposure-map.ts';
 import { writeCsv } from '../../core/sheet/csv.ts';
-import { hoursText, periodText } from './exposure-words.ts';
+import { counted, hoursText, lowSunText, periodText } from './exposure-words.ts';
 import { Refusal } from './refusal.ts';
 import { table } from './table.ts';
 
@@ -96,10 +96,10 @@ export function mapCsv(map: ExposureMap): string {
 }
 
 /** One line a surface: its mean before and after, and how far the change goes. */
-export function mapText(map: ExposureMap): string {
+export function mapText(map: ExposureMap, lowSun: number | undefined): string {
   const points = map.surfaces.reduce((sum, s) => sum + s.grid.cell.length, 0);
   return [
-    `Sun on ${points} points of ${map.surfaces.length} surfaces, about ${map.spacing_m} m apart: ${periodText(map.dates)}, sampled every ${map.step_min} minutes.`,
+    `Sun on ${counted(points, 'point')} of ${counted(map.surfaces.length, 'surface')}, about ${map.spacing_m} m apart: ${periodText(map.dates)}, sampled every ${counted(map.step_min, 'minute')}${lowSunText(lowSun)}.`,
     'Means over the points that are not built over; energy of beam, sky and ground together, clear sky.',
     '',
     table(

@@ -4,6 +4,12 @@ export function hoursText(minutes: number): string {
   return `${Math.floor(whole / 60)} h ${String(whole % 60).padStart(2, '0')}`;
 }
 
+/** What is said of a scheme that leaves low sun out: nothing of one that does not. */
+export const lowSunText = (lowSun: number | undefined): string => (lowSun ? `, sun above ${lowSun}° only` : '');
+
+/** A number of things, one of them as one. */
+export const counted = (n: number, thing: string): string => `${n} ${thing}${n === 1 ? '' : 's'}`;
+
 const DAY_ms = 86_400_000;
 
 /** Whether dates follow each other without a gap. @param dates in order, each once */

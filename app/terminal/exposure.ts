@@ -6,7 +6,7 @@ import type { Scheme } from '../../core/scheme/schema.ts';
 import type { ExposureDates } from '../../core/study/exposure-dates.ts';
 import type { ExposureResult } from '../../core/study/exposure.ts';
 import type { Declare } from './declare.ts';
-import { hoursText, periodText } from './exposure-words.ts';
+import { counted, hoursText, lowSunText, periodText } from './exposure-words.ts';
 import { dates, number, shares, whole } from './option-values.ts';
 import { progress } from './progress.ts';
 import { accepted, readScheme } from './read-input.ts';
@@ -70,9 +70,9 @@ const COLUMNS = ['id', 'sunMinutes', 'beam', 'sky', 'ground'] as const;
 
 type Row = Pick<ExposureResult['receptors'][number], (typeof COLUMNS)[number]>;
 
-function asText(rows: readonly Row[], result: ExposureResult): string {
+function asText(rows: readonly Row[], result: ExposureResult, lowSun: number | undefined): string {
   return [
-    `Sun on ${rows.length} receptors, ${result.stage} the proposal: ${periodText(result.dates)}, sampled every ${result.step_min} minutes; clear sky.`,
+    `Sun on ${counted(rows.length, 'receptor')}, ${result.stage} the proposal: ${periodText(result.dates)}, sampled every ${counted(result.step_min, 'minute')}; clear sky${lowSunText(lowSun)}.`,
     '',
     table(
       [
@@ -135,7 +135,8 @@ async function receptorsOut({ path, scheme, options, screen }: Run): Promise<str
   const rows = result.receptors.map(
     ({ id, sunMinutes, beam, sky, ground }): Row => ({ id, sunMinutes, beam, sky, ground }),
   );
-  return options.json ? `${JSON.stringify(rows, null, 2)}\n` : options.csv ? await asCsv(rows) : asText(rows, result);
+  if (options.json) return `${JSON.stringify(rows, null, 2)}\n`;
+  return options.csv ? asCsv(rows) : asText(rows, result, scheme.site.lowSun);
 }
 
 async function mapOut({ path, scheme, options, screen }: Run, named: readonly string[]): Promise<string> {
@@ -153,7 +154,7 @@ async function mapOut({ path, scheme, options, screen }: Run, named: readonly st
   const study = await withThreads(threadsOf(options), (run) => exposureMap(scheme, model, ask, pulse, run));
   done();
   const map = answered(path, study, screen);
-  return options.json ? words.mapJson(map) : options.csv ? words.mapCsv(map) : words.mapText(map);
+  return options.json ? words.mapJson(map) : options.csv ? words.mapCsv(map) : words.mapText(map, scheme.site.lowSun);
 }
 
 async function lightOut({ path, scheme, options, screen }: Run): Promise<string> {
@@ -181,7 +182,7 @@ async function lightOut({ path, scheme, options, screen }: Run): Promise<string>
   const study = await neighbourLight(scheme, buildModel(scheme), ask, pulse);
   done();
   const light = answered(path, study, screen);
-  return options.json ? words.lightJson(light) : options.csv ? words.lightCsv(light) : words.lightText(light);
+  return options.json ? words.lightJson(light) : options.csv ? words.lightCsv(light) : words.lightText(light, scheme.site.lowSun);
 }
 
 /** What goes with one kind of question only. */

@@ -123,7 +123,7 @@ export async function neighbourLight(
     if ((await pulse(i + 1, model.receptors.length)) === 'stop') return null;
   }
   const openHours = run.year.open_min / 60;
-  const notes = [...treeNotes(scheme, ask), ...receptorNotes(model, ['before', 'after'], built)];
+  const notes = [...treeNotes(scheme, ask), ...levelNotes(scheme, date), ...receptorNotes(model, ['before', 'after'], built)];
   return { ok: true, value: { year, date, hours, openHours, receptors }, notes };
 }
 
@@ -150,6 +150,22 @@ function treeNotes(scheme: Scheme, ask: NeighbourAsk): Fault[] {
       place: 'trees',
       message: 'the light of neighbours is worked out without the trees',
       cure: 'ask for it with trees where they belong in the comparison, such as a dense belt of evergreens',
+    },
+  ];
+}
+
+/** EN 17037 looks at one day from 1 February to 21 March; in the south no such span was found stated, and nothing is said. */
+function levelNotes(scheme: Scheme, date: string): Fault[] {
+  const day = date.slice(5);
+  if (scheme.site.latitude < 0 || (day >= '02-01' && day <= '03-21')) return [];
+  if (scheme.receptors.every((r) => r.kind === 'area')) return [];
+  return [
+    {
+      level: 'warning',
+      code: 'level-day',
+      place: 'date',
+      message: `EN 17037 looks at one day from 1 February to 21 March, not at ${date}`,
+      cure: 'read the level of exposure as a comparison only, or ask for a day in that span',
     },
   ];
 }

@@ -4,6 +4,10 @@ import type { ShadowMoment } from '../sheet/shadow-moment.ts';
 import { resolveCivil } from '../sun/civil.ts';
 import { momentStudy } from './moment.ts';
 
+/** Below this the light is bent by half as much as it is high, and hills beyond the drawing hide the sun (common practice, no source) [°]. */
+const ROUGH_BELOW_deg = 2;
+const ROUGH = `sun below ${ROUGH_BELOW_deg}°: refraction and the land far off decide, so areas are rough`;
+
 /**
  * The moments of a shadow study, in the order of the dates and within a date of the times: what `shadowSheet` draws.
  * @param dates  civil dates, YYYY-MM-DD
@@ -32,6 +36,10 @@ export function shadowMoment(scheme: Scheme, model: Model, date: string, time: s
     altitude_deg: sun.altitude_deg,
     change: shadows,
     areas: areas.map((a) => ({ id: a.receptor, name: names.get(a.receptor) ?? '', before: a.before, after: a.after })),
-    notes: [...(note === null ? [] : [note]), ...(isLowSun ? [low] : [])],
+    notes: [
+      ...(note === null ? [] : [note]),
+      ...(isLowSun ? [low] : []),
+      ...(shadows !== null && sun.altitude_deg < ROUGH_BELOW_deg ? [ROUGH] : []),
+    ],
   };
 }

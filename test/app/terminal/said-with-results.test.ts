@@ -92,6 +92,41 @@ describe('ground that is built over and is in no mean is spoken of', () => {
   });
 });
 
+describe('sun that is low', () => {
+  const low = (): string => folderWith((s) => (s.site.lowSun = 10));
+
+  test.each([
+    [['exposure', 'scheme.json']],
+    [['exposure', 'scheme.json', '--light', '--step', '60']],
+    [['exposure', 'scheme.json', '--map', 'walls', '--spacing', '3']],
+  ])('and is left out is said: %j', async (words) => {
+    expect((await runCommand(words, low())).out).toContain('sun above 10° only');
+    expect((await runCommand(words, folderWith())).out).not.toContain('only');
+  });
+
+  test('below two degrees the areas of shadows are marked as rough', async () => {
+    const words = ['shadows', 'scheme.json', '--on', '2025-12-21', '--from', '08:20', '--to', '08:50', '--every', '30'];
+    const { out } = await runCommand(words, folderWith());
+    expect(out.match(/note: .*sun below 2°/gu)).toEqual(['note: 21 December 2025, 08:20 (UTC+00:00): sun below 2°']);
+  });
+});
+
+test('a level of exposure on a day that EN 17037 does not look at is spoken of', async () => {
+  const words = ['exposure', 'scheme.json', '--light', '--step', '60', '--on'];
+  const folder = folderWith((s) => (s.receptors = [{ id: 'P1', kind: 'point', at: [2, -4, 1] }]));
+  expect((await runCommand([...words, '2025-12-21'], folder)).err).toMatch(
+    /date: EN 17037 looks at one day from 1 February to 21 March, not at 2025-12-21/,
+  );
+  expect((await runCommand([...words, '2025-03-21'], folder)).err).toBe('');
+  expect((await runCommand([...words, '2025-12-21'], folderWith())).err).not.toContain('17037');
+});
+
+test('one of a thing is counted as one', async () => {
+  expect((await runCommand(['exposure', 'scheme.json'], folderWith())).out).toContain('Sun on 1 receptor,');
+  const light = await runCommand(['exposure', 'scheme.json', '--light', '--step', '60'], folderWith());
+  expect(light.out).toContain('Light of 1 receptor before');
+});
+
 describe('check', () => {
   test('with no rooms: says that nothing was looked at', async () => {
     const folder = folderWith((s) => {

@@ -65,6 +65,15 @@ describe('every page', () => {
   });
 });
 
+test('low sun is said to be left out of sun hours and of nothing else: gains count it', async () => {
+  const high = { ...scheme, site: { ...scheme.site, lowSun: 10 } };
+  const checked = await checkScheme(high, EXAMPLE, [], async () => 'go');
+  expect(checked?.findings.map((f) => f.value)).toEqual(result.findings.map((f) => f.value));
+  const text = findingsReport(checked as ReportResult, high, { drawn: '2026-03-02' }).pages.map(said).join(' ');
+  expect(text).toContain('at or below 10° it counts in gains, and in no sun hours');
+  expect(text).not.toContain('left out at or below');
+});
+
 test('the summary states the counts of the check and names the worst room', () => {
   const text = said(report.pages[0] as Page);
   expect(text).toContain(`${result.counts.over} rooms over`);
