@@ -108,7 +108,8 @@ function tannery() {
     );
     // Yard side to the north and east.
     window(id(), `${s}.4`, 2, 1.2, 0.9, 1.4, 1.4, 'G3', []);
-    window(id(), `${s}.5`, 1, 1.4, 0.9, 2.0, 1.4, 'G3', []);
+    // On the ground floor clear of the wing, which reaches up to y = 2.5.
+    window(id(), `${s}.5`, 1, i === 0 ? 2.8 : 1.4, 0.9, 2.0, 1.4, 'G3', []);
     window(id(), `${s}.5`, 2, 1.2, 0.9, 1.5, 1.4, 'G3', []);
   });
   windows.push({
