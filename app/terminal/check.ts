@@ -1,8 +1,10 @@
 import type { CheckMemo } from '../../core/gain/gain-memo.ts';
 import type { LimitSet } from '../../core/limits/limit-set.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
+import type { WeatherInput } from '../../core/study/weather-input.ts';
 import type { CheckResult } from '../../core/study/check-result.ts';
 import type { Pulse } from '../../core/study/job.ts';
+import { weatherFor } from './weather-for.ts';
 import type { Declare } from './declare.ts';
 import { keepApart } from './outputs-apart.ts';
 import { progress } from './progress.ts';
@@ -37,13 +39,6 @@ async function limitsFor(path: string, scheme: Scheme, options: Options, screen:
   return accepted(path, limitsOfScheme(scheme), screen);
 }
 
-/** The year of weather to look at: the file named, or the one that the scheme goes by, where it is there. */
-async function weatherFor(path: string, scheme: Scheme, { weather }: Options, screen: Screen) {
-  if (weather === undefined && (scheme.weather ?? null) === null) return null;
-  const { readWeatherFile, weatherBeside } = await import('./read-weather.ts');
-  return weather === undefined ? weatherBeside(path, scheme, screen) : readWeatherFile(weather, scheme, screen);
-}
-
 /** @throws {Refusal} when the scheme has no such room, naming those it has */
 function refuseRoom(scheme: Scheme, room: string): void {
   if (scheme.rooms.some((r) => r.id === room)) return;
@@ -63,20 +58,23 @@ async function workingOfRoom(result: CheckResult, scheme: Scheme, room: string):
   return workingText(findings.map((f) => workingOf(result, scheme, f)));
 }
 
+/** What the check was made with. */
+type Known = { readonly memo: CheckMemo; readonly weather: WeatherInput | null };
+
 /** The report with, for each room that is over, the ways to bring its worst finding within. */
-async function pdfReport(result: CheckResult, scheme: Scheme, memo: CheckMemo, pulse: Pulse): Promise<Uint8Array> {
+async function pdfReport(result: CheckResult, scheme: Scheme, known: Known, pulse: Pulse): Promise<Uint8Array> {
   const [{ findingsReport }, { waysOfOver }, { pdfOf }] = await Promise.all([
     import('../../core/sheet/findings-report.ts'),
     import('../../core/study/ways-of-over.ts'),
     import('../files/print-document.ts'),
   ]);
-  const ways = await waysOfOver(result, scheme, memo, pulse);
+  const ways = await waysOfOver(result, scheme, known.memo, pulse, known.weather?.months ?? null);
   return pdfOf(findingsReport(result, scheme, { drawn: today(), ways: ways ?? [] }));
 }
 
-async function report(result: CheckResult, scheme: Scheme, memo: CheckMemo, screen: Screen): Promise<Uint8Array> {
+async function report(result: CheckResult, scheme: Scheme, known: Known, screen: Screen): Promise<Uint8Array> {
   const { pulse, done } = progress(screen, 'looking for ways to pass');
-  const bytes = await pdfReport(result, scheme, memo, pulse);
+  const bytes = await pdfReport(result, scheme, known, pulse);
   done();
   return bytes;
 }
@@ -108,7 +106,7 @@ export const declareCheck: Declare = (program, screen, end) => {
       );
       const { scheme, notes } = await readScheme(path, screen);
       const limitSet = await limitsFor(path, scheme, options, screen);
-      const weather = await weatherFor(path, scheme, options, screen);
+      const weather = await weatherFor(path, scheme, options.weather, screen);
       if (options.working !== undefined) refuseRoom(scheme, options.working);
       const [{ checkScheme }, { createCheckMemo }] = await Promise.all([
         import('../../core/study/check.ts'),
@@ -120,7 +118,7 @@ export const declareCheck: Declare = (program, screen, end) => {
       done();
       if (result === null) throw new Error('the check was stopped');
       if (options.pdf !== undefined) {
-        await writeOutput(options.pdf, await report(result, scheme, memo, screen));
+        await writeOutput(options.pdf, await report(result, scheme, { memo, weather }, screen));
         screen.note(`report written to ${options.pdf}\n`);
       }
       screen.out(await printed(result, scheme, limitSet, options));

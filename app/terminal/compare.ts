@@ -10,6 +10,7 @@ import { accepted, readScheme } from './read-input.ts';
 import { EXIT, Refusal } from './refusal.ts';
 import type { Screen } from './screen.ts';
 import { table } from './table.ts';
+import { weatherFor } from './weather-for.ts';
 
 type Options = {
   readonly on?: readonly string[];
@@ -37,7 +38,11 @@ async function besideEachOther(paths: readonly string[], screen: Screen): Promis
     const own = { name: basename(path).replace(/(\.scheme)?\.json$/i, ''), scheme: withoutVariants(scheme) };
     // A scheme that is named alone stands beside what is kept with it, as in the desk: last.
     for (const one of paths.length === 1 ? [...variantsOf(scheme), own] : [own])
-      variants.push({ ...one, limitSet: accepted(path, limitsOfScheme(one.scheme), screen) });
+      variants.push({
+        ...one,
+        limitSet: accepted(path, limitsOfScheme(one.scheme), screen),
+        weather: await weatherFor(path, one.scheme, undefined, screen),
+      });
   }
   return variants;
 }

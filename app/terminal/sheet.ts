@@ -9,6 +9,7 @@ import { accepted, readLimits, readScheme } from './read-input.ts';
 import { Refusal } from './refusal.ts';
 import { namedSheets, type SheetFiles, writeSheetFiles } from './sheet-files.ts';
 import { today } from './today.ts';
+import { weatherFor } from './weather-for.ts';
 
 type Options = SheetFiles & {
   readonly on?: readonly string[];
@@ -17,6 +18,7 @@ type Options = SheetFiles & {
   readonly window?: string;
   readonly block?: string;
   readonly limits?: string;
+  readonly weather?: string;
   readonly scale?: number;
   readonly paper?: 'A4' | 'A3' | 'A2' | 'A1';
   readonly portrait?: true;
@@ -116,6 +118,7 @@ export const declareSheet: Declare = (program, screen) => {
     .option('--window <ID>', 'window of a section or of a shading mask')
     .option('--block <ID>', 'block whose facades are drawn')
     .option('--limits <FILE>', 'judge findings by this limit set and not by the one that the scheme names')
+    .option('--weather <FILE>', 'findings: look at this year of weather besides')
     .addOption(new Option('--paper <SIZE>', 'paper').choices(['A4', 'A3', 'A2', 'A1']));
   paperOptions(command)
     .addHelpText('after', HELP)
@@ -125,6 +128,7 @@ export const declareSheet: Declare = (program, screen) => {
       const read = [
         { as: 'the scheme', path },
         { as: 'the limit set', path: options.limits },
+        { as: 'the weather file', path: options.weather },
       ];
       await keepApart('sheet', read, namedSheets(options));
       const { scheme, notes } = await readScheme(path, screen);
@@ -134,8 +138,10 @@ export const declareSheet: Declare = (program, screen) => {
         import('../../core/study/sheet-document.ts'),
       ]);
       const limitSet = set.kind === 'findings' ? await limitsFor(path, scheme, options.limits, screen) : null;
+      const weather = set.kind === 'findings' ? await weatherFor(path, scheme, options.weather, screen) : null;
       const { pulse, done } = progress(screen, 'drawing');
-      const made = await sheetDocument(scheme, buildModel(scheme), set, { drawn: today(), limitSet, notes }, pulse);
+      const context = { drawn: today(), limitSet, notes, weather };
+      const made = await sheetDocument(scheme, buildModel(scheme), set, context, pulse);
       done();
       if (made === null) throw new Error('the drawing was stopped');
       if (!made.ok) throw new Refusal(...made.faults.map((f) => `shadewright sheet: ${f.message}; ${f.cure}.`));

@@ -44,6 +44,14 @@ export const createCheckMemo = (windows = 600): CheckMemo => ({
   surroundings: new WeakMap(),
 });
 
+/** A memory for trials of one room over a year of weather: what a trial leaves alone is not worked out again. @param windows of the room */
+export const trialMemo = (memo: CheckMemo, windows: number): CheckMemo => ({
+  ...yearMemo(memo),
+  // Twelve months a window, and as many of a trial that changes every window.
+  sunlit: new ContentMemo(24 * Math.max(2, windows)),
+  gains: new ContentMemo(24 * Math.max(2, windows)),
+});
+
 /**
  * A memory for one pass over a year of weather: it shares what a window's shade is with the checks' memory, and soon forgets the
  * hours, which would push everything else out.

@@ -23,6 +23,12 @@ function rowsOf(month: Uint8Array, wanted: number): readonly number[] {
   return rows;
 }
 
+/** The year with no rows but those of some months: what looks at a season alone need not run the rest. @param months 1..12 */
+export const onlyMonths = (year: WeatherMonths, months: readonly number[]): WeatherMonths => ({
+  key: `${year.key} ${months.join(',')}`,
+  months: year.months.map((grid, i) => (months.includes(i + 1) ? grid : gridRows(grid, [], grid))),
+});
+
 /** Some rows of a grid, under a key and a name of their own. */
 export function gridRows(grid: DayGrid, rows: readonly number[], as: Pick<DayGrid, 'key' | 'name' | 'date'>): DayGrid {
   const pick = (column: Float64Array): Float64Array => Float64Array.from(rows, (i) => column[i]!);

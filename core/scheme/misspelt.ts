@@ -1,5 +1,19 @@
 import type { Fault } from './fault.ts';
-import { Block, Box, Device, Glass, Receptor, Room, Rooflight, Scheme, SheetSet, Site, Tree, Variant, Window } from './schema.ts';
+import {
+  Block,
+  Box,
+  Device,
+  Glass,
+  Receptor,
+  Room,
+  Rooflight,
+  Scheme,
+  SheetSet,
+  Site,
+  Tree,
+  Variant,
+  Window,
+} from './schema.ts';
 
 /** A field further than this from every known one is taken for an addition of somebody's own, which is kept and not spoken of. */
 const MOST_EDITS = 2;

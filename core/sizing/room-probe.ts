@@ -8,11 +8,12 @@ import { energy_Wh } from '../gain/room-day.ts';
 import type { Finding } from '../limits/finding.ts';
 import { judgeRoom } from '../limits/judge.ts';
 import type { Limit } from '../limits/limit-set.ts';
+import { needsWeather } from '../limits/metric.ts';
 import { daysOf } from '../limits/reading.ts';
 import { applyEdit, type SchemeEdit } from '../scheme/edit.ts';
 import type { Checked, Fault } from '../scheme/fault.ts';
 import type { Scheme, Tree } from '../scheme/schema.ts';
-import type { SkyModel } from '../sky/transpose.ts';
+import { roomReader, type Under } from './room-facts-of.ts';
 
 /** What stands around the room in a trial: everything, or all but the trees or the neighbours. */
 export type Around = 'everything' | 'no-trees' | 'no-neighbours';
@@ -55,7 +56,7 @@ function onlyRoom(scheme: Scheme, roomId: string): Scheme {
 
 /** Days that a limit looks at. */
 export function daysForLimit(scheme: Scheme, limit: Limit): readonly DayOf[] {
-  if (limit.metric === 'glazing-to-floor') return [];
+  if (limit.metric === 'glazing-to-floor' || needsWeather(limit.metric)) return [];
   const season = limit.metric === 'season-gain';
   const wanted = season ? warmMonths(scheme.site.latitude).map(monthKey) : daysOf(limit);
   return checkDayList(scheme, season).filter((d) => wanted.includes(d.key));
@@ -69,12 +70,16 @@ export function roomProbe(
   close: number,
   roomId: string,
   memo: CheckMemo,
-  skyModel: SkyModel = skyModelOf(scheme),
+  under: Under = {},
 ): RoomProbe {
+  const skyModel = under.skyModel ?? skyModelOf(scheme);
   const small = onlyRoom(scheme, roomId);
   const own = small.blocks[0]?.id;
   const noNeighbours = model.solids.filter((s) => s.id === own || s.standing === 'proposed');
-  const limitDays = daysForLimit(scheme, limit);
+  const read = roomReader(scheme, limit, daysForLimit(scheme, limit), small.windows.length, memo, {
+    ...under,
+    skyModel,
+  });
   const winterKey = solsticeKeys(scheme.site.latitude).winter;
   const winterDays = checkDayList(scheme, false).filter((d) => d.key === winterKey);
 
@@ -86,8 +91,8 @@ export function roomProbe(
     const solids = around === 'no-neighbours' ? noNeighbours : model.solids;
     return { ...built, solids, trees: around === 'no-trees' ? NO_TREES : scheme.trees };
   };
-  const runOf = (now: Scheme, days: readonly DayOf[], around: Around) => {
-    const built = modelOf(now, around);
+  const runOf = (now: Scheme, days: readonly DayOf[]) => {
+    const built = modelOf(now, 'everything');
     const run = gainRun(now, built, days, memo, skyModel);
     const [room] = built.rooms;
     if (!room) throw new Error('a probe holds one room');
@@ -96,21 +101,20 @@ export function roomProbe(
   const judge = (edit: SchemeEdit | null, around: Around = 'everything'): Checked<Finding> => {
     const now = edited(edit);
     if (!now.ok) return now;
-    const { run, gain } = runOf(now.value, limitDays, around);
-    const facts = { grids: run.grids, zone: scheme.site.zone, latitude_deg: scheme.site.latitude };
-    const finding = judgeRoom(limit, close, gain, facts);
+    const { facts, days } = read(now.value, modelOf(now.value, around));
+    const finding = judgeRoom(limit, close, facts, days);
     return finding ? { ok: true, value: finding, notes: [] } : { ok: false, faults: [unread(roomId, limit)] };
   };
   return {
     judge,
     gain: (edit, days) => {
       const now = edited(edit);
-      return now.ok ? { ok: true, value: runOf(now.value, days, 'everything').gain, notes: [] } : now;
+      return now.ok ? { ok: true, value: runOf(now.value, days).gain, notes: [] } : now;
     },
     price: (edit) => {
       const now = edited(edit);
       if (!now.ok) return { winter_Whm2: Number.NaN, daylight_m2: Number.NaN };
-      const { run, gain } = runOf(now.value, winterDays, 'everything');
+      const { run, gain } = runOf(now.value, winterDays);
       const [grid] = run.grids;
       const [day] = gain.days;
       return {

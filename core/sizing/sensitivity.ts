@@ -1,12 +1,12 @@
 import { buildModel } from '../form/build-model.ts';
 import type { CheckMemo } from '../gain/gain-memo.ts';
-import { gainRun } from '../gain/gain-run.ts';
 import { skyModelOf } from '../gain/open-light.ts';
 import type { Finding } from '../limits/finding.ts';
 import { judgeRoom } from '../limits/judge.ts';
-import type { LimitSet } from '../limits/limit-set.ts';
+import type { Limit, LimitSet } from '../limits/limit-set.ts';
+import { needsWeather } from '../limits/metric.ts';
 import type { Scheme } from '../scheme/schema.ts';
-import type { SkyModel } from '../sky/transpose.ts';
+import { roomReader, type Under } from './room-facts-of.ts';
 import { daysForLimit } from './room-probe.ts';
 
 /** One input moved a little either way, and where the result goes. */
@@ -163,14 +163,11 @@ const MOVES: readonly Move[] = [
 /** The room's finding in a changed scheme, with only that room built. */
 function resultAt(
   scheme: Scheme,
-  set: LimitSet,
+  limit: Limit,
+  close: number,
   room: string,
-  limitId: string,
-  memo: CheckMemo,
-  model: SkyModel,
+  read: ReturnType<typeof roomReader>,
 ): number {
-  const limit = set.limits.find((l) => l.id === limitId);
-  if (!limit) throw new RangeError(`the limit set holds no limit ${JSON.stringify(limitId)}`);
   const small: Scheme = {
     ...scheme,
     rooms: scheme.rooms.filter((r) => r.id === room),
@@ -178,12 +175,9 @@ function resultAt(
     receptors: [],
     sheets: [],
   };
-  const built = buildModel(small);
-  const run = gainRun(small, built, daysForLimit(small, limit), memo, model);
-  const [form] = built.rooms;
-  if (!form) throw new RangeError(`the scheme holds no room ${JSON.stringify(room)}`);
-  const facts = { grids: run.grids, zone: scheme.site.zone, latitude_deg: scheme.site.latitude };
-  return judgeRoom(limit, set.close, run.roomGain(form), facts)?.value ?? Number.NaN;
+  if (small.rooms.length === 0) throw new RangeError(`the scheme holds no room ${JSON.stringify(room)}`);
+  const { facts, days } = read(small, buildModel(small));
+  return judgeRoom(limit, close, facts, days)?.value ?? Number.NaN;
 }
 
 /**
@@ -196,9 +190,15 @@ export function sensitivity(
   room: string,
   finding: Finding,
   memo: CheckMemo,
-  skyModel: SkyModel = skyModelOf(scheme),
+  under: Under = {},
 ): readonly Bar[] {
-  const at = (s: Scheme): number => resultAt(s, limitSet, room, finding.limit, memo, skyModel);
+  const limit = limitSet.limits.find((l) => l.id === finding.limit);
+  if (!limit) throw new RangeError(`the limit set holds no limit ${JSON.stringify(finding.limit)}`);
+  if (needsWeather(limit.metric) && (under.weather ?? null) === null) return [];
+  const own = scheme.windows.filter((w) => w.room === room).length;
+  const settled = { ...under, skyModel: under.skyModel ?? skyModelOf(scheme) };
+  const read = roomReader(scheme, limit, daysForLimit(scheme, limit), own, memo, settled);
+  const at = (s: Scheme): number => resultAt(s, limit, limitSet.close, room, read);
   const bars = MOVES.map((move): Bar => {
     const low = at(move.change(scheme, room, -1));
     const high = at(move.change(scheme, room, 1));

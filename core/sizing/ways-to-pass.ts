@@ -7,8 +7,8 @@ import { shown } from '../limits/reason.ts';
 import type { SchemeEdit } from '../scheme/edit.ts';
 import { type Fault, faultLine } from '../scheme/fault.ts';
 import type { Scheme, Window } from '../scheme/schema.ts';
-import type { SkyModel } from '../sky/transpose.ts';
 import { areaLever, blindLever, finLever, glassLever, type Lever, overhangLever } from './lever.ts';
+import type { Under } from './room-facts-of.ts';
 import { type RoomProbe, roomProbe } from './room-probe.ts';
 import type { RestsOn, Way, Ways, WayThatFails } from './ways.ts';
 
@@ -25,7 +25,8 @@ type Trial = { readonly lever: Lever; readonly windows: readonly Window[] };
  * themselves say why.
  * @param roomId   of the room
  * @param finding  of the check: which limit is meant
- * @returns        no ways for a finding that is not over, has no limit, or is of a year of weather; what it rests on all the same
+ * @param under    what the check was made with: the ways hold under the same sky and the same year of weather
+ * @returns        no ways for a finding that is not over or has no limit, nor for one of a year of weather that is not given
  * @throws {RangeError} when the set holds no such limit, or the scheme no such room
  */
 export function waysToPass(
@@ -34,15 +35,15 @@ export function waysToPass(
   roomId: string,
   finding: Finding,
   memo: CheckMemo,
-  skyModel?: SkyModel,
+  under: Under = {},
 ): Ways {
   const limit = limitSet.limits.find((l) => l.id === finding.limit);
   if (!limit) throw new RangeError(`the limit set holds no limit ${JSON.stringify(finding.limit)}`);
-  const probe = roomProbe(scheme, buildModel(scheme), limit, limitSet.close, roomId, memo, skyModel);
+  const probe = roomProbe(scheme, buildModel(scheme), limit, limitSet.close, roomId, memo, under);
   const price = probe.price(null);
   const windows = scheme.windows.filter((w) => w.room === roomId);
-  // A trial on a year of weather takes seconds, and a bisection dozens of them: such limits are left to sizing and to hand.
-  const over = finding.verdict === 'over' && !needsWeather(limit.metric);
+  const isRead = !needsWeather(limit.metric) || (under.weather ?? null) !== null;
+  const over = finding.verdict === 'over' && isRead;
   const ways = over ? leversFor(scheme, windows, finding).map((trials) => bestOf(probe, trials)) : [];
   return { finding, price, restsOn: restsOn(probe, null, finding), ways };
 }

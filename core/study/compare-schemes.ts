@@ -6,9 +6,16 @@ import { checkScheme } from './check.ts';
 import { type Comparison, compareVariants, type Variant } from './compare.ts';
 import type { Pulse } from './job.ts';
 import { shadowMoment } from './shadow-moments.ts';
+import type { WeatherInput } from './weather-input.ts';
 
 /** One of the schemes that stand side by side, and what it is judged by. */
-export type SchemeVariant = { readonly name: string; readonly scheme: Scheme; readonly limitSet: LimitSet | null };
+export type SchemeVariant = {
+  readonly name: string;
+  readonly scheme: Scheme;
+  readonly limitSet: LimitSet | null;
+  /** The year of weather that it goes by, where that is at hand. */
+  readonly weather?: WeatherInput | null;
+};
 
 /** When the added shadow is compared: civil dates and wall times of each scheme's own site. */
 export type CompareMoments = { readonly dates: readonly string[]; readonly times: readonly string[] };
@@ -37,14 +44,14 @@ export async function compareSchemes(
   pulse: Pulse,
 ): Promise<Comparison | null> {
   const checked: Variant[] = [];
-  for (const [i, { name, scheme, limitSet }] of variants.entries()) {
+  for (const [i, { name, scheme, limitSet, weather }] of variants.entries()) {
     const result = await checkScheme(
       scheme,
       limitSet,
       [],
       // Each variant is one part of the whole.
       (done, total) => pulse(i + done / Math.max(1, total), variants.length),
-      { memo },
+      { memo, weather: weather ?? null },
     );
     if (result === null) return null;
     checked.push({ name, result, shadows: shadowsOf(scheme, moments) ?? [] });

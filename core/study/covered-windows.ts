@@ -25,7 +25,12 @@ type Boxed = { readonly solid: Solid; readonly bounds: ReturnType<typeof boundsO
 
 const boxed = (solid: Solid): Boxed => ({
   solid,
-  bounds: boundsOf(solid.outline.flatMap(([x, y]): Vec3[] => [[x, y, solid.base_m], [x, y, solid.top_m]])),
+  bounds: boundsOf(
+    solid.outline.flatMap(([x, y]): Vec3[] => [
+      [x, y, solid.base_m],
+      [x, y, solid.top_m],
+    ]),
+  ),
 });
 
 const holds = ({ outline, base_m, top_m }: Solid, [x, y, z]: Vec3): boolean =>

@@ -6,7 +6,7 @@ import type { Fault } from '../scheme/fault.ts';
 import { DRAWN_m } from '../units/tolerance.ts';
 
 /** How much of an area is built over at a stage. */
-export type BuiltOver = { readonly stage: Stage; /** 0..1 */ readonly share: number };
+export type BuiltOver = { readonly stage: Stage /** 0..1 */; readonly share: number };
 
 const note = (code: string, place: string, message: string, cure: string): Fault => ({
   level: 'warning',

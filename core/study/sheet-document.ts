@@ -24,6 +24,7 @@ import { exposurePlanSheet, facadeSheet } from './map-sheets.ts';
 import { isSheetKind, SHEET_KINDS } from './sheet-kinds.ts';
 import { shadowMoment } from './shadow-moments.ts';
 import { waysOfOver } from './ways-of-over.ts';
+import type { WeatherInput } from './weather-input.ts';
 import { windowMask } from './window-mask.ts';
 
 /** What a sheet is told beyond the scheme and its own settings. */
@@ -32,6 +33,8 @@ export type SheetContext = {
   readonly drawn: string;
   /** What findings are judged by; null: metrics without verdicts. Other sheets do not ask for it. */
   readonly limitSet: LimitSet | null;
+  /** The year of weather that findings look at besides the design days; absent or null: none. */
+  readonly weather?: WeatherInput | null;
   /** Warnings of the loader, which findings print. */
   readonly notes?: readonly Fault[];
   /** A check of this very scheme by this very set, so that findings need not run it again. */
@@ -245,9 +248,10 @@ async function light({ scheme, model, set, dates, facts, pulse }: SheetJob): Pro
 async function findings({ scheme, context, facts, pulse }: SheetJob): Promise<Checked<Document> | null> {
   const { limitSet } = context;
   const memo = createCheckMemo(Math.max(600, scheme.windows.length));
-  const result = context.check ?? (await checkScheme(scheme, limitSet, context.notes ?? [], pulse, { memo }));
+  const weather = context.weather ?? null;
+  const result = context.check ?? (await checkScheme(scheme, limitSet, context.notes ?? [], pulse, { memo, weather }));
   if (result === null) return null;
-  const ways = await waysOfOver(result, scheme, memo, pulse);
+  const ways = await waysOfOver(result, scheme, memo, pulse, weather?.months ?? null);
   if (ways === null) return null;
   const { drawn, language } = facts;
   const value = findingsReport(result, scheme, { drawn, ways, ...(language === undefined ? {} : { language }) });

@@ -1,4 +1,5 @@
 import type { CheckMemo } from '../gain/gain-memo.ts';
+import type { WeatherMonths } from '../gain/weather-run.ts';
 import type { Finding } from '../limits/finding.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import type { Ways } from '../sizing/ways.ts';
@@ -15,6 +16,7 @@ export function worstOver(findings: readonly Finding[]): readonly Finding[] {
 /**
  * Ways to pass for the worst finding of every room that is over: what the report prints.
  * @param pulse called between rooms
+ * @param weather the year that the check was given, where it was
  * @returns null when `pulse` said stop; nothing where the check had no limits
  */
 export async function waysOfOver(
@@ -22,13 +24,14 @@ export async function waysOfOver(
   scheme: Scheme,
   memo: CheckMemo,
   pulse: Pulse,
+  weather: WeatherMonths | null = null,
 ): Promise<readonly Ways[] | null> {
   const { limitSet, skyModel } = result;
   const ways: Ways[] = [];
   const worst = limitSet === null ? [] : worstOver(result.findings);
   for (const finding of worst) {
     if (limitSet === null) break;
-    ways.push(waysToPass(scheme, limitSet, finding.room, finding, memo, skyModel));
+    ways.push(waysToPass(scheme, limitSet, finding.room, finding, memo, { skyModel, weather }));
     if ((await pulse(ways.length, worst.length)) === 'stop') return null;
   }
   return ways;

@@ -7,6 +7,7 @@ import { committed } from '../state/document.ts';
 import { Button } from '../ui/button.tsx';
 import { Disc } from '../ui/disc.tsx';
 import { decimalsFor, fixed, signed } from '../ui/format.ts';
+import { weatherAtHand } from '../state/weather-at-hand.ts';
 import { words } from '../words/words.ts';
 import { addFile, isFull, kept, keepNow, LONGEST_NAME, letGo, putOnDesk } from './compare-state.ts';
 import './compare.css';
@@ -61,7 +62,7 @@ function Side({ now }: { now: Scheme }) {
   // The first kept is what the others, and at last the desk, are compared with.
   const variants = [...all, { name: text.now, scheme: now }];
   const key = JSON.stringify(all.map((variant) => variant.name));
-  const study = useStudy(hands.compare, 'compare', { variants }, now, key);
+  const study = useStudy(hands.compare, 'compare', { variants, weather: weatherAtHand.value }, now, key);
   if (study.failure !== null) return <p role="alert">{text.failed(study.failure)}</p>;
   const found = study.value;
   if (found === null || found.variants.length !== variants.length) return <p class="soft">{text.working}</p>;

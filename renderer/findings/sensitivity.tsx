@@ -7,6 +7,7 @@ import { hands } from '../jobs/hands.ts';
 import { useStudy } from '../jobs/use-study.ts';
 import { decimalsFor, fixed } from '../ui/format.ts';
 import { useSize } from '../ui/use-size.ts';
+import { weatherOf } from '../state/weather-at-hand.ts';
 import { words } from '../words/words.ts';
 
 type Props = { readonly finding: Finding; readonly result: CheckResult; readonly scheme: Scheme };
@@ -16,28 +17,29 @@ const text = words.findings.sensitivity;
 /** Which input moves a result most: worked out only once somebody asks. */
 export function SensitivityOf({ finding, result, scheme }: Props) {
   const [isOpen, setOpen] = useState(false);
-  const { limitSet, skyModel } = result;
+  const { limitSet } = result;
   if (limitSet === null) return null;
   return (
     <details class="sensitivity" onToggle={(event) => setOpen(event.currentTarget.open)}>
       <summary>{text.title}</summary>
-      {isOpen ? <Bars finding={finding} scheme={scheme} limitSet={limitSet} skyModel={skyModel} /> : null}
+      {isOpen ? <Bars finding={finding} result={result} scheme={scheme} limitSet={limitSet} /> : null}
     </details>
   );
 }
 
 type BarsProps = {
   readonly finding: Finding;
+  readonly result: CheckResult;
   readonly scheme: Scheme;
   readonly limitSet: NonNullable<CheckResult['limitSet']>;
-  readonly skyModel: CheckResult['skyModel'];
 };
 
 const BAR_px = 9;
 
-function Bars({ finding, scheme, limitSet, skyModel }: BarsProps) {
+function Bars({ finding, result, scheme, limitSet }: BarsProps) {
   const key = `${finding.room}\n${finding.limit}\n${finding.day}\n${finding.value}`;
-  const study = useStudy(hands.sensitivity, 'sensitivity', { limitSet, skyModel, finding }, scheme, key);
+  const ask = { limitSet, skyModel: result.skyModel, weather: weatherOf(result), finding };
+  const study = useStudy(hands.sensitivity, 'sensitivity', ask, scheme, key);
   const { ref, width } = useSize<HTMLDivElement>();
   return (
     <div class={study.isWorking ? 'tornado being-redone' : 'tornado'} ref={ref}>

@@ -7,6 +7,7 @@ import { hands } from '../jobs/hands.ts';
 import { useStudy } from '../jobs/use-study.ts';
 import { undoEdit, undoName } from '../state/document.ts';
 import { performEdit } from '../state/perform-edit.ts';
+import { weatherOf } from '../state/weather-at-hand.ts';
 import { Button } from '../ui/button.tsx';
 import { Disc } from '../ui/disc.tsx';
 import { decimalsFor, fixed, signedPercent } from '../ui/format.ts';
@@ -23,7 +24,12 @@ const text = words.findings.ways;
 export function WaysOf({ finding, result, scheme }: Props) {
   const { limitSet, skyModel } = result;
   const isOver = finding.verdict === 'over' && limitSet !== null;
-  const ask = { limitSet: limitSet as NonNullable<typeof limitSet>, skyModel, finding };
+  const ask = {
+    limitSet: limitSet as NonNullable<typeof limitSet>,
+    skyModel,
+    weather: weatherOf(result),
+    finding,
+  };
   const key = isOver ? `${finding.room}\n${finding.limit}\n${finding.day}\n${finding.value}` : null;
   const study = useStudy(hands.ways, 'ways', ask, scheme, key);
   const isUndoable = applied.value?.room === finding.room && undoName.value === applied.value.text;

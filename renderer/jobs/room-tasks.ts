@@ -1,9 +1,6 @@
-import { textPieces } from '../../app/contract/file-text.ts';
 import { createCheckMemo } from '../../core/gain/gain-memo.ts';
-import type { Checked, Fault } from '../../core/scheme/fault.ts';
-import type { Scheme } from '../../core/scheme/schema.ts';
+import type { Fault } from '../../core/scheme/fault.ts';
 import { schemeHash } from '../../core/scheme/hash.ts';
-import { readWeather } from '../../core/sky/weather/read-weather.ts';
 import { sizingSheet } from '../../core/sheet/sizing-sheet.ts';
 import { ENGINE_VERSION } from '../../core/study/engine.ts';
 import { writeCsv } from '../../core/sheet/csv.ts';
@@ -16,28 +13,13 @@ import { checkScheme } from '../../core/study/check.ts';
 import { compareSchemes } from '../../core/study/compare-schemes.ts';
 import { USUAL_TIMES, usualDates } from '../../core/study/sheet-document.ts';
 import { reportJson } from '../../core/study/report-json.ts';
-import { type WeatherInput, weatherInput } from '../../core/study/weather-input.ts';
 import { waysOfOver } from '../../core/study/ways-of-over.ts';
 import { limitSetOf } from './limit-set.ts';
 import type { Performers } from './performer.ts';
-import type { WeatherAtHand } from './tasks.ts';
+import { Years } from './years.ts';
 
 /** Windows of which a worker remembers the days: an edit then works out that window again and nothing else. */
 const REMEMBERED = 2000;
-
-/** The year of weather read last: a check after an edit need not read the file again. */
-class Years {
-  #key = '';
-  #input: Checked<WeatherInput> | null = null;
-
-  of(scheme: Scheme, { name, bytes, hash, mapping }: WeatherAtHand): Checked<WeatherInput> {
-    const key = JSON.stringify([hash, mapping, scheme.site]);
-    if (this.#input !== null && key === this.#key) return this.#input;
-    this.#key = key;
-    this.#input = weatherInput(scheme, { name, hash }, readWeather(textPieces(bytes), mapping), mapping);
-    return this.#input;
-  }
-}
 
 /** What is done for rooms: the check, why, and what can be done about it. Each worker has a memory of its own. */
 export function roomTasks(): Pick<
@@ -57,10 +39,14 @@ export function roomTasks(): Pick<
         weather: year?.ok ? year.value : null,
       });
     },
-    ways: async ({ limitSet, skyModel, finding }, held) =>
-      waysToPass(held().scheme, limitSet, finding.room, finding, memo, skyModel),
-    sensitivity: async ({ limitSet, skyModel, finding }, held) =>
-      sensitivity(held().scheme, limitSet, finding.room, finding, memo, skyModel),
+    ways: async ({ limitSet, skyModel, weather, finding }, held) => {
+      const under = { skyModel, weather: years.monthsOf(held().scheme, weather) };
+      return waysToPass(held().scheme, limitSet, finding.room, finding, memo, under);
+    },
+    sensitivity: async ({ limitSet, skyModel, weather, finding }, held) => {
+      const under = { skyModel, weather: years.monthsOf(held().scheme, weather) };
+      return sensitivity(held().scheme, limitSet, finding.room, finding, memo, under);
+    },
     sizingSheet: async ({ sweep: swept, target_Wh, drawn }, held) => {
       const { scheme } = held();
       const hash = schemeHash(scheme);
@@ -68,9 +54,13 @@ export function roomTasks(): Pick<
     },
     sweep: async ({ windows, swept, target_Wh }, held) =>
       sweep(held().scheme, windows, swept, memo, target_Wh === null ? {} : { target_Wh }),
-    compare: ({ variants }, held, pulse) =>
+    compare: ({ variants, weather }, held, pulse) =>
       compareSchemes(
-        variants.map((variant) => ({ ...variant, limitSet: limitSetOf(variant.scheme) })),
+        variants.map((variant) => ({
+          ...variant,
+          limitSet: limitSetOf(variant.scheme),
+          weather: years.inputOf(variant.scheme, weather),
+        })),
         { dates: usualDates(held().scheme), times: USUAL_TIMES },
         memo,
         pulse,
@@ -79,9 +69,9 @@ export function roomTasks(): Pick<
       form === 'csv'
         ? writeCsv(findingsTable(result))
         : `${JSON.stringify(reportJson(result, held().scheme, result.limitSet), null, 2)}\n`,
-    report: async ({ result, drawn }, held, pulse) => {
+    report: async ({ result, drawn, weather }, held, pulse) => {
       const { scheme } = held();
-      const ways = await waysOfOver(result, scheme, memo, pulse);
+      const ways = await waysOfOver(result, scheme, memo, pulse, years.monthsOf(scheme, weather));
       return ways === null ? null : { ok: true, value: findingsReport(result, scheme, { drawn, ways }), notes: [] };
     },
   };

@@ -5,12 +5,14 @@ import { shadowMoments } from '../../core/study/shadow-moments.ts';
 import { sheetDocument, USUAL_TIMES, usualDates } from '../../core/study/sheet-document.ts';
 import { limitSetOf } from './limit-set.ts';
 import type { Performers } from './performer.ts';
+import { Years } from './years.ts';
 
 /** What is drawn on sheets, and the tables and shapes that go with them. */
-export const sheetTasks = (): Pick<Performers, 'sheet' | 'shadowFile'> => ({
-  sheet: ({ set, drawn, notes }, held, pulse) => {
+export const sheetTasks = (years = new Years()): Pick<Performers, 'sheet' | 'shadowFile'> => ({
+  sheet: ({ set, drawn, notes, weather }, held, pulse) => {
     const { scheme, model } = held();
-    return sheetDocument(scheme, model, set, { drawn, notes, limitSet: limitSetOf(scheme) }, pulse);
+    const year = years.inputOf(scheme, weather);
+    return sheetDocument(scheme, model, set, { drawn, notes, limitSet: limitSetOf(scheme), weather: year }, pulse);
   },
   shadowFile: async ({ set, form }, held) => {
     const { scheme, model } = held();

@@ -40,6 +40,23 @@ export type WeatherAtHand = {
   readonly mapping: WeatherMapping | null;
 };
 
+/** One finding of a check, and what the check was made with. */
+export type FindingAsk = {
+  readonly limitSet: LimitSet;
+  readonly skyModel: SkyModel;
+  readonly weather: WeatherAtHand | null;
+  readonly finding: Finding;
+};
+
+/** A sheet and what it is told beyond the scheme. */
+export type SheetAsk = {
+  readonly set: SheetSet;
+  readonly drawn: string;
+  readonly notes: readonly Fault[];
+  /** For findings; other sheets do not look at it. */
+  readonly weather: WeatherAtHand | null;
+};
+
 /** Everything that workers do for the desk: what is asked, and what comes back. Tasks that need the scheme are sent it once. */
 export type Tasks = {
   /** Read a scheme file. */
@@ -80,24 +97,27 @@ export type Tasks = {
     answer: { hash: string; facts: Checked<WeatherFacts>; guess: TableGuess | null };
   };
   /** How a room that is over comes within: the smallest change of each lever. */
-  ways: { ask: { limitSet: LimitSet; skyModel: SkyModel; finding: Finding }; answer: Ways };
+  ways: { ask: FindingAsk; answer: Ways };
   /** Which input moves a finding most. */
-  sensitivity: { ask: { limitSet: LimitSet; skyModel: SkyModel; finding: Finding }; answer: readonly Bar[] };
+  sensitivity: { ask: FindingAsk; answer: readonly Bar[] };
   /** The sizing of windows on paper. */
   sizingSheet: { ask: { sweep: Sweep; target_Wh: number | null; drawn: string }; answer: Document };
   /** What windows take in over the depths of a device, or the g of its glass. `target_Wh`: summer gain to come down to. */
   sweep: { ask: { windows: readonly string[]; swept: Swept; target_Wh: number | null }; answer: Sweep };
   /** Variants of the scheme side by side; the first is what the others are compared with. */
   compare: {
-    ask: { variants: readonly { readonly name: string; readonly scheme: Scheme }[] };
+    ask: {
+      variants: readonly { readonly name: string; readonly scheme: Scheme }[];
+      weather: WeatherAtHand | null;
+    };
     answer: Comparison;
   };
   /** The findings as a file: a table, or the report that can be recomputed. */
   findingsFile: { ask: { result: CheckResult; form: 'csv' | 'json' }; answer: string };
   /** The findings on paper. `drawn`: the date of the drawing, YYYY-MM-DD. */
-  report: { ask: { result: CheckResult; drawn: string }; answer: Checked<Document> };
+  report: { ask: { result: CheckResult; drawn: string; weather: WeatherAtHand | null }; answer: Checked<Document> };
   /** Any sheet, from its settings. `drawn`: the date of the drawing, YYYY-MM-DD. */
-  sheet: { ask: { set: SheetSet; drawn: string; notes: readonly Fault[] }; answer: Checked<Document> };
+  sheet: { ask: SheetAsk; answer: Checked<Document> };
   /** The shadows of a study as a table, or as shapes in longitude and latitude. */
   shadowFile: { ask: { set: SheetSet; form: 'csv' | 'geojson' }; answer: string };
 };

@@ -8,6 +8,7 @@ import type { Outcome } from '../jobs/worker-hand.ts';
 import { tell } from '../state/messages.ts';
 import { check, isCheckStale } from '../state/studies.ts';
 import { Menu } from '../ui/menu.tsx';
+import { weatherOf } from '../state/weather-at-hand.ts';
 import { words } from '../words/words.ts';
 import { openSheets } from './sheet-state.ts';
 import { today } from './today.ts';
@@ -50,7 +51,7 @@ export function Exports() {
 async function printReport(): Promise<void> {
   const found = check.peek();
   if (found === null) return;
-  const ask = { result: found.value, drawn: today() };
+  const ask = { result: found.value, drawn: today(), weather: weatherOf(found.value) };
   await print(words.sheets.report, `${stem()} findings.pdf`, hands.clerk.run('report', ask, found.scheme));
 }
 

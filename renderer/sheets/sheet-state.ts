@@ -7,6 +7,7 @@ import { hands } from '../jobs/hands.ts';
 import { committed, file, notes } from '../state/document.ts';
 import { performEdit } from '../state/perform-edit.ts';
 import type { JobState } from '../state/studies.ts';
+import { weatherAtHand } from '../state/weather-at-hand.ts';
 import { words } from '../words/words.ts';
 import { today } from './today.ts';
 
@@ -77,7 +78,7 @@ export async function drawDraft(): Promise<void> {
   if (of === null) return;
   const set = draft.peek();
   job.value = { kind: 'working', done: 0, total: 0 };
-  const ask = { set, drawn: today(), notes: notes.peek() };
+  const ask = { set, drawn: today(), notes: notes.peek(), weather: weatherAtHand.peek() };
   const outcome = await hands.sheets.run('sheet', ask, of, (done, total) => {
     job.value = { kind: 'working', done, total };
   });

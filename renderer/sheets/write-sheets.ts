@@ -5,6 +5,7 @@ import { host } from '../bridge/host.ts';
 import { hands } from '../jobs/hands.ts';
 import { committed, file, notes } from '../state/document.ts';
 import { tell } from '../state/messages.ts';
+import { weatherAtHand } from '../state/weather-at-hand.ts';
 import { words } from '../words/words.ts';
 import { drawn, job, setName, sets } from './sheet-state.ts';
 import { today } from './today.ts';
@@ -67,9 +68,14 @@ export async function writeAll(): Promise<void> {
   let count = 0;
   for (const set of sets.peek()) {
     const what = setName(set);
-    const outcome = await hands.sheets.run('sheet', { set, drawn: today(), notes: notes.peek() }, of, (done, total) => {
-      job.value = { kind: 'working', done, total };
-    });
+    const outcome = await hands.sheets.run(
+      'sheet',
+      { set, drawn: today(), notes: notes.peek(), weather: weatherAtHand.peek() },
+      of,
+      (done, total) => {
+        job.value = { kind: 'working', done, total };
+      },
+    );
     job.value = { kind: 'idle' };
     if (outcome.kind === 'stopped') return tell('news', words.sheets.allStopped);
     if (outcome.kind === 'failed') return tell('failure', words.sheets.failed(what, outcome.message));

@@ -63,7 +63,7 @@ export const findingsWords = {
       daylight: (change: string) => `daylight ${change}`,
       none: 'unchanged',
       notForYear:
-        'Ways are looked for on the design days; for a limit on the weather year try a change by hand or by sizing.',
+        'Ways under a limit on the weather year are looked for while its file is at hand: choose it under Weather.',
       cannot: 'What does not do it alone',
       lever: {
         overhang: 'Overhang',

@@ -21,7 +21,11 @@ const SIZE = ['size', 'scheme.json', '--window', 'W1', '--device', 'overhang'];
 
 describe('a file that was read is not written over', () => {
   test.each([
-    ['the report over its scheme', ['check', 'scheme.json', '--pdf', 'scheme.json'], /--pdf scheme\.json is the scheme/],
+    [
+      'the report over its scheme',
+      ['check', 'scheme.json', '--pdf', 'scheme.json'],
+      /--pdf scheme\.json is the scheme/,
+    ],
     ['the same by another path', ['check', 'scheme.json', '--pdf', './scheme.json'], /--pdf .*is the scheme/],
     ['the same through a link', ['check', 'scheme.json', '--pdf', 'link.json'], /--pdf link\.json is the scheme/],
     [

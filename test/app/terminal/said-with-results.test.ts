@@ -52,7 +52,10 @@ test('several dates are not taken for the span between them', async () => {
   const dates = ['2025-03-20', '2025-03-21', '2025-06-21'];
   const three = await runCommand(['exposure', 'scheme.json', '--on', ...dates], folderWith());
   expect(three.out).toContain('3 days, 2025-03-20, 2025-03-21 and 2025-06-21,');
-  const five = await runCommand(['exposure', 'scheme.json', '--on', ...dates, '2025-08-01', '2025-12-21'], folderWith());
+  const five = await runCommand(
+    ['exposure', 'scheme.json', '--on', ...dates, '2025-08-01', '2025-12-21'],
+    folderWith(),
+  );
   expect(five.out).toContain('5 days from 2025-03-20 to 2025-12-21, not all that lie between,');
   const span = await runCommand(['exposure', 'scheme.json', '--between', '2025-03-20', '2025-03-22'], folderWith());
   expect(span.out).toContain('3 days, 2025-03-20 to 2025-03-22,');
@@ -64,11 +67,14 @@ test('--between takes a comma between its dates, as --on does', async () => {
 });
 
 describe('ground that is built over and is in no mean is spoken of', () => {
-  test.each([[['exposure', 'scheme.json']], [['exposure', 'scheme.json', '--light', '--step', '60']]])('%j', async (words) => {
-    const { err, status } = await runCommand(words, folderWith());
-    expect(status).toBe(0);
-    expect(err).toMatch(/receptors\[0\]: 50 % of area A1 is built over/);
-  });
+  test.each([[['exposure', 'scheme.json']], [['exposure', 'scheme.json', '--light', '--step', '60']]])(
+    '%j',
+    async (words) => {
+      const { err, status } = await runCommand(words, folderWith());
+      expect(status).toBe(0);
+      expect(err).toMatch(/receptors\[0\]: 50 % of area A1 is built over/);
+    },
+  );
 
   test('and not where the area is clear of blocks', async () => {
     const folder = folderWith((s) => {

@@ -1,8 +1,20 @@
-import { copyFileSync, existsSync, readFileSync, writeFileSync } from 'node:fs';
+import { copyFileSync, existsSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join, resolve } from 'node:path';
 import { describe, expect, test } from 'vitest';
+import { createCheckMemo } from '../../../core/gain/gain-memo.ts';
+import type { LimitSet } from '../../../core/limits/limit-set.ts';
+import { applyEdit } from '../../../core/scheme/edit.ts';
 import { bytesHash } from '../../../core/scheme/hash.ts';
+import { loadScheme } from '../../../core/scheme/load.ts';
+import { writeScheme } from '../../../core/scheme/write.ts';
+import { waysToPass } from '../../../core/sizing/ways-to-pass.ts';
+import type { WeatherMapping } from '../../../core/sky/weather/mapping.ts';
+import { readWeather } from '../../../core/sky/weather/read-weather.ts';
+import type { CheckResult } from '../../../core/study/check-result.ts';
+import type { Comparison } from '../../../core/study/compare.ts';
+import { weatherInput } from '../../../core/study/weather-input.ts';
 import { asText, madeYear } from '../../core/sky/weather/made-year.ts';
+import { less } from '../../helpers/less-of.ts';
 import { runCommand } from '../../helpers/run-command.ts';
 import { tempFolder } from '../../helpers/temp-folder.ts';
 
@@ -54,6 +66,59 @@ describe('a check with a year of weather', () => {
     const other = await runCommand(['verify', 'report.json', '--weather', 'other.csv'], folder);
     expect(other.status).toBe(2);
     expect(other.err).toMatch(/not the weather that the report rests on/);
+  });
+
+  test('is looked at by the sheet of findings and the comparison too, and a way to pass under it holds when checked again', async () => {
+    const folder = folderWithWeather();
+    const file = JSON.parse(readFileSync(join(folder, 'yard.scheme.json'), 'utf8'));
+    const limit = {
+      id: 'warm',
+      name: 'warm half of the year',
+      metric: 'warm-gain',
+      comparison: 'at-most',
+      value: 60,
+      unit: 'kWh/m²',
+      source: 'a brief, invented',
+      checked: null,
+    };
+    const set = { format: 'shadewright-limits', version: 1, id: 'brief', name: 'brief', example: true, note: '' };
+    const scheme = { ...file, limits: { ...set, close: 0.1, limits: [limit] } };
+    writeFileSync(join(folder, 'yard.scheme.json'), JSON.stringify(scheme));
+    const report = async (name: string): Promise<CheckResult> =>
+      JSON.parse((await runCommand(['check', name, '--json'], folder)).out);
+    const { findings, skyModel } = await report('yard.scheme.json');
+    const over = findings.find((finding) => finding.verdict === 'over');
+    if (over === undefined) throw new Error('a room is over');
+
+    const loaded = loadScheme(JSON.stringify(scheme));
+    if (!loaded.ok) throw new Error(JSON.stringify(loaded.faults));
+    const table = readWeather(asText(madeYear()), loaded.value.weather?.mapping as WeatherMapping);
+    const year = weatherInput(loaded.value, { name: 'year.csv', hash: '' }, table, null);
+    if (!year.ok) throw new Error(JSON.stringify(year.faults));
+    const under = { skyModel, weather: year.value.months };
+    const limits = scheme.limits as LimitSet;
+    const { ways } = waysToPass(loaded.value, limits, over.room, over, createCheckMemo(), under);
+    const way = ways.find((one) => one.passes && one.lever === 'glass');
+    if (!way?.passes) throw new Error('darker glass passes');
+    const verdicts = await Promise.all(
+      [way.edit, less(way)].map(async (edit, i) => {
+        const next = applyEdit(loaded.value, edit);
+        if (!next.ok) throw new Error(JSON.stringify(next.faults));
+        writeFileSync(join(folder, `then${i}.scheme.json`), writeScheme(next.value));
+        return (await report(`then${i}.scheme.json`)).findings.find((f) => f.room === over.room)?.verdict;
+      }),
+    );
+    expect(verdicts).toEqual(['close', 'over']);
+
+    const beside = await runCommand(['compare', 'yard.scheme.json', 'then0.scheme.json', '--json'], folder);
+    const row = (JSON.parse(beside.out) as Comparison).rows.find((one) => one.room === over.room);
+    expect(row?.values[0]).toBe(over.value);
+    expect(row?.verdicts).toEqual(['over', 'close']);
+    const drawn = await runCommand(['sheet', 'findings', 'yard.scheme.json', '--svg', 'f.svg'], folder);
+    expect(drawn.status, drawn.err).toBe(0);
+    const pages = readdirSync(folder).filter((name) => name.endsWith('.svg'));
+    const said = pages.map((name) => readFileSync(join(folder, name), 'utf8')).join('\n');
+    expect(said).toContain('warm half of the year');
   });
 
   test('says that a file is not beside the scheme and goes on with its design days', async () => {

@@ -85,7 +85,9 @@ describe('a blind', () => {
   ])('of hours that no clock shows is refused: %j', (hours, field) => {
     const { ok, lines } = withBlind(hours);
     expect(ok).toBe(false);
-    expect(lines[0]).toMatch(new RegExp(`^devices\\[0\\]\\.${field}: must be a time of the clock from 00:00 to 24:00, got`));
+    expect(lines[0]).toMatch(
+      new RegExp(`^devices\\[0\\]\\.${field}: must be a time of the clock from 00:00 to 24:00, got`),
+    );
   });
 
   test('of ordinary hours, midnight by either name, is read', () => {

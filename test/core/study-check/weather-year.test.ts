@@ -143,7 +143,7 @@ describe.skipIf(!HERE).each(cases)('a check over the weather year $file', (c) =>
       expect(steps.some((s) => s.value === c.file)).toBe(true);
     }
     const peak = result.findings.find((f) => f.limit === 'year-peak');
-    // A bisection over a year would take minutes: such a limit has no ways, and does not stand still over it.
+    // Without the year there is nothing to try on.
     const memo = createCheckMemo();
     expect(waysToPass(scheme, set, 'R1', peak as NonNullable<typeof peak>, memo).ways).toEqual([]);
     const lines = workingOf(result, scheme, peak as NonNullable<typeof peak>).steps;
