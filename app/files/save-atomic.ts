@@ -12,7 +12,7 @@ async function targetOf(path: string): Promise<string> {
 }
 
 /** The name of a file that was moved into place is on the disk only when its folder is; not every system can flush a folder. */
-async function flushFolder(folder: string): Promise<void> {
+export async function flushFolder(folder: string): Promise<void> {
   if (process.platform === 'win32') return;
   const handle = await open(folder, 'r');
   try {
@@ -38,12 +38,26 @@ async function renameWithPatience(from: string, to: string): Promise<void> {
   }
 }
 
+/** A file written beside its place, flushed, and ready to be moved there. */
+export type Ready = {
+  /** Where it goes; a link is followed. */
+  readonly target: string;
+  /** Whether something is there already. */
+  readonly isThere: boolean;
+  readonly move: () => Promise<void>;
+  /** Takes away what was written beside. */
+  readonly drop: () => Promise<void>;
+};
+
+/** A name beside a file that nothing has yet. */
+export const besideName = (target: string, ending: string): string =>
+  join(dirname(target), `.${basename(target).slice(0, 80)}.${randomBytes(6).toString('hex')}.${ending}`);
+
 /**
- * Writes a file so that a crash at any point leaves the whole old one or the whole new one: beside it, flushed, then renamed.
- * The permissions of a file that was there stay. Something that is no ordinary file is refused rather than replaced.
- * @throws the system's error; the old file is then untouched and nothing is left beside it
+ * Writes a file beside its place. The permissions of one that is there stay; something that is no ordinary file is refused.
+ * @throws the system's error; nothing is left beside it then
  */
-export async function saveAtomic(path: string, bytes: Uint8Array | string): Promise<void> {
+export async function makeReady(path: string, bytes: Uint8Array | string): Promise<Ready> {
   const target = await targetOf(path);
   const before = await stat(target).catch(() => null);
   if (before && !before.isFile()) {
@@ -51,7 +65,8 @@ export async function saveAtomic(path: string, bytes: Uint8Array | string): Prom
       code: before.isDirectory() ? 'EISDIR' : 'EINVAL',
     });
   }
-  const beside = join(dirname(target), `.${basename(target).slice(0, 80)}.${randomBytes(6).toString('hex')}.part`);
+  const beside = besideName(target, 'part');
+  const drop = () => unlink(beside).catch(() => undefined);
   const handle = await open(beside, 'wx', 0o666);
   try {
     try {
@@ -61,10 +76,24 @@ export async function saveAtomic(path: string, bytes: Uint8Array | string): Prom
       await handle.close();
     }
     if (before && process.platform !== 'win32') await chmod(beside, before.mode & 0o7777);
-    await renameWithPatience(beside, target);
   } catch (error) {
-    await unlink(beside).catch(() => undefined);
+    await drop();
     throw error;
   }
-  await flushFolder(dirname(target));
+  return { target, isThere: before !== null, move: () => renameWithPatience(beside, target), drop };
+}
+
+/**
+ * Writes a file so that a crash at any point leaves the whole old one or the whole new one: beside it, flushed, then renamed.
+ * @throws the system's error; the old file is then untouched and nothing is left beside it
+ */
+export async function saveAtomic(path: string, bytes: Uint8Array | string): Promise<void> {
+  const ready = await makeReady(path, bytes);
+  try {
+    await ready.move();
+  } catch (error) {
+    await ready.drop();
+    throw error;
+  }
+  await flushFolder(dirname(ready.target));
 }

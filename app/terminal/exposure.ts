@@ -182,7 +182,11 @@ async function lightOut({ path, scheme, options, screen }: Run): Promise<string>
   const study = await neighbourLight(scheme, buildModel(scheme), ask, pulse);
   done();
   const light = answered(path, study, screen);
-  return options.json ? words.lightJson(light) : options.csv ? words.lightCsv(light) : words.lightText(light, scheme.site.lowSun);
+  return options.json
+    ? words.lightJson(light)
+    : options.csv
+      ? words.lightCsv(light)
+      : words.lightText(light, scheme.site.lowSun);
 }
 
 /** What goes with one kind of question only. */

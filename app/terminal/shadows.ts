@@ -8,11 +8,11 @@ import { keepApart } from './outputs-apart.ts';
 import { clock, dates, whole } from './option-values.ts';
 import { readScheme } from './read-input.ts';
 import { Refusal } from './refusal.ts';
-import { namedSheets, type SheetFiles, writeSheetFiles } from './sheet-files.ts';
+import type { SetFile } from '../files/save-set.ts';
+import { namedSheets, sheetFiles, type SheetFiles, writeSheetFiles } from './sheet-files.ts';
 import { paperOptions, seasonsOption } from './sheet.ts';
 import { shadowText } from './shadow-text.ts';
 import { today } from './today.ts';
-import { writeOutput } from './write-output.ts';
 
 type Options = SheetFiles & {
   readonly on?: readonly string[];
@@ -137,16 +137,19 @@ export const declareShadows: Declare = (program, screen) => {
       }
       const model = buildModel(scheme);
       const moments = shadowMoments(scheme, model, on, times);
-      const files: string[] = [];
+      const files: SetFile[] = [];
+      let pages = 0;
       if (options.pdf !== undefined || options.svg !== undefined || options.png !== undefined) {
-        files.push(...(await writeSheetFiles(await sheetOf(scheme, model, moments, options), options, 'shadows')));
+        const study = await sheetOf(scheme, model, moments, options);
+        pages = study.pages.length;
+        files.push(...(await sheetFiles(study, options, 'shadows')));
       }
       if (options.geojson !== undefined) {
         const { shadowGeoJson } = await import('../../core/sheet/geojson.ts');
-        await writeOutput(options.geojson, `${JSON.stringify(shadowGeoJson(scheme, model, moments))}\n`);
-        files.push(options.geojson);
+        files.push([options.geojson, `${JSON.stringify(shadowGeoJson(scheme, model, moments))}\n`]);
       }
-      for (const file of files) screen.note(`written: ${file}\n`);
+      await writeSheetFiles(files, options, pages, screen);
+      for (const [file] of files) screen.note(`written: ${file}\n`);
       screen.out(shadowText(scheme, moments, options.csv ? 'csv' : options.json ? 'json' : 'text'));
     });
 };

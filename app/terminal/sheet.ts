@@ -7,7 +7,7 @@ import { keepApart } from './outputs-apart.ts';
 import { progress } from './progress.ts';
 import { accepted, readLimits, readScheme } from './read-input.ts';
 import { Refusal } from './refusal.ts';
-import { namedSheets, type SheetFiles, writeSheetFiles } from './sheet-files.ts';
+import { namedSheets, sheetFiles, type SheetFiles, writeSheetFiles } from './sheet-files.ts';
 import { today } from './today.ts';
 import { weatherFor } from './weather-for.ts';
 
@@ -146,7 +146,9 @@ export const declareSheet: Declare = (program, screen) => {
       if (made === null) throw new Error('the drawing was stopped');
       if (!made.ok) throw new Refusal(...made.faults.map((f) => `shadewright sheet: ${f.message}; ${f.cure}.`));
       for (const note of made.notes) screen.note(`note: ${faultLine(note)}.\n`);
-      for (const file of await writeSheetFiles(made.value, options, 'sheet')) screen.out(`written: ${file}\n`);
+      const files = await sheetFiles(made.value, options, 'sheet');
+      await writeSheetFiles(files, options, made.value.pages.length, screen);
+      for (const [file] of files) screen.out(`written: ${file}\n`);
     });
 };
 

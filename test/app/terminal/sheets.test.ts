@@ -1,5 +1,5 @@
 import { spawnSync } from 'node:child_process';
-import { existsSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
+import { existsSync, mkdirSync, readdirSync, readFileSync, rmdirSync, writeFileSync } from 'node:fs';
 import { join, resolve } from 'node:path';
 import { describe, expect, test } from 'vitest';
 import { SHORT_CAUTION } from '../../../core/limits/cautions.ts';
@@ -137,6 +137,25 @@ describe('what cannot be drawn', () => {
       spawnSync('umount', [full]);
     }
   });
+});
+
+test('a set of pages is written whole or not at all, and pages of a longer one before are told', async () => {
+  const folder = tempFolder();
+  const times = ['--from', '09:00', '--to', '12:00', '--every', '180'];
+  const call = ['shadows', YARD, '--on', '2025-03-21,2025-06-21', ...times, '--per-page', '1', '--svg', 'a.svg'];
+  mkdirSync(join(folder, 'a-3.svg'));
+  const refused = await runCommand(call, folder);
+  expect(refused.status).toBe(2);
+  expect(refused.err).toMatch(
+    /a-3\.svg: the file was not written, and none of the others, there is a folder of that name/,
+  );
+  expect(readdirSync(folder)).toEqual(['a-3.svg']);
+  rmdirSync(join(folder, 'a-3.svg'));
+  expect((await runCommand(call, folder)).status).toBe(0);
+  expect(readdirSync(folder).sort()).toEqual(['a-2.svg', 'a-3.svg', 'a-4.svg', 'a.svg']);
+  const shorter = await runCommand([...call.slice(0, 3), '2025-03-21', ...call.slice(4)], folder);
+  expect(shorter.status).toBe(0);
+  expect(shorter.err).toContain('note: a-3.svg is of an earlier, longer set and was left as it is.');
 });
 
 test('with no rooms at all the report says that there is nothing to check', async () => {

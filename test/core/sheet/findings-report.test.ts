@@ -69,7 +69,9 @@ test('low sun is said to be left out of sun hours and of nothing else: gains cou
   const high = { ...scheme, site: { ...scheme.site, lowSun: 10 } };
   const checked = await checkScheme(high, EXAMPLE, [], async () => 'go');
   expect(checked?.findings.map((f) => f.value)).toEqual(result.findings.map((f) => f.value));
-  const text = findingsReport(checked as ReportResult, high, { drawn: '2026-03-02' }).pages.map(said).join(' ');
+  const text = findingsReport(checked as ReportResult, high, { drawn: '2026-03-02' })
+    .pages.map(said)
+    .join(' ');
   expect(text).toContain('at or below 10° it counts in gains, and in no sun hours');
   expect(text).not.toContain('left out at or below');
 });
