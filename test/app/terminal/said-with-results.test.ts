@@ -127,6 +127,11 @@ test('a level of exposure on a day that EN 17037 does not look at is spoken of',
   expect((await runCommand([...words, '2025-12-21'], folderWith())).err).not.toContain('17037');
 });
 
+test('the help of exposure says how its sky differs from that of check', async () => {
+  const { out } = await runCommand(['exposure', '--help'], tempFolder());
+  expect(out).toContain('sky light comes from an even dome, where check spreads it as the scheme says');
+});
+
 test('one of a thing is counted as one', async () => {
   expect((await runCommand(['exposure', 'scheme.json'], folderWith())).out).toContain('Sun on 1 receptor,');
   const light = await runCommand(['exposure', 'scheme.json', '--light', '--step', '60'], folderWith());
