@@ -29,7 +29,9 @@ export function methodPage(flow: Flow, report: Report): void {
     ['true north', `${fixed(site.north, 1)}° clockwise from the top of the drawing`],
     ['Linke turbidity', list(site.linkeTurbidity)],
     ['reflectance of the ground', list(site.groundReflectance)],
-    ...(site.lowSun === undefined ? [] : [['low sun', `at or below ${site.lowSun}° it counts in gains, and in no sun hours`] as const]),
+    ...(site.lowSun === undefined
+      ? []
+      : [['low sun', `at or below ${site.lowSun}° it counts in gains, and in no sun hours`] as const]),
     ['year of the design days', String(scheme.year ?? DEFAULT_YEAR)],
   ]);
   flow.heading('Design days', 30);

@@ -123,7 +123,11 @@ export async function neighbourLight(
     if ((await pulse(i + 1, model.receptors.length)) === 'stop') return null;
   }
   const openHours = run.year.open_min / 60;
-  const notes = [...treeNotes(scheme, ask), ...levelNotes(scheme, date), ...receptorNotes(model, ['before', 'after'], built)];
+  const notes = [
+    ...treeNotes(scheme, ask),
+    ...levelNotes(scheme, date),
+    ...receptorNotes(model, ['before', 'after'], built),
+  ];
   return { ok: true, value: { year, date, hours, openHours, receptors }, notes };
 }
 

@@ -58,7 +58,11 @@ export const MOST_POINTS = 1_000_000;
 /** The most samples of one study: a year by the minute is 525 600. */
 export const MOST_SAMPLES = 600_000;
 
-/** How the numbers come about, for the working. */
+/** How sun hours come about. */
+export const SUN_HOURS_METHOD =
+  'sun sampled at the middle of each step, hidden or not exactly by the solids and devices that stand; crowns of trees let through what each month says';
+
+/** How all the numbers come about, for the working. */
 export const EXPOSURE_METHOD =
   'sun sampled at the middle of each step, hidden or not exactly by the solids and devices that stand; clear sky by Ineichen–Perez 2002; sky light from an even dome past what hides it; ground light from open level ground; crowns of trees let through what each month says';
 

@@ -17,7 +17,7 @@ import type { PlanStage } from '../sheet/plan-figures.ts';
 import type { SheetUnits } from '../sheet/sheet-units.ts';
 import { dateText } from '../sun/civil.ts';
 import { toDegrees } from '../units/angle.ts';
-import { EXPOSURE_METHOD } from './exposure.ts';
+import { SUN_HOURS_METHOD } from './exposure.ts';
 import { exposureMap, type Surface, type SurfaceMap } from './exposure-map.ts';
 import type { Pulse } from './job.ts';
 
@@ -42,13 +42,13 @@ const CELL_mm = 2.5;
 const WALL_SPACING_m = 0.5;
 /** Walls narrower than this are not drawn [m]. */
 const NARROW_m = 0.5;
-/** The most walls of one set of sheets: of a large scheme the blocks are named one by one. */
-const MOST_WALLS = 60;
+/** The most walls of one set of sheets: some hundred pages. Of a scheme larger than that the blocks are named one by one. */
+const MOST_WALLS = 1000;
 
 const QUANTITY = { name: 'sun hours a day', unit: 'h' } as const;
 const hoursADay = (e: Exposure, days: number): Float64Array => e.minutes.map((m) => m / 60 / days);
 const method = (scheme: Scheme, step_min: number): readonly string[] => [
-  `${EXPOSURE_METHOD.replace(/^s/u, 'S')}. Step ${step_min} min, true altitude without refraction${
+  `${SUN_HOURS_METHOD.replace(/^s/u, 'S')}. Step ${step_min} min, true altitude without refraction${
     scheme.site.lowSun ? `, sun above ${scheme.site.lowSun}° only` : ''
   }.`,
 ];
@@ -84,7 +84,12 @@ export async function facadeSheet(
       `${surfaces.length} walls are to be drawn, more than ${MOST_WALLS}`,
       'name one block for the sheet',
     );
-  const made = await exposureMap(scheme, model, { dates: ask.dates, surfaces, spacing_m: WALL_SPACING_m }, pulse);
+  const made = await exposureMap(
+    scheme,
+    model,
+    { dates: ask.dates, surfaces, spacing_m: WALL_SPACING_m, hasDiffuse: false },
+    pulse,
+  );
   if (made === null || !made.ok) return made;
   const names = new Map(model.solids.map((s) => [s.id, s.name || s.id]));
   const maps = made.value.surfaces.flatMap((map): ElevationMap[] => {
@@ -166,7 +171,7 @@ export async function exposurePlanSheet(
     ...standing.map((s) => ({ kind: 'roof' as const, block: s.id })),
   ];
   const spacing_m = Math.max(0.25, (CELL_mm * scale) / 1000);
-  const made = await exposureMap(scheme, model, { dates: ask.dates, surfaces, spacing_m }, pulse);
+  const made = await exposureMap(scheme, model, { dates: ask.dates, surfaces, spacing_m, hasDiffuse: false }, pulse);
   if (made === null || !made.ok) return made;
   const { dates, step_min } = made.value;
   const drawn = exposurePlan({

@@ -103,3 +103,19 @@ test('every sheet set of the demos draws as it stands', async () => {
       expect(await sheetDocument(scheme, modelOf(scheme), set, context, go)).toMatchObject({ ok: true });
   }
 });
+
+test('facades of a proposal of many blocks go on over as many pages as they need, every wall once', async () => {
+  const town = demoScheme('two-hundred-blocks');
+  let proposed = 0;
+  const blocks = town.blocks.map((b) =>
+    b.standing === 'context' && proposed++ < 24 ? { ...b, standing: 'proposed' as const } : b,
+  );
+  const scheme = { ...town, blocks };
+  const made = await sheetDocument(scheme, modelOf(scheme), asked('facades'), context, go);
+  if (!made?.ok) throw new Error(JSON.stringify(made));
+  const text = made.value.pages.map((p) => textOf(p.marks)).join(' ');
+  const walls = blocks.filter((b) => b.standing === 'proposed').reduce((sum, b) => sum + (b.outline?.length ?? 4), 0);
+  expect(walls).toBeGreaterThan(80);
+  expect(text.match(/, wall \d+, faces /gu)).toHaveLength(walls);
+  expect(text).toContain(`page ${made.value.pages.length} of ${made.value.pages.length}`);
+});
