@@ -2,7 +2,7 @@ import { signal } from '@preact/signals';
 import { useLayoutEffect } from 'preact/hooks';
 import { Clock } from './moment/clock.tsx';
 import { Cautions } from './ui/cautions.tsx';
-import { Drawer } from './drawer.tsx';
+import { Drawer, showWeather } from './drawer.tsx';
 import { Findings } from './findings/findings.tsx';
 import { Massing } from './massing/massing.tsx';
 import { PlaceDialog } from './place/place-dialog.tsx';
@@ -18,6 +18,7 @@ import { scheme } from './state/document.ts';
 import { openDropped } from './state/files.ts';
 import { dismissMessage, message } from './state/messages.ts';
 import { MessageLine } from './ui/message-line.tsx';
+import { takeWeather } from './weather/weather-state.ts';
 import { words } from './words/words.ts';
 import './ui/fonts.css';
 import './ui/tokens.css';
@@ -25,6 +26,14 @@ import './ui/base.css';
 import './desk.css';
 
 const isOver = signal(false);
+
+/** A table of hours is the open scheme's weather; anything else is taken for a scheme. */
+async function takeDropped(file: File): Promise<void> {
+  if (scheme.peek() === null || !/\.(csv|tsv|txt)$/i.test(file.name)) return openDropped(file);
+  isSheetsShown.value = false;
+  showWeather();
+  await takeWeather({ name: file.name, bytes: new Uint8Array(await file.arrayBuffer()) });
+}
 
 /** A file may be dropped anywhere on the window. */
 function useDrop(): void {
@@ -43,7 +52,7 @@ function useDrop(): void {
       event.preventDefault();
       isOver.value = false;
       const file = event.dataTransfer?.files[0];
-      if (file !== undefined) void openDropped(file);
+      if (file !== undefined) void takeDropped(file);
     };
     document.addEventListener('dragover', over);
     document.addEventListener('dragleave', leave);

@@ -26,6 +26,11 @@ type Page = Kind | 'year' | (typeof ASIDES)[number]['page'];
 
 const page = signal<Page>('year');
 
+/** Turns the drawer to the weather, as when a file of it was dropped on the window. */
+export const showWeather = (): void => {
+  page.value = 'weather';
+};
+
 const asideOf = (shown: Page) => ASIDES.find((aside) => aside.page === shown);
 
 /** From this width on, the schedules and the year strip have each a place of their own. */

@@ -9,8 +9,11 @@ import { table } from './table.ts';
 /** The disc of the findings, which reads without colour: full over, half close, empty within. */
 const DISC = { over: '●', close: '◐', within: '○' } as const;
 
-const number = (value: number | null): string => (value === null ? '–' : value.toFixed(Math.abs(value) < 100 ? 1 : 0));
-const signed = (value: number | null): string => (value === null ? '–' : `${value > 0 ? '+' : ''}${number(value)}`);
+/** @param like the quantity that sets the decimals: of a value and its margin the limit, so that they add up as they are read */
+const number = (value: number | null, like: number | null = value): string =>
+  value === null ? '–' : value.toFixed(Math.abs(like ?? value) < 100 ? 1 : 0);
+const signed = (value: number | null, like: number | null): string =>
+  value === null ? '–' : `${value > 0 ? '+' : ''}${number(value, like)}`;
 
 /** The worst finding of each room, in the order of the findings. */
 function worstOfRooms(findings: readonly Finding[]): readonly Finding[] {
@@ -35,9 +38,9 @@ function roomTable(findings: readonly Finding[]): string {
       f.verdict === null ? '' : `${DISC[f.verdict]} ${f.verdict}`,
       f.room,
       f.roomName,
-      number(f.value),
+      number(f.value, f.limitValue ?? f.value),
       number(f.limitValue),
-      signed(f.margin),
+      signed(f.margin, f.limitValue),
       f.unit,
       f.metricName,
     ]),

@@ -34,8 +34,13 @@ const percent = (share: number): string => `${Math.round(100 * share)} %`;
 
 /** A quantity to three figures. */
 export function shown(value: number): string {
+  return value.toFixed(decimals(value));
+}
+
+/** Decimals that show three figures of a quantity. */
+function decimals(value: number): number {
   const size = Math.abs(value);
-  return value.toFixed(size >= 100 ? 0 : size >= 10 ? 1 : 2);
+  return size >= 100 ? 0 : size >= 10 ? 1 : 2;
 }
 
 /** How a period that is no day stands in a sentence. */
@@ -50,9 +55,13 @@ function againstLimit({ reading, metric, judged }: ReasonInput): string {
   const { unit } = METRICS[metric];
   if (!judged) return `${shown(reading.value)} ${unit}`;
   const gap = reading.value - judged.value;
-  if (gap === 0) return `${shown(reading.value)} ${unit}, just at the limit`;
+  // All three to the digits of the limit, as in the list of findings, so that they add up as they are read.
+  const alike = (value: number): string => value.toFixed(decimals(judged.value));
+  if (gap === 0) return `${alike(reading.value)} ${unit}, just at the limit`;
   const side = gap > 0 ? 'above' : 'below';
-  return `${shown(reading.value)} ${unit}, ${shown(Math.abs(gap))} ${side} the limit of ${shown(judged.value)}`;
+  if (Number(alike(gap)) === 0)
+    return `${alike(reading.value)} ${unit}, just ${side} the limit of ${alike(judged.value)}`;
+  return `${alike(reading.value)} ${unit}, ${alike(Math.abs(gap))} ${side} the limit of ${alike(judged.value)}`;
 }
 
 /** A day's name as it stands in a sentence: a date as it is, anything else with its article. */

@@ -60,6 +60,15 @@ export function loadScheme(text: string): Checked<Scheme> {
   try {
     parsed = JSON.parse(text.charCodeAt(0) === 0xfeff ? text.slice(1) : text);
   } catch {
+    // What begins with neither a bracket nor a space is no scheme with a slip in it, but another kind of file.
+    if (!/^\uFEFF?\s*[[{]/.test(text))
+      return wholeFile(
+        'not-json',
+        text.trim() === ''
+          ? 'the file is empty, which is not valid JSON'
+          : 'the file is not valid JSON, nor like it: it is another kind of file',
+        'choose a scheme file; its name mostly ends in .scheme.json',
+      );
     const place = lineAndColumn(text, jsonFaultAt(text));
     return {
       ok: false,

@@ -1,19 +1,25 @@
 import type { Finding, Verdict } from '../limits/finding.ts';
 import { fixed } from './numerals.ts';
 
-/** Three figures, as far as they are worth printing. */
-export function figures(value: number): string {
-  const size = Math.abs(value);
+/**
+ * Three figures, as far as they are worth printing.
+ * @param like the quantity whose three figures set the decimals: of a value and its margin the limit, so that they add up as they are read
+ */
+export function figures(value: number, like: number = value): string {
+  const size = Math.abs(like);
   return fixed(value, size >= 99.95 ? 0 : size >= 9.995 ? 1 : 2);
 }
 
 /** A quantity with its unit; a bare ratio stands as a percentage. */
-export const quantity = (value: number, unit: string): string =>
-  unit === '' || unit === '1' ? `${fixed(value * 100, 1)}\u00a0%` : `${figures(value)}\u00a0${unit}`;
+export const quantity = (value: number, unit: string, like: number = value): string =>
+  unit === '' || unit === '1' ? `${fixed(value * 100, 1)}\u00a0%` : `${figures(value, like)}\u00a0${unit}`;
+
+/** What a finding found, to the digits of its limit. */
+export const found = (f: Finding): string => quantity(f.value, f.unit, f.limitValue ?? f.value);
 
 /** A margin with its sign: above the limit is +. */
 export const margin = (f: Finding): string =>
-  f.margin === null ? '–' : `${f.margin > 0 ? '+' : ''}${f.unit === '' ? fixed(f.margin * 100, 1) : figures(f.margin)}`;
+  f.margin === null ? '–' : `${f.margin > 0 ? '+' : ''}${f.unit === '' ? fixed(f.margin * 100, 1) : figures(f.margin, f.limitValue ?? f.margin)}`;
 
 /** `at most 60.0 W/m²`. */
 export const limitWords = (f: Finding): string =>

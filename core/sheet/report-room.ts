@@ -3,7 +3,7 @@ import type { Limit } from '../limits/limit-set.ts';
 import { toDegrees } from '../units/angle.ts';
 import { compassWord } from '../limits/reason.ts';
 import { dayCurve, type CurveLimit } from './day-curve.ts';
-import { counted, figures, limitWords, margin, quantity, verdictWords } from './finding-words.ts';
+import { counted, figures, found, limitWords, margin, verdictWords } from './finding-words.ts';
 import type { Flow } from './flow.ts';
 import { SOFT } from './ink.ts';
 import { READ } from './measure.ts';
@@ -41,7 +41,7 @@ function verdictLine(flow: Flow, f: Finding): void {
   const y = flow.y + READ * 0.75;
   flow.put(verdictDisc(f.verdict, flow.x + 2, y - READ * 0.35), 0);
   const said = f.verdict === null ? '' : `, ${verdictWords[f.verdict]} (${margin(f)})`;
-  flow.say(`${f.metricName}: ${quantity(f.value, f.unit)}, ${limitWords(f)}${said}`, { face: 'semibold', colour }, 6);
+  flow.say(`${f.metricName}: ${found(f)}, ${limitWords(f)}${said}`, { face: 'semibold', colour }, 6);
 }
 
 const minutes = (clock: string): number => Number(clock.slice(0, 2)) * 60 + Number(clock.slice(3, 5));

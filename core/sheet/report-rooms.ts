@@ -1,6 +1,6 @@
 import type { Finding } from '../limits/finding.ts';
 import type { LimitSet } from '../limits/limit-set.ts';
-import { margin, quantity, shortWhen } from './finding-words.ts';
+import { found, margin, quantity, shortWhen } from './finding-words.ts';
 import type { Flow } from './flow.ts';
 import { SOFT } from './ink.ts';
 import { percent } from './numerals.ts';
@@ -23,7 +23,7 @@ const row = (f: Finding, moments: boolean): readonly Cell[] => [
   { disc: f.verdict },
   f.room,
   f.roomName,
-  { text: quantity(f.value, f.unit), verdict: f.verdict },
+  { text: found(f), verdict: f.verdict },
   f.limitValue === null ? '–' : (quantity(f.limitValue, f.unit).split('\u00a0')[0] ?? ''),
   margin(f),
   ...(moments ? [shortWhen(f)] : []),

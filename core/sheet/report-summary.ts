@@ -1,6 +1,6 @@
 import type { Finding, Verdict } from '../limits/finding.ts';
 import type { Mark, Mm } from './drawing.ts';
-import { counted, limitWords, margin, quantity } from './finding-words.ts';
+import { counted, found, limitWords, margin, quantity } from './finding-words.ts';
 import { Flow } from './flow.ts';
 import { HAIR, INK, SOFT } from './ink.ts';
 import { field, leading, line, rect, words } from './marks.ts';
@@ -163,7 +163,7 @@ function drawBars(flow: Flow, findings: readonly Finding[]): void {
       ),
       rect(x, y - 2.4, width, 2.4, { fill: HAIR }),
       rect(x, y - 2.4, width * Math.min(1, share), 2.4, { fill: colour }),
-      cell(words(quantity(f.value, f.unit), x + width + 26, y, { anchor: 'end', colour })),
+      cell(words(found(f), x + width + 26, y, { anchor: 'end', colour })),
       cell(words(f.limitValue === null ? '' : margin(f), x + width + 42, y, { anchor: 'end', colour })),
       cell(
         words(

@@ -1,7 +1,7 @@
 import type { Finding } from '../limits/finding.ts';
 import { workingOf } from '../limits/working.ts';
 import { decadeOf } from '../maths/decade.ts';
-import { quantity } from './finding-words.ts';
+import { found } from './finding-words.ts';
 import type { Flow } from './flow.ts';
 import { SOFT } from './ink.ts';
 import { fixed } from './numerals.ts';
@@ -20,7 +20,7 @@ export function workingPages(flow: Flow, report: Report): void {
 
 function working(flow: Flow, report: Report, f: Finding): void {
   const w = workingOf(report.result, report.scheme, f);
-  flow.say(`Room ${f.room} ${f.roomName}: ${f.metricName}, ${quantity(f.value, f.unit)}`, {
+  flow.say(`Room ${f.room} ${f.roomName}: ${f.metricName}, ${found(f)}`, {
     size: 4.6,
     face: 'semibold',
   });

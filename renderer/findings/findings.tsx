@@ -179,7 +179,7 @@ function RoomItem({ of, result, scheme }: { of: RoomFindings; result: CheckResul
     <li class={['room', worst.verdict ?? 'none', isOpen ? 'open' : '', isChosen ? 'chosen' : ''].join(' ')}>
       <button ref={head} type="button" class="room-head" aria-expanded={isOpen} onClick={press}>
         <Disc verdict={worst.verdict} />
-        <span class="room-name">
+        <span class="room-name" title={`${of.room} ${of.name}`}>
           <span class="room-id">{of.room}</span> {of.name}
         </span>
         <Value finding={worst} />

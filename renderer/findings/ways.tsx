@@ -1,4 +1,5 @@
 import { signal } from '@preact/signals';
+import { useEffect, useRef } from 'preact/hooks';
 import type { Finding } from '../../core/limits/finding.ts';
 import type { Scheme } from '../../core/scheme/schema.ts';
 import type { WayThatFails, WayThatPasses, Ways } from '../../core/sizing/ways.ts';
@@ -33,9 +34,19 @@ export function WaysOf({ finding, result, scheme }: Props) {
   const key = isOver ? `${finding.room}\n${finding.limit}\n${finding.day}\n${finding.value}` : null;
   const study = useStudy(hands.ways, 'ways', ask, scheme, key);
   const isUndoable = applied.value?.room === finding.room && undoName.value === applied.value.text;
+  const section = useRef<HTMLElement>(null);
+  const wasUndoable = useRef(isUndoable);
+  // The button that was pressed is gone, and the room may have moved in the list: who goes by keyboard goes on from the next one.
+  useEffect(() => {
+    const isTurned = wasUndoable.current !== isUndoable;
+    wasUndoable.current = isUndoable;
+    if (document.activeElement !== document.body || !(isUndoable || isTurned)) return;
+    const next = isUndoable ? section.current?.querySelector<HTMLElement>('.applied button') : section.current;
+    next?.focus({ preventScroll: true });
+  }, [isUndoable, finding]);
   if (!isOver && !isUndoable) return null;
   return (
-    <section class="ways" aria-label={text.title}>
+    <section ref={section} class="ways" aria-label={text.title} tabIndex={-1}>
       <h3>{text.title}</h3>
       {isUndoable ? (
         <div class="applied" role="status">

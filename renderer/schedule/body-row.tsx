@@ -13,6 +13,9 @@ export const written = <R extends Row>(column: Column<R>, row: R): string => {
   return typeof value === 'number' ? (column.write?.(value, row) ?? String(value)) : value;
 };
 
+/** Whether a cell may be cut short, so that the whole of it is shown under the pointer. */
+const isLong = (text: string): boolean => text.length > 20;
+
 export const isNumeric = <R extends Row>(column: Column<R>): boolean => column.write !== undefined;
 
 /** The cell that is being changed, and what stands in it at first. */
@@ -58,6 +61,7 @@ export function BodyRow<R extends Row>(props: BodyRowProps<R>) {
             key={column.key}
             data-column={at}
             class={[isNumeric(column) ? 'number' : '', isEdited ? 'edited' : ''].join(' ').trim()}
+            title={isLong(written(column, row)) ? written(column, row) : undefined}
             tabIndex={stop === at ? 0 : -1}
             onFocus={() => props.onCell(at)}
             onDblClick={() => props.onEdit(at)}

@@ -55,6 +55,8 @@ export type CellChange<Row> = {
   readonly head: string;
   readonly edit: CellEdit<Row> | undefined;
   readonly text: string;
+  /** Whether the row is only now being added, as a copy of `row`: what is typed always stands, and nothing typed leaves the copy. */
+  readonly isNew?: boolean;
 };
 
 export type Changes =
@@ -68,20 +70,37 @@ export type Changes =
 export function changesOf<Row>(list: ListName, cells: readonly CellChange<Row>[], name: string): Changes {
   const faults: Fault[] = [];
   const edits: SchemeEdit[] = [];
-  for (const { id, row, head, edit, text } of cells) {
+  const renames: Rename[] = [];
+  for (const { id, row, head, edit, text, isNew = false } of cells) {
     const place = `${id}, ${head}`;
     const before = edit?.typed(row) ?? null;
     if (edit === undefined || before === null) {
       faults.push(fault(place, words.schedule.fixedCell, words.schedule.fixedCure));
       continue;
     }
-    if (before === text.trim()) continue;
+    if (isNew ? text.trim() === '' : before === text.trim()) continue;
     const parsed = parseCell(edit, text);
     if (!parsed.ok) faults.push(fault(place, parsed.why, words.schedule.typeAgain));
+    else if (edit.field === 'id') renames.push({ from: id, to: String(parsed.value) });
     else edits.push({ kind: 'set', list, id, field: edit.field, value: parsed.value });
   }
   if (faults.length > 0) return { ok: false, faults };
+  edits.push(...renamed(list, renames));
   return { ok: true, edit: edits.length === 0 ? null : { kind: 'together', edits, name } };
+}
+
+type Rename = { readonly from: string; readonly to: string };
+
+/**
+ * New ids come after all else, since the other cells of a row are told by the old one. Where one is the old id of another row, as
+ * when names move up by a row, all go by way of names that nothing has.
+ */
+function renamed(list: ListName, renames: readonly Rename[]): readonly SchemeEdit[] {
+  const set = (id: string, value: string): SchemeEdit => ({ kind: 'set', list, id, field: 'id', value });
+  const old = new Set(renames.map(({ from }) => from));
+  if (!renames.some(({ to }) => old.has(to))) return renames.map(({ from, to }) => set(from, to));
+  const between = (i: number): string => `\u0001${i}`;
+  return [...renames.map(({ from }, i) => set(from, between(i))), ...renames.map(({ to }, i) => set(between(i), to))];
 }
 
 const fault = (place: string, message: string, cure: string): Fault => ({

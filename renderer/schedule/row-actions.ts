@@ -87,20 +87,48 @@ export function addCopy(kind: Kind, list: ListName, entry: Loose): void {
   if (scheme !== null) addEntry(kind, list, { ...entry, id: freeId(scheme[list] as readonly Loose[], entry.id) });
 }
 
-/** A copy of a row under an id of its own. A window is put beside the one it is of, so that the two do not cover each other. */
-export function duplicateRow(kind: Kind, list: ListName, id: string): void {
-  const scheme = committed.peek();
-  if (scheme === null) return;
+/**
+ * A copy of an entry under an id of its own. A window is put beside the one it is of, so that the two do not cover each other, and
+ * a block east of all that stands.
+ * @returns null when there is no such entry
+ */
+function copyOf(scheme: Scheme, kind: Kind, list: ListName, id: string): Loose | null {
   const entries = scheme[list] as readonly Loose[];
   const of = entries.find((entry) => entry.id === id);
-  if (of === undefined) return;
+  if (of === undefined) return null;
   const copy: { [field: string]: unknown; id: string } = { ...of, id: freeId(entries, id) };
   if (kind === 'window' && typeof of['from'] === 'number') copy['from'] = of['from'] + Number(of['width']) + 0.3;
   if (kind === 'block' && of['box'] !== undefined) {
     const box = of['box'] as { at: readonly [number, number]; width: number };
     copy['box'] = { ...box, at: [eastOf(scheme), box.at[1]] };
   }
-  addEntry(kind, list, copy);
+  return copy;
+}
+
+/**
+ * Copies of an entry, each beside the one before it, that are not in the scheme yet.
+ * @param ids what they are to be called; null: an id that is free
+ */
+export function copiesOf(kind: Kind, list: ListName, id: string, ids: readonly (string | null)[]): readonly Loose[] {
+  let scheme = committed.peek();
+  let last = id;
+  const copies: Loose[] = [];
+  for (const own of ids) {
+    const copy = scheme === null ? null : copyOf(scheme, kind, list, last);
+    if (scheme === null || copy === null) break;
+    const entry = { ...copy, id: own ?? copy.id };
+    copies.push(entry);
+    scheme = { ...scheme, [list]: [...(scheme[list] as readonly Loose[]), entry] };
+    last = entry.id;
+  }
+  return copies;
+}
+
+/** A copy of a row, as `copyOf` puts it. */
+export function duplicateRow(kind: Kind, list: ListName, id: string): void {
+  const scheme = committed.peek();
+  const copy = scheme === null ? null : copyOf(scheme, kind, list, id);
+  if (copy !== null) addEntry(kind, list, copy);
 }
 
 /** Takes rows out as one step; a block takes its rooms along, a room its windows, as undo says. */

@@ -63,7 +63,7 @@ export function RowTools({ kind, list }: { readonly kind: Kind; readonly list: L
         {text.remove}
       </Button>
       {kind === 'glass' ? <TypicalGlass /> : null}
-      <span class="soft row-hint">{text.hint}</span>
+      <span class="soft row-hint" title={text.hint}>{text.hint}</span>
     </div>
   );
 }

@@ -6,7 +6,7 @@ import { needsWindow, SHEET_KINDS, type SheetKind } from '../../core/study/sheet
 import { seasonDates, USUAL_TIMES, usualDates } from '../../core/study/sheet-document.ts';
 import { isDate } from '../../core/sun/civil.ts';
 import { words } from '../words/words.ts';
-import { change, draft } from './sheet-state.ts';
+import { change, changeKind, draft } from './sheet-state.ts';
 
 const text = words.sheets;
 
@@ -33,7 +33,7 @@ export function SheetSettings({ scheme }: { scheme: Scheme }) {
         label={text.kind}
         value={set.kind}
         options={SHEET_KINDS.map((kind) => [kind, text.kinds[kind]])}
-        onChoose={(kind) => change({ kind })}
+        onChoose={(kind) => changeKind(scheme, kind as SheetKind)}
       />
       {has.includes('window') ? <WindowChoice scheme={scheme} set={set} /> : null}
       {has.includes('block') ? <BlockChoice scheme={scheme} set={set} /> : null}

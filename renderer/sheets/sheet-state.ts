@@ -3,9 +3,11 @@ import type { Fault } from '../../core/scheme/fault.ts';
 import type { Scheme, SheetSet } from '../../core/scheme/schema.ts';
 import { freeId } from '../../core/sizing/lever.ts';
 import type { Document } from '../../core/sheet/drawing.ts';
+import { needsWindow, type SheetKind } from '../../core/study/sheet-kinds.ts';
 import { hands } from '../jobs/hands.ts';
 import { committed, file, notes } from '../state/document.ts';
 import { performEdit } from '../state/perform-edit.ts';
+import { selection } from '../state/selection.ts';
 import type { JobState } from '../state/studies.ts';
 import { weatherAtHand } from '../state/weather-at-hand.ts';
 import { words } from '../words/words.ts';
@@ -47,6 +49,22 @@ export const change = (part: Partial<SheetSet>): void => {
   for (const key of Object.keys(part)) if (next[key] === undefined) delete next[key];
   draft.value = next as SheetSet;
 };
+
+/**
+ * Another kind of sheet. What was chosen for the old one goes: a scale of plans says nothing of a section, and a name that only says
+ * the kind would put the wrong one on the file. A section begins with the window that is selected, or the first.
+ */
+export function changeKind(of: Scheme, kind: SheetKind): void {
+  const { kind: old, name, window } = draft.peek();
+  const chosen = selection.peek();
+  const first = chosen?.kind === 'window' ? chosen.ids[0] : of.windows[0]?.id;
+  change({
+    kind,
+    name: name === words.sheets.kinds[old as SheetKind] ? '' : name,
+    scale: undefined,
+    window: window ?? (needsWindow(kind) ? first : undefined),
+  } as Partial<SheetSet>);
+}
 
 const nameOf = (set: SheetSet): string =>
   set.name || (words.sheets.kinds[set.kind as keyof typeof words.sheets.kinds] ?? set.kind);

@@ -62,10 +62,13 @@ export const isUnknown = (now: WeatherReading): boolean =>
 export async function chooseWeather(): Promise<void> {
   const reply = await host['weather:open'](null);
   if (!reply.ok) return tell('failure', words.weather.failed(reply.message));
-  if (reply.value === null) return;
+  if (reply.value !== null) await takeWeather(reply.value);
+}
+
+/** A file that was chosen or dropped. The one that the scheme goes by is read as the scheme says. */
+export async function takeWeather(file: WeatherFile): Promise<void> {
   const kept = weatherOfScheme.peek();
-  // The file that the scheme goes by is read as the scheme says.
-  await readFile(reply.value, kept?.file === reply.value.name ? kept.mapping : null);
+  await readFile(file, kept?.file === file.name ? kept.mapping : null);
 }
 
 /** Reads the file and, when that goes well, makes it the one that the scheme goes by. */

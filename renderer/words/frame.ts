@@ -25,7 +25,7 @@ export const frameWords = {
     north: (deg: string) => `north ${deg}`,
     revision: (r: string) => `revision ${r}`,
   },
-  drop: 'Drop the scheme file to open it',
+  drop: 'Drop a scheme to open it, or a table of weather for the scheme that is open',
   status: {
     saved: (name: string) => `Saved: ${name}`,
     notSaved: (why: string) => `Not saved: ${why}`,

@@ -26,6 +26,7 @@ export const scheduleWords = {
     editOne: (head: string, id: string) => `${head} of ${id}`,
     editMany: (head: string, count: number) => `${head} of ${count} rows`,
     pasted: (count: number) => (count === 1 ? 'pasted cell' : `${count} pasted cells`),
+    pastedRows: (count: number) => (count === 1 ? 'paste of a new row' : `paste of ${count} new rows`),
     cell: (head: string, id: string) => `${head} of ${id}`,
     add: 'Add',
     duplicate: 'Duplicate',

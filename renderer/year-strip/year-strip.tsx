@@ -13,6 +13,7 @@ import { dayAndMonth, monthNames, percent, signed } from '../ui/format.ts';
 import { Progress } from '../ui/progress.tsx';
 import { useSize } from '../ui/use-size.ts';
 import { words } from '../words/words.ts';
+import { placeLabels } from './place-labels.ts';
 import { clockMoves, type Greys, shareAt, shownHours, stripPixels } from './strip-image.ts';
 import './year-strip.css';
 
@@ -249,8 +250,8 @@ function MonthTicks({ year, x, foot }: { year: SunYear; x: (index: number) => nu
   );
 }
 
-/** Nearer marks than this turn their labels away from one another [px]. */
-const CROWDED_px = 84;
+/** About how wide a letter of a label is [px]. */
+const LETTER_px = 6.8;
 
 /** Solstices, equinoxes and the dates on which the clock is moved. */
 function YearMarks({ year, x, top, foot }: { year: SunYear; x: (index: number) => number; top: number; foot: number }) {
@@ -268,19 +269,25 @@ function YearMarks({ year, x, top, foot }: { year: SunYear; x: (index: number) =
     season(s.decemberSolstice_ms, words.year.solstice),
     ...moves,
   ].sort((a, b) => a.at - b.at);
-  const end = x(year.dates.length);
+  const anchors = placeLabels(
+    marks.map(({ at, text }) => ({ at, width: text.length * LETTER_px })),
+    0,
+    x(year.dates.length) + 8,
+  );
   return (
     <>
       {marks.map(({ at, text, isMove }, i) => {
-        const isBefore = (marks[i + 1]?.at ?? end) - at < CROWDED_px;
-        const isAfter = at - (marks[i - 1]?.at ?? -end) < CROWDED_px;
-        const anchor = isBefore ? 'end' : isAfter ? 'start' : 'middle';
+        const anchor = anchors[i] ?? null;
         return (
           <g key={`${at}${text}`} class={isMove ? 'mark clock-move' : 'mark'}>
             <path d={`M${at} ${top - 4}V${foot}`} />
-            <text x={at + (anchor === 'end' ? 2 : anchor === 'start' ? -2 : 0)} y={top - 7} text-anchor={anchor}>
-              {text}
-            </text>
+            {anchor === null ? (
+              <title>{text}</title>
+            ) : (
+              <text x={at + (anchor === 'end' ? 2 : anchor === 'start' ? -2 : 0)} y={top - 7} text-anchor={anchor}>
+                {text}
+              </text>
+            )}
           </g>
         );
       })}

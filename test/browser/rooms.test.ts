@@ -53,6 +53,9 @@ describe.skipIf(executable === null)('from what is over to what cures it, withou
     await page.getByText('5 over', { exact: true }).waitFor();
     expect(await office.locator('.room-head').textContent()).toContain('close');
     await office.getByText(/^Applied: overhang/).waitFor();
+    // Who goes by keyboard is not thrown back to the top of the window.
+    const focused = (): Promise<string> => page.evaluate(() => document.activeElement?.textContent ?? '');
+    await expect.poll(focused, PATIENT).toBe('Undo');
     await office.getByRole('button', { name: 'Undo', exact: true }).click();
     await page.getByText('6 over', { exact: true }).waitFor();
     expect(await office.locator('.room-head').textContent()).toContain('over');

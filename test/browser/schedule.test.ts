@@ -97,6 +97,8 @@ describe.skipIf(executable === null)('schedules that are changed in place', () =
     const notice = page.getByRole('alert').filter({ hasText: 'nothing is changed' });
     await notice.waitFor();
     expect(await notice.textContent()).toMatch(/windows\[3\]/);
+    // It is told once, where it was typed.
+    expect(await page.locator('.message-line.failure').count()).toBe(0);
     expect(await (await cell('W4', 'width')).textContent()).toBe('4.90');
     await notice.getByRole('button', { name: 'Dismiss' }).click();
   });

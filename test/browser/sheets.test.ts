@@ -74,6 +74,16 @@ describe.skipIf(executable === null)('sheets in the desk', () => {
     expect(await page.getByLabel('Scale', { exact: true }).inputValue()).toBe('');
   });
 
+  test('another kind of sheet leaves the scale and the name of the old one behind, and a section begins with a window', async () => {
+    await page.getByLabel('Scale', { exact: true }).selectOption({ label: '1:1000' });
+    await page.getByLabel('Sheet', { exact: true }).selectOption({ label: 'Section of a window' });
+    await page.locator('.sheet-page text', { hasText: /^Section/ }).first().waitFor();
+    expect(await page.getByLabel('Scale', { exact: true }).inputValue()).toBe('');
+    expect(await page.getByLabel('Name of the set').inputValue()).not.toBe('Shadow study');
+    await page.getByLabel('Sheet', { exact: true }).selectOption({ label: 'Shadow study' });
+    await fresh();
+  });
+
   test('dates and times are typed or taken from a preset; what is none is named', async () => {
     await page.getByLabel('Clock times').fill('25:00');
     await page.keyboard.press('Enter');
@@ -160,7 +170,7 @@ describe.skipIf(executable === null)('sheets in the desk', () => {
     await expect.poll(() => page.locator('.print-root').count(), PATIENT).toBe(0);
   });
 
-  test('every kind of sheet is drawn, and one that lacks a window says so', async () => {
+  test('every kind of sheet is drawn, and a section begins with a window', async () => {
     for (const kind of ['Sun path', 'Light of areas and neighbours', 'Sun on roofs and ground', 'Findings report']) {
       await page.getByLabel('Sheet', { exact: true }).selectOption({ label: kind });
       await page.locator('.sheets-scroller.stale').waitFor({ state: 'detached' });
@@ -168,9 +178,8 @@ describe.skipIf(executable === null)('sheets in the desk', () => {
     }
     expect(await page.locator('.sheet-page').count(), 'a report has many pages').toBeGreaterThan(10);
     await page.getByLabel('Sheet', { exact: true }).selectOption({ label: 'Section of a window' });
-    const notice = page.getByRole('alert').filter({ hasText: 'no window is named' });
-    await notice.getByRole('button', { name: /^Take window/ }).click();
     await fresh();
+    expect(await page.getByLabel('Window', { exact: true }).inputValue()).toBe('W1');
   });
 
   test('a long drawing shows how far it is and can be stopped', async () => {

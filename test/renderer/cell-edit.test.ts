@@ -49,6 +49,40 @@ describe('many cells at once', () => {
     text,
   });
 
+  it('name rows last, and by way of free names where one takes the name of another', () => {
+    const id: CellEdit<R> = { field: 'id', kind: 'text', typed: (of) => of.id };
+    const named = (of: R, text: string) => ({ ...cell(of, text, id), head: 'id' });
+    const fieldsOf = (cells: Parameters<typeof changesOf<R>>[1]) => {
+      const changes = changesOf('windows', cells, 'n');
+      if (!changes.ok || changes.edit?.kind !== 'together') throw new Error('refused');
+      return changes.edit.edits.map((e) => (e.kind === 'set' ? [e.id, e.field, e.value] : []));
+    };
+    expect(fieldsOf([named(row('W1', 1), 'A'), cell(row('W1', 1), '2')])).toEqual([
+      ['W1', 'width', 2],
+      ['W1', 'id', 'A'],
+    ]);
+    // W1 → W2 and W2 → W3: neither may be taken for the other on the way.
+    const moved = fieldsOf([named(row('W1', 1), 'W2'), named(row('W2', 1), 'W3')]);
+    const names = ['W1', 'W2'];
+    for (const [from, , to] of moved) {
+      expect(names.filter((name) => name === from)).toHaveLength(1);
+      names[names.indexOf(from as string)] = to as string;
+    }
+    expect(names).toEqual(['W2', 'W3']);
+  });
+
+  it('of a new row stand even where they are as in the row it copies, and empty ones leave the copy', () => {
+    const changes = changesOf(
+      'windows',
+      [
+        { ...cell(row('W1', 1), '1'), id: 'W9', isNew: true },
+        { ...cell(row('W1', 1), ''), id: 'W9', isNew: true },
+      ],
+      'n',
+    );
+    expect(changes).toMatchObject({ ok: true, edit: { edits: [{ id: 'W9', field: 'width', value: 1 }] } });
+  });
+
   it('are one edit, which leaves alone what stays as it was', () => {
     const changes = changesOf('windows', [cell(row('W1', 1), '2'), cell(row('W2', 3), '3')], 'width of 2 rows');
     expect(changes).toEqual({

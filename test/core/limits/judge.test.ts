@@ -203,6 +203,13 @@ describe('verdicts', () => {
       '60.0 W/m², 10.0 above the limit of 50.0 at 14:00 on the hottest design day, 21 July: 83 % of it through window W1, facing west, 67 % from direct sun and 33 % from the sky; the sun is then on 50 % of its glass.',
     );
   });
+  it('tell value, gap and limit to the same digits, so that they add up as they are read', () => {
+    const against = (value: number) => judgeRoom({ ...limit(), value }, 0.1, facts, days)?.reason;
+    expect(against(7.77)).toMatch(/^60\.00 W\/m², 52\.23 above the limit of 7\.77 at/);
+    expect(against(120)).toMatch(/^60 W\/m², 60 below the limit of 120 at/);
+    expect(against(59.999)).toMatch(/^60\.0 W\/m², just above the limit of 60\.0 at/);
+    expect(against(60)).toMatch(/^60\.0 W\/m², just at the limit at/);
+  });
   it('apply to the uses named and to rooms with a window alone', () => {
     expect(judgeRoom(limit({ uses: ['office'] }), 0.1, facts, days)).toBeNull();
     expect(judgeRoom(limit(), 0.1, roomOf('R0', 10, []), days)).toBeNull();

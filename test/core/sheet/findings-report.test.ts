@@ -91,8 +91,11 @@ test('every finding stands in the tables with its value and margin', () => {
     .join(' ');
   for (const f of result.findings) {
     expect(tables).toContain(`${f.room} ${f.roomName}`);
-    const digits = Math.abs(f.value) >= 99.95 ? 0 : Math.abs(f.value) >= 9.995 ? 1 : 2;
-    expect(tables).toContain(`${f.value.toFixed(digits)} ${f.unit}`);
+    // To the digits of its limit, and its margin as well, so that the row adds up as it is read.
+    const size = Math.abs(f.limitValue ?? f.value);
+    const digits = size >= 99.95 ? 0 : size >= 9.995 ? 1 : 2;
+    const [value, limit] = [f.value.toFixed(digits), f.limitValue?.toFixed(digits) ?? '–'];
+    expect(tables).toContain(`${f.room} ${f.roomName} ${value} ${f.unit} ${limit}`);
   }
 });
 
