@@ -1,8 +1,10 @@
 import type { Solid } from '../form/model.ts';
+import type { Vec3 } from '../plane/vec.ts';
 import type { Tree } from '../scheme/schema.ts';
 import type { WindowShade } from '../shade/sunlit-fraction.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
 import { ContentMemo } from './content-memo.ts';
+import type { GlassLight } from './glass-light.ts';
 import type { FacingLight } from './open-light.ts';
 import type { RoomYear } from './room-year.ts';
 import type { WindowDay, WindowSeen } from './series.ts';
@@ -18,7 +20,10 @@ export type CheckMemo = {
   readonly days: ContentMemo<DayGrid>;
   readonly facings: ContentMemo<FacingLight>;
   readonly shades: ContentMemo<WindowShade>;
-  readonly seen: ContentMemo<WindowSeen>;
+  /** What a window sees, by month; the mean of the year first. Without trees all are one. */
+  readonly seen: ContentMemo<readonly WindowSeen[]>;
+  /** What a glass lets through at the sun’s angle, step by step. */
+  readonly glassed: ContentMemo<GlassLight>;
   /** Sunlit share of a window over a day: the costly part. */
   readonly sunlit: ContentMemo<Float64Array>;
   readonly gains: ContentMemo<WindowDay>;
@@ -26,6 +31,8 @@ export type CheckMemo = {
   readonly years: ContentMemo<RoomYear>;
   /** Hashes of what stands around, by the list of solids. */
   readonly surroundings: WeakMap<readonly Solid[], { readonly trees: readonly Tree[]; readonly key: string }>;
+  /** The sun's direction at every step of a grid, by the north it was drawn for. */
+  readonly suns: WeakMap<DayGrid, { readonly north_rad: number; readonly suns: readonly (Vec3 | null)[] }>;
 };
 
 /** A short name for a content: the same as long as it is remembered, and never one that another content had. */
@@ -37,11 +44,13 @@ export const createCheckMemo = (windows = 600): CheckMemo => ({
   days: new ContentMemo(64),
   facings: new ContentMemo(1000),
   shades: new ContentMemo(windows),
-  seen: new ContentMemo(windows * 2),
+  seen: new ContentMemo(windows),
+  glassed: new ContentMemo(1000),
   sunlit: new ContentMemo(windows * 6),
   gains: new ContentMemo(windows * 6),
   years: new ContentMemo(200),
   surroundings: new WeakMap(),
+  suns: new WeakMap(),
 });
 
 /** A memory for trials of one room over a year of weather: what a trial leaves alone is not worked out again. @param windows of the room */
@@ -62,4 +71,5 @@ export const yearMemo = (memo: CheckMemo): CheckMemo => ({
   shades: memo.shades,
   seen: memo.seen,
   surroundings: memo.surroundings,
+  suns: memo.suns,
 });

@@ -3,7 +3,7 @@ import { solidsAt } from '../form/stands.ts';
 import type { Vec3 } from '../plane/vec.ts';
 import { contentHash } from '../scheme/hash.ts';
 import type { Scheme } from '../scheme/schema.ts';
-import { windowSky } from '../shade/sky-share.ts';
+import { windowSkies } from '../shade/sky-share.ts';
 import { sunVector } from '../shade/sun-vector.ts';
 import { sunlitFraction, type WindowShade, windowShade } from '../shade/sunlit-fraction.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
@@ -11,6 +11,7 @@ import { monthly, monthOf } from '../sky/monthly.ts';
 import type { SkyModel } from '../sky/transpose.ts';
 import { checkDay, type DayOf, dayInput } from './check-days.ts';
 import { type CheckMemo, nameOf } from './gain-memo.ts';
+import { glassCurveName, glassLight } from './glass-light.ts';
 import { openLight, viewOf } from './open-light.ts';
 import { roomDay } from './room-day.ts';
 import type { RoomDay, WindowDay, WindowSeen } from './series.ts';
@@ -19,6 +20,7 @@ import { windowDay } from './window-day.ts';
 
 /** In place of a month, for trees: the mean of the year. */
 const YEAR_MEAN = 0;
+const MONTHS = Array.from({ length: 13 }, (_, month) => month);
 
 /** A room with its windows and what it takes in on each day that was run. */
 export type RoomGain = {
@@ -78,14 +80,19 @@ function sunnyDay(scheme: Scheme, day: DayOf, north_rad: number, memo: CheckMemo
   const key = JSON.stringify(content);
   const found = memo.days.get(`${day.key} ${key}`, () => checkDay(scheme, day));
   const grid = found.name === day.name ? found : { ...found, name: day.name };
-  return { grid, name: nameOf(memo, key), month: monthOf(day.date), suns: sunsOf(grid, north_rad) };
+  return { grid, name: nameOf(memo, key), month: monthOf(day.date), suns: sunsOf(grid, north_rad, memo) };
 }
 
 /** The sun's direction in drawing axes at every step; null below the horizon. */
-const sunsOf = (grid: DayGrid, north_rad: number): readonly (Vec3 | null)[] =>
-  Array.from(grid.altitude_rad, (altitude, i) =>
+function sunsOf(grid: DayGrid, north_rad: number, memo: CheckMemo): readonly (Vec3 | null)[] {
+  const known = memo.suns.get(grid);
+  if (known?.north_rad === north_rad) return known.suns;
+  const suns = Array.from(grid.altitude_rad, (altitude, i) =>
     altitude > 0 ? sunVector(grid.azimuth_rad[i]!, altitude, north_rad) : null,
   );
+  memo.suns.set(grid, { north_rad, suns });
+  return suns;
+}
 
 /** Share of a window's glass in direct sun at every step of a day; 0 with the sun down or behind it. */
 function sunlitOver(shade: WindowShade, day: SunnyDay, cosIncidence: Float64Array): Float64Array {
@@ -135,7 +142,7 @@ export const weatherRun = (
       grid,
       name: nameOf(memo, `${weather.key} ${grid.key}`),
       month: monthOf(grid.date),
-      suns: sunsOf(grid, model.north_rad),
+      suns: sunsOf(grid, model.north_rad, memo),
     })),
     memo,
     skyModel,
@@ -161,11 +168,8 @@ function runOver(
     return key;
   };
   const shadeOf = (w: WindowForm): WindowShade => memo.shades.get(keyOf(w), () => windowShade(w, solids, model.trees));
-  const seenIn = (w: WindowForm, month: number): WindowSeen => {
-    // Without trees every month is the same.
-    const of = model.trees.length === 0 ? YEAR_MEAN : month;
-    return memo.seen.get(`${keyOf(w)} ${of}`, () => windowSky(shadeOf(w), of));
-  };
+  const seenIn = (w: WindowForm, month: number): WindowSeen =>
+    memo.seen.get(keyOf(w), () => windowSkies(shadeOf(w), MONTHS))[month] as WindowSeen;
 
   const ownOf = (w: WindowForm): number =>
     nameOf(memo, JSON.stringify([w.id, w.bearing_deg, w.glass_m2, w.glass, w.blinds]));
@@ -183,7 +187,8 @@ function runOver(
           sunlitOver(shadeOf(w), day, cosIncidence),
         );
         const seen = seenIn(w, day.month);
-        return { ...windowDay(w, day.grid, open, { sunlit, cosIncidence }, viewOf(seen, w.tilt_deg)), seen };
+        const glass = memo.glassed.get(`${facingKey} ${glassCurveName(w.glass)}`, () => glassLight(w.glass, cosIncidence));
+        return { ...windowDay(w, day.grid, open, { sunlit, cosIncidence }, viewOf(seen, w.tilt_deg), glass), seen };
       });
     });
   };

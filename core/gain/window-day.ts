@@ -1,7 +1,7 @@
 import type { WindowForm } from '../form/model.ts';
 import type { DayGrid } from '../sky/day-grid.ts';
 import { blindFactor, blindRules } from './blind-rule.ts';
-import { type AngleCurve, karlssonRoosCurve } from './glass-angle.ts';
+import { type GlassLight, glassLight } from './glass-light.ts';
 import { PARTS, type Part, type WindowDay } from './series.ts';
 
 /** Direct sun on one window over one day: what the shade stage found, one row a step. */
@@ -18,16 +18,8 @@ export type WindowView = { readonly sky: number; readonly horizon: number; reado
 /** Irradiance on the plane of the glass with nothing in front of it, part by part [W/m²], one row a step. */
 export type OpenLight = { readonly [P in Part]: Float64Array };
 
-/** An opening without a pane lets light in alike from all sides. */
-const OPEN: AngleCurve = { at: () => 1, hemispherical: 1 };
-
-/** The angle curve of a glass of the scheme: Karlsson and Roos, since a scheme knows g, panes and coating. */
-export const glassCurve = (glass: WindowForm['glass']): AngleCurve =>
-  glass.panes === 0 ? OPEN : karlssonRoosCurve(glass.panes, glass.coating);
-
-/** Share of the open irradiance of a part that reaches the glass at a step. */
-const reach = (part: Part, sunlit: number, view: WindowView): number =>
-  part === 'beam' || part === 'circumsolar' ? sunlit : view[part];
+/** Parts that come from the sun or close to it, and are shaded with it: the first of `PARTS`. */
+const DIRECT = 2;
 
 /**
  * What one window takes in on one day. Each part is shaded in its own way: beam and circumsolar light by the sunlit share of
@@ -37,6 +29,7 @@ const reach = (part: Part, sunlit: number, view: WindowView): number =>
  * @param open   irradiance on the open plane
  * @param light  direct sun on the glass
  * @param view   what the window sees, as shares of the open view
+ * @param glass  what the glass lets through at each step, where it is known already
  * @returns      watts through the glass; the parts sum to `total_W`
  */
 export function windowDay(
@@ -45,12 +38,12 @@ export function windowDay(
   open: OpenLight,
   light: WindowLight,
   view: WindowView,
+  glass: GlassLight = glassLight(window.glass, light.cosIncidence),
 ): Omit<WindowDay, 'seen'> {
   const n = grid.instant_ms.length;
-  const curve = glassCurve(window.glass);
   const rules = blindRules(window.blinds, window.glass);
   const normal = window.glass_m2 * window.glass.g;
-  const diffuse = normal * curve.hemispherical;
+  const diffuse = normal * glass.hemispherical;
   const { sunlit, cosIncidence } = light;
   const blind = new Float64Array(n).fill(1);
   const total_W = new Float64Array(n);
@@ -61,19 +54,24 @@ export function windowDay(
     horizon: new Float64Array(n),
     ground: new Float64Array(n),
   };
+  // By place in `PARTS` and not by name: this is where a year of weather spends its time.
+  const falling = PARTS.map((part) => open[part]);
+  const through = PARTS.map((part) => parts[part]);
+  const reaching = [0, 0, view.sky, view.horizon, view.ground];
   for (let i = 0; i < n; i++) {
     const lit = sunlit[i]!;
-    const direct = lit > 0 ? normal * curve.at(cosIncidence[i]!) : 0;
+    reaching[0] = lit;
+    reaching[1] = lit;
+    const direct = lit > 0 ? normal * glass.byAngle[i]! : 0;
     let arriving = 0;
-    for (const part of PARTS) arriving += open[part][i]! * reach(part, lit, view);
+    for (let k = 0; k < falling.length; k++) arriving += falling[k]![i]! * reaching[k]!;
     if (arriving === 0) continue;
     const left = rules.length > 0 ? blindFactor(rules, grid.clock_min[i]!, arriving) : 1;
     blind[i] = left;
     let total = 0;
-    for (const part of PARTS) {
-      const through = part === 'beam' || part === 'circumsolar' ? direct : diffuse;
-      const watts = open[part][i]! * reach(part, lit, view) * through * left;
-      parts[part][i] = watts;
+    for (let k = 0; k < falling.length; k++) {
+      const watts = falling[k]![i]! * reaching[k]! * (k < DIRECT ? direct : diffuse) * left;
+      through[k]![i] = watts;
       total += watts;
     }
     // A horizon darker than the dome (Perez) takes from the dome's light, and cannot take more than the window sees of it.

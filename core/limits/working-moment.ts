@@ -1,6 +1,6 @@
 import { openLightAt, viewOf } from '../gain/open-light.ts';
 import { PARTS, type Part, type WindowDay } from '../gain/series.ts';
-import { glassCurve } from '../gain/window-day.ts';
+import { glassCurve } from '../gain/glass-light.ts';
 import * as maths from '../maths/maths.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import type { DayGrid } from '../sky/day-grid.ts';

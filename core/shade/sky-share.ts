@@ -1,6 +1,6 @@
 import * as maths from '../maths/maths.ts';
 import { isUpright } from './hiders.ts';
-import { openShare, type WindowShade } from './sunlit-fraction.ts';
+import { openShares, type WindowShade } from './sunlit-fraction.ts';
 
 /** What a window's glass gets of an even sky, of the horizon and of an even ground, averaged over the glass. */
 export type WindowSky = {
@@ -27,8 +27,19 @@ export type WindowSky = {
  * through what the month says.
  * @param month  1..12 for the crowns of trees; 0, unless given, for the mean of the year
  */
-export function windowSky(shade: WindowShade, month = 0): WindowSky {
-  return isUpright(shade.panel) ? uprightSky(shade, month) : levelSky(shade, month);
+export const windowSky = (shade: WindowShade, month = 0): WindowSky => windowSkies(shade, [month])[0] as WindowSky;
+
+/**
+ * The same for several months: crowns that let through alike are worked out once, and what no crown reaches once for all.
+ * @param months each 1..12, or 0 for the mean of the year
+ * @returns      one for each of them, in their order
+ */
+export function windowSkies(shade: WindowShade, months: readonly number[]): readonly WindowSky[] {
+  const through = months.map((month) => shade.crowns.map((crown) => crown.transmittance[month] ?? 1).join());
+  const distinct = [...new Set(through)];
+  const standIns = distinct.map((t) => months[through.indexOf(t)] as number);
+  const skies = isUpright(shade.panel) ? uprightSkies(shade, standIns) : levelSkies(shade, standIns);
+  return through.map((t) => skies[distinct.indexOf(t)] as WindowSky);
 }
 
 /** Neighbours in Fibonacci's row: how many directions, and the stride of their lattice. */
@@ -42,39 +53,49 @@ type Lattice = { readonly a: Float64Array; readonly b: Float64Array; readonly ov
 /** Light of an overcast sky on open upright glass over that on open level ground: 3/14 + 4/7π. */
 const OVERCAST_UPRIGHT = 3 / 14 + 4 / (7 * Math.PI);
 
-function uprightSky(shade: WindowShade, month: number): WindowSky {
+/** Adds a weighted share for each month. */
+function addTo(sums: Float64Array, shares: Float64Array, weight: number): void {
+  for (let k = 0; k < sums.length; k++) sums[k] = sums[k]! + shares[k]! * weight;
+}
+
+function uprightSkies(shade: WindowShade, months: readonly number[]): readonly WindowSky[] {
   const { a, b, overcast } = UPRIGHT;
   const count = a.length;
-  const seen = { sky: 0, overcast: 0, ground: 0, horizon: 0 };
+  const sums = (): Float64Array => new Float64Array(months.length);
+  const seen = { sky: sums(), overcast: sums(), ground: sums(), horizon: sums() };
+  const open = sums();
   for (let i = 0; i < count; i++) {
-    const open = openShare(shade, a[i]!, b[i]!, month);
-    seen.sky += open;
-    seen.overcast += open * overcast[i]!;
-    seen.ground += openShare(shade, a[i]!, -b[i]!, month);
+    openShares(shade, a[i]!, b[i]!, months, open);
+    addTo(seen.sky, open, 1);
+    addTo(seen.overcast, open, overcast[i]!);
+    openShares(shade, a[i]!, -b[i]!, months, open);
+    addTo(seen.ground, open, 1);
   }
   for (let i = 0; i < HORIZON_DIRECTIONS; i++) {
     // Even in the sine of the angle from the normal, which is what the cosine weighs by.
     const sine = (2 * (i + 0.5)) / HORIZON_DIRECTIONS - 1;
-    seen.horizon += openShare(shade, sine / Math.sqrt(1 - sine * sine), 0, month);
+    openShares(shade, sine / Math.sqrt(1 - sine * sine), 0, months, open);
+    addTo(seen.horizon, open, 1);
   }
-  return {
-    sky: seen.sky / (2 * count),
-    horizon: seen.horizon / HORIZON_DIRECTIONS,
-    ground: seen.ground / (2 * count),
-    overcast: OVERCAST_UPRIGHT * Math.min(1, seen.overcast),
-  };
+  return months.map((_, k) => ({
+    sky: seen.sky[k]! / (2 * count),
+    horizon: seen.horizon[k]! / HORIZON_DIRECTIONS,
+    ground: seen.ground[k]! / (2 * count),
+    overcast: OVERCAST_UPRIGHT * Math.min(1, seen.overcast[k]!),
+  }));
 }
 
-function levelSky(shade: WindowShade, month: number): WindowSky {
+function levelSkies(shade: WindowShade, months: readonly number[]): readonly WindowSky[] {
   const { a, b, overcast } = LEVEL;
-  let sky = 0;
-  let light = 0;
+  const sky = new Float64Array(months.length);
+  const light = new Float64Array(months.length);
+  const open = new Float64Array(months.length);
   for (let i = 0; i < a.length; i++) {
-    const open = openShare(shade, a[i]!, b[i]!, month);
-    sky += open;
-    light += open * overcast[i]!;
+    openShares(shade, a[i]!, b[i]!, months, open);
+    addTo(sky, open, 1);
+    addTo(light, open, overcast[i]!);
   }
-  return { sky: sky / a.length, horizon: 0, ground: 0, overcast: Math.min(1, light) };
+  return months.map((_, k) => ({ sky: sky[k]! / a.length, horizon: 0, ground: 0, overcast: Math.min(1, light[k]!) }));
 }
 
 /**

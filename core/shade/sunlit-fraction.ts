@@ -58,7 +58,7 @@ export function sunlitFraction(shade: WindowShade, sun: Vec3, month?: number): n
   return openShare(shade, a, b, month);
 }
 
-/** Scratch of `openShare`, which calls nothing that could call it again. */
+/** Scratch of `openShare` and `openShares`, which call nothing that could call them again. */
 const patches = new Patches();
 const box: [number, number, number, number] = [0, 0, 0, 0];
 
@@ -68,21 +68,50 @@ const box: [number, number, number, number] = [0, 0, 0, 0];
  * @param month  1..12, 0 for the mean of the year, or undefined to leave trees out
  */
 export function openShare(shade: WindowShade, a: number, b: number, month?: number): number {
-  const { panel, reveal_m, hiders, crowns } = shade;
+  if (!leaveOpen(shade, a, b)) return 0;
+  if (month !== undefined)
+    for (const crown of shade.crowns) {
+      const corners = crownOutline(crown, a, b, box, patches.cutX, patches.cutY);
+      if (corners > 0) patches.cut(corners, crown.transmittance[month] ?? 1);
+    }
+  return shareLeft(shade);
+}
+
+/**
+ * `openShare` for several months at once: what no crown reaches is the same in all of them, and is cut once.
+ * @param months each 1..12, or 0 for the mean of the year
+ * @param out    takes a share for each of the months
+ */
+export function openShares(
+  shade: WindowShade,
+  a: number,
+  b: number,
+  months: readonly number[],
+  out: Float64Array,
+): void {
+  if (!leaveOpen(shade, a, b)) {
+    out.fill(0);
+    return;
+  }
+  const isReached = shade.crowns.some((crown) => crownOutline(crown, a, b, box, patches.cutX, patches.cutY) > 0);
+  if (!isReached) out.fill(shareLeft(shade));
+  else for (let k = 0; k < months.length; k++) out[k] = openShare(shade, a, b, months[k]);
+}
+
+/** Leaves in the scratch what solids and devices leave open of the glass. @returns whether anything is */
+function leaveOpen({ panel, reveal_m, hiders }: WindowShade, a: number, b: number): boolean {
   const { width_m, height_m } = panel;
   box[0] = Math.max(0, reveal_m * a);
   box[1] = Math.max(0, reveal_m * b);
   box[2] = Math.min(width_m, width_m + reveal_m * a);
   box[3] = Math.min(height_m, height_m + reveal_m * b);
-  if (!(box[2] > box[0] && box[3] > box[1])) return 0;
+  if (!(box[2] > box[0] && box[3] > box[1])) return false;
   patches.clear();
   patches.addRectangle(box[0], box[1], box[2], box[3]);
   cutShadows(patches, hiders, a, b);
-  if (patches.count === 0) return 0;
-  if (month !== undefined)
-    for (const crown of crowns) {
-      const corners = crownOutline(crown, a, b, box, patches.cutX, patches.cutY);
-      if (corners > 0) patches.cut(corners, crown.transmittance[month] ?? 1);
-    }
-  return Math.min(1, patches.area() / (width_m * height_m));
+  return patches.count > 0;
 }
+
+/** Share of the glass that the patches in the scratch make up. */
+const shareLeft = ({ panel }: WindowShade): number =>
+  Math.min(1, patches.area() / (panel.width_m * panel.height_m));

@@ -6,8 +6,9 @@ import { Tree } from '../../../core/scheme/schema.ts';
 import { areaShade, areaSunlit } from '../../../core/shade/area-sunlit.ts';
 import { faceShadows } from '../../../core/shade/face-shadow.ts';
 import { shadowChange } from '../../../core/shade/ground-shadow.ts';
-import { windowSky } from '../../../core/shade/sky-share.ts';
-import { sunlitFraction, windowShade } from '../../../core/shade/sunlit-fraction.ts';
+import { windowSkies, windowSky } from '../../../core/shade/sky-share.ts';
+import { openShare, openShares, sunlitFraction, windowShade } from '../../../core/shade/sunlit-fraction.ts';
+import { seedOf } from '../../helpers/property-seed.ts';
 import { house, solid, sunAt } from './small-scheme.ts';
 
 /**
@@ -73,6 +74,28 @@ describe('odd shapes', () => {
       }),
       { numRuns: 600 },
     );
+  });
+  it('and a window sees of twelve months at once what it sees of each by itself, to the last bit', () => {
+    const { window } = house({ devices });
+    const changing = { ...tree, transmittance: tree.transmittance.map((_, m) => (m % 3 === 0 ? 0.7 : m / 20)) };
+    const months = Array.from({ length: 13 }, (_, m) => m);
+    const slope = fc.double({ min: -3, max: 3, noNaN: true });
+    let differing = 0;
+    fc.assert(
+      fc.property(blocks, slope, slope, (solids, a, b) => {
+        const shade = windowShade(window, solids, [changing]);
+        const together = new Float64Array(months.length);
+        openShares(shade, a, b, months, together);
+        expect([...together]).toEqual(months.map((m) => openShare(shade, a, b, m)));
+        if (new Set(together).size > 1) differing++;
+      }),
+      { seed: seedOf(20251201), numRuns: 400 },
+    );
+    // Otherwise the tree stood in nobody's way, and nothing was compared.
+    expect(differing).toBeGreaterThan(0);
+    const shade = windowShade(window, [], [changing]);
+    expect(windowSkies(shade, months)).toEqual(months.map((m) => windowSky(shade, m)));
+    expect(new Set(windowSkies(shade, months).map((seen) => seen.sky)).size).toBeGreaterThan(1);
   });
   it('nor in the sky that windows see', () => {
     const { window } = house({ devices });
