@@ -8,6 +8,7 @@ import { misspelt } from './misspelt.ts';
 import { MOST_NESTED, nestsTooDeep } from './nesting.ts';
 import { sayIssue } from './say-issue.ts';
 import { Scheme } from './schema.ts';
+import { fillShares } from './window-share.ts';
 import { zoneExists } from './zone-exists.ts';
 
 /** The longest file text that is read, in characters. */
@@ -119,9 +120,14 @@ function readScheme(file: Record<string, unknown>): Checked<Scheme> {
   }
   const moved = migrate(file);
   if (!moved.ok) return { ok: false, faults: [moved.fault] };
-  const read = Scheme.safeParse(moved.value);
-  if (!read.success)
-    return { ok: false, faults: atMost(read.error.issues.flatMap((issue) => sayIssue(issue, moved.value))) };
+  const { file: filled, faults: shares } = fillShares(moved.value);
+  const read = Scheme.safeParse(filled);
+  if (!read.success || shares.length > 0) {
+    // A share that makes no width is told once, not as a width that is missing too.
+    const told = (read.error?.issues ?? []).flatMap((issue) => sayIssue(issue, filled));
+    const places = new Set(shares.flatMap(({ place }) => [place, place.replace(/share$/, 'width')]));
+    return { ok: false, faults: atMost([...shares, ...told.filter(({ place }) => !places.has(place))]) };
+  }
   const checked = checkScheme(read.data);
   const notes = misspelt(moved.value as Record<string, unknown>);
   if (!checked.ok) return { ok: false, faults: atMost([...checked.faults, ...notes]) };

@@ -68,6 +68,12 @@ export const Window = z
     from: metres.default(0).describe('from corner n along the wall [m]'),
     sill: metres.default(0).describe('above the floor [m]'),
     width: positive,
+    share: share
+      .gt(0)
+      .optional()
+      .describe(
+        'in place of width: the share of its wall that the opening takes up, in the middle of it unless `from` is given',
+      ),
     height: positive,
     reveal: finite.min(0).max(5).default(0).describe('depth of the glass behind the face of the wall [m]'),
     glass: id,

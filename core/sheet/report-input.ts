@@ -24,6 +24,7 @@ export type ReportRoom = Omit<Worked['rooms'][number], 'windows'> & {
   readonly block: string;
   readonly glass_m2: number;
   readonly glazingToFloor: number;
+  readonly glazingToWall: number | null;
   readonly windows: readonly (WorkedWindow & { readonly g: number })[];
 };
 

@@ -22,7 +22,7 @@ export function roomPage(flow: Flow, report: Report, room: ReportRoom): void {
   flow.turn(`Room ${room.room} ${room.name}`.trim());
   flow.say(`Room ${room.room} ${room.name}`.trim(), { size: 6, face: 'semibold' }, 0, 2);
   flow.say(
-    `${room.use}, ${fixed(room.floor_m2, 1)} m² of floor, ${counted(room.windows.length, 'window', 'windows')}, openings ${percent(room.glazingToFloor)} of the floor`,
+    `${room.use}, ${fixed(room.floor_m2, 1)} m² of floor, ${counted(room.windows.length, 'window', 'windows')}, openings ${percent(room.glazingToFloor)} of the floor${room.glazingToWall === null ? '' : ` and, in walls, ${percent(room.glazingToWall)} of the outside walls`}`,
     { colour: SOFT },
   );
   flow.gap(3);

@@ -42,6 +42,8 @@ export type RoomResult = {
   readonly glass_m2: number;
   /** Opening area of its windows over floor area. */
   readonly glazingToFloor: number;
+  /** Openings in walls over the outside walls of the room, inner side; null where it has none. */
+  readonly glazingToWall: number | null;
   readonly windows: readonly WindowResult[];
   /** What it takes in over the weather year; null where the check had none. */
   readonly year: RoomYear | null;

@@ -1,4 +1,5 @@
 import { buildModel } from '../form/build-model.ts';
+import { glazingToWall } from '../form/glazing-share.ts';
 import type { Model, RoomForm, WindowForm } from '../form/model.ts';
 import { checkDayList } from '../gain/check-days.ts';
 import { type CheckMemo, createCheckMemo, nameOf, yearMemo } from '../gain/gain-memo.ts';
@@ -117,6 +118,7 @@ function roomResult(room: RoomForm, gain: RoomFacts, run: GainRun): RoomResult {
     floor_m2: room.floor_m2,
     glass_m2: gain.windows.reduce((sum, w) => sum + w.glass_m2, 0),
     glazingToFloor: room.floor_m2 > 0 ? openings / room.floor_m2 : 0,
+    glazingToWall: glazingToWall(room, gain.windows),
     windows: gain.windows.map((w) => windowResult(w, run)),
     days: gain.days,
     year: gain.year ?? null,

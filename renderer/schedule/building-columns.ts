@@ -1,6 +1,8 @@
-import type { Model, RoomForm, Solid, WindowForm } from '../../core/form/model.ts';
+import { glazingToWall } from '../../core/form/glazing-share.ts';
+import type { Model, RoomForm, Solid, WallForm, WindowForm } from '../../core/form/model.ts';
 import { signedArea } from '../../core/plane/ring.ts';
 import type { Block, Device, Room, Scheme, Window } from '../../core/scheme/schema.ts';
+import { widthForShare } from '../../core/scheme/window-share.ts';
 import { bearing, fixed, percent } from '../ui/format.ts';
 import { words } from '../words/words.ts';
 import { area, type Column, choice, head, ids, length, named, number, type Schedule, text } from './columns.ts';
@@ -67,22 +69,22 @@ export type RoomRow = {
   readonly id: string;
   readonly room: Room;
   readonly form: RoomForm | undefined;
+  readonly windows: readonly WindowForm[];
   readonly glazing_m2: number;
 };
 
 export function roomSchedule(scheme: Scheme, model: Model): Schedule<RoomRow> {
   const forms = new Map(model.rooms.map((r) => [r.id, r]));
-  const glazing = new Map<string, number>();
-  for (const w of model.windows) glazing.set(w.room, (glazing.get(w.room) ?? 0) + w.opening_m2);
+  const windows = new Map<string, WindowForm[]>(scheme.rooms.map((room) => [room.id, []]));
+  for (const w of model.windows) windows.get(w.room)?.push(w);
   return {
     kind: 'room',
     list: 'rooms',
-    rows: scheme.rooms.map((room) => ({
-      id: room.id,
-      room,
-      form: forms.get(room.id),
-      glazing_m2: glazing.get(room.id) ?? 0,
-    })),
+    rows: scheme.rooms.map((room) => {
+      const own = windows.get(room.id) ?? [];
+      const glazing_m2 = own.reduce((sum, w) => sum + w.opening_m2, 0);
+      return { id: room.id, room, form: forms.get(room.id), windows: own, glazing_m2 };
+    }),
     columns: [
       { key: 'id', head: head.id, value: (r) => r.id, ...text('id', (r: RoomRow) => r.id) },
       { key: 'name', head: head.name, value: (r) => r.room.name, ...text('name', (r: RoomRow) => r.room.name) },
@@ -123,20 +125,42 @@ export function roomSchedule(scheme: Scheme, model: Model): Schedule<RoomRow> {
         value: (r) => (r.form ? r.glazing_m2 / r.form.floor_m2 : null),
         write: percent,
       },
+      {
+        key: 'wallShare',
+        head: head.wallShare,
+        value: (r) => (r.form ? glazingToWall(r.form, r.windows) : null),
+        write: percent,
+      },
     ],
   };
 }
 
-export type WindowRow = { readonly id: string; readonly window: Window; readonly form: WindowForm | undefined };
+export type WindowRow = {
+  readonly id: string;
+  readonly window: Window;
+  readonly form: WindowForm | undefined;
+  /** The side of its wall that the room sees; absent for a rooflight. */
+  readonly wall: WallForm | undefined;
+};
+
+/** A width that is typed as a share of the wall: the window is set in the middle of it. */
+const shareOfWall = ({ window, wall }: WindowRow, share: number): { readonly [field: string]: unknown } | null =>
+  wall === undefined ? null : widthForShare(share, window.height, wall.width_m, wall.height_m);
 
 /** @param sunlit share of each window's glass in direct sun at the moment, by id */
 export function windowSchedule(scheme: Scheme, model: Model, sunlit: ReadonlyMap<string, number>): Schedule<WindowRow> {
   const forms = new Map(model.windows.map((w) => [w.id, w]));
+  const walls = new Map(model.rooms.map((room) => [room.id, room.walls]));
   const devices = new Map(scheme.devices.map((d) => [d.id, d]));
   return {
     kind: 'window',
     list: 'windows',
-    rows: scheme.windows.map((window) => ({ id: window.id, window, form: forms.get(window.id) })),
+    rows: scheme.windows.map((window) => ({
+      id: window.id,
+      window,
+      form: forms.get(window.id),
+      wall: window.wall === undefined ? undefined : walls.get(window.room)?.[window.wall],
+    })),
     columns: [
       { key: 'id', head: head.id, value: (r) => r.id, ...text('id', (r: WindowRow) => r.id) },
       {
@@ -165,8 +189,11 @@ export function windowSchedule(scheme: Scheme, model: Model, sunlit: ReadonlyMap
         value: (r: WindowRow) => r.window[field] ?? null,
         write: length,
         // A rooflight has no place along a wall.
-        ...number(field, (r: WindowRow) =>
-          r.window.wall === undefined && (field === 'from' || field === 'sill') ? null : (r.window[field] ?? null),
+        ...number(
+          field,
+          (r: WindowRow) =>
+            r.window.wall === undefined && (field === 'from' || field === 'sill') ? null : (r.window[field] ?? null),
+          field === 'width' ? shareOfWall : undefined,
         ),
       })),
       {

@@ -14,6 +14,8 @@ export type CellEdit<Row> = {
   readonly options?: readonly (readonly [value: string, text: string])[];
   /** What stands in the cell while it is edited; null: this row has no such field. */
   readonly typed: (row: Row) => string | null;
+  /** What a share that is typed into a cell of lengths comes to, field by field; null: this row has nothing to be a share of. */
+  readonly asShare?: ((row: Row, share: number) => { readonly [field: string]: unknown } | null) | undefined;
 };
 
 export type ParsedCell = { readonly ok: true; readonly value: unknown } | { readonly ok: false; readonly why: string };
@@ -79,6 +81,11 @@ export function changesOf<Row>(list: ListName, cells: readonly CellChange<Row>[]
       continue;
     }
     if (isNew ? text.trim() === '' : before === text.trim()) continue;
+    const share = edit.asShare && text.includes('%') ? edit.asShare(row, readNumber(text) / 100) : null;
+    if (share !== null && Number.isFinite(readNumber(text))) {
+      for (const [field, value] of Object.entries(share)) edits.push({ kind: 'set', list, id, field, value });
+      continue;
+    }
     const parsed = parseCell(edit, text);
     if (!parsed.ok) faults.push(fault(place, parsed.why, words.schedule.typeAgain));
     else if (edit.field === 'id') renames.push({ from: id, to: String(parsed.value) });

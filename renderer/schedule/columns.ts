@@ -37,7 +37,11 @@ export const text = <R>(field: string, of: (row: R) => string): { readonly edit:
   edit: { field, kind: 'text', typed: of },
 });
 /** A number of it; null where the row has none. */
-export const number = <R>(field: string, of: (row: R) => number | null): { readonly edit: CellEdit<R> } => ({
+export const number = <R>(
+  field: string,
+  of: (row: R) => number | null,
+  asShare?: CellEdit<R>['asShare'],
+): { readonly edit: CellEdit<R> } => ({
   edit: {
     field,
     kind: 'number',
@@ -45,6 +49,7 @@ export const number = <R>(field: string, of: (row: R) => number | null): { reado
       const value = of(row);
       return value === null ? null : String(value);
     },
+    asShare,
   },
 });
 /** One of a few, by value and name. */

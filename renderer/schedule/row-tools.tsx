@@ -45,6 +45,7 @@ export function RowTools({ kind, list }: { readonly kind: Kind; readonly list: L
   const lead = chosen.at(-1);
   const needs = addNeeds(scheme, kind);
   const none = lead === undefined;
+  const hint = kind === 'window' ? `${text.shareHint} ${text.hint}` : text.hint;
   return (
     <div class="row-tools">
       <Button off={needs !== null} tip={needs ?? undefined} onPress={() => addRow(kind, list)}>
@@ -63,7 +64,9 @@ export function RowTools({ kind, list }: { readonly kind: Kind; readonly list: L
         {text.remove}
       </Button>
       {kind === 'glass' ? <TypicalGlass /> : null}
-      <span class="soft row-hint" title={text.hint}>{text.hint}</span>
+      <span class="soft row-hint" title={hint}>
+        {hint}
+      </span>
     </div>
   );
 }

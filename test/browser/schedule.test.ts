@@ -103,6 +103,26 @@ describe.skipIf(executable === null)('schedules that are changed in place', () =
     await notice.getByRole('button', { name: 'Dismiss' }).click();
   });
 
+  test('a width in per cent is a share of the wall, in the middle of it', async () => {
+    await (await cell('W4', 'width')).click();
+    await page.keyboard.type('40 %');
+    await page.keyboard.press('Enter');
+    await page.getByRole('button', { name: 'Undo width of W4' }).waitFor();
+    const [wide, high, from] = await Promise.all(
+      ['width', 'height', 'from'].map(async (head) => Number(await (await cell('W4', head)).textContent())),
+    );
+    const file = await saved();
+    const window = file.windows.find((one) => one.id === 'W4');
+    // The wall of room 1.3 is 5.9 m long and 2.7 m high in the file of the demo.
+    const room = file.rooms.find((one) => one.id === '1.3') as unknown as { box: { depth: number }; height: number };
+    const area = room.box.depth * room.height;
+    expect(((window?.width ?? 0) * (window?.height ?? 0)) / area).toBeCloseTo(0.4, 4);
+    expect(wide).toBeCloseTo(window?.width ?? 0, 2);
+    expect((from ?? 0) + (wide ?? 0) / 2).toBeCloseTo(room.box.depth / 2, 1);
+    expect(high).toBe(2.4);
+    await page.keyboard.press('Control+z');
+  });
+
   test('several rows change together, in one step', async () => {
     await row('W14').click();
     await row('W16').click({ modifiers: ['Shift'] });
