@@ -19,7 +19,9 @@ export const found = (f: Finding): string => quantity(f.value, f.unit, f.limitVa
 
 /** A margin with its sign: above the limit is +. */
 export const margin = (f: Finding): string =>
-  f.margin === null ? '–' : `${f.margin > 0 ? '+' : ''}${f.unit === '' ? fixed(f.margin * 100, 1) : figures(f.margin, f.limitValue ?? f.margin)}`;
+  f.margin === null
+    ? '–'
+    : `${f.margin > 0 ? '+' : ''}${f.unit === '' ? fixed(f.margin * 100, 1) : figures(f.margin, f.limitValue ?? f.margin)}`;
 
 /** `at most 60.0 W/m²`. */
 export const limitWords = (f: Finding): string =>

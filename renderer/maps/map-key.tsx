@@ -153,7 +153,7 @@ function MapWork() {
       {why} <Button onPress={() => void workOutMap()}>{press}</Button>
     </p>
   );
-  if (job.kind === 'stopped') return again(words.maps.stopped, words.maps.goOn);
   if (isMapStale.value) return again(words.maps.stale, words.maps.again);
+  if (job.kind === 'stopped') return again(words.maps.stopped, words.maps.goOn);
   return <p class="soft">{words.maps.hint}</p>;
 }

@@ -54,21 +54,24 @@ describe.skipIf(executable === null)('a desk with little room or much in it', ()
   test.each([
     [640, 400],
     [960, 540],
-  ])('at %i × %i, a window enlarged to twice its size, everything is in reach and the massing can be seen', async (width, height) => {
-    await page.setViewportSize({ width, height });
-    expect(await past(page)).toBeLessThanOrEqual(0);
-    const massing = await page.locator('.massing').boundingBox();
-    expect(massing?.height).toBeGreaterThanOrEqual(220);
-    const [tools, key] = [
-      await page.locator('.massing-tools').boundingBox(),
-      await page.locator('.massing .key').first().boundingBox(),
-    ];
-    const apart = (tools?.y ?? 0) + (tools?.height ?? 0) <= (key?.y ?? 0);
-    expect(apart || (tools?.x ?? 0) + (tools?.width ?? 0) <= (key?.x ?? 0)).toBe(true);
-    await page.locator('.room-head').last().scrollIntoViewIfNeeded();
-    expect(await page.locator('.room-head').last().isVisible()).toBe(true);
-    await page.setViewportSize({ width: 1280, height: 800 });
-  });
+  ])(
+    'at %i × %i, a window enlarged to twice its size, everything is in reach and the massing can be seen',
+    async (width, height) => {
+      await page.setViewportSize({ width, height });
+      expect(await past(page)).toBeLessThanOrEqual(0);
+      const massing = await page.locator('.massing').boundingBox();
+      expect(massing?.height).toBeGreaterThanOrEqual(220);
+      const [tools, key] = [
+        await page.locator('.massing-tools').boundingBox(),
+        await page.locator('.massing .key').first().boundingBox(),
+      ];
+      const apart = (tools?.y ?? 0) + (tools?.height ?? 0) <= (key?.y ?? 0);
+      expect(apart || (tools?.x ?? 0) + (tools?.width ?? 0) <= (key?.x ?? 0)).toBe(true);
+      await page.locator('.room-head').last().scrollIntoViewIfNeeded();
+      expect(await page.locator('.room-head').last().isVisible()).toBe(true);
+      await page.setViewportSize({ width: 1280, height: 800 });
+    },
+  );
 
   test('a table of hours that is dropped is the weather of the open scheme; a picture is told to be no scheme', async () => {
     await drop(page, 'year.csv', asText(madeYear()));
@@ -98,9 +101,14 @@ describe.skipIf(executable === null)('a desk with little room or much in it', ()
     const path = await (download as Download).path();
     const { blocks } = JSON.parse(await readFile(path, 'utf8')) as { blocks: { id: string; height: number }[] };
     const pasted = blocks.filter(({ id }) => id.startsWith('X'));
-    expect(pasted.map(({ id, height }) => [id, height])).toEqual(Array.from({ length: 30 }, (_, i) => [`X${i}`, 5.5 + i]));
+    expect(pasted.map(({ id, height }) => [id, height])).toEqual(
+      Array.from({ length: 30 }, (_, i) => [`X${i}`, 5.5 + i]),
+    );
     await page.keyboard.press('Control+z');
-    await page.getByRole('tab', { name: 'Blocks 16' }).or(page.getByRole('tab', { name: 'Blocks16' })).waitFor();
+    await page
+      .getByRole('tab', { name: 'Blocks 16' })
+      .or(page.getByRole('tab', { name: 'Blocks16' }))
+      .waitFor();
     expect(desk.complaints).toEqual([]);
   });
 });

@@ -105,6 +105,16 @@ describe.skipIf(executable === null)('maps, receptors and their year', () => {
     expect(await page.locator('.map-key progress').count()).toBe(1);
     await page.locator('.map-key').getByRole('button', { name: 'Stop' }).click();
     await key().getByText('Stopped before it was done.').waitFor();
+    // An edit says more than that: the pieces that are there are of another scheme.
+    await page
+      .locator('.top-bar')
+      .getByRole('button', { name: /Europe\/London/ })
+      .click();
+    await page.getByLabel('Latitude').fill('50');
+    await button(page, 'Set place').click();
+    await key().getByText('The scheme has changed since.').waitFor();
+    await page.keyboard.press('Control+z');
+    await key().getByText('Stopped before it was done.').waitFor();
     await page.getByLabel('For', { exact: true }).selectOption('day');
     await page.getByLabel('Cells of').selectOption('2');
     await page.getByText('cells of about 2 m').waitFor();

@@ -77,7 +77,10 @@ describe.skipIf(executable === null)('sheets in the desk', () => {
   test('another kind of sheet leaves the scale and the name of the old one behind, and a section begins with a window', async () => {
     await page.getByLabel('Scale', { exact: true }).selectOption({ label: '1:1000' });
     await page.getByLabel('Sheet', { exact: true }).selectOption({ label: 'Section of a window' });
-    await page.locator('.sheet-page text', { hasText: /^Section/ }).first().waitFor();
+    await page
+      .locator('.sheet-page text', { hasText: /^Section/ })
+      .first()
+      .waitFor();
     expect(await page.getByLabel('Scale', { exact: true }).inputValue()).toBe('');
     expect(await page.getByLabel('Name of the set').inputValue()).not.toBe('Shadow study');
     await page.getByLabel('Sheet', { exact: true }).selectOption({ label: 'Shadow study' });

@@ -10,12 +10,34 @@ const span = (at: number, width: number, anchor: string | null): readonly [numbe
 
 describe('labels of marks on a line', () => {
   it('stand over their marks where there is room, and turn away from one another where there is little', () => {
-    expect(placeLabels([{ at: 100, width: 50 }, { at: 300, width: 50 }], 0, 400)).toEqual(['middle', 'middle']);
-    expect(placeLabels([{ at: 180, width: 48 }, { at: 202, width: 68 }], 0, 400)).toEqual(['end', 'start']);
+    expect(
+      placeLabels(
+        [
+          { at: 100, width: 50 },
+          { at: 300, width: 50 },
+        ],
+        0,
+        400,
+      ),
+    ).toEqual(['middle', 'middle']);
+    expect(
+      placeLabels(
+        [
+          { at: 180, width: 48 },
+          { at: 202, width: 68 },
+        ],
+        0,
+        400,
+      ),
+    ).toEqual(['end', 'start']);
   });
 
   it('are left out rather than printed over one another: an equinox, a clock change and a solstice on a narrow strip', () => {
-    const marks = [{ at: 425, width: 48 }, { at: 474, width: 75 }, { at: 535, width: 55 }];
+    const marks = [
+      { at: 425, width: 48 },
+      { at: 474, width: 75 },
+      { at: 535, width: 55 },
+    ];
     const anchors = placeLabels(marks, 0, 578);
     expect(anchors.filter((anchor) => anchor === null).length).toBeLessThanOrEqual(1);
   });
