@@ -71,25 +71,39 @@ export const readBounded = (path: string, most: number): Promise<ReadOutcome> =>
 /** Bytes that are read at a time. */
 const PIECE = 1 << 16;
 
+/** What the taker of a piece threw. It is carried out apart: a decoder's errors, too, bear a code as those of the system do. */
+class Thrown {
+  readonly error: unknown;
+  constructor(error: unknown) {
+    this.error = error;
+  }
+}
+
 /**
  * Hands the bytes of a file on piece by piece, so that it is never held whole.
  * @param take is given each piece, which it must not keep; false: the rest is not wanted
  * @returns what went wrong; null: all went well
+ * @throws what `take` throws
  */
 export async function streamBounded(
   path: string,
   most: number,
   take: (piece: Uint8Array) => boolean,
 ): Promise<ReadFault | null> {
-  const refused = await withFile<null>(path, most, async (file, size) => {
+  const refused = await withFile<Thrown | null>(path, most, async (file, size) => {
     const buffer = Buffer.alloc(PIECE);
     for (let at = 0; ; ) {
       const { bytesRead } = await file.read(buffer, 0, PIECE, at);
       if (bytesRead === 0) return null;
       at += bytesRead;
       if (at > most) return tooLarge(Math.max(size, at), most);
-      if (!take(buffer.subarray(0, bytesRead))) return null;
+      try {
+        if (!take(buffer.subarray(0, bytesRead))) return null;
+      } catch (error) {
+        return new Thrown(error);
+      }
     }
   });
+  if (refused instanceof Thrown) throw refused.error;
   return refused === null ? null : refused.fault;
 }

@@ -121,6 +121,17 @@ describe('a check with a year of weather', () => {
     expect(said).toContain('warm half of the year');
   });
 
+  test('reads a file in the older spelling, whose bytes are no UTF-8', async () => {
+    const folder = folderWithWeather();
+    writeFileSync(
+      join(folder, 'year.csv'),
+      Buffer.from(asText(madeYear()).replace('a made-up', 'M\u00fcll, a made-up'), 'latin1'),
+    );
+    const ran = await runCommand(['check', 'yard.scheme.json', '--weather', 'year.csv'], folder);
+    expect(ran.status, ran.err).toBe(1);
+    expect(ran.out).toMatch(/Weather year: year\.csv, table, a made-up year, 8760 rows of 60 min/);
+  });
+
   test('says that a file is not beside the scheme and goes on with its design days', async () => {
     const folder = tempFolder();
     copyFileSync(join(folderWithWeather(), 'yard.scheme.json'), join(folder, 'yard.scheme.json'));
