@@ -2,6 +2,8 @@ import type { Fault } from '../../scheme/fault.ts';
 
 /** So many faults of a kind are told one by one; a file that is wrong in every row is wrong in one way. */
 const TOLD = 5;
+/** With more errors than this, so much is wrong that reading on serves nobody. */
+export const MOST_FAULTS = 200;
 
 /** Faults of a file, gathered by kind so that ten thousand equal ones become five and a count. */
 export class FaultList {
@@ -22,7 +24,7 @@ export class FaultList {
 
   /** Whether so much is wrong that reading on serves nobody. */
   get hopeless(): boolean {
-    return this.#errors > 200;
+    return this.#errors > MOST_FAULTS;
   }
 
   all(): readonly Fault[] {

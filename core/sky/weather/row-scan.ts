@@ -1,5 +1,5 @@
 import { cellText, cutCells } from './cells.ts';
-import type { FaultList } from './fault-list.ts';
+import { type FaultList, MOST_FAULTS } from './fault-list.ts';
 import type { RowPlan } from './plan.ts';
 import { stampInstant_ms } from './time-form.ts';
 
@@ -35,7 +35,8 @@ export class RowScan {
   #line = new Int32Array(FIRST_ROWS);
   #values: Float64Array[];
   #rows = 0;
-  #blank: number[] = [];
+  /** Blank lines that are faults if a row follows: each is one, so more than make the file hopeless need not be held. */
+  #blank: { readonly line: string; readonly number: number }[] = [];
   #short: Short | null = null;
   /** The rows are over: notes follow, or so much is wrong that reading on serves nobody. */
   #isOver = false;
@@ -54,16 +55,21 @@ export class RowScan {
     return !this.#isOver || this.#short !== null;
   }
 
+  /** How many blank lines are held until it is known what they mean. */
+  get held(): number {
+    return this.#blank.length;
+  }
+
   take(line: string, number: number): void {
     if (isBlank(line)) {
       if (this.#plan.endsAtBlank) this.#isOver = true;
-      else if (!this.#isOver) this.#blank.push(number);
+      else if (!this.#isOver && this.#blank.length <= MOST_FAULTS) this.#blank.push({ line, number });
       return;
     }
     this.#tellShort(false);
-    // Blank lines between rows are rows without cells.
+    // Blank lines between rows are rows with nothing in their cells.
     for (const blank of this.#blank) {
-      this.#keep('', blank);
+      this.#keep(blank.line, blank.number);
       this.#tellShort(false);
     }
     this.#blank = [];

@@ -1,7 +1,7 @@
 import type { Checked, Fault } from '../../scheme/fault.ts';
 import { FaultList } from './fault-list.ts';
 import { isJrc, JRC_HEAD_LINES, jrcPlan, mayBeJrc } from './jrc.ts';
-import { LineCutter, LONGEST_LINE } from './line-cutter.ts';
+import { type Line, LineCutter, LONGEST_LINE } from './line-cutter.ts';
 import { mappedPlan } from './mapped.ts';
 import type { WeatherMapping } from './mapping.ts';
 import type { RowPlan } from './plan.ts';
@@ -28,7 +28,7 @@ type Table = {
  */
 export class WeatherReader {
   readonly #mapping: WeatherMapping | null;
-  readonly #cutter = new LineCutter((line, number) => this.#take(line, number));
+  readonly #cutter = new LineCutter((line) => this.#take(line));
   /** Lines so far, until the head is understood. */
   #head: string[] = [];
   #table: Table | null = null;
@@ -43,15 +43,13 @@ export class WeatherReader {
   push(piece: string): boolean {
     if (!this.#wantsMore) return false;
     this.#cutter.push(piece);
-    if (this.#cutter.characters > LONGEST)
-      this.#refuse('too-long', '', `more than ${LONGEST / 1e6} million characters, more than a year of minutes needs`);
-    else if (this.#cutter.isEndless)
-      this.#refuse(
-        'too-long',
-        `line ${this.#cutter.at}`,
-        `a line of more than ${LONGEST_LINE} characters is no row of a table`,
-      );
+    if (this.#wantsMore) this.#refuseTooLong(this.#cutter.rest);
     return this.#wantsMore;
+  }
+
+  /** Whether the file is refused for its length: what follows, and what the rest of its bytes are, matters to nobody. */
+  get isTooLong(): boolean {
+    return (this.#refused ?? this.#table?.faults.all() ?? []).some((fault) => fault.code === 'too-long');
   }
 
   /** @returns the year with warnings, or every fault by line, with its cure */
@@ -68,15 +66,27 @@ export class WeatherReader {
     return this.#refused === null && (this.#table === null || this.#table.scan.wantsMore);
   }
 
-  #refuse(code: string, place: string, message: string): void {
-    this.#refused = [{ level: 'error', code, place, message, cure: 'give one year' }];
+  /**
+   * Refuses the file when a line of it, whole or not, is too long to be one or goes on beyond the most that is read. Of the two it
+   * tells the one that is met first, so that the outcome does not depend on where the text is cut.
+   */
+  #refuseTooLong({ text, number, before }: Line): void {
+    const left = LONGEST - before;
+    if (text.length <= Math.min(left, LONGEST_LINE)) return;
+    const isEndless = left >= LONGEST_LINE;
+    const place = isEndless ? `line ${number}` : '';
+    const message = isEndless
+      ? `a line of more than ${LONGEST_LINE} characters is no row of a table`
+      : `more than ${LONGEST / 1e6} million characters, more than a year of minutes needs`;
+    this.#refused = [{ level: 'error', code: 'too-long', place, message, cure: 'give one year' }];
   }
 
-  #take(line: string, number: number): void {
-    if (this.#refused !== null) return;
-    if (this.#table !== null) this.#table.scan.take(line, number);
+  #take(line: Line): void {
+    if (this.#wantsMore) this.#refuseTooLong(line);
+    if (!this.#wantsMore) return;
+    if (this.#table !== null) this.#table.scan.take(line.text, line.number);
     else {
-      this.#head.push(line);
+      this.#head.push(line.text);
       if (this.#isHeadWhole()) this.#understand();
     }
   }

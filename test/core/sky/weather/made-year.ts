@@ -25,7 +25,31 @@ export function madeYear(year = 2023): Row[] {
 export const asText = (rows: readonly Row[], head = HEAD): string =>
   `a made-up year\n${head}\n${rows.map((r) => `${r.when};${r.global};${r.air};${r.pressure}`).join('\n')}\n`;
 
-/** How it is to be read. */
+/** The same rows in the form of a TMY3 table: hours labelled by their end, 24:00 the last of a day. */
+export function asTmy3(rows: readonly Row[]): string {
+  const lines = rows.map(({ when, global, air }) => {
+    const isMidnight = when.endsWith('00:00');
+    const end = new Date(`${when.replace(' ', 'T')}Z`).getTime();
+    const [year, month, day] = new Date(isMidnight ? end - 1 : end).toISOString().slice(0, 10).split('-');
+    return `${month}/${day}/${year},${isMidnight ? '24:00' : when.slice(11)},${global},${global},${global},${air},5.0,1013`;
+  });
+  const heads =
+    'Date (MM/DD/YYYY),Time (HH:MM),GHI (W/m^2),DNI (W/m^2),DHI (W/m^2),Dry-bulb (C),Dew-point (C),Pressure (mbar)';
+  return `000000,"MADE UP",XX,1.0,45.000,15.000,100\n${heads}\n${lines.join('\n')}\n`;
+}
+
+/** The same rows in the form of a typical year of the Joint Research Centre, with notes below the table. */
+export function asJrc(rows: readonly Row[]): string {
+  const lines = rows.map(({ when, global, air, pressure }) => {
+    const start = new Date(new Date(`${when.replace(' ', 'T')}Z`).getTime() - 3_600_000).toISOString();
+    return `${start.slice(0, 10).replaceAll('-', '')}:${start.slice(11, 13)}00,${air},60.0,${global},${global},${global},${pressure}`;
+  });
+  const place = 'Latitude (decimal degrees): 45.0\nLongitude (decimal degrees): 15.0\nElevation (m): 100.0';
+  const head = `${place}\nIrradiance Time Offset (h): 0.2\nmonth,year\n1,2010\n`;
+  return `${head}time(UTC),T2m,RH,G(h),Gb(n),Gd(h),SP\n${lines.join('\n')}\n\nT2m: air\nmade up\n`;
+}
+
+/** How the table is to be read. */
 export const MAPPING: WeatherMapping = {
   name: 'station on the roof',
   delimiter: ';',

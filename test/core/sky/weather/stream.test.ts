@@ -2,11 +2,15 @@ import { existsSync, readFileSync } from 'node:fs';
 import { resolve } from 'node:path';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { FaultList, MOST_FAULTS } from '../../../../core/sky/weather/fault-list.ts';
 import { LineCutter, LONGEST_LINE } from '../../../../core/sky/weather/line-cutter.ts';
+import { mappedPlan } from '../../../../core/sky/weather/mapped.ts';
+import type { WeatherMapping } from '../../../../core/sky/weather/mapping.ts';
 import { readWeather } from '../../../../core/sky/weather/read-weather.ts';
+import { RowScan } from '../../../../core/sky/weather/row-scan.ts';
 import { WeatherReader } from '../../../../core/sky/weather/weather-reader.ts';
 import { seedOf } from '../../../helpers/property-seed.ts';
-import { asText, MAPPING, madeYear } from './made-year.ts';
+import { asJrc, asText, asTmy3, MAPPING, madeYear } from './made-year.ts';
 
 /** The text cut at some places. */
 function cut(text: string, places: readonly number[]): string[] {
@@ -24,9 +28,10 @@ describe('lines of text that comes in pieces', () => {
       fc.property(fc.array(letters, { maxLength: 60 }), places, (all, at) => {
         const text = all.join('');
         const found: string[] = [];
-        const cutter = new LineCutter((line, number) => {
-          expect(number).toBe(found.length + 1);
-          found.push(line);
+        const cutter = new LineCutter((line) => {
+          expect(line.number).toBe(found.length + 1);
+          expect(line.before).toBe(found.reduce((sum, one) => sum + one.length + 1, text.startsWith('\ufeff') ? 1 : 0));
+          found.push(line.text);
         });
         for (const piece of cut(text, at)) cutter.push(piece);
         cutter.finish();
@@ -61,6 +66,89 @@ describe('a year that streams in', () => {
       }),
       { seed: seedOf(20261206), numRuns: 12 },
     );
+  });
+
+  /** What can befall a line of a file, each told in its own way. */
+  const mishaps: { readonly [what: string]: (line: string) => string } = {
+    lost: () => '',
+    blank: () => ' \t ',
+    'broken off': (line) => line.slice(0, line.length / 2),
+    'with a cell too many': (line) => `${line},;\t7`,
+    'with a letter among its digits': (line) => line.replace(/\d/, 'q'),
+    twice: (line) => `${line}\n${line}`,
+    'after three hundred blank ones': (line) => `${'\n'.repeat(300)}${line}`,
+    endless: (line) => line + 'x'.repeat(2 * LONGEST_LINE),
+    'as it was': (line) => line,
+  };
+  const made = madeYear();
+  const tabs = { ...MAPPING, delimiter: '\t' } as const;
+  const forms: readonly (readonly [string, string, WeatherMapping | null])[] = [
+    ['TMY3', asTmy3(made), null],
+    ['JRC', asJrc(made), null],
+    ['a table', year, MAPPING],
+    ['a table with tabs', year.replaceAll(';', '\t'), tabs],
+  ];
+  it.each(forms)(
+    'in the form of %s is sound, and comes to the same in pieces whatever befalls it',
+    (_, text, mapping) => {
+      expect(readWeather(text, mapping).ok).toBe(true);
+      const share = fc.double({ min: 0, max: 1, maxExcluded: true, noNaN: true });
+      // Heads are a handful of lines among thousands: they and the end get their own share of mishaps.
+      const place = fc.oneof(
+        share,
+        share.map((s) => s / 500),
+        share.map((s) => 1 - (1 - s) / 1000),
+      );
+      const mishap = fc.record({ what: fc.constantFrom(...Object.keys(mishaps)), place });
+      fc.assert(
+        fc.property(fc.array(mishap, { maxLength: 3 }), places, fc.boolean(), (all, at, isMarked) => {
+          const spoiltLines = text.split('\n');
+          for (const { what, place: from } of all) {
+            const i = Math.floor(from * spoiltLines.length);
+            spoiltLines[i] = mishaps[what]?.(spoiltLines[i] ?? '') ?? '';
+          }
+          const whole = (isMarked ? '\ufeff' : '') + spoiltLines.join('\n');
+          expect(readWeather(cut(whole, at), mapping)).toEqual(readWeather(whole, mapping));
+        }),
+        { seed: seedOf(20261209), numRuns: 40 },
+      );
+    },
+  );
+
+  it('with a line too long to be one is refused for it, whether the line comes whole or not', () => {
+    const long = [...lines.slice(0, 50), 'x'.repeat(LONGEST_LINE + 1), ...lines.slice(50)].join('\n');
+    for (const pieces of [[long], cut(long, [0.3, 0.31, 0.32])])
+      expect(readWeather(pieces, MAPPING)).toMatchObject({
+        ok: false,
+        faults: [{ code: 'too-long', place: 'line 51' }],
+      });
+    // What is known already is not overruled by a line that comes after it, nor by one among the notes.
+    const letter = `Dear all,\nthe year was warm\n${'x'.repeat(2 * LONGEST_LINE)}`;
+    expect(readWeather(letter)).toMatchObject({ ok: false, faults: [{ code: 'unknown-form' }] });
+    expect(readWeather(`${asJrc(made)}${'x'.repeat(2 * LONGEST_LINE)}`).ok).toBe(true);
+  });
+
+  it('tells blank rows that hold delimiters by their cells', () => {
+    const text = [...lines.slice(0, 50), ';;', ...lines.slice(50)].join('\n').replaceAll(';', '\t');
+    const message = '3 cells where the head has 4';
+    expect(readWeather(text, tabs)).toMatchObject({
+      ok: false,
+      faults: [{ code: 'cells', place: 'line 51', message }],
+    });
+  });
+
+  it('holds no more blank lines than can be told as faults', () => {
+    const faults = new FaultList();
+    const plan = mappedPlan(lines.slice(0, 2), MAPPING);
+    if (!plan.ok) throw new Error(JSON.stringify(plan.faults));
+    const scan = new RowScan(plan.value, faults);
+    for (let i = 0; i < 5000; i++) scan.take('', 3 + i);
+    expect(scan.held).toBeLessThanOrEqual(MOST_FAULTS + 1);
+    expect(faults.failed).toBe(false);
+    scan.take(lines[2] ?? '', 5003);
+    const told = faults.all();
+    expect(told.map((fault) => fault.place)).toEqual(['line 3', 'line 4', 'line 5', 'line 6', 'line 7']);
+    expect(told[4]?.message).toContain(`${MOST_FAULTS + 1 - 5} more like this`);
   });
 
   it('whose last row breaks off is told from one with a short row in its midst', () => {
