@@ -1,11 +1,14 @@
 import { CAUTIONS } from '../../core/limits/cautions.ts';
 import { writeCsv } from '../../core/sheet/csv.ts';
+import { treesSentence } from '../../core/sheet/light-trees.ts';
 import type { BeforeAfter, NeighbourLight } from '../../core/study/exposure-neighbours.ts';
 import { counted, hoursText, lowSunText } from './exposure-words.ts';
 import { table } from './table.ts';
 
-/** The figures as they are, shares as 0..1. */
-export const lightJson = (light: NeighbourLight): string => `${JSON.stringify(light, null, 2)}\n`;
+/** The figures as they are, shares as 0..1, with what is said of trees before them. */
+export function lightJson({ receptors, ...asked }: NeighbourLight): string {
+  return `${JSON.stringify({ ...asked, treesNote: treesSentence(asked.trees), receptors }, null, 2)}\n`;
+}
 
 type Figure = { readonly name: string; readonly of: BeforeAfter; readonly kind: 'share' | 'factor' | 'minutes' };
 
@@ -41,6 +44,7 @@ export function lightText(light: NeighbourLight, lowSun: number | undefined): st
   return [
     `Light of ${counted(light.receptors.length, 'receptor')} before and after: ${light.year}, and ${light.date} alone${lowSunText(lowSun)}.`,
     `An open place has ${light.openHours.toFixed(0)} h of sun in the year as counted here; sunlight hours are shares of that.`,
+    treesSentence(light.trees),
     '',
     table(
       [
@@ -57,10 +61,13 @@ export function lightText(light: NeighbourLight, lowSun: number | undefined): st
   ].join('\n');
 }
 
-/** One row a figure; shares as 0..1. */
-export const lightCsv = (light: NeighbourLight): string =>
-  writeCsv({
-    header: ['id', 'figure', 'unit', 'before', 'after', 'kept'],
+const TREES_CELL = { none: 'none in the scheme', 'left-out': 'left out', counted: 'counted' } as const;
+
+/** One row a figure; shares as 0..1. Every row says whether trees are in it, as rows are taken out of tables one by one. */
+export function lightCsv(light: NeighbourLight): string {
+  const trees = TREES_CELL[light.trees];
+  return writeCsv({
+    header: ['id', 'figure', 'unit', 'before', 'after', 'kept', 'trees'],
     rows: light.receptors.flatMap((r) => [
       ...figuresOf(r, light).map(({ name, of, kind }) => [
         r.id,
@@ -69,9 +76,11 @@ export const lightCsv = (light: NeighbourLight): string =>
         of.before,
         of.after,
         of.kept,
+        trees,
       ]),
       ...(r.kind === 'area'
         ? []
-        : [[r.id, 'level of exposure to sunlight, EN 17037', '', r.level.before, r.level.after, null]]),
+        : [[r.id, 'level of exposure to sunlight, EN 17037', '', r.level.before, r.level.after, null, trees]]),
     ]),
   });
+}

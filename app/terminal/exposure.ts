@@ -34,7 +34,8 @@ type Options = {
 const HELP = `
 Without --on, --between and --year: 21 March of the scheme's year. Energy is that of a clear sky, in Wh/m² on the receptor's own plane;
 its sky light comes from an even dome, where check spreads it as the scheme says (Perez unless told otherwise). An area's numbers are the
-means of its points that are not built over. Light passes the crowns of trees as each month says.
+means of its points that are not built over. Light passes the crowns of trees as each month says; --light leaves trees
+out unless --trees is given (common practice, no source).
 
 --map gives each point of the ground, of walls and of roofs, before and after, with the change; --light what receptors keep of their
 daylight and sun: sky view factor, sky component, annual and winter probable sunlight hours, sun on one date with its level, and the

@@ -22,6 +22,7 @@ type Options = SheetFiles & {
   readonly scale?: number;
   readonly paper?: 'A4' | 'A3' | 'A2' | 'A1';
   readonly portrait?: true;
+  readonly trees?: boolean;
   readonly perPage?: number;
   readonly number?: string;
   readonly units?: 'metric' | 'imperial';
@@ -34,7 +35,8 @@ WHAT is a kind of sheet, or the id of a sheet set that the scheme holds:
   facades        sun hours over the outside walls of the proposal, or of --block
   exposure-plan  sun hours over roofs and ground, before and after
   section        a window with its overhang and the noon sun of both solstices; needs --window
-  light          sun on open ground, sun and sky light of neighbours' windows, before and after
+  light          sun on open ground, sun and sky light of neighbours' windows, before and after; trees left out
+                 (common practice, no source) unless --trees is given
   findings       the rooms against their limits, as shadewright check --pdf writes it
 
 Without --scale: the largest standard scale that fits. Without --on: 21 March, 21 June and 21 December of the scheme's year.
@@ -71,6 +73,10 @@ async function setOf(scheme: Scheme, what: string, options: Options): Promise<Sh
   }
   const from: SheetSet = saved ?? blank(what);
   const { on, at, window, block, paper, portrait, perPage } = options;
+  if (options.trees !== undefined && from.kind !== 'light')
+    throw new Refusal(
+      `shadewright sheet: --${options.trees ? '' : 'no-'}trees goes with light, not with ${from.kind}; leave it out.`,
+    );
   return {
     ...from,
     ...(options.seasons ? { dates: [...seasonDates(scheme)] } : on === undefined ? {} : { dates: [...on] }),
@@ -78,6 +84,7 @@ async function setOf(scheme: Scheme, what: string, options: Options): Promise<Sh
     ...(window === undefined ? {} : { window }),
     ...(block === undefined ? {} : { block }),
     ...(options.scale === undefined ? {} : { scale: options.scale }),
+    ...(options.trees === undefined ? {} : { trees: options.trees }),
     ...(options.units === undefined ? {} : { units: options.units }),
     ...(paper === undefined ? {} : { paper }),
     ...(portrait === undefined ? {} : { landscape: false }),
@@ -117,6 +124,8 @@ export const declareSheet: Declare = (program, screen) => {
     .option('--at <TIMES>', 'times of the clock with commas between them', times)
     .option('--window <ID>', 'window of a section or of a shading mask')
     .option('--block <ID>', 'block whose facades are drawn')
+    .option('--trees', 'light: count the crowns of trees too')
+    .option('--no-trees', 'light: leave trees out, also where a sheet set counts them')
     .option('--limits <FILE>', 'judge findings by this limit set and not by the one that the scheme names')
     .option('--weather <FILE>', 'findings: look at this year of weather besides')
     .addOption(new Option('--paper <SIZE>', 'paper').choices(['A4', 'A3', 'A2', 'A1']));

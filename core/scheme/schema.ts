@@ -213,6 +213,7 @@ export const SheetSet = z.looseObject({
   perPage: z.int().min(1).max(60).optional().describe('diagrams a page, at most'),
   window: id.optional().describe('of a section, or whose shading mask a sun path shows'),
   block: id.optional().describe('whose facades are drawn; absent: those of every proposed block'),
+  trees: z.boolean().optional().describe('whether light counts the crowns of trees; absent: they are left out'),
   units: z.enum(['metric', 'imperial']).optional().describe('units of the drawing; absent: metric'),
   number: z.string().max(60).optional().describe('drawing number'),
 });

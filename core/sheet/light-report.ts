@@ -1,6 +1,7 @@
 import type { Scheme } from '../scheme/schema.ts';
 import type { Document } from './drawing.ts';
 import { Flow } from './flow.ts';
+import { treesBrief, treesSentence, type TreesInLight } from './light-trees.ts';
 import { RULE, SOFT } from './ink.ts';
 import { field, leading, line, type Piece, words } from './marks.ts';
 import { measure, READ } from './measure.ts';
@@ -19,6 +20,7 @@ export type LightResult = {
   readonly date: string;
   readonly hours: number;
   readonly openHours: number;
+  readonly trees: TreesInLight;
   readonly receptors: readonly (
     | {
         readonly kind: 'point' | 'window';
@@ -60,6 +62,7 @@ export function lightReport(input: LightReportInput): Document {
   flow.say(
     `Hours of probable sun are shares of the ${light.openHours.toFixed(0)} h that an open place has in ${light.year}. Sun on ground counts a place that has the sun for ${light.hours} h or more on ${dateText(light.date)}.`,
   );
+  flow.say(treesSentence(light.trees));
   if (light.receptors.some((r) => r.kind !== 'area')) {
     flow.say(
       'Share kept: after as a share of before. Which share is enough is for local policy and its guide to say.',
@@ -96,7 +99,10 @@ function groundTable(flow: Flow, light: LightResult, names: ReadonlyMap<string, 
   if (rows.length === 0) return;
   flow.heading(`Open ground with ${light.hours} h of sun or more on ${dateText(light.date)}`, 30);
   table(flow, AREA_COLUMNS, rows);
-  flow.say('Shares of the open ground of each area; ground under buildings is left out.', { colour: SOFT });
+  flow.say(
+    `Shares of the open ground of each area; ground under buildings is left out. ${treesBrief(light.trees)}`.trimEnd(),
+    { colour: SOFT },
+  );
   flow.gap(3);
 }
 
@@ -122,7 +128,8 @@ function windowTable(flow: Flow, light: LightResult, names: ReadonlyMap<string, 
       columns,
       places.map((r) => [r.id, names.get(r.id) ?? '', unit(of(r).before), unit(of(r).after), percent(of(r).kept)]),
     );
-    if (note !== '') flow.say(note, { colour: SOFT });
+    const said = [note, treesBrief(light.trees)].filter((part) => part !== '').join(' ');
+    if (said !== '') flow.say(said, { colour: SOFT });
     flow.gap(1.5);
   };
   const tenths = (v: number): string => `${(v * 100).toFixed(1)}\u00a0%`;

@@ -4,6 +4,7 @@ import { unit, type Vec3 } from '../plane/vec.ts';
 import type { Checked, Fault } from '../scheme/fault.ts';
 import { DEFAULT_YEAR, type Scheme } from '../scheme/schema.ts';
 import { pointOn } from '../form/panel.ts';
+import type { TreesInLight } from '../sheet/light-trees.ts';
 import { sunOnReceptors } from '../shade/exposure.ts';
 import { facing, levelGrid, cellsOfOutline } from '../shade/exposure-grid.ts';
 import { columnsFor, sortLight } from '../shade/exposure-light.ts';
@@ -41,7 +42,7 @@ export type NeighbourAsk = {
   readonly spacing_m?: number;
   /** Long-run share of possible sunshine, January to December, 0..1; absent: every hour of sun above the horizon counts. */
   readonly sunshine?: readonly number[];
-  /** Whether crowns of trees count; absent: they are left out, as guidance on neighbours' light leaves them out. */
+  /** Whether crowns of trees count; absent: they are left out (common practice, no source). */
   readonly trees?: boolean;
 };
 
@@ -73,6 +74,7 @@ export type NeighbourLight = {
   readonly hours: number;
   /** Hours of sun of an open place in the year, as weighted. */
   readonly openHours: number;
+  readonly trees: TreesInLight;
   /** In the order of the scheme. */
   readonly receptors: readonly (PointLight | AreaLight)[];
 };
@@ -128,7 +130,7 @@ export async function neighbourLight(
     ...levelNotes(scheme, date),
     ...receptorNotes(model, ['before', 'after'], built),
   ];
-  return { ok: true, value: { year, date, hours, openHours, receptors }, notes };
+  return { ok: true, value: { year, date, hours, openHours, trees: treesIn(scheme, ask), receptors }, notes };
 }
 
 type Run = {
@@ -144,9 +146,12 @@ type Run = {
 const occludersAt = (model: Model, stage: Stage, trees: boolean): Occluders =>
   makeOccluders(solidsAt(model.solids, stage), shadersAt(model, stage), trees ? model.trees : []);
 
-/** Trees are commonly left out of such figures (common practice; guidance from memory, no source at hand). */
+const treesIn = (scheme: Scheme, ask: NeighbourAsk): TreesInLight =>
+  scheme.trees.length === 0 ? 'none' : ask.trees === true ? 'counted' : 'left-out';
+
+/** Trees are left out of such figures (common practice, no source). */
 function treeNotes(scheme: Scheme, ask: NeighbourAsk): Fault[] {
-  if (scheme.trees.length === 0 || ask.trees === true) return [];
+  if (treesIn(scheme, ask) !== 'left-out') return [];
   return [
     {
       level: 'warning',

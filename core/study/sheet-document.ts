@@ -238,7 +238,7 @@ async function light({ scheme, model, set, dates, facts, pulse }: SheetJob): Pro
   const found = await neighbourLight(
     scheme,
     model,
-    set.dates.length > 0 && first !== undefined ? { date: first } : {},
+    { ...(set.dates.length > 0 && first !== undefined ? { date: first } : {}), trees: set.trees === true },
     pulse,
   );
   if (found === null || !found.ok) return found;

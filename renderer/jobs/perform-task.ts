@@ -50,11 +50,11 @@ const performers = (): Performers => ({
     const { scheme, model } = held();
     return sunYear(scheme, model, subject, stage, year, YEAR_STEP_min, pulse);
   },
-  light: ({ window }, held, pulse) => {
+  light: ({ window, trees }, held, pulse) => {
     const { scheme, model } = held();
     const asked = window === null ? model : askingWindow(model, window);
     if (asked === null) throw new Error(`the scheme has no window ${window}`);
-    return neighbourLight(scheme, asked, {}, pulse);
+    return neighbourLight(scheme, asked, { trees }, pulse);
   },
   mapPlan: async (ask, held) => planMap(held().scheme, held().model, ask),
   sunPath: async ({ observer, zone, year, window }, held) => ({

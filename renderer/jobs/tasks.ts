@@ -73,7 +73,7 @@ export type Tasks = {
   /** Direct sun on something through a year. */
   year: { ask: { subject: YearSubject; stage: Stage; year: number }; answer: SunYear };
   /** What receptors keep of their daylight and sun, or what a window of the proposal has of it. */
-  light: { ask: { window: string | null }; answer: Checked<NeighbourLight> };
+  light: { ask: { window: string | null; trees: boolean }; answer: Checked<NeighbourLight> };
   /** The points and jobs of an exposure map, for the pool. @see map-run.ts */
   mapPlan: { ask: ExposureMapAsk; answer: Checked<MapPlan> };
   /** The lines of the sun path. `window`: what hides the sky from it is wanted too, and the scheme is needed. */

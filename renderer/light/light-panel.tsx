@@ -1,15 +1,15 @@
 import { useLayoutEffect } from 'preact/hooks';
 import type { ReceptorForm } from '../../core/form/model.ts';
 import type { AreaLight, BeforeAfter, NeighbourLight, PointLight } from '../../core/study/exposure-neighbours.ts';
-import { scheme } from '../state/document.ts';
 import { receptorName } from '../state/names.ts';
 import { leadOf, select } from '../state/selection.ts';
 import { model } from '../state/studies.ts';
+import { Choice } from '../ui/choice.tsx';
 import { dayAndMonth, fixed, percent } from '../ui/format.ts';
 import { moveFocus } from '../ui/move-focus.ts';
 import { Progress } from '../ui/progress.tsx';
 import { words } from '../words/words.ts';
-import { lightJob, lightShown, receptorLight, showLight, windowLight } from './light-state.ts';
+import { countsTrees, isFresh, lightJob, lightShown, receptorLight, showLight, windowLight } from './light-state.ts';
 import './light.css';
 
 /** What neighbours, areas and points keep of their light, and what a window of the proposal has of it. */
@@ -19,11 +19,12 @@ export function LightPanel() {
   const shown = lightShown.value;
   const job = lightJob.value;
   if (receptors.length === 0 && leadOf('window') === null) return <p class="empty-line soft">{words.light.none}</p>;
-  const isStale = (shown?.isOwn ? windowLight : receptorLight).value?.scheme !== scheme.value;
+  const isStale = !isFresh((shown?.isOwn ? windowLight : receptorLight).value);
   return (
     <div class="light">
       <List receptors={receptors} />
       <div class={isStale ? 'light-figures stale' : 'light-figures'}>
+        {(model.value?.value.trees.length ?? 0) > 0 ? <Trees /> : null}
         {shown === null ? null : <Figures {...shown} />}
         {job.kind === 'working' ? <Progress text={words.light.working} done={job.done} total={job.total} /> : null}
         {job.kind === 'failed' ? (
@@ -35,6 +36,21 @@ export function LightPanel() {
     </div>
   );
 }
+
+/** The choice that the command has too: figures without crowns of trees, or with them. */
+const Trees = () => (
+  <Choice
+    label={words.light.trees}
+    options={[
+      { value: 'left-out', text: words.light.withoutTrees },
+      { value: 'counted', text: words.light.withTrees },
+    ]}
+    value={countsTrees.value ? 'counted' : 'left-out'}
+    onChoose={(value) => {
+      countsTrees.value = value === 'counted';
+    }}
+  />
+);
 
 /** What can be asked after; arrows go through it. */
 function List({ receptors }: { receptors: readonly ReceptorForm[] }) {
@@ -141,6 +157,7 @@ function Figures({ light, of, isOwn }: FiguresProps) {
           ? words.light.area(fixed(0.5, 1))
           : `${isPane ? words.light.pane : words.light.point} ${words.light.how(fixed(of.openHours, 0))}`}
       </p>
+      <p class="soft">{words.light.treesAre[of.trees]}</p>
     </>
   );
 }

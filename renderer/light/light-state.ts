@@ -7,7 +7,10 @@ import { scheme } from '../state/document.ts';
 import { leadOf } from '../state/selection.ts';
 import type { JobState } from '../state/studies.ts';
 
-type Found = { readonly scheme: Scheme; readonly light: NeighbourLight };
+type Found = { readonly scheme: Scheme; readonly hasTrees: boolean; readonly light: NeighbourLight };
+
+/** Whether crowns of trees count, as asked for in this window; it is not kept with the scheme. */
+export const countsTrees = signal(false);
 
 /** The light of all receptors, and of the window of the proposal that was asked after last. */
 export const receptorLight = signal<Found | null>(null);
@@ -24,35 +27,50 @@ export function showLight(): () => void {
   };
 }
 
-async function study(of: Scheme, window: string | null): Promise<void> {
+async function study(of: Scheme, window: string | null, trees: boolean): Promise<void> {
+  const isMeant = (): boolean => scheme.peek() === of && countsTrees.peek() === trees;
   lightJob.value = { kind: 'working', done: 0, total: 0 };
-  const outcome = await hands.light.run('light', { window }, of, (done, total) => {
-    lightJob.value = { kind: 'working', done, total };
+  const outcome = await hands.light.run('light', { window, trees }, of, (done, total) => {
+    if (isMeant()) lightJob.value = { kind: 'working', done, total };
   });
-  if (scheme.peek() !== of || outcome.kind === 'stopped') return;
+  if (!isMeant() || outcome.kind === 'stopped') return;
   if (outcome.kind === 'failed') lightJob.value = outcome;
   if (outcome.kind !== 'done') return;
   const { result } = outcome;
-  if (result.ok) (window === null ? receptorLight : windowLight).value = { scheme: of, light: result.value };
+  if (result.ok) (window === null ? receptorLight : windowLight).value = { scheme: of, hasTrees: trees, light: result.value };
   if (!outcome.superseded)
     lightJob.value = result.ok
       ? { kind: 'idle' }
       : { kind: 'failed', message: result.faults.map(faultLine).join(' · ') };
 }
 
-let asked: { readonly of: Scheme; readonly window: string | null } | null = null;
+/** Whether figures are of the scheme and of the choice of trees as they are now. */
+export const isFresh = (found: Found | null): boolean =>
+  found !== null && found.scheme === scheme.value && found.hasTrees === countsTrees.value;
+
+let asked: { readonly of: Scheme; readonly trees: boolean; readonly window: string | null } | null = null;
 
 /** The receptors come first, once a scheme; then the window that is selected. */
 effect(() => {
   const of = scheme.value;
   const window = leadOf('window');
-  const known = receptorLight.value;
+  const trees = countsTrees.value;
+  const isKnown = isFresh(receptorLight.value);
   if (of === null || shown.value === 0) return;
-  const next = known?.scheme !== of ? null : window;
-  if (asked?.of === of && asked.window === next) return;
-  if (known?.scheme === of && next === null) return;
-  asked = { of, window: next };
-  untracked(() => void study(of, next));
+  const next = isKnown ? window : null;
+  if (asked?.of === of && asked.trees === trees && asked.window === next) return;
+  if (isKnown && next === null) {
+    // What was asked of a choice that was taken back is let go when it comes: nothing waits for it, and it can be asked again.
+    if (asked !== null && (asked.of !== of || asked.trees !== trees)) {
+      asked = null;
+      untracked(() => {
+        lightJob.value = { kind: 'idle' };
+      });
+    }
+    return;
+  }
+  asked = { of, trees, window: next };
+  untracked(() => void study(of, next, trees));
 });
 
 /** Whose figures are shown: the selected receptor or window; else the first receptor. */

@@ -12,14 +12,14 @@ const text = words.sheets;
 
 /** Which settings a kind of sheet has. */
 const HAS: {
-  readonly [K in SheetKind]: readonly ('dates' | 'times' | 'scale' | 'paper' | 'units' | 'window' | 'block')[];
+  readonly [K in SheetKind]: readonly ('dates' | 'times' | 'scale' | 'paper' | 'units' | 'window' | 'block' | 'trees')[];
 } = {
   'shadow-study': ['dates', 'times', 'scale', 'paper', 'units'],
   'sun-path': ['paper', 'window'],
   facades: ['dates', 'scale', 'paper', 'units', 'block'],
   'exposure-plan': ['dates', 'scale', 'paper', 'units'],
   section: ['scale', 'paper', 'units', 'window'],
-  light: ['dates'],
+  light: ['dates', 'trees'],
   findings: [],
 };
 
@@ -38,6 +38,7 @@ export function SheetSettings({ scheme }: { scheme: Scheme }) {
       {has.includes('window') ? <WindowChoice scheme={scheme} set={set} /> : null}
       {has.includes('block') ? <BlockChoice scheme={scheme} set={set} /> : null}
       {has.includes('dates') ? <Dates scheme={scheme} set={set} /> : null}
+      {has.includes('trees') && scheme.trees.length > 0 ? <TreesChoice set={set} /> : null}
       {has.includes('times') ? <Times set={set} /> : null}
       {has.includes('scale') ? <ScaleChoice set={set} /> : null}
       {has.includes('paper') ? <PaperChoice set={set} /> : null}
@@ -237,6 +238,18 @@ function ScaleChoice({ set }: SetProps) {
     />
   );
 }
+
+const TreesChoice = ({ set }: SetProps) => (
+  <Select
+    label={text.trees}
+    value={set.trees === true ? 'counted' : ''}
+    options={[
+      ['', text.treesLeftOut],
+      ['counted', text.treesCounted],
+    ]}
+    onChoose={(trees) => change({ trees: trees === 'counted' ? true : undefined })}
+  />
+);
 
 const PAPERS = ['A4', 'A3', 'A2', 'A1'] as const;
 

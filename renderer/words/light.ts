@@ -28,7 +28,17 @@ export const lightWords = {
     pane: 'At the middle of the pane, its reveal left out.',
     point: 'At the point, on its own plane.',
     how: (open: string) =>
-      `Blocks and fixed devices hide the sky, trees do not. Probable hours are shares of the ${open} h that an open place has, every hour of sun above the horizon counted alike.`,
-    area: (spacing: string) => `Ground under buildings left out; read every ${spacing} m, clear of trees.`,
+      `Blocks and fixed devices hide the sky. Probable hours are shares of the ${open} h that an open place has, every hour of sun above the horizon counted alike.`,
+    area: (spacing: string) => `Ground under buildings left out; read every ${spacing} m.`,
+    trees: 'Trees in these figures',
+    withoutTrees: 'Trees left out',
+    withTrees: 'Trees counted',
+    treesAre: {
+      none: 'The scheme has no trees.',
+      'left-out':
+        'Trees are left out, before and after: they drop their leaves and can be cut (common practice, no source).',
+      counted:
+        'Trees are counted, before and after: crowns let through what each month says, and of sky light the mean of the year.',
+    },
   },
 } as const;

@@ -214,6 +214,26 @@ describe.skipIf(executable === null)('maps, receptors and their year', () => {
     expect(after).toBeLessThanOrEqual(before);
     expect(Math.abs(kept - (100 * after) / before)).toBeLessThan(1);
     await page.getByRole('row', { name: /winter half/ }).waitFor();
+    // Trees in front of the pane take of its sky what they hide, and what is said of them follows the figures.
+    await page.getByText(/^Trees are left out, before and after/u).waitFor();
+    await page.getByText('Trees counted', { exact: true }).click();
+    await page.getByText(/^Trees are counted, before and after/u).waitFor();
+    const treed = (await row.getByRole('cell').allTextContents()).map((t) => Number.parseFloat(t));
+    expect(treed[0]).toBeLessThan(before);
+    await page.getByText('Trees left out', { exact: true }).click();
+    await page.getByText(/^Trees are left out, before and after/u).waitFor();
+    // A choice that is taken back before its figures come leaves nothing waiting, and made again is answered.
+    await page.evaluate(() => {
+      for (const choice of ['Trees counted', 'Trees left out'])
+        [...document.querySelectorAll('label')].find((label) => label.textContent === choice)?.click();
+    });
+    await page.waitForTimeout(1000);
+    expect(await page.getByText('Working out the light…').count()).toBe(0);
+    await page.getByText('Trees counted', { exact: true }).click();
+    await page.getByText(/^Trees are counted, before and after/u).waitFor();
+    await page.getByText('Trees left out', { exact: true }).click();
+    await page.getByText(/^Trees are left out, before and after/u).waitFor();
+    await expect.poll(() => row.getByRole('cell').first().textContent(), PATIENT).toContain(before.toFixed(1));
     await expect.poll(() => page.locator('.tag:not(.reading)').textContent(), PATIENT).toMatch(/No\. 14, ground floor/);
   });
 

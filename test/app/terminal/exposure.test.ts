@@ -104,6 +104,13 @@ describe('exposure', () => {
     expect(text?.err).toContain('without the trees');
     const treed = JSON.parse(trees?.out ?? '');
     expect(trees?.err).toBe('');
+    expect([light.trees, treed.trees]).toEqual(['left-out', 'counted']);
+    expect(light.treesNote).toContain('common practice, no source');
+    expect(text?.out).toContain(light.treesNote);
+    expect(treed.treesNote).toMatch(/^Trees are counted/u);
+    const [head, ...rows] = (csv?.out ?? '').trim().split('\r\n');
+    expect(head).toMatch(/,trees$/u);
+    for (const row of rows) expect(row).toMatch(/,left out$/u);
     treed.receptors.forEach((r: { annual?: { after: number } }, i: number) => {
       if (r.annual) expect(r.annual.after).toBeLessThanOrEqual(light.receptors[i].annual.after);
     });

@@ -1,4 +1,4 @@
-import { writeFileSync } from 'node:fs';
+import { readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, test } from 'vitest';
 import { CAUTIONS } from '../../../core/limits/cautions.ts';
@@ -255,5 +255,51 @@ describe('verify', () => {
     const report = await reportOf(folder);
     const { out } = await verified(folder, { ...report, findings: [] });
     expect(out).toMatch(/worked out again it is \{"room":.*…\./u);
+  });
+});
+
+describe('whether trees are in the light of neighbours is said', () => {
+  const crown = { id: 'T1', at: [2, -10], trunk: 2, height: 8, spread: 6, transmittance: Array(12).fill(0.3) };
+  const light = ['exposure', 'scheme.json', '--light', '--step', '60'];
+  const one = (trees: Loose[]): string =>
+    folderWith((s) => {
+      s.trees = trees;
+      s.receptors = [{ id: 'P1', kind: 'point', at: [2, -4, 1], normal: [0, -1, 0] }];
+    });
+
+  test.each([
+    [[], [], 'The scheme has no trees.', 'none', 'none in the scheme'],
+    [[], [crown], 'Trees are left out', 'left-out', 'left out'],
+    [['--trees'], [crown], 'Trees are counted', 'counted', 'counted'],
+    [['--trees'], [], 'The scheme has no trees.', 'none', 'none in the scheme'],
+  ])('%j', async (more, trees, said, code, cell) => {
+    const folder = one(trees);
+    const run = async (...words: string[]) => (await runCommand([...light, ...more, ...words], folder)).out;
+    expect(await run()).toContain(said);
+    const json = JSON.parse(await run('--json'));
+    expect(json.trees).toBe(code);
+    expect(json.treesNote).toContain(said);
+    const rows = (await run('--csv')).trim().split('\r\n').slice(1);
+    expect(rows).toHaveLength(6);
+    for (const row of rows) expect(row.split(',').at(-1)).toBe(cell);
+  });
+
+  test('on the sheet, which a set or the call may have them counted', async () => {
+    const folder = one([crown]);
+    const kept = JSON.parse(readFileSync(join(folder, 'scheme.json'), 'utf8'));
+    kept.sheets = [{ id: 'S1', kind: 'light', trees: true }];
+    writeFileSync(join(folder, 'scheme.json'), JSON.stringify(kept));
+    const svg = async (...words: string[]): Promise<string> => {
+      const { status, err } = await runCommand(['sheet', ...words, '--svg', 'a.svg'], folder);
+      expect([status, err.includes('fault')]).toEqual([0, false]);
+      return readFileSync(join(folder, 'a.svg'), 'utf8').replaceAll('\u00a0', ' ');
+    };
+    expect(await svg('light', 'scheme.json')).toContain('Trees are left out.');
+    expect(await svg('light', 'scheme.json', '--trees')).toContain('Trees are counted.');
+    expect(await svg('S1', 'scheme.json')).toContain('Trees are counted.');
+    expect(await svg('S1', 'scheme.json', '--no-trees')).toContain('Trees are left out.');
+    const refused = await runCommand(['sheet', 'facades', 'scheme.json', '--trees', '--pdf', 'a.pdf'], folder);
+    expect(refused.status).toBe(2);
+    expect(refused.err).toContain('--trees goes with light, not with facades');
   });
 });
