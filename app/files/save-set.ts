@@ -19,7 +19,8 @@ export class SetFault extends Error {
 /**
  * Writes several files that belong together, all or none: each beside its place and flushed first, then all moved. When one cannot
  * be moved, those that were are taken back, and what they replaced is there again. A machine that stops among the moves leaves each
- * file whole, new ones and old ones side by side, with the kept old ones under hidden names.
+ * file whole, new ones and old ones side by side, with the kept old ones under hidden names. So does a disk that will not have an old
+ * one back.
  * @throws {SetFault} naming the file, with the system's error as its cause; every file is then as it was
  */
 export async function saveSet(files: readonly SetFile[]): Promise<void> {
@@ -34,8 +35,14 @@ export async function saveSet(files: readonly SetFile[]): Promise<void> {
     for (const [i, { target, isThere, move }] of ready.entries()) {
       at = files[i]?.[0] ?? target;
       const kept = isThere ? await keep(target) : null;
+      try {
+        await move();
+      } catch (error) {
+        // It still stands where it was: the second name of it is one too many.
+        if (kept !== null) await unlink(kept).catch(() => undefined);
+        throw error;
+      }
       moved.push({ target, kept });
-      await move();
     }
   } catch (cause) {
     for (const { target, kept } of moved.reverse())
@@ -47,13 +54,18 @@ export async function saveSet(files: readonly SetFile[]): Promise<void> {
   for (const folder of new Set(moved.map(({ target }) => dirname(target)))) await flushFolder(folder);
 }
 
-/** Another name for a file that is about to be replaced; a copy where the disk knows no second names. */
+/** Another name for a file that is about to be replaced; a copy where the disk knows no second names. Nothing is left when it fails. */
 async function keep(target: string): Promise<string> {
   const kept = besideName(target, 'kept');
   try {
     await link(target, kept);
   } catch {
-    await copyFile(target, kept);
+    try {
+      await copyFile(target, kept);
+    } catch (error) {
+      await unlink(kept).catch(() => undefined);
+      throw error;
+    }
   }
   return kept;
 }

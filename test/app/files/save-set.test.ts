@@ -67,6 +67,24 @@ describe('files that belong together', () => {
     expect(readFileSync(join(folder, 'a'), 'utf8')).toBe('old');
   });
 
+  test('leave no kept name behind when the one that cannot be moved was to replace an old file', async (context) => {
+    const folder = tempFolder();
+    const [other, last] = [join(tempFolder(), 'other'), join(folder, 'b')];
+    for (const path of [join(folder, 'a'), last, other]) writeFileSync(path, 'old');
+    // A file that something is mounted on can be read and copied, but not replaced.
+    if (spawnSync('mount', ['--bind', other, last]).status !== 0) return context.skip('nothing can be mounted here');
+    try {
+      const fault = await saveSet([
+        [join(folder, 'a'), 'one'],
+        [last, 'two'],
+      ]).catch((error: unknown) => error);
+      expect(fault).toMatchObject({ path: last, cause: { code: 'EBUSY' } });
+      expect(held(folder)).toEqual({ a: 'old', b: 'old' });
+    } finally {
+      spawnSync('umount', [last]);
+    }
+  });
+
   test('leave a disk that is full as it was', async (context) => {
     const full = tempFolder();
     const mounted = spawnSync('mount', ['-t', 'tmpfs', '-o', 'size=64k', 'shadewright-test', full]);
