@@ -187,7 +187,9 @@ function runOver(
           sunlitOver(shadeOf(w), day, cosIncidence),
         );
         const seen = seenIn(w, day.month);
-        const glass = memo.glassed.get(`${facingKey} ${glassCurveName(w.glass)}`, () => glassLight(w.glass, cosIncidence));
+        const glass = memo.glassed.get(`${facingKey} ${glassCurveName(w.glass)}`, () =>
+          glassLight(w.glass, cosIncidence),
+        );
         return { ...windowDay(w, day.grid, open, { sunlit, cosIncidence }, viewOf(seen, w.tilt_deg), glass), seen };
       });
     });

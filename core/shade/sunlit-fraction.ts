@@ -113,5 +113,4 @@ function leaveOpen({ panel, reveal_m, hiders }: WindowShade, a: number, b: numbe
 }
 
 /** Share of the glass that the patches in the scratch make up. */
-const shareLeft = ({ panel }: WindowShade): number =>
-  Math.min(1, patches.area() / (panel.width_m * panel.height_m));
+const shareLeft = ({ panel }: WindowShade): number => Math.min(1, patches.area() / (panel.width_m * panel.height_m));

@@ -45,6 +45,7 @@ function one(flow: Flow, f: Finding, ways: Ways, named: boolean): void {
       ]),
     );
   }
+  for (const line of decidedBy(passing)) flow.say(line, { colour: SOFT });
   for (const w of failing) flow.say(`${w.lever}: ${w.reason}.`, { colour: SOFT });
   for (const on of ['no-neighbours', 'no-trees'] as const) {
     const lost = passing.filter((w) => w.restsOn.some((r) => r.on === on && r.verdict === 'over')).map((w) => w.lever);
@@ -53,6 +54,15 @@ function one(flow: Flow, f: Finding, ways: Ways, named: boolean): void {
       flow.say(`Were the ${what} not there, these would not do: ${lost.join(', ')}.`, { colour: SOFT });
   }
   flow.gap(1);
+}
+
+/** Which of the other limits that the room is over takes how many of the changes as far as they go. */
+function decidedBy(passing: readonly WayThatPasses[]): readonly string[] {
+  const names = [...new Set(passing.flatMap((w) => w.decidedBy?.metricName ?? []))];
+  return names.map((name) => {
+    const levers = passing.filter((w) => w.decidedBy?.metricName === name).map((w) => w.lever);
+    return `How far it has to go is decided by another limit, ${name}: ${levers.join(', ')}.`;
+  });
 }
 
 const share = (then: number, now: number): string => (now > 0 ? percent(then / now) : '–');

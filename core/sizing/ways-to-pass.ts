@@ -9,7 +9,8 @@ import { type Fault, faultLine } from '../scheme/fault.ts';
 import type { Scheme, Window } from '../scheme/schema.ts';
 import { areaLever, blindLever, finLever, glassLever, type Lever, overhangLever } from './lever.ts';
 import type { Under } from './room-facts-of.ts';
-import { type RoomProbe, roomProbe } from './room-probe.ts';
+import { excessOf, type RoomBench, roomBench } from './room-bench.ts';
+import type { RoomProbe } from './room-probe.ts';
 import type { RestsOn, Way, Ways, WayThatFails } from './ways.ts';
 
 /** Bisection stops when the bracket is this share of the lever's amount wide. */
@@ -20,7 +21,7 @@ type Trial = { readonly lever: Lever; readonly windows: readonly Window[] };
 
 /**
  * For a room that is over a limit: the smallest single change of each lever (overhang, fins, glass, area, external blind) that
- * brings it within, found by bisection on the engine itself. A lever is first tried on the window that brings most, then on all
+ * brings it within every limit that it is over, and over no other, found by bisection on the engine itself. A lever is first tried on the window that brings most, then on all
  * windows of the room. The change ends just at the limit, which counts as close, not as over; levers that cannot do it by
  * themselves say why.
  * @param roomId   of the room
@@ -39,13 +40,13 @@ export function waysToPass(
 ): Ways {
   const limit = limitSet.limits.find((l) => l.id === finding.limit);
   if (!limit) throw new RangeError(`the limit set holds no limit ${JSON.stringify(finding.limit)}`);
-  const probe = roomProbe(scheme, buildModel(scheme), limit, limitSet.close, roomId, memo, under);
-  const price = probe.price(null);
+  const bench = roomBench(scheme, buildModel(scheme), limitSet, limit, roomId, memo, under);
+  const price = bench.price(null);
   const windows = scheme.windows.filter((w) => w.room === roomId);
   const isRead = !needsWeather(limit.metric) || (under.weather ?? null) !== null;
   const over = finding.verdict === 'over' && isRead;
-  const ways = over ? leversFor(scheme, windows, finding).map((trials) => bestOf(probe, trials)) : [];
-  return { finding, price, restsOn: restsOn(probe, null, finding), ways };
+  const ways = over ? leversFor(scheme, windows, finding).map((trials) => bestOf(bench, trials)) : [];
+  return { finding, price, restsOn: restsOn(bench.probe, null, finding), ways };
 }
 
 /** The trials of each lever, in the order they are made: the main window alone, then all. */
@@ -71,11 +72,11 @@ function leversFor(scheme: Scheme, windows: readonly Window[], finding: Finding)
 }
 
 /** The first trial of a lever that passes, or the last one's failure. */
-function bestOf(probe: RoomProbe, trials: readonly Trial[]): Way {
+function bestOf(bench: RoomBench, trials: readonly Trial[]): Way {
   let last: Way | null = null;
   for (const trial of trials) {
     if (trial.windows.length === 0) return rooflightsOnly(trial);
-    last = wayOf(probe, trial);
+    last = wayOf(bench, trial);
     if (last.passes) return last;
   }
   if (!last) throw new Error('a lever has at least one trial');
@@ -90,7 +91,7 @@ const rooflightsOnly = (trial: Trial): WayThatFails => ({
   best: null,
 });
 
-function wayOf(probe: RoomProbe, { lever, windows }: Trial): Way {
+function wayOf(bench: RoomBench, { lever, windows }: Trial): Way {
   const ids = windows.map((w) => w.id);
   const edit = lever.edit(lever.most);
   const failed = (reason: string, best: WayThatFails['best'] = null): WayThatFails => ({
@@ -101,27 +102,28 @@ function wayOf(probe: RoomProbe, { lever, windows }: Trial): Way {
     best,
   });
   if (!edit) return failed(lever.kind === 'blind' ? 'it has external blinds already' : 'it is there already');
-  const furthest = probe.judge(edit);
-  if (!furthest.ok) return asFarAsItGoes(probe, { lever, windows }, furthest.faults);
-  if (furthest.value.verdict === 'over') {
-    const best = { amount: lever.most, unit: lever.unit, value: furthest.value.value };
-    return failed(whyNot(lever, furthest.value), best);
+  const furthest = bench.judge(edit);
+  if (!furthest.ok) return asFarAsItGoes(bench, { lever, windows }, furthest.faults);
+  const { asked, deciding } = furthest.value;
+  if (deciding.verdict === 'over') {
+    const best = { amount: lever.most, unit: lever.unit, value: asked.value };
+    return failed(whyNot(lever, deciding, asked), best);
   }
-  const amount = closest(lever, furthest.value, (x) => excess(probe, lever.edit(x)));
-  return passing(probe, lever, ids, amount);
+  const amount = closest(lever, excessOf(deciding), (x) => excess(bench, lever.edit(x)));
+  const then = lever.edit(amount);
+  const [pushed] = then === null ? [] : bench.pushed(then);
+  if (pushed !== undefined) {
+    const reached = bench.judge(then);
+    const value = reached.ok ? reached.value.asked.value : Number.NaN;
+    return failed(pushesOver(lever, amount, pushed, asked), { amount, unit: lever.unit, value });
+  }
+  return passing(bench, lever, ids, amount);
 }
 
-/** How far a finding is past its limit, above 0 only where it is over. */
-function excessOf(f: Finding): number {
-  const past = (f.value - (f.limitValue ?? 0)) * (f.comparison === 'at-least' ? -1 : 1);
-  if (f.verdict === 'over') return past > 0 ? past : Number.MIN_VALUE;
-  return Math.min(past, 0);
-}
-
-/** How far a room is past its limit under an edit; NaN, which counts as over, where the edit changes nothing or is refused. */
-function excess(probe: RoomProbe, edit: SchemeEdit | null): number {
-  const found = edit ? probe.judge(edit) : null;
-  return found?.ok ? excessOf(found.value) : Number.NaN;
+/** How far a room is past its limits under an edit; NaN, which counts as over, where the edit changes nothing or is refused. */
+function excess(bench: RoomBench, edit: SchemeEdit | null): number {
+  const found = edit ? bench.judge(edit) : null;
+  return found?.ok ? excessOf(found.value.deciding) : Number.NaN;
 }
 
 /** Trials by the straight line between the bracket's ends; after so many that did not halve it, its middle is tried. */
@@ -132,9 +134,9 @@ const PATIENCE = 2;
  * between its ends says that the limit is met, now a little to this side of it and now to that, so that both ends close in. It
  * takes a third of the trials of halving, and is as tight.
  */
-function closest(lever: Lever, furthest: Finding, by: (amount: number) => number): number {
+function closest(lever: Lever, furthestBy: number, by: (amount: number) => number): number {
   let [over, overBy] = [lever.least, Number.NaN];
-  let [within, withinBy] = [lever.most, excessOf(furthest)];
+  let [within, withinBy] = [lever.most, furthestBy];
   let [wide, tries, side] = [Math.abs(within - over), 0, 1];
   const tight = (): number => TIGHT * Math.max(Math.abs(within), 0.02);
   while (Math.abs(within - over) > tight()) {
@@ -173,23 +175,23 @@ function bisect(lever: Lever, test: (amount: number) => boolean): number {
 }
 
 /** A lever whose furthest setting contradicts the scheme, such as a window wider than its wall: as far as it can go. */
-function asFarAsItGoes(probe: RoomProbe, { lever, windows }: Trial, faults: readonly Fault[]): Way {
+function asFarAsItGoes(bench: RoomBench, { lever, windows }: Trial, faults: readonly Fault[]): Way {
   const allowed = (x: number): boolean => {
     const edit = lever.edit(x);
-    return edit === null || probe.judge(edit).ok;
+    return edit === null || bench.probe.judge(edit).ok;
   };
   const most = bisect({ ...lever, least: lever.most, most: lever.least, round: (x) => x }, allowed);
   const edit = lever.edit(most);
-  const found = edit ? probe.judge(edit) : null;
-  if (found?.ok && found.value.verdict !== 'over') return wayOf(probe, { lever: { ...lever, most }, windows });
+  const found = edit ? bench.judge(edit) : null;
+  if (found?.ok && found.value.deciding.verdict !== 'over') return wayOf(bench, { lever: { ...lever, most }, windows });
   const reason = `there is no room for it: ${faults.map(faultLine).join('; ')}`;
-  const best = found?.ok ? { amount: most, unit: lever.unit, value: found.value.value } : null;
+  const best = found?.ok ? { amount: most, unit: lever.unit, value: found.value.asked.value } : null;
   return { passes: false, lever: lever.kind, windows: windows.map((w) => w.id), reason, best };
 }
 
-function passing(probe: RoomProbe, lever: Lever, windows: readonly string[], amount: number): Way {
+function passing(bench: RoomBench, lever: Lever, windows: readonly string[], amount: number): Way {
   const edit = lever.edit(amount);
-  const after = edit ? probe.judge(edit) : null;
+  const after = edit ? bench.judge(edit) : null;
   if (!edit || !after?.ok) throw new Error('bisection ended on an amount that does not pass');
   return {
     passes: true,
@@ -199,9 +201,10 @@ function passing(probe: RoomProbe, lever: Lever, windows: readonly string[], amo
     unit: lever.unit,
     text: edit.kind === 'together' ? edit.name : '',
     edit,
-    after: after.value,
-    price: probe.price(edit),
-    restsOn: restsOn(probe, edit, after.value),
+    after: after.value.asked,
+    decidedBy: after.value.deciding.limit === after.value.asked.limit ? null : after.value.deciding,
+    price: bench.price(edit),
+    restsOn: restsOn(bench.probe, edit, after.value.asked),
   };
 }
 
@@ -224,8 +227,18 @@ const NAMES: { readonly [K in Lever['kind']]: string } = {
   blind: 'external blind',
 };
 
-/** Why a lever does not suffice at the furthest it goes. */
-function whyNot(lever: Lever, left: Finding): string {
+/** A value against its limit; named where it is not the one that was asked about. */
+const against = (left: Finding, asked: Finding): string => {
+  const value = `${shown(left.value)} ${left.unit} against ${shown(left.limitValue ?? 0)}`;
+  return left.limit === asked.limit ? value : `${value} (${left.metricName})`;
+};
+
+/** Why a change that would do for what the room is over does not count: it brings it over another limit. */
+const pushesOver = ({ unit }: Lever, amount: number, pushed: Finding, asked: Finding): string =>
+  `at ${shown(amount)}${unit === '' ? '' : ` ${unit}`} it would do, but brings the room over another limit: ${against(pushed, asked)}`;
+
+/** Why a lever does not suffice at the furthest it goes. @param left what is still over, most */
+function whyNot(lever: Lever, left: Finding, asked: Finding): string {
   const reach =
     lever.kind === 'overhang' || lever.kind === 'fins'
       ? `no depth passes: even ${lever.most} m deep`
@@ -235,7 +248,7 @@ function whyNot(lever: Lever, left: Finding): string {
           ? `no width passes: even at ${lever.most} %`
           : `no setting passes: even closed above ${lever.most} W/m²`;
   const direct = left.parts.beam + left.parts.circumsolar;
-  const rest = `it leaves ${shown(left.value)} ${left.unit} against ${shown(left.limitValue ?? 0)}`;
+  const rest = `it leaves ${against(left, asked)}`;
   if (!(direct + left.parts.sky + left.parts.ground > 0)) return `${reach}, ${rest}`;
   const cause =
     direct < 0.5

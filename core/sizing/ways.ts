@@ -23,6 +23,8 @@ export type WayThatPasses = {
   readonly edit: SchemeEdit;
   /** The finding once it is done. */
   readonly after: Finding;
+  /** Another limit that the room is over too, and for which so much of the change is needed; null where it is the finding's own. */
+  readonly decidedBy: Finding | null;
   readonly price: Price;
   /** What the pass rests on; empty when neither trees nor neighbours change it. */
   readonly restsOn: readonly RestsOn[];
@@ -40,7 +42,7 @@ export type WayThatFails = {
 
 export type Way = WayThatPasses | WayThatFails;
 
-/** Everything that can be said about bringing one room within one limit. */
+/** Everything that can be said about bringing a room that is over a limit within all of its limits. */
 export type Ways = {
   readonly finding: Finding;
   /** As it is now. */

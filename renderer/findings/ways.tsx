@@ -119,6 +119,7 @@ function Passing({ way, ways, room }: { way: WayThatPasses; ways: Ways; room: st
         <span class={`way-then ${verdict ?? 'none'}`}>
           <Disc verdict={verdict} /> {text.afterwards(`${fixed(value, decimalsFor(value))} ${unit}`)}
         </span>
+        {way.decidedBy === null ? null : <span>{text.decidedBy(way.decidedBy.metricName)}</span>}
         <span>{text.winter(change(way.price.winter_Whm2, ways.price.winter_Whm2))}</span>
         <span>{text.daylight(change(way.price.daylight_m2, ways.price.daylight_m2))}</span>
       </span>

@@ -37,7 +37,8 @@ async function study(of: Scheme, window: string | null, trees: boolean): Promise
   if (outcome.kind === 'failed') lightJob.value = outcome;
   if (outcome.kind !== 'done') return;
   const { result } = outcome;
-  if (result.ok) (window === null ? receptorLight : windowLight).value = { scheme: of, hasTrees: trees, light: result.value };
+  if (result.ok)
+    (window === null ? receptorLight : windowLight).value = { scheme: of, hasTrees: trees, light: result.value };
   if (!outcome.superseded)
     lightJob.value = result.ok
       ? { kind: 'idle' }

@@ -12,7 +12,16 @@ const text = words.sheets;
 
 /** Which settings a kind of sheet has. */
 const HAS: {
-  readonly [K in SheetKind]: readonly ('dates' | 'times' | 'scale' | 'paper' | 'units' | 'window' | 'block' | 'trees')[];
+  readonly [K in SheetKind]: readonly (
+    | 'dates'
+    | 'times'
+    | 'scale'
+    | 'paper'
+    | 'units'
+    | 'window'
+    | 'block'
+    | 'trees'
+  )[];
 } = {
   'shadow-study': ['dates', 'times', 'scale', 'paper', 'units'],
   'sun-path': ['paper', 'window'],

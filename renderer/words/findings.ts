@@ -53,7 +53,7 @@ export const findingsWords = {
     goTo: 'Show this moment',
     ways: {
       title: 'Ways to pass',
-      line: 'The smallest change of each kind that brings this room within, one at a time.',
+      line: 'The smallest change of each kind that brings this room within all its limits, one at a time.',
       working: 'Looking for ways…',
       failed: (why: string) => `The ways could not be worked out: ${why}`,
       apply: 'Apply',
@@ -62,6 +62,7 @@ export const findingsWords = {
       winter: (change: string) => `winter sun ${change}`,
       daylight: (change: string) => `daylight ${change}`,
       none: 'unchanged',
+      decidedBy: (limit: string) => `as far as this needs: ${limit}`,
       notForYear:
         'Ways under a limit on the weather year are looked for while its file is at hand: choose it under Weather.',
       cannot: 'What does not do it alone',
