@@ -8,6 +8,7 @@ import type { Checked } from '../scheme/fault.ts';
 import type { Scheme } from '../scheme/schema.ts';
 import type { Under } from './room-facts-of.ts';
 import { type RoomProbe, roomProbe } from './room-probe.ts';
+import { roomTrials } from './room-trials.ts';
 
 /** A room under an edit. */
 export type Judged = {
@@ -44,7 +45,8 @@ export function roomBench(
   memo: CheckMemo,
   under: Under,
 ): RoomBench {
-  const probeOf = (limit: Limit): RoomProbe => roomProbe(scheme, model, limit, limitSet.close, roomId, memo, under);
+  const trials = roomTrials(scheme, model, roomId);
+  const probeOf = (limit: Limit): RoomProbe => roomProbe(scheme, trials, limit, limitSet.close, memo, under);
   const isRead = (limit: Limit): boolean => !needsWeather(limit.metric) || (under.weather ?? null) !== null;
   const probe = probeOf(asked);
   const others = limitSet.limits

@@ -1,5 +1,3 @@
-import { buildModel } from '../form/build-model.ts';
-import type { Model } from '../form/model.ts';
 import { checkDayList, type DayOf, monthKey, solsticeKeys, warmMonths } from '../gain/check-days.ts';
 import type { CheckMemo } from '../gain/gain-memo.ts';
 import { gainRun, type RoomGain } from '../gain/gain-run.ts';
@@ -10,13 +8,11 @@ import { judgeRoom } from '../limits/judge.ts';
 import type { Limit } from '../limits/limit-set.ts';
 import { needsWeather } from '../limits/metric.ts';
 import { daysOf } from '../limits/reading.ts';
-import { applyEdit, type SchemeEdit } from '../scheme/edit.ts';
+import type { SchemeEdit } from '../scheme/edit.ts';
 import type { Checked, Fault } from '../scheme/fault.ts';
-import type { Scheme, Tree } from '../scheme/schema.ts';
+import type { Scheme } from '../scheme/schema.ts';
 import { roomReader, type Under } from './room-facts-of.ts';
-
-/** What stands around the room in a trial: everything, or all but the trees or the neighbours. */
-export type Around = 'everything' | 'no-trees' | 'no-neighbours';
+import type { Around, RoomTrials, Trial } from './room-trials.ts';
 
 /** What a change costs besides: sun in winter and daylight. */
 export type Price = {
@@ -26,33 +22,13 @@ export type Price = {
   readonly daylight_m2: number;
 };
 
-/**
- * One room of a scheme, ready to be judged under many edits. Only the room, its windows and its block are built anew; what
- * stands around is shared, so that a trial costs what its own windows cost.
- */
+/** One room of a scheme, ready to be judged by one limit under many edits. */
 export type RoomProbe = {
   readonly judge: (edit: SchemeEdit | null, around?: Around) => Checked<Finding>;
   readonly price: (edit: SchemeEdit | null) => Price;
   /** What the room takes in on some days under an edit. */
   readonly gain: (edit: SchemeEdit | null, days: readonly DayOf[]) => Checked<RoomGain>;
 };
-
-const NO_TREES: Tree[] = [];
-
-/** The scheme with nothing of its rooms but one, its windows and its block. Other entries keep their ids and their order. */
-function onlyRoom(scheme: Scheme, roomId: string): Scheme {
-  const room = scheme.rooms.find((r) => r.id === roomId);
-  if (!room) throw new RangeError(`the scheme holds no room ${JSON.stringify(roomId)}`);
-  const windows = scheme.windows.filter((w) => w.room === roomId);
-  return {
-    ...scheme,
-    blocks: scheme.blocks.filter((b) => b.id === room.block),
-    rooms: [room],
-    windows,
-    receptors: [],
-    sheets: [],
-  };
-}
 
 /** Days that a limit looks at. */
 export function daysForLimit(scheme: Scheme, limit: Limit): readonly DayOf[] {
@@ -62,59 +38,46 @@ export function daysForLimit(scheme: Scheme, limit: Limit): readonly DayOf[] {
   return checkDayList(scheme, season).filter((d) => wanted.includes(d.key));
 }
 
-/** @param model of the whole scheme */
+/** @param trials of the room, which probes of several limits share */
 export function roomProbe(
   scheme: Scheme,
-  model: Model,
+  trials: RoomTrials,
   limit: Limit,
   close: number,
-  roomId: string,
   memo: CheckMemo,
   under: Under = {},
 ): RoomProbe {
   const skyModel = under.skyModel ?? skyModelOf(scheme);
-  const small = onlyRoom(scheme, roomId);
-  const own = small.blocks[0]?.id;
-  const noNeighbours = model.solids.filter((s) => s.id === own || s.standing === 'proposed');
-  const read = roomReader(scheme, limit, daysForLimit(scheme, limit), small.windows.length, memo, {
+  const read = roomReader(scheme, limit, daysForLimit(scheme, limit), trials.windows, memo, {
     ...under,
     skyModel,
   });
   const winterKey = solsticeKeys(scheme.site.latitude).winter;
   const winterDays = checkDayList(scheme, false).filter((d) => d.key === winterKey);
 
-  const edited = (edit: SchemeEdit | null): Checked<Scheme> =>
-    edit ? applyEdit(small, edit) : { ok: true, value: small, notes: [] };
-
-  const modelOf = (now: Scheme, around: Around): Model => {
-    const built = buildModel(now);
-    const solids = around === 'no-neighbours' ? noNeighbours : model.solids;
-    return { ...built, solids, trees: around === 'no-trees' ? NO_TREES : scheme.trees };
-  };
-  const runOf = (now: Scheme, days: readonly DayOf[]) => {
-    const built = modelOf(now, 'everything');
+  const runOf = ({ now, built }: Trial, days: readonly DayOf[]) => {
     const run = gainRun(now, built, days, memo, skyModel);
     const [room] = built.rooms;
     if (!room) throw new Error('a probe holds one room');
     return { run, gain: run.roomGain(room) };
   };
   const judge = (edit: SchemeEdit | null, around: Around = 'everything'): Checked<Finding> => {
-    const now = edited(edit);
-    if (!now.ok) return now;
-    const { facts, days } = read(now.value, modelOf(now.value, around));
+    const trial = trials.of(edit, around);
+    if (!trial.ok) return trial;
+    const { facts, days } = read(trial.value.now, trial.value.built);
     const finding = judgeRoom(limit, close, facts, days);
-    return finding ? { ok: true, value: finding, notes: [] } : { ok: false, faults: [unread(roomId, limit)] };
+    return finding ? { ok: true, value: finding, notes: [] } : { ok: false, faults: [unread(trials.room, limit)] };
   };
   return {
     judge,
     gain: (edit, days) => {
-      const now = edited(edit);
-      return now.ok ? { ok: true, value: runOf(now.value, days).gain, notes: [] } : now;
+      const trial = trials.of(edit, 'everything');
+      return trial.ok ? { ok: true, value: runOf(trial.value, days).gain, notes: [] } : trial;
     },
     price: (edit) => {
-      const now = edited(edit);
-      if (!now.ok) return { winter_Whm2: Number.NaN, daylight_m2: Number.NaN };
-      const { run, gain } = runOf(now.value, winterDays);
+      const trial = trials.of(edit, 'everything');
+      if (!trial.ok) return { winter_Whm2: Number.NaN, daylight_m2: Number.NaN };
+      const { run, gain } = runOf(trial.value, winterDays);
       const [grid] = run.grids;
       const [day] = gain.days;
       return {

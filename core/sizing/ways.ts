@@ -1,7 +1,8 @@
 import type { Finding, Verdict } from '../limits/finding.ts';
 import type { SchemeEdit } from '../scheme/edit.ts';
 import type { LeverKind } from './lever.ts';
-import type { Around, Price } from './room-probe.ts';
+import type { Price } from './room-probe.ts';
+import type { Around } from './room-trials.ts';
 
 /** What a result rests on: its value were the trees or the neighbours not there. */
 export type RestsOn = {

@@ -39,6 +39,15 @@ describe('the functions, against the engine’s own', () => {
     );
   });
 
+  it('the arc tangent of one number is that of two, bit for bit', () => {
+    fc.assert(
+      fc.property(fc.double(), (x) => {
+        expect(maths.atan(x)).toBe(maths.atan2(x, 1));
+      }),
+      { seed: seedOf(20261210), numRuns: 5000 },
+    );
+  });
+
   it('atan2, in every quadrant', () => {
     const part = fc.double({ min: -1e3, max: 1e3, noNaN: true });
     fc.assert(
