@@ -65,7 +65,9 @@ function curve(flow: Flow, report: Report, room: ReportRoom, f: Finding): void {
   if (!grid || !day) return;
   flow.heading(`What it takes in on the ${grid.name}`.replace('the 2', '2'), 80);
   const limit = report.result.limitSet?.limits.find((l) => l.id === f.limit);
-  const piece = dayCurve(flow.x, flow.y, flow.width, 72, grid, day, room.floor_m2, limitOnCurve(f, limit));
+  // A page a room: where the tables below are long, the curve makes way.
+  const height = room.windows.length > 3 ? 56 : 72;
+  const piece = dayCurve(flow.x, flow.y, flow.width, height, grid, day, room.floor_m2, limitOnCurve(f, limit));
   flow.put(piece.marks, piece.height);
   flow.gap(2);
 }
