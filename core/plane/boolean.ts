@@ -2,7 +2,7 @@ import { Clipper64, ClipType, FillRule, type Path64, type Paths64, type PolyPath
 import { decadeOf, tenTo } from '../maths/decade.ts';
 import { SLIVER_m2, UNION_GRID_m } from '../units/tolerance.ts';
 import { fromFirstCorner, type Region } from './region.ts';
-import { signedArea } from './ring.ts';
+import { contains, signedArea } from './ring.ts';
 import type { Point, Ring } from './vec.ts';
 
 /** What the operations below take: an outline that runs either way, or a region with its holes. */
@@ -97,8 +97,16 @@ function addPath(out: Paths64, ring: Ring, grid: Grid, sense: 1 | -1): void {
 
 /** The tree of outer rings, their holes, and what lies in those, as a flat list of regions in metres. */
 function collect(node: PolyPath64, grid: Grid, regions: Region[]): void {
+  const own: { readonly outer: Ring; readonly holes: Ring[] }[] = [];
+  const strays: Ring[] = [];
   for (let i = 0; i < node.count; i++) {
     const child = node.child(i);
+    // A hole that touches its outer ring at a corner may come beside it in the tree instead of in it; its sense tells it.
+    if (runsClockwise(child.poly ?? [])) {
+      strays.push(offGrid(child.poly ?? [], grid, -1));
+      collect(child, grid, regions);
+      continue;
+    }
     const outer = offGrid(child.poly ?? [], grid, 1);
     const holes: Ring[] = [];
     for (let k = 0; k < child.count; k++) {
@@ -107,10 +115,37 @@ function collect(node: PolyPath64, grid: Grid, regions: Region[]): void {
       if (-signedArea(ring) >= SLIVER_m2) holes.push(ring);
       collect(hole, grid, regions);
     }
-    if (signedArea(outer) < SLIVER_m2) continue;
-    holes.sort((a, b) => compareCorners(a[0] as Point, b[0] as Point));
-    regions.push({ outer, holes });
+    if (signedArea(outer) >= SLIVER_m2) own.push({ outer, holes });
   }
+  for (const hole of strays) {
+    if (-signedArea(hole) < SLIVER_m2) continue;
+    const [x, y] = middleOf(hole);
+    own.find(({ outer }) => contains(outer, x, y))?.holes.push(hole);
+  }
+  for (const region of own) {
+    region.holes.sort((a, b) => compareCorners(a[0] as Point, b[0] as Point));
+    regions.push(region);
+  }
+}
+
+/** Twice the area of a path in whole numbers is below zero. */
+function runsClockwise(path: Path64): boolean {
+  let twice = 0;
+  for (let i = 0; i < path.length; i++) {
+    const [p, q] = [path[i]!, path[(i + 1) % path.length]!];
+    twice += p.x * q.y - q.x * p.y;
+  }
+  return twice < 0;
+}
+
+/** A point within a ring: the middle of the first ear whose middle lies inside. */
+function middleOf(ring: Ring): Point {
+  for (let i = 0; i < ring.length; i++) {
+    const [a, b, c] = [ring[i]!, ring[(i + 1) % ring.length]!, ring[(i + 2) % ring.length]!];
+    const at: Point = [(a[0] + b[0] + c[0]) / 3, (a[1] + b[1] + c[1]) / 3];
+    if (contains(ring, at[0], at[1])) return at;
+  }
+  return ring[0] as Point;
 }
 
 /** A ring in metres that runs anticlockwise (sense 1) or clockwise (−1). The library's stray z is left behind. */

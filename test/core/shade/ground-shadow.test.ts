@@ -206,6 +206,67 @@ describe('ground shadow: before and after', () => {
       { numRuns: 150 },
     );
   });
+  it('keeps a hole that touches its outer ring at a corner a hole (found by a fresh seed)', () => {
+    const flat = (id: string, standing: Solid['standing'], outline: [number, number][], top_m: number): Solid => ({
+      id,
+      name: '',
+      standing,
+      outline,
+      pieces: [outline],
+      base_m: 0,
+      top_m,
+    });
+    // The last one's shadow closes a gap between its own and the next building's to a triangle of 0.26 m².
+    const solids = [
+      flat(
+        '0',
+        'existing',
+        [
+          [-5, 8],
+          [-3.1328391470055967, 7.283264100909399],
+          [-2.416103247914996, 9.150424953903803],
+          [-4.283264100909399, 9.867160852994404],
+        ],
+        24,
+      ),
+      flat(
+        '1',
+        'existing',
+        [
+          [-20, 0],
+          [-19.687131069919538, -1.9753766811902755],
+          [-16.724066048134123, -1.506073286069583],
+          [-17.036934978214585, 0.46930339512069275],
+        ],
+        3,
+      ),
+      flat(
+        '2',
+        'existing',
+        [
+          [-32, 4],
+          [-21.482779073125684, -3.641208279802151],
+          [-17.368282307078374, 2.021910680822481],
+          [-27.88550323395269, 9.663118960624633],
+        ],
+        3,
+      ),
+      flat(
+        '3',
+        'proposed',
+        [
+          [0, 0],
+          [3.656768508095852, -3.4099918003124925],
+          [5.020765228220849, -1.9472843970741516],
+          [1.363996720124997, 1.462707403238341],
+        ],
+        3,
+      ),
+    ];
+    const { before, after, added } = shadowChange(solids, sunAt(63, 57), 0);
+    expect(Math.abs(after.area_m2 - before.area_m2 - added.area_m2)).toBeLessThan(0.01);
+  });
+
   it('agrees with rays followed from points on the ground', () => {
     fc.assert(
       fc.property(blocks, sun, (solids, { azimuth, altitude }) => {
